@@ -1,0 +1,218 @@
+"""What things are called: predictors, their values, changes, and the scales of pictures.
+
+Used by sentences and drawings alike, so that both say the same. Labels come from the
+analyst or from column names and may be any text; nothing is escaped here, whatever
+shows a label does that.
+"""
+
+from __future__ import annotations
+
+from plainodds.answers.curve import CurveAnswer, Scale
+from plainodds.answers.odds import OddsRow
+from plainodds.model.predictors import OutcomeFacts, PredictorFacts, Subject
+from plainodds.phrases.units import per_unit, step, tidy, with_unit
+from plainodds.values import Pairs, Scalar
+
+__all__ = [
+    "axis_title",
+    "chance_of",
+    "change_label",
+    "from_to",
+    "given_clause",
+    "given_label",
+    "in_sentence",
+    "line_label",
+    "listed",
+    "odds_of_event",
+    "predictor_label",
+    "predictor_name",
+    "row_label",
+    "scale_title",
+    "sentence_case",
+    "step_label",
+    "value_label",
+]
+
+_STARTS: dict[Scale, str] = {
+    "probability": "Chance of",
+    "odds": "Odds of",
+    "linear_predictor": "Log odds of",
+    "slope": "Chance of",
+}
+
+
+def sentence_case(text: str) -> str:
+    """Begin with a capital, unless the first word has a spelling of its own.
+
+    Examples
+    --------
+    >>> sentence_case("pipe age"), sentence_case("pH of soil")
+    ('Pipe age', 'pH of soil')
+    """
+    text = tidy(text)
+    first = text.split(" ", 1)[0]
+    return text[:1].upper() + text[1:] if first == first.lower() else text
+
+
+def in_sentence(text: str) -> str:
+    """Write a label as it stands within a sentence.
+
+    Only a first word of the form "Xxxx" loses its capital; "BMI" and "pH" keep theirs.
+
+    Examples
+    --------
+    >>> in_sentence("Pipe age"), in_sentence("BMI at entry"), in_sentence("pH")
+    ('pipe age', 'BMI at entry', 'pH')
+    """
+    text = tidy(text)
+    first = text.split(" ", 1)[0]
+    plain_word = len(first) > 2 and first.isalpha() and first == first.capitalize()
+    return text[:1].lower() + text[1:] if plain_word else text
+
+
+def predictor_label(facts: PredictorFacts) -> str:
+    """What a predictor is called, as a heading."""
+    return sentence_case(facts.label) or facts.name
+
+
+def predictor_name(facts: PredictorFacts) -> str:
+    """What a predictor is called within a sentence."""
+    return in_sentence(facts.label) or facts.name
+
+
+def axis_title(facts: PredictorFacts) -> str:
+    """A predictor's label with its unit, as along an axis: "Pipe age (years)"."""
+    unit = tidy(facts.unit)
+    label = predictor_label(facts)
+    return f"{label} ({unit})" if unit and facts.is_number else label
+
+
+def value_label(facts: PredictorFacts, value: Scalar) -> str:
+    """A predictor's value with its unit, or what a level is called.
+
+    Parameters
+    ----------
+    facts : PredictorFacts
+    value : scalar
+
+    Returns
+    -------
+    str
+        For example "40 years", "1 year" or "cast iron".
+    """
+    if not facts.is_number:
+        if value in facts.levels:
+            return tidy(facts.level_label(value)) or str(value)
+        return tidy(str(value))
+    if isinstance(value, str):
+        return tidy(value)
+    return with_unit(float(value), facts.unit)
+
+
+def line_label(facts: PredictorFacts, value: Scalar) -> str:
+    """A value that has to be understood alone, beside a line.
+
+    Returns
+    -------
+    str
+        "cast iron" and "40 years" speak for themselves; a bare number or a yes does
+        not: "past repairs: 2", "smoker: yes".
+    """
+    alone = facts.kind == "category" or (facts.is_number and tidy(facts.unit) != "")
+    written = value_label(facts, value)
+    return written if alone else f"{predictor_name(facts)}: {written}"
+
+
+def step_label(facts: PredictorFacts, size: float) -> str:
+    """A change by a step: "per year more", "per 10 years more", "per 5 units less"."""
+    direction = "less" if size < 0 else "more"
+    return f"per {step(abs(size), facts.unit)} {direction}"
+
+
+def change_label(facts: PredictorFacts, row: OddsRow) -> str:
+    """The change that an odds ratio belongs to.
+
+    Returns
+    -------
+    str
+        "per 10 years more" where every step counts the same, "from 20 to 60 years"
+        where it does not, "PVC against cast iron" for levels.
+    """
+    if not facts.is_number or isinstance(row.start, str) or isinstance(row.end, str):
+        return f"{value_label(facts, row.end)} against {value_label(facts, row.start)}"
+    if row.per_step:
+        return step_label(facts, float(row.end) - float(row.start))
+    return from_to(facts, row.start, row.end)
+
+
+def from_to(facts: PredictorFacts, start: Scalar, end: Scalar) -> str:
+    """A change between two values, the unit said once: "from 20 to 60 years"."""
+    low, high = value_label(facts, start), value_label(facts, end)
+    unit = tidy(facts.unit)
+    if unit and facts.is_number and high.endswith(f" {unit}"):
+        low = low.removesuffix(f" {unit}")
+    return f"from {low} to {high}"
+
+
+def row_label(subject: Subject, row: OddsRow) -> str:
+    """The whole label of an odds ratio: predictor, change and what it is given."""
+    facts = subject.predictor(row.predictor)
+    text = f"{predictor_label(facts)}, {change_label(facts, row)}"
+    return f"{text}; {given_label(subject, row.given)}" if row.given else text
+
+
+def given_label(subject: Subject, given: Pairs) -> str:
+    """Stated values, as a short list: "soil high, pipe age 40 years"."""
+    return ", ".join(
+        f"{predictor_name(facts)} {value_label(facts, value)}"
+        for facts, value in ((subject.predictor(name), value) for name, value in given)
+    )
+
+
+def given_clause(subject: Subject, given: Pairs) -> str:
+    """Stated values, as part of a sentence: "where soil is high and pipe age is 40 years"."""
+    return "where " + listed(
+        [
+            f"{predictor_name(facts)} is {value_label(facts, value)}"
+            for facts, value in ((subject.predictor(name), value) for name, value in given)
+        ]
+    )
+
+
+def listed(items: list[str]) -> str:
+    """Join as in speech: "a", "a and b", "a, b and c"."""
+    if len(items) < 2:
+        return "".join(items)
+    return f"{', '.join(items[:-1])} and {items[-1]}"
+
+
+def chance_of(outcome: OutcomeFacts) -> str:
+    """What the chance is a chance of: "Chance of burst this winter"."""
+    return f"Chance of {tidy(outcome.event)}"
+
+
+def odds_of_event(outcome: OutcomeFacts) -> str:
+    """What the odds are odds of: "Odds of burst this winter"."""
+    return f"Odds of {tidy(outcome.event)}"
+
+
+def scale_title(answer: CurveAnswer) -> str:
+    """The title of a curve's vertical axis, with the event and the unit.
+
+    Returns
+    -------
+    str
+        For a slope the figures meant are percentage points, that is 100 times the
+        answer's.
+    """
+    scale, outcome = answer.question.scale, answer.subject.outcome
+    title = f"{_STARTS[scale]} {tidy(outcome.event)}"
+    if answer.question.others == "observed":
+        title = f"Average {title[:1].lower()}{title[1:]}"
+    if scale != "slope":
+        return title
+    facts = answer.subject.predictor(answer.question.predictor)
+    if facts.is_number:
+        return f"{title}: percentage points per {per_unit(facts.unit)} more"
+    reference = value_label(facts, facts.levels[0])
+    return f"{title}: percentage points against {reference}"
