@@ -1,0 +1,204 @@
+"""Raw predictors -> design rows, whatever engine made the design.
+
+A column of a logit model's design is a product: `age:material[pvc]` is the
+values of `age` times a dummy of `material`. So a design is held as *factors*,
+which turn raw columns into one or more numeric columns, and *columns*, each the
+product of one column from each of its factors. From that follow, for any engine:
+new rows, the columns that a moved predictor touches, their derivative, and the
+split of each touched column into a part that moves and a part that stays.
+
+Raw columns come *coded*: numbers as floats, categories and yes/no as positions
+in their tuple of levels. A factor of one category only is then a table look-up.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Iterable, Mapping
+from dataclasses import dataclass, field
+from functools import reduce
+from operator import mul
+from typing import Any, Protocol, TypeAlias
+
+import numpy as np
+from numpy.typing import NDArray
+
+from plainodds.errors import QuestionRefused
+from plainodds.model.design.differences import derivative
+from plainodds.values import Scalar
+
+__all__ = ["Atom", "Coded", "Column", "Design", "Factor", "Floats", "decoded"]
+
+Floats: TypeAlias = NDArray[np.float64]
+Coded: TypeAlias = Mapping[str, NDArray[Any]]
+"""Raw predictors by name: floats, or positions in the tuple of levels."""
+
+Atom: TypeAlias = tuple[int, int]
+"""A factor's position and the column of that factor."""
+
+
+class Factor(Protocol):
+    """What an engine module provides: one evaluated piece of a formula."""
+
+    @property
+    def name(self) -> str:
+        """How the formula writes it."""
+
+    @property
+    def variables(self) -> frozenset[str]:
+        """The raw columns that it reads."""
+
+    @property
+    def levels(self) -> tuple[Any, ...] | None:
+        """Its levels where the engine treats it as categorical."""
+
+    def evaluate(self, raw: Mapping[str, NDArray[Any]]) -> Floats:
+        """Turn raw columns of n values into an (n, width) array."""
+
+
+@dataclass(frozen=True)
+class Column:
+    """One column of the design: `scale` times the product of its atoms."""
+
+    name: str
+    atoms: tuple[Atom, ...]
+    scale: float = 1.0
+
+
+def decoded(codes: NDArray[Any], levels: tuple[Scalar, ...]) -> NDArray[Any]:
+    """Turn positions back into the levels themselves."""
+    texts = any(isinstance(level, str) for level in levels)
+    return np.array(levels, dtype=object if texts else None)[codes]
+
+
+@dataclass(frozen=True, eq=False)
+class Design:
+    """How raw predictors become the design's columns.
+
+    Parameters
+    ----------
+    factors : tuple of Factor
+    columns : tuple of Column
+        In the order of the coefficients.
+    levels : mapping of name to levels
+        For each raw column that is a category or a yes/no.
+    allowed : mapping of name to (lowest, highest)
+        Bounds within which a number can be computed.
+    """
+
+    factors: tuple[Factor, ...]
+    columns: tuple[Column, ...]
+    levels: Mapping[str, tuple[Scalar, ...]]
+    allowed: Mapping[str, tuple[float, float]] = field(default_factory=dict)
+    _tables: dict[int, Floats] = field(init=False, default_factory=dict)
+
+    def __post_init__(self) -> None:
+        for position, factor in enumerate(self.factors):
+            if len(factor.variables) == 1:
+                (name,) = factor.variables
+                if name in self.levels:
+                    codes = np.arange(len(self.levels[name]))
+                    raw = {name: decoded(codes, self.levels[name])}
+                    self._tables[position] = factor.evaluate(raw)
+
+    @property
+    def variables(self) -> tuple[str, ...]:
+        """The raw columns, in the order in which the columns mention them."""
+        seen: dict[str, None] = {}
+        for column in self.columns:
+            for position, _ in column.atoms:
+                seen.update(dict.fromkeys(sorted(self.factors[position].variables)))
+        return tuple(seen)
+
+    def variables_of(self, column: Column) -> frozenset[str]:
+        """The raw columns behind one column of the design."""
+        return frozenset().union(*(self.factors[at].variables for at, _ in column.atoms))
+
+    def touched(self, names: Iterable[str]) -> NDArray[np.intp]:
+        """Positions of the columns that move when any of the named predictors moves."""
+        moved = frozenset(names)
+        return np.array(
+            [i for i, column in enumerate(self.columns) if self.variables_of(column) & moved],
+            dtype=np.intp,
+        )
+
+    def factor_values(self, position: int, coded: Coded) -> Floats:
+        """One factor's (n, width) values.
+
+        Raises
+        ------
+        QuestionRefused
+            If the factor cannot be computed, or is not a number, for some value.
+        """
+        factor = self.factors[position]
+        if position in self._tables:
+            (name,) = factor.variables
+            return self._tables[position][coded[name]]
+        raw = {
+            name: decoded(coded[name], self.levels[name]) if name in self.levels else coded[name]
+            for name in factor.variables
+        }
+        try:
+            with np.errstate(all="ignore"):
+                values = factor.evaluate(raw)
+        except Exception as error:
+            raise QuestionRefused(
+                f"{factor.name} cannot be computed for these values: {error}"
+            ) from error
+        if not np.isfinite(values).all():
+            raise QuestionRefused(
+                f"{factor.name} is not a number for some of these values of "
+                f"{', '.join(sorted(factor.variables))}; stay within the data's range."
+            )
+        return values
+
+    def rows(self, coded: Coded) -> Floats:
+        """The whole design for n coded rows, shape (n, columns)."""
+        n = len(next(iter(coded.values()))) if coded else 1
+        return self.some_columns(range(len(self.columns)), coded, n)
+
+    def some_columns(self, which: Iterable[int], coded: Coded, n: int) -> Floats:
+        """The named columns only, shape (n, len(which)); builds the factors these need."""
+        chosen = [self.columns[i] for i in which]
+        needed = sorted({at for column in chosen for at, _ in column.atoms})
+        values = {at: self.factor_values(at, coded) for at in needed}
+        built = np.empty((n, len(chosen)))
+        for i, column in enumerate(chosen):
+            built[:, i] = product(column, values)
+        return built
+
+    def row_derivatives(self, name: str, coded: Coded) -> Floats:
+        """d(row)/d(predictor) for n coded rows, shape (n, columns).
+
+        By the product rule over each column's factors; a factor's own derivative by
+        fourth-order differences, which are exact for cubic splines between knots.
+        """
+        n = len(coded[name])
+        result = np.zeros((n, len(self.columns)))
+        which = self.touched([name])
+        needed = sorted({at for i in which for at, _ in self.columns[i].atoms})
+        values = {at: self.factor_values(at, coded) for at in needed}
+        moving = [at for at in needed if name in self.factors[at].variables]
+        slopes = {at: self._factor_derivative(at, name, coded) for at in moving}
+        for i in which:
+            column = self.columns[i]
+            for place, (at, k) in enumerate(column.atoms):
+                if at in slopes:
+                    rest = column.atoms[:place] + column.atoms[place + 1 :]
+                    still = product(Column(column.name, rest, column.scale), values)
+                    result[:, i] += slopes[at][:, k] * still
+        return result
+
+    def _factor_derivative(self, position: int, name: str, coded: Coded) -> Floats:
+        if self.factors[position].name == name:
+            return np.ones((len(coded[name]), 1))
+
+        def along(x: Floats) -> Floats:
+            return self.factor_values(position, {**coded, name: x})
+
+        lower, upper = self.allowed.get(name, (-np.inf, np.inf))
+        return derivative(along, np.asarray(coded[name], dtype=float), lower, upper)
+
+
+def product(column: Column, values: Mapping[int, Floats]) -> Floats | float:
+    """A column from the values of its factors."""
+    return reduce(mul, (values[at][:, k] for at, k in column.atoms), column.scale)

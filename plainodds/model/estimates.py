@@ -1,0 +1,172 @@
+"""statsmodels results -> coefficients and covariance, one function per kind of result."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+from typing import Any
+
+import numpy as np
+from numpy.typing import NDArray
+from statsmodels.discrete.discrete_model import L1BinaryResults, Logit
+from statsmodels.gam.generalized_additive_model import GLMGam
+from statsmodels.genmod import families
+from statsmodels.genmod.generalized_estimating_equations import GEE, NominalGEE, OrdinalGEE
+from statsmodels.genmod.generalized_linear_model import GLM
+
+from plainodds.errors import FitRefused
+
+__all__ = ["Estimates", "estimates_of"]
+
+Floats = NDArray[np.float64]
+
+_PENALISED = (
+    "The fit is penalised: its coefficients are shrunk on purpose, and the usual covariance "
+    "does not describe them, so there are estimates without intervals."
+)
+
+
+@dataclass(frozen=True, eq=False)
+class Estimates:
+    """What a result says of its coefficients.
+
+    Attributes
+    ----------
+    coefficients : array (k,)
+    covariance : array (k, k) or None
+    covariance_kind : str
+    no_interval : str
+        Why there is no covariance; empty where there is one.
+    degrees_of_freedom : float or None
+        Of the t distribution where the result uses it; None for the normal.
+    """
+
+    coefficients: Floats
+    covariance: Floats | None
+    covariance_kind: str
+    no_interval: str
+    degrees_of_freedom: float | None
+
+
+def estimates_of(result: Any) -> Estimates:
+    """Read coefficients and covariance from a fitted result.
+
+    Raises
+    ------
+    FitRefused
+        If the result is not that of a binary logit model, or its estimates are unusable.
+    """
+    if not hasattr(result, "params") or not hasattr(result, "model"):
+        raise FitRefused(_not_a_result(result))
+    model = result.model
+    if isinstance(model, GLMGam):
+        raise FitRefused(
+            "GLMGam penalises its smooth terms and keeps their basis outside the formula. "
+            "Fit the smooth as bs(x, df=...) in a GLM or Logit instead."
+        )
+    if isinstance(model, Logit):
+        found = _logit(result)
+    elif isinstance(model, GEE):
+        _refuse_other_families(model, exact=(NominalGEE, OrdinalGEE))
+        found = _gee(result)
+    elif isinstance(model, GLM):
+        _refuse_other_families(model, exact=())
+        found = _glm(result)
+    else:
+        raise FitRefused(_not_binary(type(model).__name__))
+    return _checked(found, list(model.exog_names))
+
+
+def _not_a_result(result: Any) -> str:
+    if hasattr(result, "fit") and hasattr(result, "exog_names"):
+        return (
+            "This is a model that has not been fitted. Hand over what its fit() returns: "
+            "FittedLogit(model.fit())."
+        )
+    return (
+        f"A {type(result).__name__} is not a fitted statsmodels result. Hand over what fit() of "
+        "Logit, GLM (binomial, logit link) or GEE (the same) returned."
+    )
+
+
+def _not_binary(name: str) -> str:
+    ways = {
+        "MNLogit": "It models more than two outcome levels; fit one Logit per comparison of two.",
+        "OrderedModel": "It models ordered levels; fit a Logit of 'at or above' a chosen level.",
+        "ConditionalLogit": "It has no intercept per group, so no probabilities; fit a Logit with "
+        "the groups as a category, or a GEE with the groups as clusters.",
+        "Probit": "Its coefficients are not log odds; fit a Logit of the same formula.",
+    }
+    way = ways.get(name, "Fit Logit, GLM(family=Binomial()) or GEE(family=Binomial()) instead.")
+    return f"{name} is not a binary logit model. {way}"
+
+
+def _refuse_other_families(model: Any, exact: tuple[type, ...]) -> None:
+    name = type(model).__name__
+    if exact and isinstance(model, exact):
+        raise FitRefused(_not_binary(name))
+    family = model.family
+    if not isinstance(family, families.Binomial):
+        raise FitRefused(
+            f"The {name}'s family is {type(family).__name__}. Odds and probabilities need "
+            "family=sm.families.Binomial()."
+        )
+    if type(family.link).__name__.lower() != "logit":
+        raise FitRefused(
+            f"The {name}'s link is {type(family.link).__name__}: its coefficients are not log "
+            "odds. Fit it again with the default link of sm.families.Binomial(), the logit."
+        )
+
+
+def _logit(result: Any) -> Estimates:
+    if isinstance(getattr(result, "_results", result), L1BinaryResults):
+        return _without_covariance(result)
+    return _with_covariance(result)
+
+
+def _glm(result: Any) -> Estimates:
+    if not hasattr(result, "cov_params"):
+        return _without_covariance(result)
+    return _with_covariance(result)
+
+
+def _gee(result: Any) -> Estimates:
+    if getattr(result, "regularized", False):
+        return _without_covariance(result)
+    return _with_covariance(result)
+
+
+def _without_covariance(result: Any) -> Estimates:
+    return Estimates(np.asarray(result.params, dtype=float), None, "none", _PENALISED, None)
+
+
+def _with_covariance(result: Any) -> Estimates:
+    freedom = None
+    if getattr(result, "use_t", False):
+        freedom = float(getattr(result, "df_resid_inference", None) or result.df_resid)
+    return Estimates(
+        np.asarray(result.params, dtype=float),
+        np.asarray(result.cov_params(), dtype=float),
+        str(getattr(result, "cov_type", "nonrobust")),
+        "",
+        freedom,
+    )
+
+
+def _checked(found: Estimates, names: list[str]) -> Estimates:
+    bad = [name for name, b in zip(names, found.coefficients, strict=True) if not np.isfinite(b)]
+    if bad:
+        raise FitRefused(
+            f"The coefficient of {', '.join(bad)} is not a number: the fit did not work out. "
+            "Look at its warnings before explaining it."
+        )
+    if found.covariance is None:
+        return found
+    variances = np.diag(found.covariance)
+    bad = [name for name, v in zip(names, variances, strict=True) if not (np.isfinite(v) and v >= 0)]
+    if bad or not np.isfinite(found.covariance).all():
+        raise FitRefused(
+            f"The covariance of {', '.join(bad) or 'the coefficients'} is not a number. Usually a "
+            "column is an exact combination of others (or is constant beside an intercept): "
+            "leave one of them out and fit again."
+        )
+    return found

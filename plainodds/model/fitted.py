@@ -1,0 +1,184 @@
+"""A fitted model as this package needs it."""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Mapping, Sequence
+from dataclasses import dataclass
+from functools import cached_property
+from typing import Any
+
+import numpy as np
+from numpy.typing import NDArray
+
+from plainodds.errors import QuestionRefused
+from plainodds.model.design.design import Coded, Design, Floats
+from plainodds.model.predictors import PredictorFacts, Subject
+from plainodds.scales import probability_from_linear_predictor, probability_slope
+from plainodds.values import Pairs, Scalar, plain
+
+__all__ = ["FittedModel", "Sample"]
+
+_BLOCK = 65_536
+
+
+@dataclass(frozen=True, eq=False)
+class Sample:
+    """The rows that the fit used.
+
+    Attributes
+    ----------
+    matrix : array (n, k)
+        The result's own design matrix, not a copy.
+    columns : mapping of name to array (n,)
+        Coded raw predictors.
+    weights : array (n,) or None
+        Frequency times variance weights times trials; None where all are 1.
+    offset : array (n,) or None
+    """
+
+    matrix: Floats
+    columns: Coded
+    weights: Floats | None
+    offset: Floats | None
+
+    @property
+    def rows(self) -> int:
+        """How many rows."""
+        return len(self.matrix)
+
+    def blocks(self) -> list[slice]:
+        """Slices that cover the rows, each small enough for the processor's cache."""
+        return [slice(start, start + _BLOCK) for start in range(0, self.rows, _BLOCK)]
+
+
+@dataclass(frozen=True, eq=False)
+class FittedModel:
+    """Coefficients, covariance, design and sample of a fitted binary logit model.
+
+    Attributes
+    ----------
+    coefficients : array (k,)
+    covariance : array (k, k) or None
+    degrees_of_freedom : float or None
+        Of the t distribution where the result uses it.
+    design : Design
+    sample : Sample
+    subject : Subject
+        What every answer carries.
+    """
+
+    coefficients: Floats
+    covariance: Floats | None
+    degrees_of_freedom: float | None
+    design: Design
+    sample: Sample
+    subject: Subject
+
+    @property
+    def offset(self) -> float:
+        """The value at which the offset is held; 0 where there is none."""
+        return self.subject.offset or 0.0
+
+    @cached_property
+    def typical(self) -> Pairs:
+        """The typical profile: medians and most frequent levels."""
+        return tuple((facts.name, facts.typical) for facts in self.subject.predictors)
+
+    def completed(self, stated: Mapping[str, Scalar] | Pairs) -> Pairs:
+        """A whole profile: stated values checked and put in order, the rest typical.
+
+        Raises
+        ------
+        QuestionRefused
+            For an unknown predictor or level, text where a number belongs, a missing
+            value, or a value at which the formula cannot be computed.
+        """
+        given = dict(stated)
+        for name in given:
+            self.subject.predictor(name)
+        return tuple(
+            (facts.name, checked(facts, given[facts.name]) if facts.name in given else facts.typical)
+            for facts in self.subject.predictors
+        )
+
+    def coded(self, profiles: Sequence[Pairs]) -> dict[str, NDArray[Any]]:
+        """Whole profiles as coded columns."""
+        columns: dict[str, NDArray[Any]] = {}
+        for position, facts in enumerate(self.subject.predictors):
+            held = [profile[position][1] for profile in profiles]
+            columns[facts.name] = code_values(facts, held)
+        return columns
+
+    def rows(self, profiles: Sequence[Pairs]) -> Floats:
+        """Design rows of whole profiles, shape (len(profiles), k)."""
+        return self.design.rows(self.coded(profiles))
+
+    @cached_property
+    def information_inverse(self) -> Floats:
+        """(X'WX)⁻¹ at the fitted probabilities, whatever covariance the result carries."""
+        k = len(self.coefficients)
+        information = np.zeros((k, k))
+        for block in self.sample.blocks():
+            X = self.sample.matrix[block]
+            eta = X @ self.coefficients
+            if self.sample.offset is not None:
+                eta += self.sample.offset[block]
+            w = probability_slope(probability_from_linear_predictor(eta))
+            if self.sample.weights is not None:
+                w *= self.sample.weights[block]
+            information += X.T @ (X * w[:, None])
+        return np.asarray(np.linalg.pinv(information, hermitian=True))
+
+    @cached_property
+    def leverage_quantiles(self) -> tuple[float, float]:
+        """99th percentile and largest of x'(X'WX)⁻¹x among the rows."""
+        if not self.sample.rows:
+            return math.nan, math.nan
+        inverse = self.information_inverse
+        found = [
+            np.einsum("ij,ij->i", (X := self.sample.matrix[block]) @ inverse, X)
+            for block in self.sample.blocks()
+        ]
+        leverages = np.concatenate(found)
+        return float(np.quantile(leverages, 0.99)), float(leverages.max())
+
+
+def checked(facts: PredictorFacts, value: Any) -> Scalar:
+    """A stated value as the predictor's own kind of value, or a refusal.
+
+    Raises
+    ------
+    QuestionRefused
+        Naming the predictor, the value and what it may be.
+    """
+    if value is None or (isinstance(value, float) and math.isnan(value)):
+        raise QuestionRefused(f"{facts.name}: a missing value has no place in a profile.")
+    value = plain(value)
+    if not facts.is_number:
+        if value not in facts.levels or isinstance(value, str) != isinstance(
+            facts.levels[facts.levels.index(value)], str
+        ):
+            known = ", ".join(repr(level) for level in facts.levels)
+            raise QuestionRefused(f"{facts.name} has no level {value!r}. It has {known}.")
+        return facts.levels[facts.levels.index(value)]
+    if isinstance(value, str):
+        raise QuestionRefused(f"{facts.name} is a number, and {value!r} is text.")
+    number = float(value)
+    if not math.isfinite(number):
+        raise QuestionRefused(f"{facts.name}: {value!r} is not a finite number.")
+    low, high = facts.allowed
+    if not low <= number <= high:
+        raise QuestionRefused(
+            f"{facts.name} = {number:g}: the formula cannot be computed there, only from "
+            f"{low:g} to {high:g} (a spline ends at its boundary knots, a logarithm at 0)."
+        )
+    return number
+
+
+def code_values(facts: PredictorFacts, values: Sequence[Scalar]) -> NDArray[Any]:
+    """Values of one predictor as floats, or as positions of its levels."""
+    if facts.is_number:
+        return np.array(values, dtype=float)
+    places = {level: place for place, level in enumerate(facts.levels)}
+    return np.array([places[value] for value in values], dtype=np.intp)

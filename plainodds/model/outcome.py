@@ -1,0 +1,149 @@
+"""Which event a fit models: found out from the result, and stated."""
+
+from __future__ import annotations
+
+import re
+from dataclasses import dataclass
+from typing import Any
+
+import numpy as np
+from numpy.typing import NDArray
+
+from plainodds.errors import FitRefused
+from plainodds.model.predictors import Outcome, OutcomeFacts
+from plainodds.values import Scalar
+
+__all__ = ["Modelled", "modelled_outcome", "must_turn", "outcome_facts"]
+
+_INDICATOR = re.compile(r"^(?P<name>.*)\[(?:T\.)?(?P<level>[^\[\]]*)\]$", re.DOTALL)
+
+
+@dataclass(frozen=True)
+class Modelled:
+    """The event that statsmodels modelled.
+
+    Attributes
+    ----------
+    name : str
+        The outcome's name.
+    level : scalar or None
+        The modelled level; None for proportions and counts.
+    other : scalar or None
+        The level that was not modelled.
+    flipped : bool
+        Whether the fit modelled the level that most people would not expect, which is
+        the first of a text or yes/no outcome.
+    """
+
+    name: str
+    level: Scalar | None
+    other: Scalar | None
+    flipped: bool
+
+
+def modelled_outcome(model: Any, outcome: NDArray[Any] | None) -> Modelled:
+    """Find out which event a model's coefficients speak of.
+
+    Parameters
+    ----------
+    model : statsmodels model
+    outcome : array (n,) or None
+        The outcome as statsmodels fitted it: 0/1 or shares; None where it was removed.
+
+    Raises
+    ------
+    FitRefused
+        If the outcome is neither two-valued nor a share.
+    """
+    names = model.endog_names
+    names = [names] if isinstance(names, str) else list(names)
+    if outcome is not None:
+        _refuse_other_outcomes(names[0], outcome)
+    if len(names) == 2:
+        parts = [_INDICATOR.match(str(name)) for name in names]
+        if parts[0] and parts[1] and parts[0]["name"] == parts[1]["name"]:
+            # a text or yes/no outcome becomes two indicators, of which the first is modelled
+            first, second = (_level(part["level"]) for part in parts if part)
+            return Modelled(parts[0]["name"], first, second, flipped=True)
+        return Modelled(str(names[0]), None, None, flipped=False)
+    if outcome is not None and np.isin(outcome, (0, 1)).all():
+        boolean = outcome.dtype == bool
+        level, other = (True, False) if boolean else (1, 0)
+        return Modelled(str(names[0]), level, other, flipped=False)
+    return Modelled(str(names[0]), None, None, flipped=False)
+
+
+def _level(text: str) -> Scalar:
+    return {"True": True, "False": False}.get(text, text)
+
+
+def _refuse_other_outcomes(name: str, outcome: NDArray[Any]) -> None:
+    values = np.asarray(outcome, dtype=float)
+    outside = (values < 0) | (values > 1)
+    if outside.any():
+        found = ", ".join(f"{v:g}" for v in np.unique(values)[:5])
+        raise FitRefused(
+            f"The outcome {name} has values {found}, and a chance needs 0 and 1 (or shares "
+            f"between them). Recode it, for example df[{name!r}] == {np.unique(values)[-1]:g}, and "
+            "fit again."
+        )
+    if values.size and (values == values[0]).all() and values[0] in (0.0, 1.0):
+        raise FitRefused(
+            f"The outcome {name} is {values[0]:g} in every row used, so there is nothing to "
+            "explain. Check how it is coded and which rows were dropped."
+        )
+
+
+def outcome_facts(
+    modelled: Modelled, stated: Outcome | None, share: float, turned: bool
+) -> tuple[OutcomeFacts, tuple[str, ...]]:
+    """Settle the outcome's wording, with the notices that the analyst should see.
+
+    Parameters
+    ----------
+    modelled : Modelled
+    stated : Outcome or None
+        What the analyst said.
+    share : float
+        Weighted share of the event that the answers speak of.
+    turned : bool
+        Whether every sign was turned, because the analyst asked for the other level.
+    """
+    stated = stated or Outcome()
+    level = modelled.other if turned else modelled.level
+    event = stated.event or (modelled.name if level is None else f"{modelled.name} = {level}")
+    notices: list[str] = []
+    if turned:
+        notices.append(
+            f"The fit models {modelled.name} = {modelled.level}; as asked, every sign was turned "
+            f"and the answers speak of {modelled.name} = {level}."
+        )
+    elif modelled.flipped:
+        notices.append(
+            f"The fit models {modelled.name} = {modelled.level}, not {modelled.name} = "
+            f"{modelled.other}: of a text or yes/no outcome the first level is taken as the event. "
+            f"The answers speak of {modelled.name} = {modelled.level}; for the other level pass "
+            f"outcome=Outcome(level={modelled.other!r})."
+        )
+    cases = stated.cases or (f"{stated.case}s" if stated.case else "cases")
+    facts = OutcomeFacts(modelled.name, event, stated.case or "case", cases, level, share)
+    return facts, tuple(notices)
+
+
+def must_turn(modelled: Modelled, stated: Outcome | None) -> bool:
+    """Whether the analyst wants the level that the fit did not model.
+
+    Raises
+    ------
+    FitRefused
+        If she names a level that the outcome does not have.
+    """
+    if stated is None or stated.level is None or stated.level == modelled.level:
+        return False
+    if modelled.level is None or stated.level != modelled.other:
+        known = [level for level in (modelled.other, modelled.level) if level is not None]
+        raise FitRefused(
+            f"Outcome(level={stated.level!r}): the outcome {modelled.name} has "
+            + (f"the levels {known[0]!r} and {known[1]!r}." if known else "no levels but counts or shares.")
+        )
+    return True
