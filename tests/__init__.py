@@ -1,0 +1,1 @@
+"""Tests of plainodds; they mirror the package."""
