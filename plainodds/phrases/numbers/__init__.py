@@ -1,0 +1,42 @@
+"""How numbers are written: the one place for percent, ratios, ranges and units of chance.
+
+Nothing here rounds a chance to 0% or 100%, a ratio to 0, or two ends of an interval
+to the same figure where a finer one tells them apart. Negative numbers carry a true
+minus sign (U+2212).
+"""
+
+from plainodds.phrases.numbers.chances import (
+    chance,
+    denominator,
+    frequencies,
+    frequency,
+    frequency_span,
+    told_apart,
+)
+from plainodds.phrases.numbers.quantities import confidence, count, quantity, signed, summing
+from plainodds.phrases.numbers.ratios import p_value, ratio, ratio_interval, simple_fraction
+from plainodds.phrases.numbers.signs import MINUS, NOT_KNOWN
+from plainodds.phrases.numbers.spans import percentage_points, points_span, span
+
+__all__ = [
+    "MINUS",
+    "NOT_KNOWN",
+    "chance",
+    "confidence",
+    "count",
+    "denominator",
+    "frequencies",
+    "frequency",
+    "frequency_span",
+    "p_value",
+    "percentage_points",
+    "points_span",
+    "quantity",
+    "ratio",
+    "ratio_interval",
+    "signed",
+    "simple_fraction",
+    "span",
+    "summing",
+    "told_apart",
+]

@@ -1,0 +1,172 @@
+"""Chances in percent and as natural frequencies."""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Iterable
+
+from plainodds.phrases.numbers.signs import NOT_KNOWN
+
+__all__ = [
+    "chance",
+    "chance_decimals",
+    "denominator",
+    "frequencies",
+    "frequency",
+    "frequency_span",
+    "told_apart",
+]
+
+_LEAST_CHANCE = 0.001
+_DENOMINATORS = (100, 1_000, 10_000)
+
+
+def chance(probability: float, *, decimals: int | None = None) -> str:
+    """Write a chance in percent, with two or three figures.
+
+    Parameters
+    ----------
+    probability : float
+        Between 0 and 1.
+    decimals : int, optional
+        Decimals of the percentage; more are written where fewer would round to
+        0% or 100%.
+
+    Returns
+    -------
+    str
+        Never "0%" and never "100%": beyond a tenth of a percent from either end the
+        text says "under 0.1%" or "over 99.9%".
+
+    Examples
+    --------
+    >>> chance(0.2345), chance(0.0421), chance(0.9421), chance(0.00001), chance(1.0)
+    ('23%', '4.2%', '94.2%', 'under 0.1%', 'over 99.9%')
+    """
+    if math.isnan(probability):
+        return NOT_KNOWN
+    if probability < _LEAST_CHANCE:
+        return "under 0.1%"
+    if probability > 1 - _LEAST_CHANCE:
+        return "over 99.9%"
+    percent = 100 * probability
+    places = chance_decimals(percent) if decimals is None else decimals
+    text = f"{percent:.{places}f}"
+    while float(text) in (0.0, 100.0):
+        places += 1
+        text = f"{percent:.{places}f}"
+    if decimals is None and chance_decimals(float(text)) < places:
+        text = f"{percent:.{chance_decimals(float(text))}f}"
+    return f"{text}%"
+
+
+def told_apart(first: float, second: float) -> tuple[str, str]:
+    """Write two chances with as many decimals, up to two, as tell them apart.
+
+    Examples
+    --------
+    >>> told_apart(0.231, 0.234), told_apart(0.2, 0.3), told_apart(0.2, 0.2)
+    (('23.1%', '23.4%'), ('20%', '30%'), ('20%', '20%'))
+    """
+    told = chance(first), chance(second)
+    for decimals in (1, 2):
+        finer = chance(first, decimals=decimals), chance(second, decimals=decimals)
+        if told[0] != told[1]:
+            break
+        if finer[0] != finer[1]:
+            told = finer
+    return told
+
+
+def chance_decimals(percent: float) -> int:
+    """How many decimals a percentage is written with on its own."""
+    if 10 <= percent <= 90:
+        return 0
+    return 2 if percent < 1 else 1
+
+
+def denominator(chances: Iterable[float]) -> int:
+    """Choose the one denominator over which a set of chances is written as frequencies.
+
+    The smallest of 100, 1,000 and 10,000 over which the rarest event (or the rarest
+    non-event) still counts at least two, and over which chances that differ are told
+    apart where 1,000 can do that.
+
+    Source: one fixed denominator for all, Gigerenzer et al. 2007; Fagerlin,
+    Zikmund-Fisher & Ubel 2011.
+
+    Examples
+    --------
+    >>> denominator([0.23, 0.31]), denominator([0.004, 0.31]), denominator([0.231, 0.234])
+    (100, 1000, 1000)
+    """
+    known = sorted(each for each in chances if not math.isnan(each))
+    if not known:
+        return _DENOMINATORS[0]
+    rarest = min(min(each, 1 - each) for each in known)
+    fitting = [each for each in _DENOMINATORS if rarest * each >= 2]
+    smallest = fitting[0] if fitting else _DENOMINATORS[-1]
+    if smallest == _DENOMINATORS[0] and known[-1] > known[0]:
+        low, high = known[0], known[-1]
+        same = round(low * smallest) == round(high * smallest)
+        if same and round(low * 1_000) != round(high * 1_000):
+            return 1_000
+    return smallest
+
+
+def frequency(probability: float, over: int | None = None) -> str:
+    """Write a chance as a natural frequency.
+
+    Parameters
+    ----------
+    probability : float
+    over : int, optional
+        The denominator; chosen for this chance alone where it is left out.
+
+    Examples
+    --------
+    >>> frequency(0.23), frequency(0.004), frequency(0.004, 100)
+    ('23 in 100', '4 in 1,000', 'under 1 in 100')
+    """
+    if math.isnan(probability):
+        return NOT_KNOWN
+    over = denominator([probability]) if over is None else over
+    return f"{_cases(probability, over)} in {over:,}"
+
+
+def frequency_span(lower: float, upper: float, over: int) -> str:
+    """Write two chances as a range of natural frequencies over one denominator.
+
+    Examples
+    --------
+    >>> frequency_span(0.18, 0.29, 100), frequency_span(0.001, 0.02, 100)
+    ('18 to 29 in 100', 'under 1 to 2 in 100')
+    """
+    if math.isnan(lower) or math.isnan(upper):
+        return NOT_KNOWN
+    low, high = _cases(lower, over), _cases(upper, over)
+    return f"{low} in {over:,}" if low == high else f"{low} to {high} in {over:,}"
+
+
+def frequencies(chances: Iterable[float], over: int) -> str:
+    """Write several chances as natural frequencies over one denominator, said once.
+
+    Examples
+    --------
+    >>> frequencies([0.12, 0.07, 0.03], 100), frequencies([0.12], 100)
+    ('12, 7 and 3 in 100', '12 in 100')
+    """
+    *first, last = (_cases(each, over) for each in chances)
+    start = f"{', '.join(first)} and " if first else ""
+    return f"{start}{last} in {over:,}"
+
+
+def _cases(probability: float, over: int) -> str:
+    if math.isnan(probability):
+        return NOT_KNOWN
+    cases = round(probability * over)
+    if cases == 0:
+        return "under 1"
+    if cases == over:
+        return f"over {over - 1:,}"
+    return f"{cases:,}"

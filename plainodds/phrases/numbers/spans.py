@@ -1,0 +1,125 @@
+"""Ranges, as coarse as their width warrants, and differences of chances."""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Callable
+from typing import TypeAlias
+
+from plainodds.phrases.numbers.chances import chance, chance_decimals
+from plainodds.phrases.numbers.quantities import quantity
+from plainodds.phrases.numbers.ratios import ratio, ratio_interval
+from plainodds.phrases.numbers.signs import MINUS, NOT_KNOWN, with_sign
+
+__all__ = ["Say", "percentage_points", "points_span", "span"]
+
+Say: TypeAlias = Callable[..., str]
+"""Writes one number; takes the number of decimals as the keyword `decimals`."""
+
+_MOST_DECIMALS = 4
+_LEAST_POINTS = 0.001
+
+
+def span(lower: float, upper: float, say: Say = chance) -> str:
+    """Write a range, with a precision as coarse as its width warrants.
+
+    Parameters
+    ----------
+    lower, upper : float
+    say : callable
+        How one end is written: `chance`, `signed`, `quantity` or another function of
+        this module that takes `decimals`.
+
+    Returns
+    -------
+    str
+        A single figure where both ends read the same at every precision offered.
+
+    Examples
+    --------
+    >>> span(0.1834, 0.2921), span(0.2312, 0.2341), span(0.004, 0.12)
+    ('18% to 29%', '23.1% to 23.4%', '0.4% to 12%')
+    """
+    if say is chance:
+        return _span(lower, upper, say, 0.01, lambda p: chance_decimals(100 * p))
+    if say is ratio:
+        return ratio_interval(lower, upper)
+    if say is quantity:
+        low, high = quantity(lower), quantity(upper)
+        return low if low == high else f"{low} to {high}"
+    return _span(lower, upper, say, 1.0, lambda _: 2)
+
+
+def _span(
+    lower: float, upper: float, say: Say, unit: float, decimals: Callable[[float], int]
+) -> str:
+    width = upper - lower
+    if not math.isfinite(width):
+        low, high = say(lower), say(upper)
+        return low if low == high else f"{low} to {high}"
+    warranted = 0
+    while warranted < _MOST_DECIMALS and unit * 10.0**-warranted > width / 5:
+        warranted += 1
+    places = min(warranted, max(decimals(lower), decimals(upper)))
+    low, high = say(lower, decimals=places), say(upper, decimals=places)
+    while low == high and places < warranted:
+        places += 1
+        low, high = say(lower, decimals=places), say(upper, decimals=places)
+    return low if low == high else f"{low} to {high}"
+
+
+def percentage_points(difference: float, *, decimals: int | None = None, sign: bool = False) -> str:
+    """Write a difference of two chances in percentage points.
+
+    Parameters
+    ----------
+    difference : float
+        Difference of probabilities, between −1 and 1.
+    decimals : int, optional
+    sign : bool
+        Whether a positive difference carries a plus sign.
+
+    Examples
+    --------
+    >>> percentage_points(0.034), percentage_points(-0.12), percentage_points(0.00042)
+    ('3.4 percentage points', '−12 percentage points', '0.042 percentage points')
+    """
+    return f"{_points(difference, decimals=decimals, sign=sign)} percentage points"
+
+
+def points_span(lower: float, upper: float) -> str:
+    """Write a range of differences of chances in percentage points.
+
+    Examples
+    --------
+    >>> points_span(-0.021, 0.056), points_span(0.021, 0.056)
+    ('−2 to +6 percentage points', '2.1 to 5.6 percentage points')
+    """
+    sign = lower < 0 < upper
+
+    def say(difference: float, decimals: int | None = None) -> str:
+        return _points(difference, decimals=decimals, sign=sign)
+
+    return f"{_span(lower, upper, say, 0.01, _points_decimals)} percentage points"
+
+
+def _points(difference: float, decimals: int | None = None, sign: bool = False) -> str:
+    if math.isnan(difference):
+        return NOT_KNOWN
+    if difference == 0:
+        return "0"
+    points = 100 * difference
+    if 0 < abs(points) < _LEAST_POINTS:
+        within = f"{_LEAST_POINTS:g}"
+        return f"under {within}" if points > 0 else f"between {MINUS}{within} and 0"
+    places = _points_decimals(difference) if decimals is None else decimals
+    while float(f"{points:.{places}f}") == 0:
+        places += 1
+    return with_sign(f"{points:,.{places}f}", sign)
+
+
+def _points_decimals(difference: float) -> int:
+    size = abs(100 * difference)
+    if size >= 10 or size == 0:
+        return 0
+    return 1 if size >= 1 else min(3, 1 - math.floor(math.log10(size)))

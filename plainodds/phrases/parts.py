@@ -1,0 +1,197 @@
+"""Parts of sentences that every answer needs: intervals, cautions, who is spoken of."""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Callable
+
+from plainodds.answers.estimate import Estimate
+from plainodds.model.predictors import OutcomeFacts, Subject
+from plainodds.phrases.labels import listed, predictor_name, sentence_case, value_label
+from plainodds.phrases.numbers import (
+    NOT_KNOWN,
+    chance,
+    confidence,
+    count,
+    percentage_points,
+    points_span,
+    quantity,
+    ratio,
+    ratio_interval,
+    signed,
+    span,
+)
+from plainodds.phrases.units import tidy
+from plainodds.values import Pairs
+
+__all__ = [
+    "ASSOCIATION",
+    "article",
+    "chance_with_interval",
+    "covariance_words",
+    "difference_with_interval",
+    "interval",
+    "model_cautions",
+    "profile_words",
+    "ratio_with_interval",
+    "rows_words",
+    "say_level_once",
+    "sentence",
+    "signed_with_interval",
+    "standard_error",
+    "typical_case",
+]
+
+ASSOCIATION = (
+    "These figures say what goes with what in the data; they do not say what would follow "
+    "if a value were changed on purpose."
+)
+
+_COVARIANCE = {
+    "nonrobust": "the model-based covariance matrix",
+    "cluster": "a cluster-robust covariance matrix",
+    "robust": "a robust (sandwich) covariance matrix",
+    "naive": "the model-based (naive) covariance matrix",
+    "bias_reduced": "a bias-reduced robust covariance matrix",
+    "HAC": "a covariance matrix robust to heteroscedasticity and autocorrelation (HAC)",
+}
+_LISTED_AT_MOST = 8
+
+
+def sentence(text: str) -> str:
+    """Make a sentence: one line, a capital where one is due, a full stop."""
+    text = sentence_case(text)
+    return text if text.endswith((".", "!", "?")) else f"{text}."
+
+
+def article(noun: str) -> str:
+    """Put "a" or "an" before a noun.
+
+    Examples
+    --------
+    >>> article("pipe"), article("observation"), article("hour"), article("unit")
+    ('a pipe', 'an observation', 'an hour', 'a unit')
+    """
+    noun = tidy(noun)
+    start = noun.lower()
+    if start.startswith(("hour", "heir", "honest", "honour")):
+        return f"an {noun}"
+    if start.startswith(("uni", "use", "usu", "eu", "one")) and not start.startswith("unin"):
+        return f"a {noun}"
+    return f"an {noun}" if start.startswith(("a", "e", "i", "o", "u")) else f"a {noun}"
+
+
+def interval(estimate: Estimate, say: Callable[[float, float], str], level: float) -> str:
+    """The interval in brackets, to follow an estimate; empty where there is none."""
+    if estimate.lower is None or estimate.upper is None:
+        return ""
+    if math.isnan(estimate.lower) or math.isnan(estimate.upper):
+        return f" ({confidence(level)} interval {NOT_KNOWN})"
+    return f" ({confidence(level)} interval {say(estimate.lower, estimate.upper)})"
+
+
+def chance_with_interval(estimate: Estimate, level: float) -> str:
+    """As in "23% (95% interval 18% to 29%)"."""
+    return chance(estimate.estimate) + interval(estimate, span, level)
+
+
+def ratio_with_interval(estimate: Estimate, level: float) -> str:
+    """As in "2.02 (95% interval 1.08 to 3.78)"."""
+    return ratio(estimate.estimate) + interval(estimate, ratio_interval, level)
+
+
+def signed_with_interval(estimate: Estimate, level: float) -> str:
+    """As in "+0.42 (95% interval +0.10 to +0.74)"."""
+    return signed(estimate.estimate) + interval(estimate, _signed_range, level)
+
+
+def _signed_range(lower: float, upper: float) -> str:
+    return f"{signed(lower)} to {signed(upper)}"
+
+
+def standard_error(estimate: Estimate) -> str:
+    """The standard error, to be listed after an estimate; empty where there is none."""
+    if estimate.se is None:
+        return ""
+    return f", standard error {signed(estimate.se).lstrip('+')}"
+
+
+def difference_with_interval(estimate: Estimate, level: float) -> str:
+    """As in "3.4 percentage points higher (95% interval 1.2 to 5.6 higher)"."""
+    difference = estimate.estimate
+    if math.isnan(difference):
+        told = f"{NOT_KNOWN} in percentage points"
+    elif difference == 0:
+        told = "neither higher nor lower"
+    else:
+        told = f"{percentage_points(abs(difference))} {_side(difference)}"
+    return told + interval(estimate, _sides, level)
+
+
+def _side(difference: float) -> str:
+    return "higher" if difference > 0 else "lower"
+
+
+def _sides(lower: float, upper: float) -> str:
+    if lower < 0 < upper:
+        low, high = _bare(points_span(-lower, -lower)), _bare(points_span(upper, upper))
+        return f"{low} lower to {high} higher"
+    if upper <= 0:
+        return f"{_bare(points_span(-upper, -lower))} lower"
+    return f"{_bare(points_span(lower, upper))} higher"
+
+
+def _bare(points: str) -> str:
+    return points.removesuffix(" percentage points")
+
+
+def say_level_once(told: list[str], level: float) -> list[str]:
+    """Name the confidence level in the first of several texts only."""
+    return [*told[:1], *(text.replace(f"({confidence(level)} interval ", "(") for text in told[1:])]
+
+
+def rows_words(subject: Subject) -> str:
+    """How many rows the fit used: "6,000 rows"."""
+    return "1 row" if subject.rows == 1 else f"{count(subject.rows)} rows"
+
+
+def covariance_words(subject: Subject) -> str:
+    """The covariance that the intervals rest on."""
+    kind = tidy(subject.covariance_kind)
+    if kind.upper().startswith("HC") and kind[2:].isdigit():
+        return f"a covariance matrix robust to heteroscedasticity ({kind.upper()})"
+    return _COVARIANCE.get(kind, f"the covariance matrix of kind “{kind}”")
+
+
+def model_cautions(subject: Subject) -> tuple[str, ...]:
+    """What holds for every answer of this fitted model."""
+    cautions = []
+    if subject.no_interval:
+        cautions.append("No intervals can be given here.")
+        cautions.append(sentence(subject.no_interval))
+    if subject.offset is not None:
+        cautions.append(
+            "The model has an offset, an amount that is taken as known; here it is held at "
+            f"{quantity(subject.offset)}."
+        )
+    return (*cautions, *(sentence(notice) for notice in subject.notices))
+
+
+def profile_words(subject: Subject, values: Pairs, *, at_most: int = _LISTED_AT_MOST) -> str:
+    """Values in a row of words: "pipe age 40 years, material PVC and soil low".
+
+    More than `at_most` are cut short, and the text says how many are left out.
+    """
+    told = [
+        f"{predictor_name(facts)} {value_label(facts, held)}"
+        for facts, held in ((subject.predictor(name), held) for name, held in values)
+    ]
+    left = len(told) - at_most
+    if left > 1:
+        told = [*told[:at_most], f"{left} more"]
+    return listed(told)
+
+
+def typical_case(outcome: OutcomeFacts) -> str:
+    """Who is typical: "a typical pipe"."""
+    return f"a typical {tidy(outcome.case)}"

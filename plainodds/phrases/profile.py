@@ -1,0 +1,236 @@
+"""Profiles in words."""
+
+from __future__ import annotations
+
+import math
+
+from plainodds.answers.profile import Comparison, LedgerRow, ProfileAnswer, ProfilePoint
+from plainodds.phrases.alternative import alternative
+from plainodds.phrases.familiarity import familiarity_cautions, familiarity_words
+from plainodds.phrases.labels import chance_of, listed, predictor_name, value_label
+from plainodds.phrases.numbers import (
+    chance,
+    confidence,
+    denominator,
+    frequency,
+    frequency_span,
+    ratio,
+    signed,
+    told_apart,
+)
+from plainodds.phrases.parts import (
+    ASSOCIATION,
+    article,
+    chance_with_interval,
+    covariance_words,
+    difference_with_interval,
+    model_cautions,
+    profile_words,
+    ratio_with_interval,
+    rows_words,
+    sentence,
+    signed_with_interval,
+    standard_error,
+    typical_case,
+)
+from plainodds.phrases.saying import Audience, Words, for_audience, words
+from plainodds.phrases.units import tidy
+from plainodds.values import Pairs
+
+__all__: list[str] = []
+
+_RARE = 0.10
+_NOTHING = 1e-9
+_EVERYTHING = 1_000_000
+
+
+@words.register
+def _(answer: ProfileAnswer, audience: Audience = "plain") -> Words:
+    return for_audience(audience, {"plain": _plain, "technical": _technical}, answer)
+
+
+def _plain(answer: ProfileAnswer) -> Words:
+    over = _denominator(answer)
+    told = [_chance_told(answer, over), _framed(answer, over)]
+    if answer.comparison is not None:
+        told += _comparison(answer, answer.comparison, over)
+    told += _ledger(answer)
+    told += familiarity_words(answer)
+    return _words(answer, told)
+
+
+def _words(answer: ProfileAnswer, told: list[str]) -> Words:
+    cautions = (*familiarity_cautions(answer), *_reading(answer), ASSOCIATION)
+    return Words(
+        tuple(map(sentence, told)),
+        (*map(sentence, cautions), *model_cautions(answer.subject)),
+    )
+
+
+def _denominator(answer: ProfileAnswer) -> int:
+    spoken = [answer.point.probability.estimate]
+    if answer.comparison is not None or _adds(answer):
+        spoken.append(answer.start.probability.estimate)
+    return denominator(spoken)
+
+
+def _who(answer: ProfileAnswer, point: ProfilePoint, stated: Pairs, at_most: int = 8) -> str:
+    """Whom a profile describes: "a pipe with pipe age 40 years and otherwise typical"."""
+    subject = answer.subject
+    names = {name for name, _ in stated}
+    chosen = tuple(pair for pair in point.values if pair[0] in names)
+    if not chosen:
+        return typical_case(subject.outcome)
+    text = f"{article(subject.outcome.case)} with {profile_words(subject, chosen, at_most=at_most)}"
+    return text if len(chosen) == len(point.values) else f"{text} and otherwise typical"
+
+
+def _chance_told(answer: ProfileAnswer, over: int) -> str:
+    estimate, level = answer.point.probability, answer.question.level
+    outcome = answer.subject.outcome
+    counted = frequency(estimate.estimate, over)
+    if estimate.lower is not None and estimate.upper is not None:
+        counted += f", with a range of {frequency_span(estimate.lower, estimate.upper, over)}"
+    return (
+        f"For {_who(answer, answer.point, answer.question.values)}, the chance of "
+        f"{tidy(outcome.event)} is {chance_with_interval(estimate, level)}, that is {counted}"
+    )
+
+
+def _framed(answer: ProfileAnswer, over: int) -> str:
+    """The same chance from its other side, since either side alone can mislead."""
+    event = answer.point.probability.estimate
+    return (
+        f"The chance that this does not happen is {chance(1 - event)}, that is "
+        f"{frequency(1 - event, over)}"
+    )
+
+
+def _comparison(answer: ProfileAnswer, comparison: Comparison, over: int) -> list[str]:
+    level = answer.question.level
+    here, there = answer.point.probability.estimate, answer.start.probability.estimate
+    after, before = told_apart(here, there)
+    with_whom = _who(answer, answer.start, answer.question.against or ())
+    often, seldom = frequency(here, over), frequency(there, over)
+    counted = f", that is {often} rather than {seldom}" if often != seldom else ""
+    chances = f"is {after} rather than {before}{counted}" if after != before else f"is {after} too"
+    return [
+        f"Compared with {with_whom}, the chance {chances}",
+        f"That is {difference_with_interval(comparison.risk_difference, level)}",
+        f"Put as ratios, the chance is multiplied by "
+        f"{ratio_with_interval(comparison.risk_ratio, level)} and the odds by "
+        f"{ratio_with_interval(comparison.odds_ratio, level)}",
+    ]
+
+
+def _adds(answer: ProfileAnswer) -> list[LedgerRow]:
+    rows = [row for row in answer.ledger if not abs(row.adds.estimate) <= _NOTHING]
+    known = [row for row in rows if not math.isnan(row.adds.estimate)]
+    return sorted(known, key=lambda row: -abs(row.adds.estimate))
+
+
+def _ledger(answer: ProfileAnswer) -> list[str]:
+    """What moves the odds most between the start and the profile, each way."""
+    rows = _adds(answer)
+    if not rows:
+        return []
+    start = (
+        "that profile" if answer.comparison is not None else typical_case(answer.subject.outcome)
+    )
+    opening = f"Starting from {start}, with a chance of {chance(answer.start.probability.estimate)}"
+    up = next((row for row in rows if row.adds.estimate > 0), None)
+    down = next((row for row in rows if row.adds.estimate < 0), None)
+    told = []
+    for row, most in ((up, "raises"), (down, "lowers")):
+        if row is not None:
+            told.append(
+                f"what {most} the odds most is {_group(answer, row)}, which multiplies them by "
+                f"{ratio_with_interval(row.multiplies, answer.question.level)}"
+            )
+    if down is rows[0] and up is not None:
+        told.reverse()
+    return [f"{opening}, {'; '.join(told)}"]
+
+
+def _group(answer: ProfileAnswer, row: LedgerRow) -> str:
+    subject, values = answer.subject, dict(answer.point.values)
+    together = [
+        f"{predictor_name(facts)} ({value_label(facts, values[facts.name])})"
+        for facts in map(subject.predictor, row.predictors)
+    ]
+    return f"{listed(together)} together" if len(together) > 1 else listed(together)
+
+
+def _reading(answer: ProfileAnswer) -> list[str]:
+    if answer.comparison is None:
+        return []
+    chances = (answer.point.probability.estimate, answer.start.probability.estimate)
+    if not max(chances) > _RARE:
+        return []
+    return [
+        "An odds ratio is not a ratio of chances: where chances are above about 10%, as here, it "
+        "lies further from 1 than the ratio of the chances does"
+    ]
+
+
+def _technical(answer: ProfileAnswer) -> Words:
+    level, subject = answer.question.level, answer.subject
+    told = [_on_scales(answer, answer.point, answer.question.values)]
+    if answer.comparison is not None:
+        compared = answer.comparison
+        told.append(_on_scales(answer, answer.start, answer.question.against or ()))
+        told.append(
+            f"Odds ratio {ratio_with_interval(compared.odds_ratio, level)}, risk ratio "
+            f"{ratio_with_interval(compared.risk_ratio, level)}; the risk is "
+            f"{difference_with_interval(compared.risk_difference, level)}"
+        )
+    rows = [
+        f"{listed([predictor_name(subject.predictor(name)) for name in row.predictors])} "
+        f"{signed_with_interval(row.adds, level)}"
+        for row in _adds(answer)
+    ]
+    if rows:
+        eta = signed(answer.start.linear_predictor.estimate)
+        told.append(f"Added to the linear predictor's {eta} at the start: {'; '.join(rows)}")
+    told += familiarity_words(answer)
+    method = f"From {rows_words(subject)}"
+    if answer.point.probability.lower is not None:
+        method += (
+            f"; {confidence(level)} Wald intervals on the linear predictor, carried over to odds "
+            f"and chance, with {covariance_words(subject)}"
+        )
+        if answer.comparison is not None:
+            method += "; comparisons by the joint delta method, ratios on the log scale"
+    return _words(answer, [*told, method])
+
+
+def _on_scales(answer: ProfileAnswer, point: ProfilePoint, stated: Pairs) -> str:
+    level = answer.question.level
+    return (
+        f"For {_who(answer, point, stated, _EVERYTHING)}: linear predictor "
+        f"{signed_with_interval(point.linear_predictor, level)}"
+        f"{standard_error(point.linear_predictor)}; odds "
+        f"{ratio_with_interval(point.odds, level)}; chance "
+        f"{chance_with_interval(point.probability, level)}"
+    )
+
+
+@alternative.register
+def _(answer: ProfileAnswer) -> str:
+    point, level = answer.point, answer.question.level
+    start = (
+        f"{chance_of(answer.subject.outcome)} for "
+        f"{_who(answer, point, answer.question.values)}, read on three aligned scales: linear "
+        f"predictor {signed(point.linear_predictor.estimate)}, odds "
+        f"{ratio(point.odds.estimate)}, chance {chance_with_interval(point.probability, level)}"
+    )
+    rows = _adds(answer)
+    other = chance(answer.start.probability.estimate)
+    if not rows:
+        return sentence(start)
+    steps = "1 step" if len(rows) == 1 else f"{len(rows)} steps"
+    who = "the profile compared with" if answer.comparison is not None else "the typical profile"
+    return (
+        f"{sentence(start)} "
+        f"{sentence(f'A ledger leads there in {steps} from {who}, with a chance of {other}')}"
+    )
