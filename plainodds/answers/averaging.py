@@ -130,8 +130,11 @@ def _blocks(
     for block in _slices(model.sample.rows, points):
         X = model.sample.matrix[block]
         coded = _block_of(model, block)
-        yield X, parts.still_values(coded, len(X)), _rest(model, X @ resting, block), _weights(
-            model, block
+        yield (
+            X,
+            parts.still_values(coded, len(X)),
+            _rest(model, X @ resting, block),
+            _weights(model, block),
         )
 
 

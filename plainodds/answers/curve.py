@@ -2,13 +2,40 @@
 
 from __future__ import annotations
 
+from itertools import product
 from typing import ClassVar, Literal, TypeAlias
 
+import numpy as np
+from numpy.typing import NDArray
+
+from plainodds.answers.averaging import averaged_probability, averaged_slope
+from plainodds.answers.delta import Intervals, checked_level, mapped, wald
 from plainodds.answers.questions import Answer, Question
-from plainodds.model.predictors import Subject
+from plainodds.answers.support import Support, is_supported, support_of
+from plainodds.errors import QuestionRefused
+from plainodds.model.fitted import FittedModel, checked, code_values
+from plainodds.model.predictors import PredictorFacts, Subject
+from plainodds.scales import (
+    linear_predictor_from_probability,
+    odds_from_linear_predictor,
+    probability_curvature,
+    probability_from_linear_predictor,
+    probability_slope,
+)
 from plainodds.values import Pairs, Scalar, value
 
-__all__ = ["CurveAnswer", "CurveLine", "CurveQuestion", "Others", "Scale", "Support"]
+__all__ = [
+    "CurveAnswer",
+    "CurveLine",
+    "CurveQuestion",
+    "Others",
+    "Scale",
+    "Support",
+    "answer_curve",
+]
+
+_POINTS = 101
+Floats = NDArray[np.float64]
 
 Others: TypeAlias = Literal["typical", "observed"] | Pairs
 Scale: TypeAlias = Literal["probability", "slope", "odds", "linear_predictor"]
@@ -72,24 +99,6 @@ class CurveLine:
 
 
 @value
-class Support:
-    """Where the data are along the predictor, for one value of `by`: counts, no rows.
-
-    Attributes
-    ----------
-    by : scalar or None
-    edges : tuple of float
-        Bin edges, one more than counts; empty for levels.
-    counts : tuple of int
-        Rows in each bin, or of each level.
-    """
-
-    by: Scalar | None
-    edges: tuple[float, ...]
-    counts: tuple[int, ...]
-
-
-@value
 class CurveAnswer(Answer):
     """A curve with its uncertainty and the data's support.
 
@@ -109,3 +118,178 @@ class CurveAnswer(Answer):
     lines: tuple[CurveLine, ...]
     support: tuple[Support, ...]
     held: Pairs
+
+
+def answer_curve(model: FittedModel, question: CurveQuestion) -> CurveAnswer:
+    """The chance, its slope, the odds or η along a predictor, with intervals.
+
+    With the others held, Wald intervals on η are carried over to the scale asked for
+    (Hosmer, Lemeshow & Sturdivant), so that a chance stays within 0 and 1. With the
+    others as observed, the delta method works on the logit of the averaged chance
+    (Muller & MacLehose 2014). Slopes have Wald intervals on their own scale, with the
+    exact gradient (Greene, Econometric Analysis).
+
+    Raises
+    ------
+    QuestionRefused
+        For an unknown predictor, level or value, a slope along levels, or `by` being
+        the predictor itself.
+    """
+    level = checked_level(question.level)
+    facts = model.subject.predictor(question.predictor)
+    by = _by_facts(model, question)
+    if question.scale not in ("probability", "slope", "odds", "linear_predictor"):
+        raise QuestionRefused(
+            f"scale={question.scale!r}: choose probability, slope, odds or linear_predictor."
+        )
+    if question.scale == "slope" and not facts.is_number:
+        raise QuestionRefused(
+            f"{facts.name} has levels and no slope between them; ask for scale='probability' and "
+            "compare the levels' chances."
+        )
+    at = _points_along(facts, question.at)
+    values = _by_values(by, question.by_values) if by is not None else (None,)
+    if question.others == "observed":
+        held: Pairs = ()
+        found = _observed(model, question, facts, by, at, values, level)
+    else:
+        profile = model.completed({} if question.others == "typical" else _stated(question))
+        moving = {facts.name} | ({by.name} if by is not None else set())
+        held = tuple((name, v) for name, v in profile if name not in moving)
+        found = _held(model, question, profile, at, values, level)
+    support = support_of(model, facts, by, values)
+    lines = tuple(
+        _line(found, facts, b, at, place * len(at), support[place])
+        for place, b in enumerate(values)
+    )
+    return CurveAnswer(question, model.subject, lines, support, held)
+
+
+def _by_facts(model: FittedModel, question: CurveQuestion) -> PredictorFacts | None:
+    if question.by is None:
+        if question.by_values:
+            raise QuestionRefused("by_values= names values, but by= names no predictor.")
+        return None
+    if question.by == question.predictor:
+        raise QuestionRefused(f"{question.by!r} cannot be drawn along itself; choose another by=.")
+    return model.subject.predictor(question.by)
+
+
+def _stated(question: CurveQuestion) -> dict[str, Scalar]:
+    if isinstance(question.others, str):
+        raise QuestionRefused(
+            f"others={question.others!r}: choose 'typical', 'observed' or a mapping of values."
+        )
+    stated = dict(question.others)
+    for name in (question.predictor, question.by):
+        if name in stated:
+            raise QuestionRefused(f"others= holds {name!r}, which the curve itself moves.")
+    return stated
+
+
+def _points_along(facts: PredictorFacts, stated: tuple[Scalar, ...]) -> tuple[Scalar, ...]:
+    if stated:
+        return tuple(checked(facts, each) for each in stated)
+    if not facts.is_number:
+        return facts.levels
+    low = max(facts.offered[0], facts.allowed[0])
+    high = min(facts.offered[1], facts.allowed[1])
+    grid = np.linspace(low, high, _POINTS)
+    if facts.kind == "whole number":
+        grid = np.unique(np.clip(np.round(grid), low, high))
+    return tuple(checked(facts, float(x)) for x in grid)
+
+
+def _by_values(by: PredictorFacts, stated: tuple[Scalar, ...]) -> tuple[Scalar, ...]:
+    if stated:
+        return tuple(dict.fromkeys(checked(by, each) for each in stated))
+    return by.levels or tuple(dict.fromkeys(checked(by, each) for each in by.quartiles))
+
+
+def _held(
+    model: FittedModel,
+    question: CurveQuestion,
+    profile: Pairs,
+    at: tuple[Scalar, ...],
+    values: tuple[Scalar | None, ...],
+    level: float,
+) -> Intervals:
+    """Estimates at a held profile, the lines one after the other."""
+    base = dict(profile)
+    profiles = []
+    for b, x in product(values, at):
+        moved = {question.predictor: x} | ({} if question.by is None else {question.by: b})
+        profiles.append(tuple({**base, **moved}.items()))
+    rows = model.rows(profiles)
+    eta = rows @ model.coefficients + model.offset
+    if question.scale == "slope":
+        row_slopes = model.design.row_derivatives(question.predictor, model.coded(profiles))
+        pi = probability_from_linear_predictor(eta)
+        steepness = row_slopes @ model.coefficients
+        gradients = (
+            probability_slope(pi)[:, None] * row_slopes
+            + (probability_curvature(pi) * steepness)[:, None] * rows
+        )
+        return wald(model, probability_slope(pi) * steepness, gradients, level)
+    return _on_scale(wald(model, eta, rows, level), question.scale)
+
+
+def _observed(
+    model: FittedModel,
+    question: CurveQuestion,
+    facts: PredictorFacts,
+    by: PredictorFacts | None,
+    at: tuple[Scalar, ...],
+    values: tuple[Scalar | None, ...],
+    level: float,
+) -> Intervals:
+    """Averages over the rows, the lines one after the other."""
+    points = list(product(values, at))
+    moved = {facts.name: code_values(facts, [x for _, x in points])}
+    if by is not None:
+        moved[by.name] = code_values(by, [b for b, _ in points if b is not None])
+    if question.scale == "slope":
+        slopes = averaged_slope(model, facts.name, moved)
+        return wald(model, slopes.value, slopes.gradient, level)
+    averages = averaged_probability(model, moved)
+    eta = linear_predictor_from_probability(averages.value)
+    with np.errstate(divide="ignore", invalid="ignore"):
+        gradients = averages.gradient / probability_slope(averages.value)[:, None]
+    return _on_scale(wald(model, eta, gradients, level), question.scale)
+
+
+def _on_scale(intervals: Intervals, scale: Scale) -> Intervals:
+    if scale == "linear_predictor":
+        return intervals
+    if scale == "odds":
+        return mapped(intervals, odds_from_linear_predictor, odds_from_linear_predictor)
+    return mapped(
+        intervals,
+        probability_from_linear_predictor,
+        lambda eta: probability_slope(probability_from_linear_predictor(eta)),
+    )
+
+
+def _line(
+    found: Intervals,
+    facts: PredictorFacts,
+    by: Scalar | None,
+    at: tuple[Scalar, ...],
+    start: int,
+    support: Support,
+) -> CurveLine:
+    def part(values: Floats) -> tuple[float, ...]:
+        return tuple(values[start : start + len(at)].tolist())
+
+    supported = tuple(is_supported(facts, support, x) for x in at)
+    if found.se is None or found.lower is None or found.upper is None:
+        return CurveLine(by, at, part(found.estimate), None, None, None, supported)
+    return CurveLine(
+        by,
+        at,
+        part(found.estimate),
+        part(found.se),
+        part(found.lower),
+        part(found.upper),
+        supported,
+    )

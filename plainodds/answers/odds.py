@@ -2,14 +2,24 @@
 
 from __future__ import annotations
 
-from typing import ClassVar, Literal
+import math
+from collections.abc import Iterator, Mapping
+from dataclasses import replace
+from itertools import product
+from typing import Any, ClassVar, Literal
 
+import numpy as np
+
+from plainodds.answers.delta import checked_level, mapped, p_values, wald
 from plainodds.answers.estimate import Estimate
 from plainodds.answers.questions import Answer, Question
-from plainodds.model.predictors import Subject
-from plainodds.values import Pairs, Scalar, value
+from plainodds.errors import QuestionRefused
+from plainodds.model.fitted import FittedModel, checked
+from plainodds.model.predictors import PredictorFacts, Subject
+from plainodds.scales import odds_from_linear_predictor, probability_from_linear_predictor
+from plainodds.values import Pairs, Scalar, pairs, value
 
-__all__ = ["OddsAnswer", "OddsQuestion", "OddsRow"]
+__all__ = ["OddsAnswer", "OddsQuestion", "OddsRow", "answer_odds", "answer_odds_of"]
 
 
 @value
@@ -101,3 +111,250 @@ class OddsAnswer(Answer):
     subject: Subject
     rows: tuple[OddsRow, ...]
     typical_probability: float
+
+
+def answer_odds(model: FittedModel, question: OddsQuestion) -> OddsAnswer:
+    """Odds ratios of stated changes, with Wald intervals on the log scale.
+
+    The odds ratio of a change from x₀ to x₁ is exp((x₁ − x₀)'β), and its log has the
+    variance (x₁ − x₀)'V(x₁ − x₀): so any step, any reference level and any value of a
+    modifier needs no new fit. Source: Hosmer, Lemeshow & Sturdivant, Applied Logistic
+    Regression, ch. 3.
+
+    Raises
+    ------
+    QuestionRefused
+        For an unknown predictor, level, value or setting.
+    """
+    level = checked_level(question.level)
+    changes = list(_changes(model, question))
+    at = [(row.given, row.predictor) for row in changes]
+    starts = [
+        model.completed({**dict(g), p: r.start}) for (g, p), r in zip(at, changes, strict=True)
+    ]
+    ends = [model.completed({**dict(g), p: r.end}) for (g, p), r in zip(at, changes, strict=True)]
+    contrasts = model.rows(ends) - model.rows(starts)
+    logs = wald(model, contrasts @ model.coefficients, contrasts, level)
+    ratios = mapped(logs, odds_from_linear_predictor, odds_from_linear_predictor)
+    rows = tuple(
+        replace(row, odds_ratio=ratios.at(i), log_odds_ratio=logs.at(i), p_value=p)
+        for i, (row, p) in enumerate(zip(changes, p_values(model, logs), strict=True))
+    )
+    if question.order == "size":
+        rows = tuple(sorted(rows, key=lambda row: -abs(row.log_odds_ratio.estimate)))
+    typical = model.rows([model.typical]) @ model.coefficients + model.offset
+    probability = float(probability_from_linear_predictor(typical)[0])
+    return OddsAnswer(question, model.subject, rows, probability)
+
+
+def answer_odds_of(models: Mapping[str, FittedModel], question: OddsQuestion) -> OddsAnswer:
+    """The same changes in several fitted models, for example crude and adjusted.
+
+    Steps, values compared and references are those of the first model that has the
+    predictor, so that rows set side by side speak of the same change.
+
+    Raises
+    ------
+    QuestionRefused
+        If there are no models, or a predictor is in none of them.
+    """
+    if not models:
+        raise QuestionRefused("odds_of needs at least one fitted model, as {'adjusted': result}.")
+    known = {facts.name for model in models.values() for facts in model.subject.predictors}
+    for name in question.predictors:
+        if name not in known:
+            raise QuestionRefused(f"None of the models has a predictor {name!r}.")
+    shared = question
+    answers = []
+    for name, model in models.items():
+        own = {facts.name for facts in model.subject.predictors}
+        answer = answer_odds(model, _limited_to(shared, own))
+        answers.append(tuple(replace(row, model=name) for row in answer.rows))
+        shared = _with_the_same_changes(shared, answer)
+    order = dict.fromkeys((r.predictor, r.end, r.given) for rows in answers for r in rows)
+    positions = {key: place for place, key in enumerate(order)}
+    first_place: dict[str, int] = {}
+    for predictor, *_ in order:
+        first_place.setdefault(predictor, len(first_place))
+    rows = sorted(
+        (row for rows in answers for row in rows),
+        key=lambda r: (first_place[r.predictor], positions[r.predictor, r.end, r.given]),
+    )
+    first = next(iter(models.values()))
+    question = replace(question, models=tuple(models))
+    typical = answer_odds(first, OddsQuestion(predictors=())).typical_probability
+    return OddsAnswer(question, _joined(models), tuple(rows), typical)
+
+
+def _joined(models: Mapping[str, FittedModel]) -> Subject:
+    """The first model's subject, with the predictors and notices of all."""
+    subjects = [model.subject for model in models.values()]
+    predictors = {
+        facts.name: facts for subject in reversed(subjects) for facts in subject.predictors
+    }
+    order = dict.fromkeys(facts.name for subject in subjects for facts in subject.predictors)
+    return replace(
+        subjects[0],
+        predictors=tuple(predictors[name] for name in order),
+        notices=tuple(dict.fromkeys(n for subject in subjects for n in subject.notices)),
+        no_interval=next((s.no_interval for s in subjects if s.no_interval), ""),
+    )
+
+
+def _limited_to(question: OddsQuestion, own: set[str]) -> OddsQuestion:
+    def kept(stated: Pairs) -> Pairs:
+        return tuple((name, held) for name, held in stated if name in own)
+
+    asked = tuple(name for name in question.predictors if name in own)
+    return replace(
+        question,
+        predictors=asked if question.predictors else (),
+        steps=kept(question.steps),
+        between=kept(question.between),
+        references=kept(question.references),
+        given=kept(question.given),
+    )
+
+
+def _with_the_same_changes(question: OddsQuestion, answer: OddsAnswer) -> OddsQuestion:
+    steps, between = dict(question.steps), dict(question.between)
+    references = dict(question.references)
+    for row in answer.rows:
+        facts = answer.subject.predictor(row.predictor)
+        if not facts.is_number:
+            references.setdefault(row.predictor, row.start)
+        elif row.predictor not in between and row.per_step:
+            steps.setdefault(row.predictor, float(row.end) - float(row.start))
+        elif row.predictor not in steps:
+            between.setdefault(row.predictor, (row.start, row.end))
+    return replace(
+        question, steps=pairs(steps), between=pairs(between), references=pairs(references)
+    )
+
+
+_UNKNOWN = Estimate(math.nan, None, None, None)
+
+
+def _changes(model: FittedModel, question: OddsQuestion) -> Iterator[OddsRow]:
+    """The rows to fill: every change at every stated combination of its modifiers."""
+    subject = model.subject
+    names = question.predictors or tuple(facts.name for facts in subject.predictors)
+    steps, between = dict(question.steps), dict(question.between)
+    references, given = dict(question.references), dict(question.given)
+    for name in (*names, *steps, *between, *references, *given):
+        subject.predictor(name)
+    _refuse_idle_given(subject, names, given)
+    for name in names:
+        facts = subject.predictor(name)
+        if facts.is_number:
+            if name in references:
+                raise QuestionRefused(
+                    f"{name} is a number and has no reference level; name two values: "
+                    f"between={{{name!r}: (from, to)}}."
+                )
+            compared = [_number_change(facts, steps.get(name), between.get(name))]
+        else:
+            compared = list(_level_changes(model, facts, steps, between, references))
+        for start, end, per_step in compared:
+            for held in _combinations(subject, facts, given):
+                yield OddsRow(name, start, end, per_step, held, _UNKNOWN, _UNKNOWN, None)
+
+
+def _number_change(facts: PredictorFacts, step: Any, between: Any) -> tuple[Scalar, Scalar, bool]:
+    if step is not None and between is not None:
+        raise QuestionRefused(f"{facts.name}: name a step or two values, not both.")
+    if between is not None:
+        start, end = _two_values(facts, between)
+        return start, end, False
+    if facts.linear:
+        size = facts.step if step is None else step
+        if isinstance(size, str) or not math.isfinite(size) or size == 0:
+            raise QuestionRefused(f"{facts.name}: step={size!r} is not a number other than 0.")
+        start = checked(facts, facts.typical)
+        return start, checked(facts, float(start) + float(size)), True
+    if step is not None:
+        low, _, high = facts.quartiles
+        raise QuestionRefused(
+            f"{facts.name} enters the model along a curve, so a step of {step!r} multiplies the odds "
+            f"differently at each value. Name two values: between={{{facts.name!r}: "
+            f"({low:g}, {high:g})}}."
+        )
+    low, _, high = facts.quartiles
+    if low == high:
+        low, high = facts.minimum, facts.maximum
+    return checked(facts, low), checked(facts, high), False
+
+
+def _two_values(facts: PredictorFacts, stated: Any) -> tuple[Scalar, Scalar]:
+    if isinstance(stated, str) or not isinstance(stated, tuple | list) or len(stated) != 2:
+        raise QuestionRefused(f"{facts.name}: between={stated!r} is not two values, (from, to).")
+    start, end = checked(facts, stated[0]), checked(facts, stated[1])
+    if start == end:
+        raise QuestionRefused(f"{facts.name}: from {start!r} to {end!r} is no change.")
+    return start, end
+
+
+def _level_changes(
+    model: FittedModel,
+    facts: PredictorFacts,
+    steps: Mapping[str, Any],
+    between: Mapping[str, Any],
+    references: Mapping[str, Any],
+) -> Iterator[tuple[Scalar, Scalar, bool]]:
+    if facts.name in steps:
+        raise QuestionRefused(
+            f"{facts.name} has levels and no step; choose a reference: "
+            f"references={{{facts.name!r}: {facts.levels[0]!r}}}."
+        )
+    if facts.name in between:
+        start, end = _two_values(facts, between[facts.name])
+        yield start, end, False
+        return
+    if facts.name in references:
+        reference = checked(facts, references[facts.name])
+    else:
+        reference = _coded_reference(model, facts)
+    for level in facts.levels:
+        if level != reference:
+            yield reference, level, False
+
+
+def _coded_reference(model: FittedModel, facts: PredictorFacts) -> Scalar:
+    """The level that the fit's own coding sets to zero; else the first."""
+    profiles = [model.completed({facts.name: level}) for level in facts.levels]
+    rows = model.rows(profiles)[:, model.design.touched([facts.name])]
+    zero = np.nonzero((rows == 0).all(axis=1))[0]
+    return facts.levels[int(zero[0])] if len(zero) == 1 else facts.levels[0]
+
+
+def _combinations(
+    subject: Subject, facts: PredictorFacts, given: Mapping[str, Any]
+) -> Iterator[Pairs]:
+    modifiers = [subject.predictor(name) for name in facts.modifiers]
+    choices = [
+        _modifier_values(modifier, given.get(modifier.name), alone=len(modifiers) == 1)
+        for modifier in modifiers
+    ]
+    for chosen in product(*choices):
+        yield tuple((m.name, v) for m, v in zip(modifiers, chosen, strict=True))
+
+
+def _modifier_values(facts: PredictorFacts, stated: Any, alone: bool) -> tuple[Scalar, ...]:
+    if stated is not None:
+        listed = stated if isinstance(stated, tuple | list) else (stated,)
+        return tuple(dict.fromkeys(checked(facts, each) for each in listed))
+    if facts.levels:
+        return facts.levels
+    # beside other modifiers one value keeps the rows few enough to read
+    chosen = facts.quartiles if alone else (facts.typical,)
+    return tuple(dict.fromkeys(checked(facts, each) for each in chosen))
+
+
+def _refuse_idle_given(subject: Subject, names: tuple[str, ...], given: Mapping[str, Any]) -> None:
+    modifiers = {m for name in names for m in subject.predictor(name).modifiers}
+    for name in given:
+        if name not in modifiers:
+            raise QuestionRefused(
+                f"given={{{name!r}: …}}: {name} shares no term with the predictors asked for, so "
+                "their odds ratios are the same at each of its values."
+            )

@@ -2,11 +2,21 @@
 
 from __future__ import annotations
 
-from typing import ClassVar, Literal
+from typing import ClassVar
 
+import numpy as np
+
+from plainodds.answers.delta import Intervals, checked_level, mapped, wald
 from plainodds.answers.estimate import Estimate
+from plainodds.answers.familiarity import Familiarity, familiarity_of
 from plainodds.answers.questions import Answer, Question
+from plainodds.model.fitted import FittedModel
 from plainodds.model.predictors import Subject
+from plainodds.scales import (
+    odds_from_linear_predictor,
+    probability_from_linear_predictor,
+    probability_slope,
+)
 from plainodds.values import Pairs, value
 
 __all__ = [
@@ -16,6 +26,7 @@ __all__ = [
     "ProfileAnswer",
     "ProfilePoint",
     "ProfileQuestion",
+    "answer_profile",
 ]
 
 
@@ -38,35 +49,6 @@ class ProfileQuestion(Question):
 
     method: ClassVar[str] = "profile"
     positional: ClassVar[tuple[str, ...]] = ("values",)
-
-
-@value
-class Familiarity:
-    """How familiar a profile is to the data.
-
-    Attributes
-    ----------
-    leverage : float
-        x₀'(X'WX)⁻¹x₀ of the profile.
-    common_leverage, largest_leverage : float
-        99th percentile and largest leverage among the rows; nan where the model
-        carries no rows.
-    rows_alike : int
-        Rows of the same levels, each number within half a standard deviation.
-    beyond : tuple of str
-        Predictors whose value lies outside the data's range.
-    verdict : {"familiar", "rare", "beyond"}
-        "beyond" where a value is outside the range or the leverage is larger than
-        every row's; "rare" where no row is alike or the leverage is above the 99th
-        percentile.
-    """
-
-    leverage: float
-    common_leverage: float
-    largest_leverage: float
-    rows_alike: int
-    beyond: tuple[str, ...]
-    verdict: Literal["familiar", "rare", "beyond"]
 
 
 @value
@@ -150,3 +132,106 @@ class ProfileAnswer(Answer):
     start: ProfilePoint
     comparison: Comparison | None
     ledger: tuple[LedgerRow, ...]
+
+
+def answer_profile(model: FittedModel, question: ProfileQuestion) -> ProfileAnswer:
+    """η, odds and π of a profile, its comparison with another, and the ledger.
+
+    Intervals are Wald on η, carried over to odds and probability (Agresti). The
+    comparison's differences and ratios come from one joint delta method, ratios on the
+    log scale (Localio 2007).
+
+    Raises
+    ------
+    QuestionRefused
+        For an unknown predictor or level, or a value that cannot be computed.
+    """
+    level = checked_level(question.level)
+    values = model.completed(question.values)
+    against = None if question.against is None else model.completed(question.against)
+    start_values = model.typical if against is None else against
+    rows = model.rows([values, start_values])
+    eta = wald(model, rows @ model.coefficients + model.offset, rows, level)
+    point, start = (
+        _point(model, each, rows[i], eta, i) for i, each in enumerate((values, start_values))
+    )
+    return ProfileAnswer(
+        question=question,
+        subject=model.subject,
+        point=point,
+        start=start,
+        comparison=None if against is None else _comparison(model, rows, eta.estimate, level),
+        ledger=_ledger(model, rows[0] - rows[1], float(eta.estimate[1]), level),
+    )
+
+
+def _point(
+    model: FittedModel, values: Pairs, row: np.ndarray, eta: Intervals, position: int
+) -> ProfilePoint:
+    odds = mapped(eta, odds_from_linear_predictor, odds_from_linear_predictor)
+    probability = mapped(
+        eta,
+        probability_from_linear_predictor,
+        lambda x: probability_slope(probability_from_linear_predictor(x)),
+    )
+    return ProfilePoint(
+        values,
+        eta.at(position),
+        odds.at(position),
+        probability.at(position),
+        familiarity_of(model, values, row),
+    )
+
+
+def _comparison(model: FittedModel, rows: np.ndarray, eta: np.ndarray, level: float) -> Comparison:
+    pi = probability_from_linear_predictor(eta)
+    slope = probability_slope(pi)
+    contrast = rows[0] - rows[1]
+    log_odds_ratio = wald(model, eta[:1] - eta[1:], contrast[None], level)
+    difference = wald(
+        model, pi[:1] - pi[1:], (slope[0] * rows[0] - slope[1] * rows[1])[None], level
+    )
+    log_risk_ratio = wald(
+        model,
+        np.log(pi[:1]) - np.log(pi[1:]),
+        ((1 - pi[0]) * rows[0] - (1 - pi[1]) * rows[1])[None],
+        level,
+    )
+    return Comparison(
+        odds_ratio=mapped(log_odds_ratio, np.exp, np.exp).at(0),
+        risk_difference=difference.at(0),
+        risk_ratio=mapped(log_risk_ratio, np.exp, np.exp).at(0),
+    )
+
+
+def _ledger(
+    model: FittedModel, contrast: np.ndarray, start: float, level: float
+) -> tuple[LedgerRow, ...]:
+    """One row per group of predictors that share terms: so no order matters."""
+    groups = _groups(model)
+    parts = np.zeros((len(groups), len(contrast)))
+    for place, group in enumerate(groups):
+        touched = model.design.touched(group)
+        parts[place, touched] = contrast[touched]
+    adds = wald(model, parts @ model.coefficients, parts, level)
+    multiplies = mapped(adds, odds_from_linear_predictor, odds_from_linear_predictor)
+    running = start + np.cumsum(adds.estimate)
+    chances = probability_from_linear_predictor(running)
+    return tuple(
+        LedgerRow(group, adds.at(i), multiplies.at(i), float(running[i]), float(chances[i]))
+        for i, group in enumerate(groups)
+    )
+
+
+def _groups(model: FittedModel) -> tuple[tuple[str, ...], ...]:
+    """Predictors joined by shared terms, directly or through others."""
+    subject = model.subject
+    group_of: dict[str, set[str]] = {}
+    for facts in subject.predictors:
+        joined = {facts.name}.union(*(group_of.get(m, {m}) for m in facts.modifiers))
+        joined |= group_of.get(facts.name, set())
+        for name in joined:
+            group_of[name] = joined
+    order = [facts.name for facts in subject.predictors]
+    ordered = (tuple(n for n in order if n in group_of[name]) for name in order)
+    return tuple(dict.fromkeys(ordered))

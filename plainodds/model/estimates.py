@@ -162,7 +162,9 @@ def _checked(found: Estimates, names: list[str]) -> Estimates:
     if found.covariance is None:
         return found
     variances = np.diag(found.covariance)
-    bad = [name for name, v in zip(names, variances, strict=True) if not (np.isfinite(v) and v >= 0)]
+    bad = [
+        name for name, v in zip(names, variances, strict=True) if not (np.isfinite(v) and v >= 0)
+    ]
     if bad or not np.isfinite(found.covariance).all():
         raise FitRefused(
             f"The covariance of {', '.join(bad) or 'the coefficients'} is not a number. Usually a "

@@ -41,8 +41,10 @@ def number_facts(
     if column.kind == "whole number":
         median = float(math.floor(median))
     p05, p95 = weighted_quantiles(values, weights, (0.05, 0.95))
-    step = stated.step if stated.step is not None else sensible_step(
-        (p95 - p05) or (high - low), column.kind
+    step = (
+        stated.step
+        if stated.step is not None
+        else sensible_step((p95 - p05) or (high - low), column.kind)
     )
     offered = stated.range if stated.range is not None else (low, high)
     typical = stated.typical if stated.typical is not None else median
@@ -60,7 +62,7 @@ def number_facts(
         quartiles=(q1, median, q3),
         offered=(float(offered[0]), float(offered[1])),
         allowed=allowed,
-        typical=float(typical),
+        typical=_whole(float(typical)) if column.kind == "whole number" else float(typical),
         step=float(step),
         linear=linear,
         modifiers=modifiers,
@@ -83,16 +85,16 @@ def level_facts(
     """
     levels = column.levels
     counts = np.bincount(column.values, minlength=len(levels))
-    weighted = counts if weights is None else np.bincount(
-        column.values, weights=weights, minlength=len(levels)
+    weighted = (
+        counts
+        if weights is None
+        else np.bincount(column.values, weights=weights, minlength=len(levels))
     )
     typical = levels[int(np.argmax(weighted))] if stated.typical is None else stated.typical
     labels = dict(stated.level_labels or ())
     for level in (typical, *labels):
         if level not in levels:
-            raise FitRefused(
-                f"Predictor {name!r} has no level {level!r}. It has {list(levels)!r}."
-            )
+            raise FitRefused(f"Predictor {name!r} has no level {level!r}. It has {list(levels)!r}.")
     return PredictorFacts(
         name=name,
         label=stated.label or _spoken(name),
@@ -111,6 +113,10 @@ def level_facts(
         linear=True,
         modifiers=modifiers,
     )
+
+
+def _whole(number: float) -> float:
+    return int(number) if number.is_integer() else number
 
 
 def _refuse_impossible(
@@ -227,7 +233,9 @@ def allowed_range(
             return False
         return True
 
-    return _edge(works, low, low - 10 * spread, spread), _edge(works, high, high + 10 * spread, spread)
+    return _edge(works, low, low - 10 * spread, spread), _edge(
+        works, high, high + 10 * spread, spread
+    )
 
 
 def _edge(works, inside: float, outside: float, spread: float) -> float:  # type: ignore[no-untyped-def]

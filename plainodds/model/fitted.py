@@ -98,7 +98,10 @@ class FittedModel:
         for name in given:
             self.subject.predictor(name)
         return tuple(
-            (facts.name, checked(facts, given[facts.name]) if facts.name in given else facts.typical)
+            (
+                facts.name,
+                checked(facts, given[facts.name]) if facts.name in given else facts.typical,
+            )
             for facts in self.subject.predictors
         )
 
@@ -113,6 +116,15 @@ class FittedModel:
     def rows(self, profiles: Sequence[Pairs]) -> Floats:
         """Design rows of whole profiles, shape (len(profiles), k)."""
         return self.design.rows(self.coded(profiles))
+
+    @cached_property
+    def standard_deviations(self) -> dict[str, float]:
+        """Of each predictor that takes numbers, over the rows."""
+        return {
+            facts.name: float(np.std(self.sample.columns[facts.name]))
+            for facts in self.subject.predictors
+            if facts.is_number
+        }
 
     @cached_property
     def information_inverse(self) -> Floats:
@@ -173,7 +185,7 @@ def checked(facts: PredictorFacts, value: Any) -> Scalar:
             f"{facts.name} = {number:g}: the formula cannot be computed there, only from "
             f"{low:g} to {high:g} (a spline ends at its boundary knots, a logarithm at 0)."
         )
-    return number
+    return int(number) if facts.kind == "whole number" and number.is_integer() else number
 
 
 def code_values(facts: PredictorFacts, values: Sequence[Scalar]) -> NDArray[Any]:

@@ -14,7 +14,13 @@ from plainodds.model import derived as derivation
 from plainodds.model.design.design import Column, Design, Factor, Floats
 from plainodds.model.design.plain_columns import plain_columns
 from plainodds.model.estimates import estimates_of
-from plainodds.model.facts import allowed_range, is_linear, level_facts, number_facts, shares_terms_with
+from plainodds.model.facts import (
+    allowed_range,
+    is_linear,
+    level_facts,
+    number_facts,
+    shares_terms_with,
+)
 from plainodds.model.fitted import FittedModel, Sample
 from plainodds.model.outcome import modelled_outcome, must_turn, outcome_facts
 from plainodds.model.predictors import Outcome, Predictor, PredictorFacts, Setting, Subject

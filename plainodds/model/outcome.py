@@ -144,6 +144,10 @@ def must_turn(modelled: Modelled, stated: Outcome | None) -> bool:
         known = [level for level in (modelled.other, modelled.level) if level is not None]
         raise FitRefused(
             f"Outcome(level={stated.level!r}): the outcome {modelled.name} has "
-            + (f"the levels {known[0]!r} and {known[1]!r}." if known else "no levels but counts or shares.")
+            + (
+                f"the levels {known[0]!r} and {known[1]!r}."
+                if known
+                else "no levels but counts or shares."
+            )
         )
     return True

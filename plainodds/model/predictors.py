@@ -236,4 +236,3 @@ class Subject:
                 return facts
         known = ", ".join(facts.name for facts in self.predictors)
         raise QuestionRefused(f"The model has no predictor {name!r}. It has: {known}.")
-

@@ -25,9 +25,7 @@ def weighted_quantiles(
     shares : sequence of float in [0, 1]
     """
     if weights is None:
-        return tuple(
-            float(q) for q in np.quantile(values, shares, method="averaged_inverted_cdf")
-        )
+        return tuple(float(q) for q in np.quantile(values, shares, method="averaged_inverted_cdf"))
     order = np.argsort(values, kind="stable")
     ordered, cumulated = values[order], np.cumsum(weights[order])
     found = []
@@ -36,5 +34,7 @@ def weighted_quantiles(
         place = min(int(np.searchsorted(cumulated, target * (1 - 1e-12))), len(ordered) - 1)
         following = min(place + 1, len(ordered) - 1)
         ends_here = abs(cumulated[place] - target) <= 1e-12 * cumulated[-1]
-        found.append(float((ordered[place] + ordered[following]) / 2 if ends_here else ordered[place]))
+        found.append(
+            float((ordered[place] + ordered[following]) / 2 if ends_here else ordered[place])
+        )
     return tuple(found)

@@ -74,7 +74,9 @@ def coded_column(
 
 def _boolean(name: str, series: pd.Series[Any], stated: Predictor) -> RawColumn:
     if stated.kind not in (None, "yes/no", "category"):
-        raise FitRefused(f"Predictor {name!r} is stated as a {stated.kind}, but holds yes/no values.")
+        raise FitRefused(
+            f"Predictor {name!r} is stated as a {stated.kind}, but holds yes/no values."
+        )
     return RawColumn(stated.kind or "yes/no", series.to_numpy(dtype=np.int8), (False, True))
 
 
@@ -93,7 +95,11 @@ def _numeric(
         return _category(name, series, stated, engine_levels)
     two = bool(np.isin(values, (0.0, 1.0)).all())
     kind: Kind = stated.kind or (
-        "yes/no" if two else "whole number" if bool((values == np.round(values)).all()) else "number"
+        "yes/no"
+        if two
+        else "whole number"
+        if bool((values == np.round(values)).all())
+        else "number"
     )
     if kind == "yes/no":
         if not two:
@@ -121,7 +127,9 @@ def _category(
     elif isinstance(series.dtype, pd.CategoricalDtype):
         found = [plain(level) for level in series.dtype.categories]
     else:
-        found = sorted((plain(level) for level in pd.unique(series)), key=lambda v: (str(type(v)), v))
+        found = sorted(
+            (plain(level) for level in pd.unique(series)), key=lambda v: (str(type(v)), v)
+        )
     levels = _in_stated_order(name, found, stated)
     codes = pd.Categorical(series, categories=list(levels)).codes
     if (codes < 0).any():

@@ -132,7 +132,9 @@ def _from_arrays(model: Any, data: pd.DataFrame | None) -> Source:
     def column(name: str) -> Any:
         return matrix[:, places[name]] if name in places else extra[name]
 
-    return Source(exog_names + tuple(extra), column, factors, columns, matrix, *_outcome_parts(model))
+    return Source(
+        exog_names + tuple(extra), column, factors, columns, matrix, *_outcome_parts(model)
+    )
 
 
 _REMOVED = (
@@ -146,9 +148,7 @@ def _own_matrix(model: Any) -> Floats | None:
     return None if exog is None else np.asarray(exog, dtype=float)
 
 
-def _rows_used(
-    model: Any, frame: pd.DataFrame, matrix: Floats | None
-) -> NDArray[np.bool_] | None:
+def _rows_used(model: Any, frame: pd.DataFrame, matrix: Floats | None) -> NDArray[np.bool_] | None:
     """Which rows of the frame the fit used, by position; None for all of them."""
     dropped = getattr(model.data, "missing_row_idx", None)
     dropped = np.array([], dtype=int) if dropped is None else np.asarray(dropped, dtype=int)

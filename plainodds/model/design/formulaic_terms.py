@@ -74,7 +74,9 @@ def formulaic_terms(
             places[key] = len(factors)
             factor = scoped.factor.factor
             names = frozenset(str(v) for v in spec.factor_variables[factor]) & set(known)
-            made = _one_factor(spec, factor, scoped.reduced, names, examples[list(names)], functions)
+            made = _one_factor(
+                spec, factor, scoped.reduced, names, examples[list(names)], functions
+            )
             field_names.append(made.columns)
             # a column taken as it is need not be asked of formulaic
             bare = made.levels is None and names == {factor.expr}

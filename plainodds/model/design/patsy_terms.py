@@ -72,7 +72,9 @@ def patsy_terms(
             names = raw_names(getattr(factor, "code", factor.name()), known)
             plain = matrix is None and _bare(factor, names)
             factors.append(
-                PlainFactor(*names) if plain else PatsyFactor(spec.factor_infos[factor], names, matrix)
+                PlainFactor(*names)
+                if plain
+                else PatsyFactor(spec.factor_infos[factor], names, matrix)
             )
         return places[key]
 
@@ -80,7 +82,9 @@ def patsy_terms(
     for term in spec.terms:
         for subterm in spec.term_codings[term]:
             positions = [place(factor, subterm) for factor in subterm.factors]
-            for atoms in _combinations(positions, [_width(spec, f, subterm) for f in subterm.factors]):
+            for atoms in _combinations(
+                positions, [_width(spec, f, subterm) for f in subterm.factors]
+            ):
                 columns.append(Column(next(names), atoms))
     return tuple(factors), tuple(columns)
 

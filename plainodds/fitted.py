@@ -1,0 +1,372 @@
+"""FittedLogit: a fitted model, and the questions that can be asked of it."""
+
+from __future__ import annotations
+
+from collections.abc import Callable, Iterable, Mapping, Sequence
+from typing import Any, Literal
+
+import pandas as pd
+
+from plainodds.answers.curve import CurveAnswer, CurveQuestion, Others, Scale, answer_curve
+from plainodds.answers.odds import OddsAnswer, OddsQuestion, answer_odds, answer_odds_of
+from plainodds.answers.profile import ProfileAnswer, ProfileQuestion, answer_profile
+from plainodds.answers.questions import Answer, Question
+from plainodds.errors import FitRefused, QuestionRefused
+from plainodds.model.fitted import FittedModel
+from plainodds.model.intake import take_in
+from plainodds.model.predictors import Outcome, Predictor, Subject
+from plainodds.values import Scalar, pairs, plain
+
+__all__ = ["FittedLogit", "odds_of"]
+
+_ANSWERERS: dict[type[Question], Callable[[FittedModel, Any], Answer]] = {
+    OddsQuestion: answer_odds,
+    CurveQuestion: answer_curve,
+    ProfileQuestion: answer_profile,
+}
+
+
+class FittedLogit:
+    """A fitted binary logit model, ready to be asked.
+
+    Parameters
+    ----------
+    result : statsmodels result
+        What `fit()` of Logit, or of GLM or GEE with a binomial family and logit link,
+        returned; made with patsy, with formulaic or without a formula.
+    data : DataFrame, optional
+        The data that the model was fitted on, where the result no longer carries them,
+        or where `derived` reads columns that the model does not.
+    predictors : mapping of name to Predictor, optional
+        Labels, units, steps, ranges, typical values; what is left out comes from the data.
+    outcome : Outcome, optional
+        What the event and the cases are called.
+    derived : mapping of name to expression, optional
+        Columns that move with others, as ``{"exper_sq": "exper ** 2"}``.
+    functions : mapping of name to callable, optional
+        Functions of your own that a formulaic formula mentions.
+    offset : float, optional
+        Where the model has an offset: the value at which it is held. Default: its median.
+
+    Raises
+    ------
+    FitRefused
+        If the result is no binary logit model, or its data are gone or don't match;
+        the message says why and what to do.
+
+    Examples
+    --------
+    >>> import statsmodels.formula.api as smf
+    >>> import plainodds as po
+    >>> pipes = po.demo.tessel_bay()
+    >>> fit = po.FittedLogit(smf.logit("burst ~ age_years * material", pipes).fit(disp=0))
+    >>> [facts.name for facts in fit.subject.predictors]
+    ['material', 'age_years']
+    """
+
+    def __init__(
+        self,
+        result: Any,
+        data: pd.DataFrame | None = None,
+        *,
+        predictors: Mapping[str, Predictor] | None = None,
+        outcome: Outcome | None = None,
+        derived: Mapping[str, str] | None = None,
+        functions: Mapping[str, Callable[..., Any]] | None = None,
+        offset: float | None = None,
+    ) -> None:
+        if isinstance(result, FittedLogit):
+            raise FitRefused(
+                "This is a FittedLogit already; ask it, or hand over what fit() returned."
+            )
+        self.model = take_in(
+            result,
+            data,
+            _stated(predictors),
+            outcome,
+            dict(derived or {}),
+            dict(functions or {}),
+            offset,
+        )
+
+    @property
+    def subject(self) -> Subject:
+        """The outcome, the predictors and the notices: what every answer carries."""
+        return self.model.subject
+
+    def __repr__(self) -> str:
+        subject = self.subject
+        lines = [
+            f"FittedLogit: chance of {subject.outcome.event}, {subject.rows:,} rows",
+            *(f"  {facts.name} ({facts.kind})" for facts in subject.predictors),
+            *(f"  Note: {notice}" for notice in subject.notices),
+        ]
+        return "\n".join(lines)
+
+    def ask(self, question: Question) -> Answer:
+        """Answer any question.
+
+        Parameters
+        ----------
+        question : OddsQuestion, CurveQuestion or ProfileQuestion
+
+        Raises
+        ------
+        QuestionRefused
+            With the reason and the way out.
+
+        Examples
+        --------
+        >>> import statsmodels.formula.api as smf
+        >>> import plainodds as po
+        >>> pipes = po.demo.tessel_bay()
+        >>> fit = po.FittedLogit(smf.logit("burst ~ age_years", pipes).fit(disp=0))
+        >>> fit.ask(fit.odds().question) == fit.odds()
+        True
+        """
+        if type(question) not in _ANSWERERS:
+            raise QuestionRefused(f"{type(question).__name__} is not a question of plainodds.")
+        return _ANSWERERS[type(question)](self.model, question)
+
+    def odds(
+        self,
+        predictors: str | Iterable[str] = (),
+        *,
+        steps: Mapping[str, float] | None = None,
+        between: Mapping[str, Sequence[Scalar]] | None = None,
+        references: Mapping[str, Scalar] | None = None,
+        given: Mapping[str, Any] | None = None,
+        order: Literal["model", "size"] = "model",
+        level: float = 0.95,
+    ) -> OddsAnswer:
+        """By what are the odds multiplied when a predictor changes?
+
+        One row for each change: a number per step, a category's levels against a
+        reference, a predictor that enters along a curve from its lower to its upper
+        quartile, and an interacting predictor once for each value of its modifiers.
+
+        Parameters
+        ----------
+        predictors : str or iterable of str
+            Whose odds ratios; all when left out.
+        steps : mapping of name to number, optional
+            As ``{"age_years": 10}``.
+        between : mapping of name to (from, to), optional
+            Two values to compare, as ``{"pressure_m": (40, 60)}``.
+        references : mapping of name to level, optional
+            No new fit is needed for another reference.
+        given : mapping of modifier to value or values, optional
+            Where an interacting predictor's odds ratio is stated; default: every level,
+            or the quartiles of a number.
+        order : {"model", "size"}
+        level : float
+            Confidence level.
+
+        Raises
+        ------
+        QuestionRefused
+            For an unknown predictor, level or value.
+
+        Notes
+        -----
+        exp((x₁ − x₀)'β) with variance (x₁ − x₀)'V(x₁ − x₀) on the log scale. Source:
+        Hosmer, Lemeshow & Sturdivant, Applied Logistic Regression, ch. 3.
+
+        Examples
+        --------
+        >>> import statsmodels.formula.api as smf
+        >>> import plainodds as po
+        >>> pipes = po.demo.tessel_bay()
+        >>> fit = po.FittedLogit(smf.logit("burst ~ age_years", pipes).fit(disp=0))
+        >>> row = fit.odds(steps={"age_years": 10}).rows[0]
+        >>> row.odds_ratio.lower < row.odds_ratio.estimate < row.odds_ratio.upper
+        True
+        """
+        question = _odds_question(predictors, steps, between, references, given, order, level)
+        return answer_odds(self.model, question)
+
+    def curve(
+        self,
+        predictor: str,
+        by: str | None = None,
+        *,
+        by_values: Sequence[Scalar] = (),
+        others: Literal["typical", "observed"] | Mapping[str, Scalar] = "typical",
+        scale: Scale = "probability",
+        at: Sequence[Scalar] = (),
+        level: float = 0.95,
+    ) -> CurveAnswer:
+        """How does the chance change along a predictor?
+
+        Parameters
+        ----------
+        predictor : str
+        by : str, optional
+            A second predictor: one line for each of its values.
+        by_values : sequence, optional
+            Its values; default: every level, or the quartiles of a number.
+        others : {"typical", "observed"} or mapping
+            What the remaining predictors do: held at the typical profile (medians and
+            most frequent levels); each row keeps its own values and the chances are
+            averaged; or held at stated values, the rest typical.
+        scale : {"probability", "slope", "odds", "linear_predictor"}
+            "slope" is the marginal effect dπ/dx, through every column that the
+            predictor moves.
+        at : sequence, optional
+            The predictor's values; default: a grid over the data's range, or every level.
+        level : float
+            Confidence level.
+
+        Raises
+        ------
+        QuestionRefused
+            For an unknown predictor, level or value.
+
+        Notes
+        -----
+        Held: Wald interval on η, carried over (Hosmer, Lemeshow & Sturdivant). Observed:
+        delta method on the logit of the average (Muller & MacLehose 2014, Int J
+        Epidemiol 43:962). Slope: exact gradient (Greene, Econometric Analysis).
+
+        Examples
+        --------
+        >>> import statsmodels.formula.api as smf
+        >>> import plainodds as po
+        >>> pipes = po.demo.tessel_bay()
+        >>> fit = po.FittedLogit(smf.logit("burst ~ age_years * material", pipes).fit(disp=0))
+        >>> [line.by for line in fit.curve("age_years", by="material").lines]
+        ['cast iron', 'ductile iron', 'PVC']
+        """
+        held: Others = others if isinstance(others, str) else pairs(others)
+        question = CurveQuestion(predictor, by, _tuple(by_values), held, scale, _tuple(at), level)
+        return answer_curve(self.model, question)
+
+    def profile(
+        self,
+        values: Mapping[str, Scalar] | None = None,
+        against: Mapping[str, Scalar] | None = None,
+        *,
+        level: float = 0.95,
+    ) -> ProfileAnswer:
+        """What is the chance for this profile, and what makes it so?
+
+        Parameters
+        ----------
+        values : mapping of name to value
+            Stated values; the remaining predictors are typical.
+        against : mapping of name to value, optional
+            A second profile to compare with.
+        level : float
+            Confidence level.
+
+        Raises
+        ------
+        QuestionRefused
+            For an unknown predictor or level, or a value that cannot be computed.
+
+        Notes
+        -----
+        Wald interval on η, carried over to odds and probability (Agresti, Categorical
+        Data Analysis); differences and ratios by one joint delta method (Localio 2007).
+
+        Examples
+        --------
+        >>> import statsmodels.formula.api as smf
+        >>> import plainodds as po
+        >>> pipes = po.demo.tessel_bay()
+        >>> fit = po.FittedLogit(smf.logit("burst ~ age_years * material", pipes).fit(disp=0))
+        >>> answer = fit.profile({"age_years": 80}, against={"age_years": 20})
+        >>> answer.comparison.risk_difference.estimate > 0
+        True
+        """
+        question = ProfileQuestion(
+            pairs(values), None if against is None else pairs(against), level
+        )
+        return answer_profile(self.model, question)
+
+
+def odds_of(
+    results: Mapping[str, Any],
+    predictors: str | Iterable[str] = (),
+    *,
+    steps: Mapping[str, float] | None = None,
+    between: Mapping[str, Sequence[Scalar]] | None = None,
+    references: Mapping[str, Scalar] | None = None,
+    given: Mapping[str, Any] | None = None,
+    order: Literal["model", "size"] = "model",
+    level: float = 0.95,
+) -> OddsAnswer:
+    """The same odds ratios in several fitted models, side by side.
+
+    Parameters
+    ----------
+    results : mapping of name to result or FittedLogit
+        As ``{"crude": r1, "adjusted": r2}``.
+    predictors, steps, between, references, given, order, level
+        As in `FittedLogit.odds`. Changes that are not stated are those of the first
+        model that has the predictor.
+
+    Raises
+    ------
+    QuestionRefused, FitRefused
+
+    Examples
+    --------
+    >>> import statsmodels.formula.api as smf
+    >>> import plainodds as po
+    >>> pipes = po.demo.tessel_bay()
+    >>> crude = smf.logit("burst ~ age_years", pipes).fit(disp=0)
+    >>> adjusted = smf.logit("burst ~ age_years + material", pipes).fit(disp=0)
+    >>> answer = po.odds_of({"crude": crude, "adjusted": adjusted}, "age_years")
+    >>> [row.model for row in answer.rows]
+    ['crude', 'adjusted']
+    """
+    fits = {
+        str(name): result if isinstance(result, FittedLogit) else FittedLogit(result)
+        for name, result in results.items()
+    }
+    question = _odds_question(predictors, steps, between, references, given, order, level)
+    return answer_odds_of({name: fit.model for name, fit in fits.items()}, question)
+
+
+def _odds_question(
+    predictors: str | Iterable[str],
+    steps: Mapping[str, float] | None,
+    between: Mapping[str, Sequence[Scalar]] | None,
+    references: Mapping[str, Scalar] | None,
+    given: Mapping[str, Any] | None,
+    order: Literal["model", "size"],
+    level: float,
+) -> OddsQuestion:
+    if order not in ("model", "size"):
+        raise QuestionRefused(f"order={order!r}: choose 'model' or 'size'.")
+    listed = {
+        name: (held,) if isinstance(held, str | bytes) or not hasattr(held, "__iter__") else held
+        for name, held in (given or {}).items()
+    }
+    return OddsQuestion(
+        predictors=(predictors,) if isinstance(predictors, str) else tuple(predictors),
+        steps=pairs(steps),
+        between=pairs(between),
+        references=pairs(references),
+        given=pairs({name: tuple(held) for name, held in listed.items()}),
+        order=order,
+        level=level,
+    )
+
+
+def _stated(predictors: Mapping[str, Predictor] | None) -> dict[str, Predictor]:
+    stated = dict(predictors or {})
+    for name, item in stated.items():
+        if not isinstance(item, Predictor):
+            raise FitRefused(
+                f"predictors={{{name!r}: {item!r}}}: state it as a Predictor, for example "
+                f"Predictor(label={name!r})."
+            )
+    return stated
+
+
+def _tuple(values: Sequence[Scalar]) -> tuple[Scalar, ...]:
+    if isinstance(values, str):
+        raise QuestionRefused(f"{values!r} is one text; give a list of values.")
+    return tuple(plain(each) for each in values)
