@@ -86,17 +86,23 @@ def tessel_bay(rows: int = 6000, seed: int = 1881) -> pd.DataFrame:
         {
             "burst": np.zeros(rows, dtype=np.int64),
             "age_years": age,
-            "material": pd.Categorical.from_codes(material, categories=list(MATERIALS)),
-            "soil": pd.Categorical.from_codes(soil, categories=list(SOILS), ordered=True),
+            "material": _levels(material, MATERIALS),
+            "soil": _levels(soil, SOILS, ordered=True),
             "pressure_m": pressure,
             "diameter_mm": diameter.astype(np.int64),
             "past_repairs": repairs.astype(np.int64),
-            "district": pd.Categorical.from_codes(district, categories=list(DISTRICTS)),
+            "district": _levels(district, DISTRICTS),
         }
     )
     log_odds = true_linear_predictor(frame)
     frame["burst"] = (random.logistic(size=rows) < log_odds).astype(np.int64)
     return frame
+
+
+def _levels(
+    positions: NDArray[np.integer], levels: tuple[str, ...], ordered: bool = False
+) -> pd.Categorical:
+    return pd.Categorical(np.array(levels)[positions], categories=list(levels), ordered=ordered)
 
 
 def _material(random: Generator, outskirts: NDArray[np.float64]) -> NDArray[np.intp]:
