@@ -26,18 +26,18 @@ Pairs: TypeAlias = tuple[tuple[str, Any], ...]
 """A mapping as a hashable value: (name, value) pairs in the order given."""
 
 _registered: dict[str, type] = {}
-_C = TypeVar("_C", bound=type)
+_C = TypeVar("_C")
 
 _TAG = "value"
 _NON_FINITE = {"nan": math.nan, "inf": math.inf, "-inf": -math.inf}
 
 
 @dataclass_transform(frozen_default=True, kw_only_default=False)
-def value(cls: _C) -> _C:
+def value(cls: type[_C]) -> type[_C]:
     """Make a class a frozen dataclass that `to_json` and `from_json` know."""
     if cls.__name__ in _registered:
         raise TypeError(f"two value classes are named {cls.__name__}")
-    made: _C = dataclass(frozen=True)(cls)
+    made = dataclass(frozen=True)(cls)
     _registered[made.__name__] = made
     return made
 

@@ -154,7 +154,7 @@ def _rest(model: FittedModel, eta: Floats, block: slice) -> Floats:
 def _weights(model: FittedModel, block: slice) -> Floats:
     if model.sample.weights is None:
         return np.full(block.stop - block.start, 1.0 / model.sample.rows)
-    return model.sample.weights[block] / model.sample.weights.sum()
+    return np.asarray(model.sample.weights[block] / model.sample.weights.sum())
 
 
 def _probability(eta: Floats, rest: Floats) -> Floats:

@@ -284,12 +284,5 @@ def _line(
     supported = tuple(is_supported(facts, support, x) for x in at)
     if found.se is None or found.lower is None or found.upper is None:
         return CurveLine(by, at, part(found.estimate), None, None, None, supported)
-    return CurveLine(
-        by,
-        at,
-        part(found.estimate),
-        part(found.se),
-        part(found.lower),
-        part(found.upper),
-        supported,
-    )
+    ends = part(found.lower), part(found.upper)
+    return CurveLine(by, at, part(found.estimate), part(found.se), *ends, supported)

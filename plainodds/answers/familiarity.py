@@ -8,7 +8,7 @@ import numpy as np
 from numpy.typing import NDArray
 
 from plainodds.model.fitted import FittedModel, code_values
-from plainodds.values import Pairs, value
+from plainodds.values import Pairs, Scalar, value
 
 __all__ = ["Familiarity", "familiarity_of"]
 
@@ -86,8 +86,8 @@ def _rows_alike(model: FittedModel, values: Pairs) -> int:
     return int(alike.sum())
 
 
-def _is_beyond(model: FittedModel, name: str, held: object) -> bool:
+def _is_beyond(model: FittedModel, name: str, held: Scalar) -> bool:
     facts = model.subject.predictor(name)
     if facts.is_number:
-        return not facts.minimum <= float(held) <= facts.maximum  # type: ignore[arg-type]
-    return facts.level_counts[facts.levels.index(held)] == 0  # type: ignore[arg-type]
+        return not facts.minimum <= float(held) <= facts.maximum
+    return facts.level_counts[facts.levels.index(held)] == 0

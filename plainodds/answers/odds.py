@@ -2,94 +2,19 @@
 
 from __future__ import annotations
 
-import math
-from collections.abc import Iterator, Mapping
+from collections.abc import Mapping
 from dataclasses import replace
-from itertools import product
-from typing import Any, ClassVar, Literal
 
-import numpy as np
-
+from plainodds.answers.changes import OddsQuestion, OddsRow, changes_asked
 from plainodds.answers.delta import checked_level, mapped, p_values, wald
-from plainodds.answers.estimate import Estimate
-from plainodds.answers.questions import Answer, Question
+from plainodds.answers.questions import Answer
 from plainodds.errors import QuestionRefused
-from plainodds.model.fitted import FittedModel, checked
+from plainodds.model.fitted import FittedModel
 from plainodds.model.predictors import PredictorFacts, Subject
 from plainodds.scales import odds_from_linear_predictor, probability_from_linear_predictor
-from plainodds.values import Pairs, Scalar, pairs, value
+from plainodds.values import Pairs, pairs, value
 
 __all__ = ["OddsAnswer", "OddsQuestion", "OddsRow", "answer_odds", "answer_odds_of"]
-
-
-@value
-class OddsQuestion(Question):
-    """By what are the odds multiplied when a predictor changes?
-
-    Attributes
-    ----------
-    predictors : tuple of str
-        Whose odds ratios; empty for all.
-    steps : pairs of (predictor, float)
-        The step of a number's row, where it is not the predictor's own.
-    between : pairs of (predictor, (from, to))
-        The two values that a predictor's row compares.
-    references : pairs of (predictor, level)
-        The level that a category's rows are compared with.
-    given : pairs of (modifier, values)
-        The modifiers' values at which an interacting predictor's rows are stated.
-    order : {"model", "size"}
-        Rows as the model mentions the predictors, or by the size of the odds ratio.
-    level : float
-        Confidence level of the intervals.
-    models : tuple of str
-        Names of the fitted models where several are set side by side; else empty.
-    """
-
-    predictors: tuple[str, ...] = ()
-    steps: Pairs = ()
-    between: Pairs = ()
-    references: Pairs = ()
-    given: Pairs = ()
-    order: Literal["model", "size"] = "model"
-    level: float = 0.95
-    models: tuple[str, ...] = ()
-
-    method: ClassVar[str] = "odds"
-
-
-@value
-class OddsRow:
-    """One odds ratio and the change that it belongs to.
-
-    Attributes
-    ----------
-    predictor : str
-    start, end : scalar
-        The change: from `start` to `end`. Where `per_step` is set only their
-        difference matters.
-    per_step : bool
-        Whether the odds ratio is the same for every step of this size.
-    given : pairs of (modifier, value)
-        The modifiers' values for which the odds ratio holds; empty where there are none.
-    odds_ratio : Estimate
-        Its `se` is that of the odds ratio itself (delta method).
-    log_odds_ratio : Estimate
-    p_value : float or None
-        Wald test of an odds ratio of 1.
-    model : str
-        The fitted model's name where several are set side by side; else empty.
-    """
-
-    predictor: str
-    start: Scalar
-    end: Scalar
-    per_step: bool
-    given: Pairs
-    odds_ratio: Estimate
-    log_odds_ratio: Estimate
-    p_value: float | None
-    model: str = ""
 
 
 @value
@@ -127,12 +52,9 @@ def answer_odds(model: FittedModel, question: OddsQuestion) -> OddsAnswer:
         For an unknown predictor, level, value or setting.
     """
     level = checked_level(question.level)
-    changes = list(_changes(model, question))
-    at = [(row.given, row.predictor) for row in changes]
-    starts = [
-        model.completed({**dict(g), p: r.start}) for (g, p), r in zip(at, changes, strict=True)
-    ]
-    ends = [model.completed({**dict(g), p: r.end}) for (g, p), r in zip(at, changes, strict=True)]
+    changes = list(changes_asked(model, question))
+    starts = [model.completed((*row.given, (row.predictor, row.start))) for row in changes]
+    ends = [model.completed((*row.given, (row.predictor, row.end))) for row in changes]
     contrasts = model.rows(ends) - model.rows(starts)
     logs = wald(model, contrasts @ model.coefficients, contrasts, level)
     ratios = mapped(logs, odds_from_linear_predictor, odds_from_linear_predictor)
@@ -189,13 +111,12 @@ def answer_odds_of(models: Mapping[str, FittedModel], question: OddsQuestion) ->
 def _joined(models: Mapping[str, FittedModel]) -> Subject:
     """The first model's subject, with the predictors and notices of all."""
     subjects = [model.subject for model in models.values()]
-    predictors = {
-        facts.name: facts for subject in reversed(subjects) for facts in subject.predictors
-    }
-    order = dict.fromkeys(facts.name for subject in subjects for facts in subject.predictors)
+    predictors: dict[str, PredictorFacts] = {}
+    for facts in (facts for subject in subjects for facts in subject.predictors):
+        predictors.setdefault(facts.name, facts)
     return replace(
         subjects[0],
-        predictors=tuple(predictors[name] for name in order),
+        predictors=tuple(predictors.values()),
         notices=tuple(dict.fromkeys(n for subject in subjects for n in subject.notices)),
         no_interval=next((s.no_interval for s in subjects if s.no_interval), ""),
     )
@@ -230,131 +151,3 @@ def _with_the_same_changes(question: OddsQuestion, answer: OddsAnswer) -> OddsQu
     return replace(
         question, steps=pairs(steps), between=pairs(between), references=pairs(references)
     )
-
-
-_UNKNOWN = Estimate(math.nan, None, None, None)
-
-
-def _changes(model: FittedModel, question: OddsQuestion) -> Iterator[OddsRow]:
-    """The rows to fill: every change at every stated combination of its modifiers."""
-    subject = model.subject
-    names = question.predictors or tuple(facts.name for facts in subject.predictors)
-    steps, between = dict(question.steps), dict(question.between)
-    references, given = dict(question.references), dict(question.given)
-    for name in (*names, *steps, *between, *references, *given):
-        subject.predictor(name)
-    _refuse_idle_given(subject, names, given)
-    for name in names:
-        facts = subject.predictor(name)
-        if facts.is_number:
-            if name in references:
-                raise QuestionRefused(
-                    f"{name} is a number and has no reference level; name two values: "
-                    f"between={{{name!r}: (from, to)}}."
-                )
-            compared = [_number_change(facts, steps.get(name), between.get(name))]
-        else:
-            compared = list(_level_changes(model, facts, steps, between, references))
-        for start, end, per_step in compared:
-            for held in _combinations(subject, facts, given):
-                yield OddsRow(name, start, end, per_step, held, _UNKNOWN, _UNKNOWN, None)
-
-
-def _number_change(facts: PredictorFacts, step: Any, between: Any) -> tuple[Scalar, Scalar, bool]:
-    if step is not None and between is not None:
-        raise QuestionRefused(f"{facts.name}: name a step or two values, not both.")
-    if between is not None:
-        start, end = _two_values(facts, between)
-        return start, end, False
-    if facts.linear:
-        size = facts.step if step is None else step
-        if isinstance(size, str) or not math.isfinite(size) or size == 0:
-            raise QuestionRefused(f"{facts.name}: step={size!r} is not a number other than 0.")
-        start = checked(facts, facts.typical)
-        return start, checked(facts, float(start) + float(size)), True
-    if step is not None:
-        low, _, high = facts.quartiles
-        raise QuestionRefused(
-            f"{facts.name} enters the model along a curve, so a step of {step!r} multiplies the odds "
-            f"differently at each value. Name two values: between={{{facts.name!r}: "
-            f"({low:g}, {high:g})}}."
-        )
-    low, _, high = facts.quartiles
-    if low == high:
-        low, high = facts.minimum, facts.maximum
-    return checked(facts, low), checked(facts, high), False
-
-
-def _two_values(facts: PredictorFacts, stated: Any) -> tuple[Scalar, Scalar]:
-    if isinstance(stated, str) or not isinstance(stated, tuple | list) or len(stated) != 2:
-        raise QuestionRefused(f"{facts.name}: between={stated!r} is not two values, (from, to).")
-    start, end = checked(facts, stated[0]), checked(facts, stated[1])
-    if start == end:
-        raise QuestionRefused(f"{facts.name}: from {start!r} to {end!r} is no change.")
-    return start, end
-
-
-def _level_changes(
-    model: FittedModel,
-    facts: PredictorFacts,
-    steps: Mapping[str, Any],
-    between: Mapping[str, Any],
-    references: Mapping[str, Any],
-) -> Iterator[tuple[Scalar, Scalar, bool]]:
-    if facts.name in steps:
-        raise QuestionRefused(
-            f"{facts.name} has levels and no step; choose a reference: "
-            f"references={{{facts.name!r}: {facts.levels[0]!r}}}."
-        )
-    if facts.name in between:
-        start, end = _two_values(facts, between[facts.name])
-        yield start, end, False
-        return
-    if facts.name in references:
-        reference = checked(facts, references[facts.name])
-    else:
-        reference = _coded_reference(model, facts)
-    for level in facts.levels:
-        if level != reference:
-            yield reference, level, False
-
-
-def _coded_reference(model: FittedModel, facts: PredictorFacts) -> Scalar:
-    """The level that the fit's own coding sets to zero; else the first."""
-    profiles = [model.completed({facts.name: level}) for level in facts.levels]
-    rows = model.rows(profiles)[:, model.design.touched([facts.name])]
-    zero = np.nonzero((rows == 0).all(axis=1))[0]
-    return facts.levels[int(zero[0])] if len(zero) == 1 else facts.levels[0]
-
-
-def _combinations(
-    subject: Subject, facts: PredictorFacts, given: Mapping[str, Any]
-) -> Iterator[Pairs]:
-    modifiers = [subject.predictor(name) for name in facts.modifiers]
-    choices = [
-        _modifier_values(modifier, given.get(modifier.name), alone=len(modifiers) == 1)
-        for modifier in modifiers
-    ]
-    for chosen in product(*choices):
-        yield tuple((m.name, v) for m, v in zip(modifiers, chosen, strict=True))
-
-
-def _modifier_values(facts: PredictorFacts, stated: Any, alone: bool) -> tuple[Scalar, ...]:
-    if stated is not None:
-        listed = stated if isinstance(stated, tuple | list) else (stated,)
-        return tuple(dict.fromkeys(checked(facts, each) for each in listed))
-    if facts.levels:
-        return facts.levels
-    # beside other modifiers one value keeps the rows few enough to read
-    chosen = facts.quartiles if alone else (facts.typical,)
-    return tuple(dict.fromkeys(checked(facts, each) for each in chosen))
-
-
-def _refuse_idle_given(subject: Subject, names: tuple[str, ...], given: Mapping[str, Any]) -> None:
-    modifiers = {m for name in names for m in subject.predictor(name).modifiers}
-    for name in given:
-        if name not in modifiers:
-            raise QuestionRefused(
-                f"given={{{name!r}: …}}: {name} shares no term with the predictors asked for, so "
-                "their odds ratios are the same at each of its values."
-            )

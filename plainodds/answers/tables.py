@@ -33,8 +33,10 @@ def table(answer: Answer) -> pd.DataFrame:
 
     Examples
     --------
+    >>> import statsmodels.formula.api as smf
     >>> import plainodds as po
-    >>> fit = po.FittedLogit(po.demo.tessel_bay_fit())
+    >>> pipes = po.demo.tessel_bay()
+    >>> fit = po.FittedLogit(smf.logit("burst ~ age_years", pipes).fit(disp=0))
     >>> list(po.table(fit.profile({"age_years": 80})).scale)
     ['linear_predictor', 'odds', 'probability']
     """
@@ -44,7 +46,7 @@ def table(answer: Answer) -> pd.DataFrame:
 @table.register
 def _(answer: OddsAnswer) -> pd.DataFrame:
     several = bool(answer.question.models)
-    rows = [
+    rows: list[dict[str, Any]] = [
         ({"model": row.model} if several else {})
         | {
             "predictor": row.predictor,
@@ -111,8 +113,10 @@ def ledger(answer: ProfileAnswer) -> pd.DataFrame:
 
     Examples
     --------
+    >>> import statsmodels.formula.api as smf
     >>> import plainodds as po
-    >>> fit = po.FittedLogit(po.demo.tessel_bay_fit())
+    >>> pipes = po.demo.tessel_bay()
+    >>> fit = po.FittedLogit(smf.logit("burst ~ age_years", pipes).fit(disp=0))
     >>> rows = po.ledger(fit.profile({"age_years": 80}))
     >>> total = fit.profile({"age_years": 80}).point.linear_predictor.estimate
     >>> abs(rows.estimate.sum() - total) < 1e-12
