@@ -29,7 +29,7 @@ def code(answer: Answer) -> str:
     -------
     str
         Python source that uses the names of what it starts from: ``result`` (or
-        ``results``, a mapping, where several models stand side by side), ``data``
+        ``results``, the mapping of fits, where several models stand side by side), ``data``
         where the data were handed over apart from the result, and the functions of
         the analyst's own that were stated. It ends with the answer in ``answer``.
 

@@ -58,7 +58,13 @@ def _plain(answer: CurveAnswer) -> Words:
 
 def _words(answer: CurveAnswer, told: Sequence[str]) -> Words:
     cautions = map(sentence, (*beyond_words(answer), ASSOCIATION))
-    return Words(tuple(map(sentence, told)), (*cautions, *model_cautions(answer.subject)))
+    return Words(
+        tuple(map(sentence, told)),
+        (
+            *cautions,
+            *model_cautions(answer.subject, offset_held=answer.question.others != "observed"),
+        ),
+    )
 
 
 def _chances_told(answer: CurveAnswer) -> list[str]:
@@ -121,8 +127,10 @@ def _line_told(answer: CurveAnswer, line: CurveLine, places: Sequence[int], way:
     facts = subject.predictor(question.predictor)
     name = predictor_name(facts)
     lead = f"for {line_words(answer, line)}, " if line_words(answer, line) else ""
-    average = "average " if question.others == "observed" else ""
-    noun = f"the {average}{way.noun} of {tidy(subject.outcome.event)}"
+    noun = f"the {way.noun} of {tidy(subject.outcome.event)}"
+    if question.others == "observed":
+        average = "the average " if way is way_of("probability") else "the average chance as "
+        noun = noun.replace("the ", average, 1)
     told = say_level_once(
         [way.told(estimate_at(line, place), question.level) for place in places], question.level
     )
@@ -140,7 +148,7 @@ def _line_told(answer: CurveAnswer, line: CurveLine, places: Sequence[int], way:
     start, end, *turns = places
     moves = _moves(line, start, end, way)
     text = (
-        f"{lead}as {name} goes {from_to(facts, line.at[start], line.at[end])}, {noun} "
+        f"{lead}with {name} going {from_to(facts, line.at[start], line.at[end])}, {noun} "
         f"{moves[0]} {told[0]} {moves[1]} {told[1]}"
     )
     it = "they are" if way.plural else "it is"
@@ -197,8 +205,6 @@ def _method(answer: CurveAnswer) -> str:
         return f"From {rows_words(subject)}"
     if question.scale == "slope":
         way = "delta-method intervals of dπ/dx"
-        if not subject.predictor(question.predictor).is_number:
-            way = "delta-method intervals of the difference in chances"
     elif question.others == "observed":
         way = "delta-method intervals on the logit of the averaged chance"
     else:
@@ -221,7 +227,7 @@ def _(answer: CurveAnswer) -> str:
     by = ""
     if question.by is not None:
         lines = listed([line_words(answer, line) for line in answer.lines])
-        by = f", one for each of {len(answer.lines)}: {lines}"
+        by = f", one for {lines}"
     start = f"{scale_title(answer)}, along {predictor_name(facts)}, {shape}{by}"
     way = way_of(question.scale)
     ends = [
@@ -229,10 +235,10 @@ def _(answer: CurveAnswer) -> str:
         for line in answer.lines
         for place in supported_places(line)
     ]
+    joint = "at" if facts.is_number else "for"
     told = []
-    for name, choose in (("lowest", min), ("highest", max)):
+    for choose in (min, max):
         line, place, number = choose(ends, key=lambda each: each[2])
-        where = value_label(facts, line.at[place])
-        of = f" for {line_words(answer, line)}" if line_words(answer, line) else ""
-        told.append(f"{name} is {way.bare(number)} at {where}{of}")
-    return f"{sentence(start)} {sentence(f'The {listed(told)}')}"
+        of = f", {line_words(answer, line)}" if line_words(answer, line) else ""
+        told.append(f"{way.bare(number)} {joint} {value_label(facts, line.at[place])}{of}")
+    return f"{sentence(start)} {sentence(f'The lowest is {told[0]}; the highest is {told[1]}')}"

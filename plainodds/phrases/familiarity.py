@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+import math
+
 from plainodds.answers.profile import ProfileAnswer, ProfilePoint
 from plainodds.phrases.labels import listed, predictor_name, value_label
 from plainodds.phrases.numbers import count, quantity
@@ -32,6 +34,8 @@ def _cautions(answer: ProfileAnswer, point: ProfilePoint, which: str) -> list[st
     found, subject = point.familiarity, answer.subject
     if found.verdict == "familiar":
         return []
+    if math.isnan(found.largest_leverage):
+        return ["The model carries no rows any more, so nobody can tell how familiar it is"]
     values = dict(point.values)
     outside = []
     for facts in map(subject.predictor, found.beyond):

@@ -10,6 +10,7 @@ from __future__ import annotations
 from plainodds.answers.curve import CurveAnswer, Scale
 from plainodds.answers.odds import OddsRow
 from plainodds.model.predictors import OutcomeFacts, PredictorFacts, Subject
+from plainodds.phrases.numbers import quantity
 from plainodds.phrases.units import per_unit, step, tidy, with_unit
 from plainodds.values import Pairs, Scalar
 
@@ -150,7 +151,7 @@ def from_to(facts: PredictorFacts, start: Scalar, end: Scalar) -> str:
     low, high = value_label(facts, start), value_label(facts, end)
     unit = tidy(facts.unit)
     if unit and facts.is_number and high.endswith(f" {unit}"):
-        low = low.removesuffix(f" {unit}")
+        low = quantity(float(start))
     return f"from {low} to {high}"
 
 
@@ -163,20 +164,18 @@ def row_label(subject: Subject, row: OddsRow) -> str:
 
 def given_label(subject: Subject, given: Pairs) -> str:
     """Stated values, as a short list: "soil high, pipe age 40 years"."""
-    return ", ".join(
-        f"{predictor_name(facts)} {value_label(facts, value)}"
-        for facts, value in ((subject.predictor(name), value) for name, value in given)
-    )
+    return ", ".join(_held_words(subject, name, value) for name, value in given)
+
+
+def _held_words(subject: Subject, name: str, value: Scalar) -> str:
+    facts = subject.predictor(name)
+    return f"{predictor_name(facts)} {value_label(facts, value)}"
 
 
 def given_clause(subject: Subject, given: Pairs) -> str:
-    """Stated values, as part of a sentence: "where soil is high and pipe age is 40 years"."""
-    return "where " + listed(
-        [
-            f"{predictor_name(facts)} is {value_label(facts, value)}"
-            for facts, value in ((subject.predictor(name), value) for name, value in given)
-        ]
-    )
+    """Stated values, as part of a sentence: "given soil high and pipe age 40 years"."""
+    told = (_held_words(subject, name, value) for name, value in given)
+    return f"given {listed(list(told))}"
 
 
 def listed(items: list[str]) -> str:
@@ -208,11 +207,9 @@ def scale_title(answer: CurveAnswer) -> str:
     scale, outcome = answer.question.scale, answer.subject.outcome
     title = f"{_STARTS[scale]} {tidy(outcome.event)}"
     if answer.question.others == "observed":
-        title = f"Average {title[:1].lower()}{title[1:]}"
+        average = "Average" if scale in ("probability", "slope") else "Average chance as"
+        title = f"{average} {title[:1].lower()}{title[1:]}"
     if scale != "slope":
         return title
     facts = answer.subject.predictor(answer.question.predictor)
-    if facts.is_number:
-        return f"{title}: percentage points per {per_unit(facts.unit)} more"
-    reference = value_label(facts, facts.levels[0])
-    return f"{title}: percentage points against {reference}"
+    return f"{title}: percentage points per {per_unit(facts.unit)} more"

@@ -10,6 +10,7 @@ from plainodds.answers.odds import OddsAnswer, OddsRow
 from plainodds.model.predictors import PredictorFacts
 from plainodds.phrases.alternative import alternative
 from plainodds.phrases.labels import (
+    change_label,
     from_to,
     given_clause,
     listed,
@@ -30,7 +31,6 @@ from plainodds.phrases.numbers import (
 from plainodds.phrases.parts import (
     ASSOCIATION,
     covariance_words,
-    interval,
     model_cautions,
     ratio_with_interval,
     rows_words,
@@ -88,7 +88,9 @@ def _plain_row(
     if before == after:
         return f"{of} is {after} either way; the odds are {odds}"
     often, seldom = frequency(move[1], over), frequency(move[0], over)
-    counted = f", that is {often} rather than {seldom}" if often != seldom else ""
+    counted = ""
+    if often != seldom:
+        counted = f", that is {often.removesuffix(f' in {over:,}')} rather than {seldom}"
     return f"{of} is {after} rather than {before}{counted}; the odds are {odds}"
 
 
@@ -258,17 +260,15 @@ def _(answer: OddsAnswer) -> str:
         return sentence(start)
     highest = max(known, key=lambda row: row.odds_ratio.estimate)
     lowest = min(known, key=lambda row: row.odds_ratio.estimate)
-    told = f"{'The' if len(rows) == 1 else 'The largest'} is {_short(answer, highest)}"
+    told = f"{'It' if len(rows) == 1 else 'The largest'} is {_short(answer, highest)}"
     if lowest is not highest:
         told += f"; the smallest is {_short(answer, lowest)}"
     return f"{sentence(start)} {sentence(told)}"
 
 
 def _short(answer: OddsAnswer, row: OddsRow) -> str:
-    model = f"model “{tidy(row.model)}”, " if row.model else ""
-    said = interval(row.odds_ratio, _range, answer.question.level)
-    return f"{model}{row_label(answer.subject, row)}: {ratio(row.odds_ratio.estimate)}{said}"
-
-
-def _range(lower: float, upper: float) -> str:
-    return f"{ratio(lower)} to {ratio(upper)}"
+    model = f", in the model “{tidy(row.model)}”" if row.model else ""
+    facts = answer.subject.predictor(row.predictor)
+    given = f", {given_clause(answer.subject, row.given)}" if row.given else ""
+    odds = ratio_with_interval(row.odds_ratio, answer.question.level)
+    return f"{odds} for {predictor_name(facts)}, {change_label(facts, row)}{given}{model}"

@@ -14,7 +14,7 @@ from plainodds.phrases.numbers import (
     confidence,
     count,
     percentage_points,
-    points_span,
+    points_on_sides,
     quantity,
     ratio,
     ratio_interval,
@@ -125,24 +125,11 @@ def difference_with_interval(estimate: Estimate, level: float) -> str:
         told = "neither higher nor lower"
     else:
         told = f"{percentage_points(abs(difference))} {_side(difference)}"
-    return told + interval(estimate, _sides, level)
+    return told + interval(estimate, points_on_sides, level)
 
 
 def _side(difference: float) -> str:
     return "higher" if difference > 0 else "lower"
-
-
-def _sides(lower: float, upper: float) -> str:
-    if lower < 0 < upper:
-        low, high = _bare(points_span(-lower, -lower)), _bare(points_span(upper, upper))
-        return f"{low} lower to {high} higher"
-    if upper <= 0:
-        return f"{_bare(points_span(-upper, -lower))} lower"
-    return f"{_bare(points_span(lower, upper))} higher"
-
-
-def _bare(points: str) -> str:
-    return points.removesuffix(" percentage points")
 
 
 def say_level_once(told: list[str], level: float) -> list[str]:
@@ -163,17 +150,20 @@ def covariance_words(subject: Subject) -> str:
     return _COVARIANCE.get(kind, f"the covariance matrix of kind “{kind}”")
 
 
-def model_cautions(subject: Subject) -> tuple[str, ...]:
-    """What holds for every answer of this fitted model."""
+def model_cautions(subject: Subject, *, offset_held: bool = True) -> tuple[str, ...]:
+    """What holds for every answer of this fitted model.
+
+    `offset_held` is false where each row keeps its own offset.
+    """
     cautions = []
     if subject.no_interval:
         cautions.append("No intervals can be given here.")
         cautions.append(sentence(subject.no_interval))
     if subject.offset is not None:
-        cautions.append(
-            "The model has an offset, an amount that is taken as known; here it is held at "
-            f"{quantity(subject.offset)}."
-        )
+        held = f"here it is held at {quantity(subject.offset)}"
+        if not offset_held:
+            held = "here each row keeps its own"
+        cautions.append(f"The model has an offset, an amount that is taken as known; {held}.")
     return (*cautions, *(sentence(notice) for notice in subject.notices))
 
 

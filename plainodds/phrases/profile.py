@@ -69,7 +69,7 @@ def _words(answer: ProfileAnswer, told: list[str]) -> Words:
 
 def _denominator(answer: ProfileAnswer) -> int:
     spoken = [answer.point.probability.estimate]
-    if answer.comparison is not None or _adds(answer):
+    if answer.comparison is not None:
         spoken.append(answer.start.probability.estimate)
     return denominator(spoken)
 
@@ -82,7 +82,7 @@ def _who(answer: ProfileAnswer, point: ProfilePoint, stated: Pairs, at_most: int
     if not chosen:
         return typical_case(subject.outcome)
     text = f"{article(subject.outcome.case)} with {profile_words(subject, chosen, at_most=at_most)}"
-    return text if len(chosen) == len(point.values) else f"{text} and otherwise typical"
+    return text if len(chosen) == len(point.values) else f"{text}, otherwise typical"
 
 
 def _chance_told(answer: ProfileAnswer, over: int) -> str:
@@ -112,7 +112,9 @@ def _comparison(answer: ProfileAnswer, comparison: Comparison, over: int) -> lis
     after, before = told_apart(here, there)
     with_whom = _who(answer, answer.start, answer.question.against or ())
     often, seldom = frequency(here, over), frequency(there, over)
-    counted = f", that is {often} rather than {seldom}" if often != seldom else ""
+    counted = ""
+    if often != seldom:
+        counted = f", that is {often.removesuffix(f' in {over:,}')} rather than {seldom}"
     chances = f"is {after} rather than {before}{counted}" if after != before else f"is {after} too"
     return [
         f"Compared with {with_whom}, the chance {chances}",
@@ -130,33 +132,36 @@ def _adds(answer: ProfileAnswer) -> list[LedgerRow]:
 
 
 def _ledger(answer: ProfileAnswer) -> list[str]:
-    """What moves the odds most between the start and the profile, each way."""
-    rows = _adds(answer)
+    """With what the odds differ most between the start and the profile, each way."""
+    rows, level = _adds(answer), answer.question.level
     if not rows:
         return []
-    start = (
-        "that profile" if answer.comparison is not None else typical_case(answer.subject.outcome)
-    )
+    start = typical_case(answer.subject.outcome)
+    if answer.comparison is not None:
+        if len(rows) == 1:
+            return [f"The whole difference goes with {_group(answer, rows[0])}"]
+        start = "that profile"
     opening = f"Starting from {start}, with a chance of {chance(answer.start.probability.estimate)}"
-    up = next((row for row in rows if row.adds.estimate > 0), None)
-    down = next((row for row in rows if row.adds.estimate < 0), None)
-    told = []
-    for row, most in ((up, "raises"), (down, "lowers")):
-        if row is not None:
-            told.append(
-                f"what {most} the odds most is {_group(answer, row)}, which multiplies them by "
-                f"{ratio_with_interval(row.multiplies, answer.question.level)}"
-            )
-    if down is rows[0] and up is not None:
-        told.reverse()
+    moves = [(row, "rise" if row.adds.estimate > 0 else "fall") for row in rows]
+    # sorted by size, so the first of each way is the largest
+    largest = {way: row for row, way in reversed(moves)}
+    in_order = sorted(largest.items(), key=lambda item: -abs(item[1].adds.estimate))
+    size = "" if len(rows) == 1 else "largest "
+    told = [
+        f"the {size}{way} in the odds goes with {_group(answer, row)}, multiplied by "
+        f"{ratio_with_interval(row.multiplies, level)}"
+        for way, row in in_order
+    ]
     return [f"{opening}, {'; '.join(told)}"]
 
 
 def _group(answer: ProfileAnswer, row: LedgerRow) -> str:
     subject, values = answer.subject, dict(answer.point.values)
+    before = dict(answer.start.values)
     together = [
         f"{predictor_name(facts)} ({value_label(facts, values[facts.name])})"
         for facts in map(subject.predictor, row.predictors)
+        if values[facts.name] != before[facts.name]
     ]
     return f"{listed(together)} together" if len(together) > 1 else listed(together)
 

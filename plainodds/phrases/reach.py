@@ -38,7 +38,7 @@ def beyond_words(answer: CurveAnswer) -> list[str]:
         return []
     facts = answer.subject.predictor(answer.question.predictor)
     told = "; ".join(
-        where if len(lines) == len(answer.lines) else f"for {listed(lines)} {where}"
+        where if len(lines) == len(answer.lines) else f"for {listed(lines)}, {where}"
         for where, lines in parts.items()
     )
     if facts.is_number:

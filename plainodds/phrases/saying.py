@@ -64,8 +64,8 @@ def words(answer: Answer, audience: Audience = "plain") -> Words:
     >>> x = np.repeat([0.0, 1.0, 2.0, 3.0], 10)
     >>> y = np.tile([0, 0, 1, 0, 1, 1, 0, 1, 1, 1], 4)
     >>> result = sm.Logit(y, sm.add_constant(x)).fit(disp=False)
-    >>> print(po.words(po.FittedLogit(result).profile()).sentences[0][:10])
-    For a typi
+    >>> print(words(po.FittedLogit(result).profile()).sentences[1])
+    The chance that this does not happen is 40%, that is 40 in 100.
     """
     raise TypeError(f"There are no words for {type(answer).__name__}.")
 

@@ -23,9 +23,8 @@ def slope_line(answer: CurveAnswer, line: CurveLine) -> str:
     told = say_level_once(
         [difference_with_interval(estimate_at(line, place), level) for place in places], level
     )
-    joint = "at" if facts.is_number else "for"
     items = [
-        f"about {text} {joint} {value_label(facts, line.at[place])}"
+        f"about {text} at {value_label(facts, line.at[place])}"
         for text, place in zip(told, places, strict=True)
     ]
     return f"{slope_opening(answer, line)} is {listed(items)}"
@@ -38,17 +37,12 @@ def slope_opening(answer: CurveAnswer, line: CurveLine) -> str:
     lead = f"for {line_words(answer, line)}, " if line_words(answer, line) else ""
     kind = "average chance" if question.others == "observed" else "chance"
     of = f"the {kind} of {tidy(subject.outcome.event)}"
-    if facts.is_number:
-        return f"{lead}per additional {per_unit(facts.unit)} of {predictor_name(facts)}, {of}"
-    reference = value_label(facts, facts.levels[0])
-    return f"{lead}compared with {predictor_name(facts)} {reference}, {of}"
+    return f"{lead}per additional {per_unit(facts.unit)} of {predictor_name(facts)}, {of}"
 
 
 def slope_places(answer: CurveAnswer, line: CurveLine) -> list[int]:
     """The points to speak of: those nearest to the predictor's quartiles, or all of a few."""
     facts = answer.subject.predictor(answer.question.predictor)
-    if not facts.is_number:
-        return [place for place, at in enumerate(line.at) if at != facts.levels[0]]
     if len(line.at) <= _LISTED_AT_MOST:
         return list(range(len(line.at)))
     places = supported_places(line)

@@ -16,7 +16,7 @@ from plainodds.phrases.numbers.chances import (
 from plainodds.phrases.numbers.quantities import confidence, count, quantity, signed, summing
 from plainodds.phrases.numbers.ratios import p_value, ratio, ratio_interval, simple_fraction
 from plainodds.phrases.numbers.signs import MINUS, NOT_KNOWN
-from plainodds.phrases.numbers.spans import percentage_points, points_span, span
+from plainodds.phrases.numbers.spans import percentage_points, points_on_sides, points_span, span
 
 __all__ = [
     "MINUS",
@@ -30,6 +30,7 @@ __all__ = [
     "frequency_span",
     "p_value",
     "percentage_points",
+    "points_on_sides",
     "points_span",
     "quantity",
     "ratio",

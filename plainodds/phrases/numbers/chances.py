@@ -88,29 +88,29 @@ def chance_decimals(percent: float) -> int:
 def denominator(chances: Iterable[float]) -> int:
     """Choose the one denominator over which a set of chances is written as frequencies.
 
-    The smallest of 100, 1,000 and 10,000 over which the rarest event (or the rarest
-    non-event) still counts at least two, and over which chances that differ are told
-    apart where 1,000 can do that.
+    The smallest of 100, 1,000 and 10,000 over which the rarest event (or non-event)
+    still counts: at least two for a chance alone, at least ten, that is with two
+    figures, where chances are compared.
 
     Source: one fixed denominator for all, Gigerenzer et al. 2007; Fagerlin,
     Zikmund-Fisher & Ubel 2011.
 
     Examples
     --------
-    >>> denominator([0.23, 0.31]), denominator([0.004, 0.31]), denominator([0.231, 0.234])
-    (100, 1000, 1000)
+    >>> denominator([0.23]), denominator([0.23, 0.31]), denominator([0.034, 0.31])
+    (100, 100, 1000)
     """
     known = sorted(each for each in chances if not math.isnan(each))
     if not known:
         return _DENOMINATORS[0]
+    compared = known[-1] > known[0]
     rarest = min(min(each, 1 - each) for each in known)
-    fitting = [each for each in _DENOMINATORS if rarest * each >= 2]
+    fitting = [each for each in _DENOMINATORS if rarest * each >= (10 if compared else 2)]
     smallest = fitting[0] if fitting else _DENOMINATORS[-1]
-    if smallest == _DENOMINATORS[0] and known[-1] > known[0]:
+    if smallest == _DENOMINATORS[0] and compared:
         low, high = known[0], known[-1]
         same = round(low * smallest) == round(high * smallest)
-        if same and round(low * 1_000) != round(high * 1_000):
-            return 1_000
+        return 1_000 if same and round(low * 1_000) != round(high * 1_000) else smallest
     return smallest
 
 

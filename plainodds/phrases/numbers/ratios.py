@@ -47,7 +47,7 @@ def ratio(number: float, *, decimals: int | None = None) -> str:
 
 
 def ratio_interval(lower: float, upper: float) -> str:
-    """Write the interval of a ratio, both ends with the same decimals where both are under 10.
+    """Write the interval of a ratio, both ends with the same decimals from 0.1 to 10.
 
     Examples
     --------
@@ -55,7 +55,7 @@ def ratio_interval(lower: float, upper: float) -> str:
     ('1.08 to 3.78', 'under 0.001 to over 1,000')
     """
     places = None
-    if 1 / _RATIO_LIMIT <= lower <= upper < 10:
+    if 0.0995 <= lower <= upper < 9.995:
         places = max(_ratio_decimals(lower), _ratio_decimals(upper))
     low, high = ratio(lower, decimals=places), ratio(upper, decimals=places)
     return low if low == high else f"{low} to {high}"

@@ -11,7 +11,7 @@ from plainodds.phrases.numbers.quantities import quantity
 from plainodds.phrases.numbers.ratios import ratio, ratio_interval
 from plainodds.phrases.numbers.signs import MINUS, NOT_KNOWN, with_sign
 
-__all__ = ["Say", "percentage_points", "points_span", "span"]
+__all__ = ["Say", "percentage_points", "points_on_sides", "points_span", "span"]
 
 Say: TypeAlias = Callable[..., str]
 """Writes one number; takes the number of decimals as the keyword `decimals`."""
@@ -53,19 +53,38 @@ def span(lower: float, upper: float, say: Say = chance) -> str:
 def _span(
     lower: float, upper: float, say: Say, unit: float, decimals: Callable[[float], int]
 ) -> str:
+    low, high = _ends(lower, upper, say, unit, decimals)
+    return low if low == high else f"{low} to {high}"
+
+
+def _ends(
+    lower: float, upper: float, say: Say, unit: float, decimals: Callable[[float], int]
+) -> tuple[str, str]:
+    """Write both ends of a range, with decimals as its width and the ends' sizes ask for."""
     width = upper - lower
-    if not math.isfinite(width):
-        low, high = say(lower), say(upper)
-        return low if low == high else f"{low} to {high}"
+    if not math.isfinite(width) or width <= 0:
+        return say(lower), say(upper)
     warranted = 0
     while warranted < _MOST_DECIMALS and unit * 10.0**-warranted > width / 5:
         warranted += 1
     places = min(warranted, max(decimals(lower), decimals(upper)))
-    low, high = say(lower, decimals=places), say(upper, decimals=places)
+
+    def end(number: float) -> str:
+        finer = places
+        while finer < decimals(number) and _misses(number / unit, finer):
+            finer += 1
+        return say(number, decimals=finer)
+
+    low, high = end(lower), end(upper)
     while low == high and places < warranted:
         places += 1
-        low, high = say(lower, decimals=places), say(upper, decimals=places)
-    return low if low == high else f"{low} to {high}"
+        low, high = end(lower), end(upper)
+    return low, high
+
+
+def _misses(number: float, decimals: int) -> bool:
+    """Whether so few decimals would miss a number by more than an eighth of itself."""
+    return abs(round(number, decimals) - number) > abs(number) / 8
 
 
 def percentage_points(difference: float, *, decimals: int | None = None, sign: bool = False) -> str:
@@ -101,6 +120,26 @@ def points_span(lower: float, upper: float) -> str:
         return _points(difference, decimals=decimals, sign=sign)
 
     return f"{_span(lower, upper, say, 0.01, _points_decimals)} percentage points"
+
+
+def points_on_sides(lower: float, upper: float) -> str:
+    """Write a range of differences of chances in percentage points, the sides in words.
+
+    Examples
+    --------
+    >>> points_on_sides(-0.021, 0.016), points_on_sides(-0.056, -0.021)
+    ('2.1 lower to 1.6 higher', '2.1 to 5.6 lower')
+    """
+    low, high = _ends(lower, upper, _unsigned_points, 0.01, _points_decimals)
+    if lower < 0 < upper:
+        return f"{low} lower to {high} higher"
+    side = "lower" if upper <= 0 and lower < 0 else "higher"
+    nearer, further = (high, low) if side == "lower" else (low, high)
+    return f"{nearer} {side}" if nearer == further else f"{nearer} to {further} {side}"
+
+
+def _unsigned_points(difference: float, decimals: int | None = None) -> str:
+    return _points(abs(difference), decimals=decimals)
 
 
 def _points(difference: float, decimals: int | None = None, sign: bool = False) -> str:
