@@ -19,11 +19,13 @@ from plainodds.errors import QuestionRefused
 from plainodds.model.design.design import Coded, Floats
 from plainodds.model.design.split import Split, split
 from plainodds.model.fitted import FittedModel
+from plainodds.model.products import product, transposed_product
+from plainodds.scales import probability_from_linear_predictor
 
 __all__ = ["Averages", "averaged_probability", "averaged_slope"]
 
-# numbers held at once: rows of a block times points, so that they stay in the cache
-_HELD = 131_072
+# Numbers worked on at once, rows of a block times points, so that they stay in the cache.
+_CACHED = 131_072
 
 
 @dataclass(frozen=True, eq=False)
@@ -60,16 +62,14 @@ def averaged_probability(model: FittedModel, moved: Coded) -> Averages:
     own = parts.own_values(moved)
     strength = _strength(model, parts, own)
     total = np.zeros(len(own))
-    rest_gradient = np.zeros((len(model.coefficients), len(own)))
-    still_gradient = np.zeros((len(parts.still), len(own)))
-    for X, still, rest, weights in _blocks(model, parts, len(own)):
-        pi = _probability(still @ strength, rest)
-        total += weights @ pi
-        _times_one_minus(pi)
-        pi *= weights[:, None]
-        rest_gradient += X.T @ pi
-        still_gradient += still.T @ pi
-    return Averages(total, _assembled(parts, rest_gradient, own * still_gradient[parts.group].T))
+    gradient = np.zeros((parts.width, len(own)))
+    for still, carried, weights in _blocks(model, parts, len(own)):
+        pi = _probability(still, strength)
+        total += np.einsum("i,ij->j", weights, pi)
+        np.subtract(pi, pi * pi, out=pi)
+        gradient += transposed_product(carried, pi)
+    rest, staying = _untangled(parts, gradient)
+    return Averages(total, _assembled(parts, rest, own * staying))
 
 
 def averaged_slope(model: FittedModel, name: str, moved: Coded) -> Averages:
@@ -86,22 +86,24 @@ def averaged_slope(model: FittedModel, name: str, moved: Coded) -> Averages:
     if parts is None:
         return _slope_by_rebuilding(model, name, moved)
     own, own_slope = parts.own_values(moved), parts.own_derivatives(name, moved)
-    strength, slope_strength = _strength(model, parts, own), _strength(model, parts, own_slope)
+    strength = _strength(model, parts, own)
+    slope_strength = _strength(model, parts, own_slope)
+    slope_strength[-1] = 0.0
     total = np.zeros(len(own))
-    rest_gradient = np.zeros((len(model.coefficients), len(own)))
-    still_curving = np.zeros((len(parts.still), len(own)))
-    still_sloping = np.zeros_like(still_curving)
-    for X, still, rest, weights in _blocks(model, parts, len(own)):
-        pi = _probability(still @ strength, rest)
-        steepness = still @ slope_strength
-        sloping = pi * (1 - pi) * weights[:, None]
-        total += np.einsum("ij,ij->j", sloping, steepness)
-        curving = sloping * (1 - 2 * pi) * steepness
-        rest_gradient += X.T @ curving
-        still_curving += still.T @ curving
-        still_sloping += still.T @ sloping
-    moving = own * still_curving[parts.group].T + own_slope * still_sloping[parts.group].T
-    return Averages(total, _assembled(parts, rest_gradient, moving))
+    gradient = np.zeros((parts.width, 2 * len(own)))
+    for still, carried, weights in _blocks(model, parts, len(own)):
+        pi = _probability(still, strength)
+        # curving π(1−π)(1−2π)·dη/dx and sloping π(1−π), side by side for one product
+        both = np.empty((len(still), 2, len(own)))
+        sloping = np.subtract(pi, pi * pi, out=both[:, 1])
+        curving = np.multiply(sloping, product(still, slope_strength), out=both[:, 0])
+        total += np.einsum("i,ij->j", weights, curving)
+        curving *= 1 - 2 * pi
+        gradient += transposed_product(carried, both.reshape(len(still), -1))
+    rest, curving_still = _untangled(parts, gradient[:, : len(own)])
+    _, sloping_still = _untangled(parts, gradient[:, len(own) :])
+    moving = own * curving_still + own_slope * sloping_still
+    return Averages(total, _assembled(parts, rest, moving))
 
 
 def _split(model: FittedModel, moved: Coded) -> Split | None:
@@ -111,36 +113,51 @@ def _split(model: FittedModel, moved: Coded) -> Split | None:
 
 
 def _strength(model: FittedModel, parts: Split, own: Floats) -> Floats:
-    """Σ_{c in g} β_c own(j, c), shape (G, J)."""
-    return np.asarray(parts.membership().T @ (own * model.coefficients[parts.touched]).T)
+    """Σ_{c in g} β_c own(j, c), and 1 for the rest of η: shape (G + 1, J)."""
+    moving = parts.membership().T @ (own * model.coefficients[parts.touched]).T
+    return np.vstack([moving, np.ones(len(own))])
 
 
-def _assembled(parts: Split, rest_gradient: Floats, moving: Floats) -> Floats:
-    gradient = rest_gradient.T.copy()
+def _untangled(parts: Split, gradient: Floats) -> tuple[Floats, Floats]:
+    """The gradient's parts: of the columns that rest, and of what each moving column stays as."""
+    resting = len(parts.resting)
+    return gradient[:resting].T, gradient[resting:][parts.group].T
+
+
+def _assembled(parts: Split, rest: Floats, moving: Floats) -> Floats:
+    gradient = np.empty((len(moving), len(parts.design.columns)))
+    gradient[:, parts.resting] = rest
     gradient[:, parts.touched] = moving
     return gradient
 
 
 def _blocks(
     model: FittedModel, parts: Split, points: int
-) -> Iterator[tuple[Floats, Floats, Floats, Floats]]:
-    """Design rows, what stays, the rest of η, and normalised weights, block by block."""
-    resting = model.coefficients.copy()
-    resting[parts.touched] = 0.0
+) -> Iterator[tuple[Floats, Floats, Floats]]:
+    """What is needed of the rows, block by block.
+
+    Yields what stays, with the rest of η as last column; what carries the gradient,
+    the resting columns and what stays, weighted; and the weights.
+    """
+    weights = _normalised_weights(model)
     for block in _slices(model.sample.rows, points):
-        X = model.sample.matrix[block]
-        coded = _block_of(model, block)
-        yield (
-            X,
-            parts.still_values(coded, len(X)),
-            _rest(model, X @ resting, block),
-            _weights(model, block),
-        )
+        resting = model.sample.matrix[block][:, parts.resting]
+        staying = parts.still_values(_block_of(model, block), len(resting))
+        eta = np.einsum("ij,j->i", resting, model.coefficients[parts.resting])
+        w = weights[block]
+        carried = np.concatenate([resting, staying], axis=1) * w[:, None]
+        yield np.column_stack([staying, _rest(model, eta, block)]), carried, w
 
 
 def _slices(rows: int, points: int) -> Iterator[slice]:
-    size = max(256, _HELD // max(points, 1))
+    size = max(256, _CACHED // points)
     return (slice(start, min(start + size, rows)) for start in range(0, rows, size))
+
+
+def _normalised_weights(model: FittedModel) -> Floats:
+    if model.sample.weights is None:
+        return np.full(model.sample.rows, 1.0 / model.sample.rows)
+    return np.asarray(model.sample.weights / model.sample.weights.sum())
 
 
 def _block_of(model: FittedModel, block: slice) -> dict[str, NDArray[Any]]:
@@ -151,26 +168,14 @@ def _rest(model: FittedModel, eta: Floats, block: slice) -> Floats:
     return eta if model.sample.offset is None else eta + model.sample.offset[block]
 
 
-def _weights(model: FittedModel, block: slice) -> Floats:
-    if model.sample.weights is None:
-        return np.full(block.stop - block.start, 1.0 / model.sample.rows)
-    return np.asarray(model.sample.weights[block] / model.sample.weights.sum())
-
-
-def _probability(eta: Floats, rest: Floats) -> Floats:
-    """1 / (1 + exp(−η − rest)), in the memory of η."""
-    eta += rest[:, None]
-    np.negative(eta, out=eta)
+def _probability(still: Floats, strength: Floats) -> Floats:
+    """1 / (1 + exp(−η)) of η = still @ strength, in one piece of memory."""
+    pi = product(still, -strength)
     # past 709 exp overflows to infinity, and the probability is 0 to every digit
     with np.errstate(over="ignore"):
-        np.exp(eta, out=eta)
-    eta += 1.0
-    return np.reciprocal(eta, out=eta)
-
-
-def _times_one_minus(pi: Floats) -> None:
-    """Turn π into π(1 − π), in its own memory."""
-    np.subtract(pi, pi * pi, out=pi)
+        np.exp(pi, out=pi)
+    pi += 1.0
+    return np.reciprocal(pi, out=pi)
 
 
 def _rebuilt(
@@ -178,13 +183,14 @@ def _rebuilt(
 ) -> Iterator[tuple[Floats, dict[str, NDArray[Any]], Floats, Floats]]:
     """Rows rebuilt with the moved values of point j: where the design cannot be split."""
     touched = model.design.touched(moved)
+    weights = _normalised_weights(model)
     for block in _slices(model.sample.rows, 1):
         X = model.sample.matrix[block].copy()
         coded = _block_of(model, block)
         coded |= {name: np.repeat(values[j : j + 1], len(X)) for name, values in moved.items()}
         X[:, touched] = model.design.some_columns(touched, coded, len(X))
-        pi = _probability((X @ model.coefficients)[:, None], _rest(model, np.zeros(len(X)), block))
-        yield X, coded, pi[:, 0], _weights(model, block)
+        eta = _rest(model, X @ model.coefficients, block)
+        yield X, coded, probability_from_linear_predictor(eta), weights[block]
 
 
 def _probability_by_rebuilding(model: FittedModel, moved: Coded) -> Averages:

@@ -119,7 +119,7 @@ def ledger(answer: ProfileAnswer) -> pd.DataFrame:
     >>> fit = po.FittedLogit(smf.logit("burst ~ age_years", pipes).fit(disp=0))
     >>> rows = po.ledger(fit.profile({"age_years": 80}))
     >>> total = fit.profile({"age_years": 80}).point.linear_predictor.estimate
-    >>> abs(rows.estimate.sum() - total) < 1e-12
+    >>> bool(abs(rows.estimate.sum() - total) < 1e-12)
     True
     """
     values = dict(answer.point.values)

@@ -14,6 +14,7 @@ from numpy.typing import NDArray
 from plainodds.errors import QuestionRefused
 from plainodds.model.design.design import Coded, Design, Floats
 from plainodds.model.predictors import PredictorFacts, Subject
+from plainodds.model.products import product, transposed_product
 from plainodds.scales import probability_from_linear_predictor, probability_slope
 from plainodds.values import Pairs, Scalar, plain
 
@@ -133,13 +134,13 @@ class FittedModel:
         information = np.zeros((k, k))
         for block in self.sample.blocks():
             X = self.sample.matrix[block]
-            eta = X @ self.coefficients
+            eta = np.einsum("ij,j->i", X, self.coefficients)
             if self.sample.offset is not None:
                 eta += self.sample.offset[block]
             w = probability_slope(probability_from_linear_predictor(eta))
             if self.sample.weights is not None:
                 w *= self.sample.weights[block]
-            information += X.T @ (X * w[:, None])
+            information += transposed_product(X, X * w[:, None])
         return np.asarray(np.linalg.pinv(information, hermitian=True))
 
     @cached_property
@@ -149,7 +150,7 @@ class FittedModel:
             return math.nan, math.nan
         inverse = self.information_inverse
         found = [
-            np.einsum("ij,ij->i", (X := self.sample.matrix[block]) @ inverse, X)
+            np.einsum("ij,ij->i", product(X := self.sample.matrix[block], inverse), X)
             for block in self.sample.blocks()
         ]
         leverages = np.concatenate(found)

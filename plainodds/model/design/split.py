@@ -14,6 +14,7 @@ from __future__ import annotations
 
 from collections.abc import Iterable
 from dataclasses import dataclass
+from functools import cached_property
 
 import numpy as np
 from numpy.typing import NDArray
@@ -45,6 +46,16 @@ class Split:
     own: tuple[Column, ...]
     still: tuple[tuple[Atom, ...], ...]
     group: NDArray[np.intp]
+
+    @cached_property
+    def resting(self) -> NDArray[np.intp]:
+        """Positions of the columns that no moved predictor touches."""
+        return np.setdiff1d(np.arange(len(self.design.columns)), self.touched)
+
+    @property
+    def width(self) -> int:
+        """How many columns carry a gradient: the resting ones and what stays of the others."""
+        return len(self.resting) + len(self.still)
 
     def own_values(self, moved: Coded) -> Floats:
         """What moves, at J points: shape (J, T)."""
