@@ -11,6 +11,7 @@ import pandas as pd
 from numpy.typing import NDArray
 from patsy import DesignInfo
 from statsmodels.discrete.discrete_model import Logit
+from statsmodels.genmod.generalized_estimating_equations import GEE
 
 from plainodds.errors import FitRefused
 from plainodds.model.design.design import Column, Factor, Floats
@@ -189,7 +190,9 @@ def _outcome_parts(
         )
         return outcome, None, _offset(model, n), notices
     total = np.ones(n)
-    for name in ("freq_weights", "var_weights", "n_trials", "weights"):
+    # a GLM's own `weights` are those of its last iteration, a GEE's those that were handed over
+    names = ("weights",) if isinstance(model, GEE) else ("freq_weights", "var_weights", "n_trials")
+    for name in names:
         weights = getattr(model, name, None)
         if weights is not None and np.shape(weights) == (n,):
             total = total * np.asarray(weights, dtype=float)
