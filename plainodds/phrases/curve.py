@@ -129,8 +129,9 @@ def _line_told(answer: CurveAnswer, line: CurveLine, places: Sequence[int], way:
     lead = f"for {line_words(answer, line)}, " if line_words(answer, line) else ""
     noun = f"the {way.noun} of {tidy(subject.outcome.event)}"
     if question.others == "observed":
-        average = "the average " if way is way_of("probability") else "the average chance as "
-        noun = noun.replace("the ", average, 1)
+        noun = f"the average chance of {tidy(subject.outcome.event)}"
+        if way is not way_of("probability"):
+            noun = f"the {way.noun} matching {noun}"
     told = say_level_once(
         [way.told(estimate_at(line, place), question.level) for place in places], question.level
     )

@@ -34,6 +34,7 @@ __all__ = [
     "value_label",
 ]
 
+_BLANK = "(blank)"
 _STARTS: dict[Scale, str] = {
     "probability": "Chance of",
     "odds": "Odds of",
@@ -73,12 +74,12 @@ def in_sentence(text: str) -> str:
 
 def predictor_label(facts: PredictorFacts) -> str:
     """What a predictor is called, as a heading."""
-    return sentence_case(facts.label) or facts.name
+    return sentence_case(facts.label) or tidy(facts.name)
 
 
 def predictor_name(facts: PredictorFacts) -> str:
     """What a predictor is called within a sentence."""
-    return in_sentence(facts.label) or facts.name
+    return in_sentence(facts.label) or tidy(facts.name)
 
 
 def axis_title(facts: PredictorFacts) -> str:
@@ -102,11 +103,10 @@ def value_label(facts: PredictorFacts, value: Scalar) -> str:
         For example "40 years", "1 year" or "cast iron".
     """
     if not facts.is_number:
-        if value in facts.levels:
-            return tidy(facts.level_label(value)) or str(value)
-        return tidy(str(value))
+        label = facts.level_label(value) if value in facts.levels else str(value)
+        return tidy(label) or tidy(str(value)) or _BLANK
     if isinstance(value, str):
-        return tidy(value)
+        return tidy(value) or _BLANK
     return with_unit(float(value), facts.unit)
 
 
@@ -149,8 +149,7 @@ def change_label(facts: PredictorFacts, row: OddsRow) -> str:
 def from_to(facts: PredictorFacts, start: Scalar, end: Scalar) -> str:
     """A change between two values, the unit said once: "from 20 to 60 years"."""
     low, high = value_label(facts, start), value_label(facts, end)
-    unit = tidy(facts.unit)
-    if unit and facts.is_number and high.endswith(f" {unit}"):
+    if facts.is_number and high.startswith(f"{quantity(float(end))} "):
         low = quantity(float(start))
     return f"from {low} to {high}"
 
@@ -174,8 +173,8 @@ def _held_words(subject: Subject, name: str, value: Scalar) -> str:
 
 def given_clause(subject: Subject, given: Pairs) -> str:
     """Stated values, as part of a sentence: "given soil high and pipe age 40 years"."""
-    told = (_held_words(subject, name, value) for name, value in given)
-    return f"given {listed(list(told))}"
+    told = [_held_words(subject, name, value) for name, value in given]
+    return f"given {listed(told)}" if told else ""
 
 
 def listed(items: list[str]) -> str:
@@ -207,8 +206,10 @@ def scale_title(answer: CurveAnswer) -> str:
     scale, outcome = answer.question.scale, answer.subject.outcome
     title = f"{_STARTS[scale]} {tidy(outcome.event)}"
     if answer.question.others == "observed":
-        average = "Average" if scale in ("probability", "slope") else "Average chance as"
-        title = f"{average} {title[:1].lower()}{title[1:]}"
+        average = f"average chance of {tidy(outcome.event)}"
+        # what is averaged are chances; their odds and log odds are read off the average
+        matching = {"odds": "Odds matching the", "linear_predictor": "Log odds matching the"}
+        title = f"{matching[scale]} {average}" if scale in matching else sentence_case(average)
     if scale != "slope":
         return title
     facts = answer.subject.predictor(answer.question.predictor)

@@ -26,12 +26,12 @@ from plainodds.phrases.numbers import (
     frequency,
     p_value,
     ratio,
-    told_apart,
 )
 from plainodds.phrases.parts import (
     ASSOCIATION,
     covariance_words,
     model_cautions,
+    rather,
     ratio_with_interval,
     rows_words,
     sentence,
@@ -83,15 +83,11 @@ def _plain_row(
     odds = _odds_words(row.odds_ratio, answer.question.level)
     if move is None:
         return f"{opening}, the odds of {tidy(subject.outcome.event)} are {odds}"
-    before, after = told_apart(*move)
-    of = f"{opening}, the chance for {typical_case(subject.outcome)}"
-    if before == after:
-        return f"{of} is {after} either way; the odds are {odds}"
-    often, seldom = frequency(move[1], over), frequency(move[0], over)
-    counted = ""
-    if often != seldom:
-        counted = f", that is {often.removesuffix(f' in {over:,}')} rather than {seldom}"
-    return f"{of} is {after} rather than {before}{counted}; the odds are {odds}"
+    before, after = move
+    return (
+        f"{opening}, the chance for {typical_case(subject.outcome)} is "
+        f"{rather(after, before, over)}; the odds are {odds}"
+    )
 
 
 def _opening(answer: OddsAnswer, row: OddsRow) -> str:

@@ -13,6 +13,7 @@ from plainodds.phrases.numbers import (
     chance,
     confidence,
     count,
+    frequency,
     percentage_points,
     points_on_sides,
     quantity,
@@ -20,6 +21,7 @@ from plainodds.phrases.numbers import (
     ratio_interval,
     signed,
     span,
+    told_apart,
 )
 from plainodds.phrases.units import tidy
 from plainodds.values import Pairs
@@ -33,6 +35,7 @@ __all__ = [
     "interval",
     "model_cautions",
     "profile_words",
+    "rather",
     "ratio_with_interval",
     "rows_words",
     "say_level_once",
@@ -180,6 +183,18 @@ def profile_words(subject: Subject, values: Pairs, *, at_most: int = _LISTED_AT_
     if left > 1:
         told = [*told[:at_most], f"{left} more"]
     return listed(told)
+
+
+def rather(here: float, there: float, over: int) -> str:
+    """As in "12% rather than 7%, that is 12 rather than 7 in 100"."""
+    after, before = told_apart(here, there)
+    if after == before:
+        return f"{after} either way"
+    often, seldom = frequency(here, over), frequency(there, over)
+    if often == seldom:
+        return f"{after} rather than {before}"
+    bare = often.removesuffix(f" in {over:,}")
+    return f"{after} rather than {before}, that is {bare} rather than {seldom}"
 
 
 def typical_case(outcome: OutcomeFacts) -> str:

@@ -16,7 +16,6 @@ from plainodds.phrases.numbers import (
     frequency_span,
     ratio,
     signed,
-    told_apart,
 )
 from plainodds.phrases.parts import (
     ASSOCIATION,
@@ -26,6 +25,7 @@ from plainodds.phrases.parts import (
     difference_with_interval,
     model_cautions,
     profile_words,
+    rather,
     ratio_with_interval,
     rows_words,
     sentence,
@@ -51,8 +51,10 @@ def _(answer: ProfileAnswer, audience: Audience = "plain") -> Words:
 
 def _plain(answer: ProfileAnswer) -> Words:
     over = _denominator(answer)
-    told = [_chance_told(answer, over), _framed(answer, over)]
-    if answer.comparison is not None:
+    told = [_chance_told(answer, over)]
+    if answer.comparison is None:
+        told.append(_framed(answer, over))
+    else:
         told += _comparison(answer, answer.comparison, over)
     told += _ledger(answer)
     told += familiarity_words(answer)
@@ -109,16 +111,11 @@ def _framed(answer: ProfileAnswer, over: int) -> str:
 def _comparison(answer: ProfileAnswer, comparison: Comparison, over: int) -> list[str]:
     level = answer.question.level
     here, there = answer.point.probability.estimate, answer.start.probability.estimate
-    after, before = told_apart(here, there)
     with_whom = _who(answer, answer.start, answer.question.against or ())
-    often, seldom = frequency(here, over), frequency(there, over)
-    counted = ""
-    if often != seldom:
-        counted = f", that is {often.removesuffix(f' in {over:,}')} rather than {seldom}"
-    chances = f"is {after} rather than {before}{counted}" if after != before else f"is {after} too"
     return [
-        f"Compared with {with_whom}, the chance {chances}",
-        f"That is {difference_with_interval(comparison.risk_difference, level)}",
+        f"Compared with {with_whom}, the chance is {rather(here, there, over)}",
+        f"It is {difference_with_interval(comparison.risk_difference, level)}",
+        f"The chance that this does not happen is {rather(1 - here, 1 - there, over)}",
         f"Put as ratios, the chance is multiplied by "
         f"{ratio_with_interval(comparison.risk_ratio, level)} and the odds by "
         f"{ratio_with_interval(comparison.odds_ratio, level)}",

@@ -89,8 +89,8 @@ def denominator(chances: Iterable[float]) -> int:
     """Choose the one denominator over which a set of chances is written as frequencies.
 
     The smallest of 100, 1,000 and 10,000 over which the rarest event (or non-event)
-    still counts: at least two for a chance alone, at least ten, that is with two
-    figures, where chances are compared.
+    still counts: at least two for a chance alone, at least five where chances are
+    compared.
 
     Source: one fixed denominator for all, Gigerenzer et al. 2007; Fagerlin,
     Zikmund-Fisher & Ubel 2011.
@@ -105,7 +105,7 @@ def denominator(chances: Iterable[float]) -> int:
         return _DENOMINATORS[0]
     compared = known[-1] > known[0]
     rarest = min(min(each, 1 - each) for each in known)
-    fitting = [each for each in _DENOMINATORS if rarest * each >= (10 if compared else 2)]
+    fitting = [each for each in _DENOMINATORS if rarest * each >= (5 if compared else 2)]
     smallest = fitting[0] if fitting else _DENOMINATORS[-1]
     if smallest == _DENOMINATORS[0] and compared:
         low, high = known[0], known[-1]
