@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+import math
+
 import numpy as np
 from numpy.typing import NDArray
 
@@ -45,7 +47,7 @@ def support_of(
     column = model.sample.columns[facts.name]
     edges: tuple[float, ...] = ()
     if facts.is_number:
-        edges = tuple(np.linspace(*_ends(facts), _bins(facts) + 1).tolist())
+        edges = _edges(facts)
         width = edges[1] - edges[0]
         # the highest value belongs to the last bin
         places = np.minimum(((column - edges[0]) / width).astype(np.intp), len(edges) - 2)
@@ -72,18 +74,14 @@ def is_supported(facts: PredictorFacts, support: Support, x: Scalar) -> bool:
     return any(support.counts[max(place - 1, 0) : place + 2])
 
 
-def _ends(facts: PredictorFacts) -> tuple[float, float]:
+def _edges(facts: PredictorFacts) -> tuple[float, ...]:
+    low, high = facts.minimum, facts.maximum
     if facts.kind == "whole number":
-        return facts.minimum - 0.5, facts.maximum + 0.5
-    return facts.minimum, facts.maximum if facts.maximum > facts.minimum else facts.minimum + 1.0
-
-
-def _bins(facts: PredictorFacts) -> int:
-    if facts.kind != "whole number":
-        return _BINS
-    # bins of whole numbers hold equally many of them
-    values = int(facts.maximum - facts.minimum) + 1
-    return values if values <= _BINS else max(n for n in range(1, _BINS + 1) if values % n == 0)
+        # each bin holds equally many whole numbers, of which none lies on an edge
+        width = math.ceil((high - low + 1) / _BINS)
+        count = math.ceil((high - low + 1) / width)
+        return tuple(low - 0.5 + width * place for place in range(count + 1))
+    return tuple(np.linspace(low, high if high > low else low + 1.0, _BINS + 1).tolist())
 
 
 def _nearest(
