@@ -207,7 +207,7 @@ def _method(answer: CurveAnswer) -> str:
     if question.scale == "slope":
         way = "delta-method intervals of dπ/dx"
     elif question.others == "observed":
-        way = "delta-method intervals on the logit of the averaged chance"
+        way = "delta-method intervals on the logit of the averaged chance (rows weighted as fitted)"
     else:
         way = "Wald intervals on the linear predictor"
     if question.scale in ("probability", "odds"):

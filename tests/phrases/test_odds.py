@@ -151,7 +151,10 @@ def test_a_modifier_away_from_its_typical_value_has_odds_only():
 def test_above_ten_percent_an_odds_ratio_is_not_read_as_a_ratio_of_chances(typical):
     for audience in ("plain", "technical"):
         cautions = words(odds_answer(odds_row(), typical=typical), audience).cautions
-        assert cautions[0].startswith("An odds ratio is not a ratio of chances")
+        assert cautions[0].startswith(
+            "An odds ratio is not a ratio of chances: with a typical chance of "
+            f"{100 * typical:.0f}%, above about 10%"
+        )
 
 
 def test_a_rare_outcome_needs_no_such_caution_unless_a_chance_grows_common():
