@@ -29,7 +29,9 @@ from plainodds.phrases.numbers import (
 )
 from plainodds.phrases.parts import (
     ASSOCIATION,
+    beyond_saying,
     covariance_words,
+    is_beyond_saying,
     model_cautions,
     rather,
     ratio_with_interval,
@@ -38,6 +40,7 @@ from plainodds.phrases.parts import (
     signed_with_interval,
     standard_error,
     typical_case,
+    typical_words,
 )
 from plainodds.phrases.saying import Audience, Words, for_audience, words
 from plainodds.phrases.units import tidy
@@ -45,7 +48,6 @@ from plainodds.phrases.units import tidy
 __all__: list[str] = []
 
 _RARE = 0.10
-_BEYOND_SAYING = 1000.0
 
 
 @words.register
@@ -68,10 +70,11 @@ def _plain(answer: OddsAnswer) -> Words:
 
 def _typical(answer: OddsAnswer, over: int) -> str:
     outcome, typical = answer.subject.outcome, answer.typical_probability
+    models = answer.question.models
+    by = f", by the model “{tidy(models[0])}”" if models else ""
     return sentence(
-        f"For {typical_case(outcome)}, with every predictor at its median or most frequent "
-        f"level, the chance of {tidy(outcome.event)} is {chance(typical)}, "
-        f"that is {frequency(typical, over)}"
+        f"For {typical_case(outcome)}, {typical_words(answer.subject)}, the chance of "
+        f"{tidy(outcome.event)} is {chance(typical)}, that is {frequency(typical, over)}{by}"
     )
 
 
@@ -200,15 +203,9 @@ def _extremes(answer: OddsAnswer) -> tuple[str, ...]:
     found = {
         predictor_name(answer.subject.predictor(row.predictor)): None
         for row in answer.rows
-        if row.odds_ratio.estimate < 1 / _BEYOND_SAYING or row.odds_ratio.estimate > _BEYOND_SAYING
+        if is_beyond_saying(row.odds_ratio)
     }
-    if not found:
-        return ()
-    return (
-        f"An odds ratio beyond {1 / _BEYOND_SAYING:g} or {_BEYOND_SAYING:,.0f}, as for "
-        f"{listed(list(found))}, mostly means that in these data the predictors settle the "
-        "outcome without exception, or that the change it speaks of is far too large.",
-    )
+    return (beyond_saying(listed(list(found))),) if found else ()
 
 
 def _technical(answer: OddsAnswer) -> Words:

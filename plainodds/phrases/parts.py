@@ -29,10 +29,12 @@ from plainodds.values import Pairs
 __all__ = [
     "ASSOCIATION",
     "article",
+    "beyond_saying",
     "chance_with_interval",
     "covariance_words",
     "difference_with_interval",
     "interval",
+    "is_beyond_saying",
     "model_cautions",
     "profile_words",
     "rather",
@@ -43,6 +45,7 @@ __all__ = [
     "signed_with_interval",
     "standard_error",
     "typical_case",
+    "typical_words",
 ]
 
 ASSOCIATION = (
@@ -56,9 +59,13 @@ _COVARIANCE = {
     "robust": "a robust (sandwich) covariance matrix",
     "naive": "the model-based (naive) covariance matrix",
     "bias_reduced": "a bias-reduced robust covariance matrix",
+    "fixed scale": "the model-based covariance matrix with its scale fixed",
+    "hac-groupsum": "a covariance matrix robust to autocorrelation across groups (HAC)",
+    "hac-panel": "a covariance matrix robust to autocorrelation within panels (HAC)",
     "HAC": "a covariance matrix robust to heteroscedasticity and autocorrelation (HAC)",
 }
 _LISTED_AT_MOST = 8
+_BEYOND_SAYING = 1000.0
 
 
 def sentence(text: str) -> str:
@@ -153,6 +160,21 @@ def covariance_words(subject: Subject) -> str:
     return _COVARIANCE.get(kind, f"the covariance matrix of kind “{kind}”")
 
 
+def is_beyond_saying(odds_ratio: Estimate) -> bool:
+    """Whether an odds ratio is so far from 1 that only its limit is written."""
+    number = odds_ratio.estimate
+    return number > _BEYOND_SAYING or number < 1 / _BEYOND_SAYING
+
+
+def beyond_saying(found: str) -> str:
+    """What an odds ratio that is so far from 1 mostly means; `found` says whose it is."""
+    return (
+        f"An odds ratio beyond {1 / _BEYOND_SAYING:g} or {_BEYOND_SAYING:,.0f}, as for {found}, "
+        "mostly means that in these data the predictors settle the outcome without exception, or "
+        "that the change it speaks of is far too large."
+    )
+
+
 def model_cautions(subject: Subject, *, offset_held: bool = True) -> tuple[str, ...]:
     """What holds for every answer of this fitted model.
 
@@ -200,3 +222,10 @@ def rather(here: float, there: float, over: int) -> str:
 def typical_case(outcome: OutcomeFacts) -> str:
     """Who is typical: "a typical pipe"."""
     return f"a typical {tidy(outcome.case)}"
+
+
+def typical_words(subject: Subject) -> str:
+    """At which values a typical case's predictors are."""
+    chosen = any(stated.typical is not None for _, stated in subject.setting.predictors)
+    values = "median or most frequent level"
+    return f"with every predictor at its {'typical value' if chosen else values}"

@@ -20,9 +20,11 @@ from plainodds.phrases.numbers import (
 from plainodds.phrases.parts import (
     ASSOCIATION,
     article,
+    beyond_saying,
     chance_with_interval,
     covariance_words,
     difference_with_interval,
+    is_beyond_saying,
     model_cautions,
     profile_words,
     rather,
@@ -62,7 +64,9 @@ def _plain(answer: ProfileAnswer) -> Words:
 
 
 def _words(answer: ProfileAnswer, told: list[str]) -> Words:
-    cautions = (*familiarity_cautions(answer), *_reading(answer), ASSOCIATION)
+    cautions = [*familiarity_cautions(answer), *_reading(answer), ASSOCIATION]
+    if answer.comparison is not None and is_beyond_saying(answer.comparison.odds_ratio):
+        cautions.append(beyond_saying("this comparison"))
     return Words(
         tuple(map(sentence, told)),
         (*map(sentence, cautions), *model_cautions(answer.subject)),

@@ -5,7 +5,7 @@ from __future__ import annotations
 from itertools import pairwise
 
 from plainodds.answers.curve import CurveAnswer, CurveLine
-from plainodds.phrases.labels import line_label, listed, predictor_name, value_label
+from plainodds.phrases.labels import listed, predictor_name, value_label
 
 __all__ = ["beyond_words", "line_words", "supported_places"]
 
@@ -22,9 +22,7 @@ def line_words(answer: CurveAnswer, line: CurveLine) -> str:
     if by is None or line.by is None:
         return ""
     facts = answer.subject.predictor(by)
-    alone = line_label(facts, line.by)
-    name = predictor_name(facts)
-    return alone if alone.startswith(f"{name}: ") else f"{name} {alone}"
+    return f"{predictor_name(facts)} {value_label(facts, line.by)}"
 
 
 def beyond_words(answer: CurveAnswer) -> list[str]:

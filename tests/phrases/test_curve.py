@@ -164,8 +164,8 @@ def test_each_line_has_its_own_sentence():
     told = words(ANSWERS["by a category"]).sentences
     assert told[0].startswith("For material cast iron, with pipe age going from 0 to 110 years")
     assert told[2].startswith("For material PVC, with pipe age")
-    assert words(ANSWERS["by a yes/no"]).sentences[1].startswith("For lined: yes, with")
-    assert words(ANSWERS["by a number"]).sentences[1].startswith("For past repairs: 1, with")
+    assert words(ANSWERS["by a yes/no"]).sentences[1].startswith("For lined yes, with")
+    assert words(ANSWERS["by a number"]).sentences[1].startswith("For past repairs 1, with")
 
 
 def test_all_lines_count_over_one_denominator():
@@ -313,6 +313,16 @@ def test_odds_that_overflow_are_near_certain_chances():
     told = words(answer).sentences
     assert "over 99.9%" in told[0]
     assert "over 1,000" in told[1]
+
+
+def test_a_chance_that_is_not_known_is_said_to_be_so():
+    for scale in ("probability", "odds", "linear_predictor", "slope"):
+        answer = curve_answer(lambda x, b: math.nan, scale=scale)
+        for audience in ("plain", "technical"):
+            said = words(answer, audience)
+            assert any("not known" in sentence for sentence in said.sentences)
+            for sentence in (*said.sentences, *said.cautions, alternative(answer)):
+                assert faults(sentence) == []
 
 
 def test_technical_words_give_standard_errors():

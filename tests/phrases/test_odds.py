@@ -9,6 +9,7 @@ from plainodds import scales
 from plainodds.answers.estimate import Estimate
 from plainodds.answers.odds import OddsQuestion
 from plainodds.errors import QuestionRefused
+from plainodds.model.predictors import Predictor, Setting
 from plainodds.phrases import alternative, words
 from tests.phrases.made import AGE, MATERIAL, level_facts, number_facts, odds_answer, odds_row
 from tests.phrases.reading import faults, says, unaccounted
@@ -207,10 +208,17 @@ def test_numbers_that_are_not_known_are_said_to_be_so():
     assert faults(alternative(odds_answer(row))) == []
 
 
+def test_a_typical_value_of_the_analysts_own_is_not_called_a_median():
+    setting = Setting(predictors=(("age_years", Predictor(typical=30.0)),))
+    told = words(odds_answer(odds_row(), setting=setting)).sentences[0]
+    assert told.startswith("For a typical pipe, with every predictor at its typical value, the")
+
+
 def test_models_side_by_side_are_told_apart():
     rows = (odds_row(model="crude", log=0.7), odds_row(model="adjusted", log=0.3))
     answer = odds_answer(*rows, question=OddsQuestion(models=("crude", "adjusted")))
     told = words(answer).sentences
+    assert told[0].endswith("that is 8 in 100, by the model “crude”.")
     assert told[1].startswith("In the model “crude”, per 10 years more of pipe age, the odds of")
     assert told[2].startswith("In the model “adjusted”, per 10 years more of pipe age, the odds of")
     assert "Model “adjusted”: Pipe age, per 10 years more: odds ratio 1.35" in str(

@@ -194,6 +194,15 @@ def test_an_unfamiliar_profile_is_warned_of_first(familiarity, told):
         assert not any("much like this profile among" in sentence for sentence in said.sentences)
 
 
+def test_a_comparison_beyond_saying_is_called_into_doubt():
+    answer = profile_answer(eta=2.0, start=-12.0, against=(("age_years", 20.0),))
+    doubt = [each for each in words(answer).cautions if each.startswith("An odds ratio beyond")]
+    assert len(doubt) == 1
+    assert "as for this comparison" in doubt[0]
+    near = words(profile_answer(against=(("age_years", 20.0),))).cautions
+    assert not any(caution.startswith("An odds ratio beyond") for caution in near)
+
+
 def test_the_profile_compared_with_is_warned_of_too():
     start = Familiarity(0.2, 0.01, 0.05, 0, ("age_years",), "beyond")
     answer = profile_answer(against=(("age_years", 20.0),), start_familiarity=start)
