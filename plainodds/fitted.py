@@ -79,15 +79,7 @@ class FittedLogit:
             raise FitRefused(
                 "This is a FittedLogit already; ask it, or hand over what fit() returned."
             )
-        self.model = take_in(
-            result,
-            data,
-            _stated(predictors),
-            outcome,
-            dict(derived or {}),
-            dict(functions or {}),
-            offset,
-        )
+        self.model = take_in(result, data, predictors, outcome, derived, functions, offset)
 
     @property
     def subject(self) -> Subject:
@@ -353,17 +345,6 @@ def _odds_question(
         order=order,
         level=level,
     )
-
-
-def _stated(predictors: Mapping[str, Predictor] | None) -> dict[str, Predictor]:
-    stated = dict(predictors or {})
-    for name, item in stated.items():
-        if not isinstance(item, Predictor):
-            raise FitRefused(
-                f"predictors={{{name!r}: {item!r}}}: state it as a Predictor, for example "
-                f"Predictor(label={name!r})."
-            )
-    return stated
 
 
 def _tuple(values: Sequence[Scalar]) -> tuple[Scalar, ...]:

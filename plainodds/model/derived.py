@@ -1,11 +1,10 @@
-"""Columns that move with another one: declared by the analyst, or noticed in the data."""
+"""Columns that move with another one, as the analyst declares them."""
 
 from __future__ import annotations
 
 import ast
-from collections.abc import Callable, Collection, Iterator, Mapping
+from collections.abc import Collection, Mapping
 from dataclasses import dataclass
-from itertools import combinations
 from types import CodeType
 from typing import Any
 
@@ -15,11 +14,14 @@ from numpy.typing import NDArray
 from plainodds.errors import FitRefused
 from plainodds.model.design.design import Factor, Floats
 
-__all__ = ["Derived", "DerivedFactor", "noticed", "parse", "with_derived"]
+__all__ = ["Derived", "DerivedFactor", "parse", "with_derived"]
 
 _FUNCTIONS = {
     name: getattr(np, name)
-    for name in "abs log log2 log10 log1p exp sqrt minimum maximum where floor ceil".split()
+    for name in (
+        *("abs", "exp", "log", "log1p", "log2", "log10", "sqrt"),
+        *("ceil", "floor", "maximum", "minimum", "where"),
+    )
 }
 
 
@@ -71,8 +73,8 @@ def parse(derived: Mapping[str, str], known: Collection[str]) -> dict[str, Deriv
         chained = item.variables & set(parsed)
         if chained:
             raise FitRefused(
-                f"derived={{{item.name!r}: {item.expression!r}}} reads {sorted(chained)[0]!r}, which is "
-                "derived itself; write it in terms of columns that are not."
+                f"derived={{{item.name!r}: {item.expression!r}}} reads {sorted(chained)[0]!r}, "
+                "which is derived itself; write it in terms of columns that are not."
             )
     return parsed
 
@@ -119,8 +121,11 @@ class DerivedFactor:
 
     def evaluate(self, raw: Mapping[str, NDArray[Any]]) -> Floats:
         """Compute the derived columns, then the factor."""
-        extra = {item.name: item.evaluate(raw) for item in self.derived}
-        return self.inner.evaluate({**raw, **extra})
+        computed = {
+            item.name: item.evaluate({name: raw[name] for name in item.variables})
+            for item in self.derived
+        }
+        return self.inner.evaluate({**raw, **computed})
 
 
 def with_derived(factors: tuple[Factor, ...], derived: Mapping[str, Derived]) -> tuple[Factor, ...]:
@@ -131,77 +136,3 @@ def with_derived(factors: tuple[Factor, ...], derived: Mapping[str, Derived]) ->
         else factor
         for factor in factors
     )
-
-
-def noticed(columns: Mapping[str, Floats]) -> dict[str, str]:
-    """Columns that are exactly the square, cube, root, log or product of others.
-
-    Parameters
-    ----------
-    columns : mapping of name to array (n,)
-        The numeric raw columns.
-
-    Returns
-    -------
-    mapping of name to expression
-        Ready to be handed over as `derived=`.
-    """
-    varied = [name for name, column in columns.items() if np.ptp(column) > 0]
-    first = {name: columns[name][:200] for name in varied}
-    if not varied:
-        return {}
-    heads = np.column_stack([first[name] for name in varied])
-    tolerance = 1e-12 + 1e-10 * np.abs(heads)
-    found: dict[str, str] = {}
-    for sources, expression, compute in _candidates(columns, varied):
-        if found.keys() & sources:
-            continue
-        alike = (np.abs(heads - compute(first)[:, None]) <= tolerance).all(axis=0)
-        for place in np.nonzero(alike)[0]:
-            target = varied[place]
-            if (
-                target not in sources
-                and target not in found
-                and np.allclose(compute(columns), columns[target], rtol=1e-10, atol=1e-12)
-            ):
-                found[target] = expression
-    return found
-
-
-def _candidates(
-    columns: Mapping[str, Floats], names: list[str]
-) -> Iterator[tuple[set[str], str, Callable[[Mapping[str, Floats]], Floats]]]:
-    # a 0/1 column is its own square, so powers and logs of it say nothing
-    many = [name for name in names if _has_more_than_two(columns[name])]
-    for form, function in _FORMS.items():
-        for name in many:
-            yield {name}, form.format(_as_code(name)), lambda c, n=name, f=function: f(c[n])
-    for one, other in combinations(names, 2):
-        expression = f"{_as_code(one)} * {_as_code(other)}"
-        yield {one, other}, expression, lambda c, a=one, b=other: c[a] * c[b]
-
-
-def _quiet(function: Callable[[Floats], Floats]) -> Callable[[Floats], Floats]:
-    def quiet(x: Floats) -> Floats:
-        with np.errstate(all="ignore"):
-            return np.asarray(function(x))
-
-    return quiet
-
-
-_FORMS: dict[str, Callable[[Floats], Floats]] = {
-    "{} ** 2": np.square,
-    "{} ** 3": lambda x: x**3,
-    "log({})": _quiet(np.log),
-    "log1p({})": _quiet(np.log1p),
-    "sqrt({})": _quiet(np.sqrt),
-}
-
-
-def _as_code(name: str) -> str:
-    return name if name.isidentifier() else f"Q({name!r})"
-
-
-def _has_more_than_two(column: Floats) -> bool:
-    # the square of a 0/1 column is itself, and says nothing
-    return bool(((column != column.min()) & (column != column.max())).any())

@@ -1,4 +1,4 @@
-"""statsmodels results -> coefficients and covariance, one function per kind of result."""
+"""statsmodels results -> coefficients and covariance, or a refusal."""
 
 from __future__ import annotations
 
@@ -15,13 +15,13 @@ from statsmodels.genmod.generalized_linear_model import GLM
 
 from plainodds.errors import FitRefused
 
-__all__ = ["Estimates", "estimates_of"]
+__all__ = ["Estimates", "estimates_of", "refuse_other_models"]
 
 Floats = NDArray[np.float64]
 
 _PENALISED = (
-    "The fit is penalised: its coefficients are shrunk on purpose, and the usual covariance "
-    "does not describe them, so there are estimates without intervals."
+    "The fit is penalised: its coefficients are shrunk or selected on purpose, and the usual "
+    "covariance does not describe them, so there are estimates without intervals."
 )
 
 
@@ -47,13 +47,13 @@ class Estimates:
     degrees_of_freedom: float | None
 
 
-def estimates_of(result: Any) -> Estimates:
-    """Read coefficients and covariance from a fitted result.
+def refuse_other_models(result: Any) -> None:
+    """Refuse whatever is not the result of a binary logit model.
 
     Raises
     ------
     FitRefused
-        If the result is not that of a binary logit model, or its estimates are unusable.
+        Naming what it is and which model to fit instead.
     """
     if not hasattr(result, "params") or not hasattr(result, "model"):
         raise FitRefused(_not_a_result(result))
@@ -63,17 +63,34 @@ def estimates_of(result: Any) -> Estimates:
             "GLMGam penalises its smooth terms and keeps their basis outside the formula. "
             "Fit the smooth as bs(x, df=...) in a GLM or Logit instead."
         )
-    if isinstance(model, Logit):
-        found = _logit(result)
-    elif isinstance(model, GEE):
-        _refuse_other_families(model, exact=(NominalGEE, OrdinalGEE))
-        found = _gee(result)
-    elif isinstance(model, GLM):
-        _refuse_other_families(model, exact=())
-        found = _glm(result)
-    else:
+    if isinstance(model, NominalGEE | OrdinalGEE) or not isinstance(model, Logit | GLM):
         raise FitRefused(_not_binary(type(model).__name__))
+    if isinstance(model, GLM):
+        _refuse_other_families(model)
+
+
+def estimates_of(result: Any) -> Estimates:
+    """Read coefficients and covariance from a fitted binary logit result.
+
+    Raises
+    ------
+    FitRefused
+        If the estimates are unusable.
+    """
+    model = result.model
+    found = _without_covariance(result) if _is_penalised(result) else _with_covariance(result)
     return _checked(found, list(model.exog_names))
+
+
+def _is_penalised(result: Any) -> bool:
+    held = getattr(result, "_results", result)
+    if isinstance(result.model, Logit):
+        return isinstance(held, L1BinaryResults)
+    if isinstance(result.model, GEE):
+        # a penalised GEE says so nowhere, but has no naive covariance
+        return not hasattr(held, "cov_naive")
+    # refitted after a selection it has a covariance, which knows nothing of the selection
+    return not hasattr(held, "cov_params") or bool(getattr(held, "regularized", False))
 
 
 def _not_a_result(result: Any) -> str:
@@ -100,10 +117,8 @@ def _not_binary(name: str) -> str:
     return f"{name} is not a binary logit model. {way}"
 
 
-def _refuse_other_families(model: Any, exact: tuple[type, ...]) -> None:
+def _refuse_other_families(model: Any) -> None:
     name = type(model).__name__
-    if exact and isinstance(model, exact):
-        raise FitRefused(_not_binary(name))
     family = model.family
     if not isinstance(family, families.Binomial):
         raise FitRefused(
@@ -115,24 +130,6 @@ def _refuse_other_families(model: Any, exact: tuple[type, ...]) -> None:
             f"The {name}'s link is {type(family.link).__name__}: its coefficients are not log "
             "odds. Fit it again with the default link of sm.families.Binomial(), the logit."
         )
-
-
-def _logit(result: Any) -> Estimates:
-    if isinstance(getattr(result, "_results", result), L1BinaryResults):
-        return _without_covariance(result)
-    return _with_covariance(result)
-
-
-def _glm(result: Any) -> Estimates:
-    if not hasattr(result, "cov_params"):
-        return _without_covariance(result)
-    return _with_covariance(result)
-
-
-def _gee(result: Any) -> Estimates:
-    if getattr(result, "regularized", False):
-        return _without_covariance(result)
-    return _with_covariance(result)
 
 
 def _without_covariance(result: Any) -> Estimates:

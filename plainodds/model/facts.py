@@ -3,21 +3,20 @@
 from __future__ import annotations
 
 import math
-from collections.abc import Mapping
 
 import numpy as np
 
-from plainodds.errors import FitRefused, QuestionRefused
-from plainodds.model.design.design import Design, Floats
+from plainodds.errors import FitRefused
+from plainodds.model.design.design import Floats
 from plainodds.model.predictors import Kind, Predictor, PredictorFacts
 from plainodds.model.quantiles import weighted_quantiles
 from plainodds.model.raw import RawColumn
 from plainodds.values import Scalar
 
-__all__ = ["allowed_range", "number_facts", "level_facts", "sensible_step", "shares_terms_with"]
+__all__ = ["level_facts", "number_facts", "sensible_step"]
 
 _NAN = math.nan
-_POINTS = 33
+_SHARES = (0.0, 0.05, 0.25, 0.5, 0.75, 0.95, 1.0)
 
 
 def number_facts(
@@ -36,19 +35,15 @@ def number_facts(
     FitRefused
         If the stated range, typical value or step is impossible.
     """
-    values = column.values
-    low, q1, median, q3, high = weighted_quantiles(values, weights, (0.0, 0.25, 0.5, 0.75, 1.0))
+    low, p05, q1, median, q3, p95, high = weighted_quantiles(column.values, weights, _SHARES)
     if column.kind == "whole number":
         median = float(math.floor(median))
-    p05, p95 = weighted_quantiles(values, weights, (0.05, 0.95))
-    step = (
-        stated.step
-        if stated.step is not None
-        else sensible_step((p95 - p05) or (high - low), column.kind)
-    )
-    offered = stated.range if stated.range is not None else (low, high)
-    typical = stated.typical if stated.typical is not None else median
-    _refuse_impossible(name, step, offered, typical, allowed)
+    step = sensible_step((p95 - p05) or (high - low), column.kind)
+    if stated.step is not None:
+        step = float(stated.step)
+    typical = _typical_number(name, stated, median)
+    offered = _offered(stated, low, high, typical, step)
+    _refuse_out_of_place(name, stated, typical, offered, allowed)
     return PredictorFacts(
         name=name,
         label=stated.label or _spoken(name),
@@ -60,10 +55,10 @@ def number_facts(
         minimum=low,
         maximum=high,
         quartiles=(q1, median, q3),
-        offered=(float(offered[0]), float(offered[1])),
+        offered=offered,
         allowed=allowed,
-        typical=_whole(float(typical)) if column.kind == "whole number" else float(typical),
-        step=float(step),
+        typical=_whole(typical) if column.kind == "whole number" else typical,
+        step=step,
         linear=linear,
         modifiers=modifiers,
     )
@@ -90,11 +85,15 @@ def level_facts(
         if weights is None
         else np.bincount(column.values, weights=weights, minlength=len(levels))
     )
-    typical = levels[int(np.argmax(weighted))] if stated.typical is None else stated.typical
-    labels = dict(stated.level_labels or ())
-    for level in (typical, *labels):
-        if level not in levels:
-            raise FitRefused(f"Predictor {name!r} has no level {level!r}. It has {list(levels)!r}.")
+    for field in ("range", "step"):
+        if getattr(stated, field) is not None:
+            raise FitRefused(
+                f"Predictor {name!r} has levels, so {field}= has no meaning for it. Leave it out."
+            )
+    typical = levels[int(np.argmax(weighted))]
+    if stated.typical is not None:
+        typical = _level(name, levels, stated.typical)
+    labels = {_level(name, levels, level): text for level, text in stated.level_labels or ()}
     return PredictorFacts(
         name=name,
         label=stated.label or _spoken(name),
@@ -119,25 +118,51 @@ def _whole(number: float) -> float:
     return int(number) if number.is_integer() else number
 
 
-def _refuse_impossible(
+def _typical_number(name: str, stated: Predictor, median: float) -> float:
+    if stated.typical is None:
+        # where the stated range leaves the median out, its nearer end stands for it
+        low, high = stated.range or (median, median)
+        return min(max(median, low), high)
+    if isinstance(stated.typical, str | bool) or not math.isfinite(stated.typical):
+        raise FitRefused(
+            f"Predictor {name!r}: typical={stated.typical!r} is not a number. Leave it out for the "
+            f"median, {median:g}."
+        )
+    return float(stated.typical)
+
+
+def _offered(
+    stated: Predictor, low: float, high: float, typical: float, step: float
+) -> tuple[float, float]:
+    if stated.range is not None:
+        return float(stated.range[0]), float(stated.range[1])
+    low, high = min(low, typical), max(high, typical)
+    # a number that never varies still needs a control with two ends
+    return (low, high) if low < high else (low, low + step)
+
+
+def _refuse_out_of_place(
     name: str,
-    step: float,
+    stated: Predictor,
+    typical: float,
     offered: tuple[float, float],
-    typical: Scalar,
     allowed: tuple[float, float],
 ) -> None:
-    if not (math.isfinite(step) and step > 0):
-        raise FitRefused(f"Predictor {name!r}: step={step!r} is not a number above 0.")
-    if isinstance(typical, str) or not math.isfinite(typical):
-        raise FitRefused(f"Predictor {name!r}: typical={typical!r} is not a number.")
-    if len(offered) != 2 or not offered[0] < offered[1]:
+    if stated.level_labels is not None:
         raise FitRefused(
-            f"Predictor {name!r}: range={offered!r} is not (lowest, highest) with lowest below."
+            f"Predictor {name!r} is a number and has no levels to label. Leave level_labels= out, "
+            "or state kind='category'."
+        )
+    if not offered[0] <= typical <= offered[1]:
+        raise FitRefused(
+            f"Predictor {name!r}: typical={typical:g} lies outside range={offered!r}. State a "
+            "range that holds it, or leave one of the two out."
         )
     if offered[0] < allowed[0] or offered[1] > allowed[1]:
         raise FitRefused(
-            f"Predictor {name!r}: range={offered!r} goes beyond {allowed[0]:g} to {allowed[1]:g}, "
-            "where the formula can be computed."
+            f"Predictor {name!r}: {offered[0]:g} to {offered[1]:g} goes beyond {allowed[0]:g} to "
+            f"{allowed[1]:g}, where the formula can be computed. State a range= and a typical= "
+            "within."
         )
 
 
@@ -163,90 +188,13 @@ def _spoken(name: str) -> str:
     return name.replace("_", " ").strip() or name
 
 
+def _level(name: str, levels: tuple[Scalar, ...], stated: Scalar) -> Scalar:
+    if stated not in levels:
+        raise FitRefused(f"Predictor {name!r} has no level {stated!r}. It has {list(levels)!r}.")
+    return levels[levels.index(stated)]
+
+
 def _level_label(level: Scalar, kind: Kind) -> str:
     if kind == "yes/no":
         return "yes" if level else "no"
     return str(level)
-
-
-def shares_terms_with(design: Design) -> Mapping[str, tuple[str, ...]]:
-    """For each raw predictor, the others that stand in a column together with it."""
-    order = design.variables
-    together: dict[str, set[str]] = {name: set() for name in order}
-    for column in design.columns:
-        names = design.variables_of(column)
-        for name in names:
-            together[name] |= names - {name}
-    return {name: tuple(n for n in order if n in together[name]) for name in order}
-
-
-def is_linear(design: Design, name: str, low: float, high: float, at: Mapping[str, Floats]) -> bool:
-    """Whether every column is a straight line in a number, everything else held.
-
-    Parameters
-    ----------
-    design : Design
-    name : str
-    low, high : float
-        The data's range.
-    at : coded row
-        Values, each of shape (1,), at which the other predictors are held.
-    """
-    x = np.linspace(low, high, _POINTS)
-    coded = {other: np.repeat(values, _POINTS) for other, values in at.items()} | {name: x}
-    for i in design.touched([name]):
-        column = design.columns[i]
-        moving = [atom for atom in column.atoms if name in design.factors[atom[0]].variables]
-        if len(moving) > 1:
-            return False
-        position, k = moving[0]
-        if design.factors[position].name == name:
-            continue
-        values = design.factor_values(position, coded)[:, k]
-        if np.abs(np.diff(values, 2)).max() > 1e-9 * max(np.ptp(values), 1e-300):
-            return False
-    return True
-
-
-def allowed_range(
-    design: Design, name: str, low: float, high: float, at: Mapping[str, Floats]
-) -> tuple[float, float]:
-    """The range over which the formula can be computed, found by trying.
-
-    A spline's basis ends at its boundary knots, a logarithm at zero.
-    """
-    positions = [
-        p
-        for p, factor in enumerate(design.factors)
-        if name in factor.variables and factor.name != name
-    ]
-    if not positions:
-        return -math.inf, math.inf
-    spread = (high - low) or 1.0
-
-    def works(x: float) -> bool:
-        coded = {**at, name: np.array([x])}
-        try:
-            for position in positions:
-                design.factor_values(position, coded)
-        except QuestionRefused:
-            return False
-        return True
-
-    return _edge(works, low, low - 10 * spread, spread), _edge(
-        works, high, high + 10 * spread, spread
-    )
-
-
-def _edge(works, inside: float, outside: float, spread: float) -> float:  # type: ignore[no-untyped-def]
-    if works(outside):
-        return math.copysign(math.inf, outside - inside)
-    if not works(inside + math.copysign(1e-9 * spread, outside - inside)):
-        return inside
-    for _ in range(60):
-        middle = (inside + outside) / 2
-        if works(middle):
-            inside = middle
-        else:
-            outside = middle
-    return inside

@@ -9,6 +9,7 @@ from functools import cached_property
 from typing import Any
 
 import numpy as np
+import pandas as pd
 from numpy.typing import NDArray
 
 from plainodds.errors import QuestionRefused
@@ -16,7 +17,7 @@ from plainodds.model.design.design import Coded, Design, Floats
 from plainodds.model.predictors import PredictorFacts, Subject
 from plainodds.model.products import product, transposed_product
 from plainodds.scales import probability_from_linear_predictor, probability_slope
-from plainodds.values import Pairs, Scalar, plain
+from plainodds.values import Pairs, Scalar
 
 __all__ = ["FittedModel", "Sample"]
 
@@ -165,21 +166,30 @@ def checked(facts: PredictorFacts, value: Any) -> Scalar:
     QuestionRefused
         Naming the predictor, the value and what it may be.
     """
-    if value is None or (isinstance(value, float) and math.isnan(value)):
-        raise QuestionRefused(f"{facts.name}: a missing value has no place in a profile.")
-    value = plain(value)
+    item = value.item() if isinstance(value, np.generic) else value
+    if pd.api.types.is_scalar(item) and pd.isna(item):
+        raise QuestionRefused(
+            f"{facts.name}: a missing value has no place in a profile. State one, or leave "
+            f"{facts.name} out for its typical value."
+        )
     if not facts.is_number:
-        if value not in facts.levels or isinstance(value, str) != isinstance(
-            facts.levels[facts.levels.index(value)], str
-        ):
-            known = ", ".join(repr(level) for level in facts.levels)
-            raise QuestionRefused(f"{facts.name} has no level {value!r}. It has {known}.")
-        return facts.levels[facts.levels.index(value)]
-    if isinstance(value, str):
-        raise QuestionRefused(f"{facts.name} is a number, and {value!r} is text.")
-    number = float(value)
+        # intervals and the like are known by their text
+        level = item if isinstance(item, bool | int | float | str) else str(item)
+        if level not in facts.levels:
+            known = ", ".join(repr(each) for each in facts.levels)
+            raise QuestionRefused(f"{facts.name} has no level {level!r}. It has {known}.")
+        return facts.levels[facts.levels.index(level)]
+    if isinstance(item, str):
+        raise QuestionRefused(
+            f"{facts.name} is a number, and {item!r} is text. Write it without quotes."
+        )
+    if not isinstance(item, int | float):
+        raise QuestionRefused(
+            f"{facts.name} is a number, and {item!r} ({type(item).__name__}) is not a single one."
+        )
+    number = float(item)
     if not math.isfinite(number):
-        raise QuestionRefused(f"{facts.name}: {value!r} is not a finite number.")
+        raise QuestionRefused(f"{facts.name}: {item!r} is not a finite number.")
     low, high = facts.allowed
     if not low <= number <= high:
         raise QuestionRefused(

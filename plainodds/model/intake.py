@@ -7,39 +7,36 @@ from typing import Any
 
 import numpy as np
 import pandas as pd
-from numpy.typing import NDArray
 
 from plainodds.errors import FitRefused, QuestionRefused
 from plainodds.model import derived as derivation
 from plainodds.model.design.design import Column, Design, Factor, Floats
-from plainodds.model.design.plain_columns import plain_columns
-from plainodds.model.estimates import estimates_of
-from plainodds.model.facts import (
-    allowed_range,
-    is_linear,
-    level_facts,
-    number_facts,
-    shares_terms_with,
-)
+from plainodds.model.estimates import estimates_of, refuse_other_models
+from plainodds.model.facts import level_facts, number_facts
 from plainodds.model.fitted import FittedModel, Sample
+from plainodds.model.matching import refuse_rows_that_do_not_match, refuse_wrong_derivations
+from plainodds.model.noticed import noticed
 from plainodds.model.outcome import modelled_outcome, must_turn, outcome_facts
 from plainodds.model.predictors import Outcome, Predictor, PredictorFacts, Setting, Subject
 from plainodds.model.quantiles import weighted_quantiles
 from plainodds.model.raw import RawColumn, coded_column
+from plainodds.model.shapes import allowed_range, is_linear, shares_terms_with
 from plainodds.model.source import Source, source_of
+from plainodds.model.statements import Statements, read_statements
 
 __all__ = ["take_in"]
 
-_CHECKED_ROWS = 2_000
+# rows at which the shape of a factor of several predictors is looked at
+_LOOKED_AT = 5
 
 
 def take_in(
     result: Any,
     data: pd.DataFrame | None,
-    predictors: Mapping[str, Predictor],
+    predictors: Mapping[str, Predictor] | None,
     outcome: Outcome | None,
-    derived: Mapping[str, str],
-    functions: Mapping[str, Callable[..., Any]],
+    derived: Mapping[str, str] | None,
+    functions: Mapping[str, Callable[..., Any]] | None,
     offset: float | None,
 ) -> FittedModel:
     """Take a fitted statsmodels result in.
@@ -51,18 +48,21 @@ def take_in(
     FitRefused
         With the reason and the way out.
     """
-    estimates = estimates_of(result)
-    source = source_of(result, data, functions)
-    declared = derivation.parse(derived, source.names)
-    factors = derivation.with_derived(source.factors, declared)
-    raw = _raw_columns(source, factors, source.columns, predictors)
-    levels = {name: column.levels for name, column in raw.items() if column.levels}
-    design = _with_bounds(Design(factors, source.columns, levels), raw)
-    matrix = source.matrix if source.matrix is not None else _rebuilt(design, raw)
-    _refuse_rows_that_do_not_match(design, raw, matrix, declared, source)
-
+    refuse_other_models(result)
+    stated = read_statements(predictors, outcome, derived, functions, offset)
+    source = source_of(result, data, stated.functions)
     modelled = modelled_outcome(result.model, source.outcome)
-    turned = must_turn(modelled, outcome)
+    turned = must_turn(modelled, stated.outcome)
+    estimates = estimates_of(result)
+
+    declared = derivation.parse(stated.derived, source.names)
+    factors = derivation.with_derived(source.factors, declared)
+    raw = _raw_columns(source, factors, stated)
+    _check_derivations(source, declared, raw)
+    design = _design(factors, source.columns, raw)
+    matrix = _rebuilt(design, raw) if source.matrix is None else source.matrix
+    refuse_rows_that_do_not_match(design, raw, matrix)
+
     sign = -1.0 if turned else 1.0
     sample = Sample(
         matrix,
@@ -70,22 +70,21 @@ def take_in(
         source.weights,
         None if source.offset is None else sign * source.offset,
     )
-    share = _share(source, turned)
-    facts, notices = outcome_facts(modelled, outcome, share, turned)
+    facts, notices = outcome_facts(modelled, stated.outcome, _share(source, turned), turned)
     subject = Subject(
         outcome=facts,
-        predictors=_facts(design, raw, source.weights, predictors),
+        predictors=_facts(design, raw, source.weights, stated.predictors),
         rows=len(matrix),
         covariance_kind=estimates.covariance_kind,
         no_interval=estimates.no_interval,
-        offset=_held_offset(sample, offset),
+        offset=_held_offset(sample, stated.offset, sign),
         notices=notices + source.notices + _suggestions(raw, declared),
         setting=Setting(
-            predictors=tuple(predictors.items()),
-            outcome=outcome,
-            derived=tuple(derived.items()),
-            functions=tuple(functions),
-            offset=offset,
+            predictors=tuple(stated.predictors.items()),
+            outcome=stated.outcome,
+            derived=tuple(stated.derived.items()),
+            functions=tuple(stated.functions),
+            offset=stated.offset,
             with_data=data is not None,
         ),
     )
@@ -100,38 +99,63 @@ def take_in(
 
 
 def _raw_columns(
-    source: Source,
-    factors: tuple[Factor, ...],
-    columns: tuple[Column, ...],
-    predictors: Mapping[str, Predictor],
+    source: Source, factors: tuple[Factor, ...], stated: Statements
 ) -> dict[str, RawColumn]:
-    names = Design(factors, columns, {}).variables
-    unknown = sorted(set(predictors) - set(names))
+    names = Design(factors, source.columns, {}).variables
+    if not names:
+        raise FitRefused(
+            "The model has no predictors, only an intercept, so there is nothing to ask of it. "
+            "Add a predictor to the formula and fit again."
+        )
+    unknown = sorted(set(stated.predictors) - set(names))
     if unknown:
         raise FitRefused(
             f"predictors= names {', '.join(map(repr, unknown))}, which the model does not use. "
             f"It uses {', '.join(names)}."
         )
-    raw: dict[str, RawColumn] = {}
-    for name in names:
-        stated = predictors.get(name, Predictor())
-        own = [f.levels for f in factors if f.variables == {name} and f.levels is not None]
-        raw[name] = coded_column(name, source.column(name), stated, own[0] if own else None)
-    return raw
-
-
-def _first_row(raw: Mapping[str, RawColumn]) -> dict[str, NDArray[Any]]:
-    return {name: column.values[:1] for name, column in raw.items()}
-
-
-def _with_bounds(design: Design, raw: Mapping[str, RawColumn]) -> Design:
-    at = _first_row(raw)
-    allowed = {
-        name: allowed_range(design, name, float(c.values.min()), float(c.values.max()), at)
-        for name, c in raw.items()
-        if not c.levels
+    return {
+        name: coded_column(
+            name,
+            source.column(name),
+            stated.predictors.get(name, Predictor()),
+            [f.levels for f in factors if f.variables == {name} and f.levels is not None],
+        )
+        for name in names
     }
-    return Design(design.factors, design.columns, design.levels, allowed)
+
+
+def _check_derivations(
+    source: Source,
+    declared: Mapping[str, derivation.Derived],
+    raw: Mapping[str, RawColumn],
+) -> None:
+    used = frozenset().union(*(factor.variables for factor in source.factors))
+    for item in declared.values():
+        if item.name not in used:
+            raise FitRefused(
+                f"derived= names {item.name!r}, which is not a column that the model uses. It uses "
+                f"{', '.join(sorted(used))}."
+            )
+    refuse_wrong_derivations(declared, raw, {name: source.column(name) for name in declared})
+
+
+def _design(
+    factors: tuple[Factor, ...], columns: tuple[Column, ...], raw: Mapping[str, RawColumn]
+) -> Design:
+    """The design with its categories, and the bounds and the spread of its numbers."""
+    ends = {name: _ends(c) for name, c in raw.items() if not c.levels}
+    plain = Design(factors, columns, {})
+    return Design(
+        factors,
+        columns,
+        palettes={name: c.palette for name, c in raw.items() if c.levels},
+        allowed={name: allowed_range(plain, name, low, high) for name, (low, high) in ends.items()},
+        spreads={name: (high - low) or 1.0 for name, (low, high) in ends.items()},
+    )
+
+
+def _ends(column: RawColumn) -> tuple[float, float]:
+    return float(column.values.min()), float(column.values.max())
 
 
 def _facts(
@@ -141,15 +165,16 @@ def _facts(
     predictors: Mapping[str, Predictor],
 ) -> tuple[PredictorFacts, ...]:
     modifiers = shares_terms_with(design)
-    at = _first_row(raw)
+    n = len(next(iter(raw.values())).values)
+    rows = np.unique(np.linspace(0, n - 1, _LOOKED_AT).astype(int))
+    at = {name: column.values[rows] for name, column in raw.items()}
     found = []
     for name, column in raw.items():
         stated = predictors.get(name, Predictor())
         if column.levels:
             found.append(level_facts(name, column, weights, stated, modifiers[name]))
             continue
-        low, high = float(column.values.min()), float(column.values.max())
-        linear = is_linear(design, name, low, high, at)
+        linear = is_linear(design, name, *_ends(column), at)
         found.append(
             number_facts(
                 name, column, weights, stated, design.allowed[name], linear, modifiers[name]
@@ -159,51 +184,13 @@ def _facts(
 
 
 def _rebuilt(design: Design, raw: Mapping[str, RawColumn]) -> Floats:
-    n = len(next(iter(raw.values())).values)
-    return design.some_columns(
-        range(len(design.columns)), {name: column.values for name, column in raw.items()}, n
-    )
-
-
-def _refuse_rows_that_do_not_match(
-    design: Design,
-    raw: Mapping[str, RawColumn],
-    matrix: Floats,
-    declared: Mapping[str, derivation.Derived],
-    source: Source,
-) -> None:
-    for item in declared.values():
-        _refuse_wrong_derivation(item, source)
-    chosen = np.unique(np.linspace(0, len(matrix) - 1, _CHECKED_ROWS).astype(int))
     try:
-        built = design.rows({name: column.values[chosen] for name, column in raw.items()})
+        return design.rows({name: column.values for name, column in raw.items()})
     except QuestionRefused as error:
-        raise FitRefused(f"The fit's own rows cannot be computed anew: {error}") from error
-    wrong = ~np.isclose(built, matrix[chosen], rtol=1e-6, atol=1e-8)
-    if wrong.any():
-        row, column = (int(place[0]) for place in np.nonzero(wrong))
         raise FitRefused(
-            f"The data and the fit do not match: in row {chosen[row]} of the rows used, "
-            f"{design.columns[column].name} is {matrix[chosen][row, column]:g} in the fit and "
-            f"{built[row, column]:g} in the data. Hand over the data that the model was fitted on, "
-            "unchanged: FittedLogit(result, data=frame)."
-        )
-
-
-def _refuse_wrong_derivation(item: derivation.Derived, source: Source) -> None:
-    if item.name not in source.names:
-        raise FitRefused(
-            f"derived= names {item.name!r}, which is not a column of the data or the model."
-        )
-    stored = np.asarray(source.column(item.name), dtype=float)
-    raw = {name: np.asarray(source.column(name)) for name in item.variables}
-    computed = np.broadcast_to(np.asarray(item.evaluate(raw), dtype=float), stored.shape)
-    wrong = np.nonzero(~np.isclose(stored, computed, rtol=1e-8, atol=1e-10))[0]
-    if len(wrong):
-        raise FitRefused(
-            f"derived={{{item.name!r}: {item.expression!r}}} does not hold: in row {wrong[0]} of the "
-            f"rows used {item.name} is {stored[wrong[0]]:g}, the expression {computed[wrong[0]]:g}."
-        )
+            f"The design cannot be made again from the data handed over: {error} Hand over the "
+            "very data that the model was fitted on."
+        ) from error
 
 
 def _share(source: Source, turned: bool) -> float:
@@ -213,13 +200,16 @@ def _share(source: Source, turned: bool) -> float:
     return 1.0 - share if turned else share
 
 
-def _held_offset(sample: Sample, stated: float | None) -> float | None:
+def _held_offset(sample: Sample, stated: float | None, sign: float) -> float | None:
+    """The value at which the offset is held, on the scale that the answers speak of."""
     if sample.offset is None:
         if stated is not None:
-            raise FitRefused(f"offset={stated!r}: the model has no offset to hold.")
+            raise FitRefused(
+                f"offset={stated!r}: the model has no offset to hold. Leave offset= out."
+            )
         return None
     if stated is not None:
-        return float(stated)
+        return sign * stated
     return weighted_quantiles(sample.offset, sample.weights, (0.5,))[0]
 
 
@@ -227,13 +217,13 @@ def _suggestions(
     raw: Mapping[str, RawColumn], declared: Mapping[str, derivation.Derived]
 ) -> tuple[str, ...]:
     numeric = {
-        name: np.asarray(column.values, dtype=float)
+        name: column.values
         for name, column in raw.items()
-        if not column.levels or column.levels in ((0, 1), (False, True))
+        if not column.levels or set(column.levels) == {False, True}
     }
     return tuple(
         f"{name} is exactly {expression}, but is held still while the other moves. If it should "
         f"move with it, pass derived={{{name!r}: {expression!r}}}."
-        for name, expression in derivation.noticed(numeric).items()
+        for name, expression in noticed(numeric).items()
         if name not in declared
     )

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-import re
+from collections.abc import Sequence
 from dataclasses import dataclass
 from typing import Any
 
@@ -14,8 +14,6 @@ from plainodds.model.predictors import Outcome, OutcomeFacts
 from plainodds.values import Scalar
 
 __all__ = ["Modelled", "modelled_outcome", "must_turn", "outcome_facts"]
-
-_INDICATOR = re.compile(r"^(?P<name>.*)\[(?:T\.)?(?P<level>[^\[\]]*)\]$", re.DOTALL)
 
 
 @dataclass(frozen=True)
@@ -60,17 +58,40 @@ def modelled_outcome(model: Any, outcome: NDArray[Any] | None) -> Modelled:
     if outcome is not None:
         _refuse_other_outcomes(names[0], outcome)
     if len(names) == 2:
-        parts = [_INDICATOR.match(str(name)) for name in names]
-        if parts[0] and parts[1] and parts[0]["name"] == parts[1]["name"]:
+        indicators = _indicators(names) if _is_one_case_per_row(model) else None
+        if indicators:
             # a text or yes/no outcome becomes two indicators, of which the first is modelled
-            first, second = (_level(part["level"]) for part in parts if part)
-            return Modelled(parts[0]["name"], first, second, flipped=True)
+            name, first, second = indicators
+            return Modelled(name, _level(first), _level(second), flipped=True)
         return Modelled(str(names[0]), None, None, flipped=False)
     if outcome is not None and np.isin(outcome, (0, 1)).all():
         boolean = outcome.dtype == bool
         level, other = (True, False) if boolean else (1, 0)
         return Modelled(str(names[0]), level, other, flipped=False)
     return Modelled(str(names[0]), None, None, flipped=False)
+
+
+def _is_one_case_per_row(model: Any) -> bool:
+    trials = getattr(model, "n_trials", None)
+    return hasattr(model, "formula") and (trials is None or bool(np.all(np.asarray(trials) == 1)))
+
+
+def _indicators(names: Sequence[str]) -> tuple[str, str, str] | None:
+    """The outcome's name and its levels, from names like ``fate[left]`` and ``fate[stayed]``."""
+    one, other = names
+    if not (one.endswith("]") and other.endswith("]")):
+        return None
+    for place, sign in enumerate(one):
+        name = one[:place]
+        if sign == "[" and name and other.startswith(f"{name}[") and _is_whole(name):
+            first, second = (text[place + 1 : -1].removeprefix("T.") for text in names)
+            return name, first, second
+    return None
+
+
+def _is_whole(code: str) -> bool:
+    # brackets and quotes within a name or a call are not the level's
+    return code.count("(") == code.count(")") and not (code.count("'") % 2 or code.count('"') % 2)
 
 
 def _level(text: str) -> Scalar:
@@ -138,9 +159,11 @@ def must_turn(modelled: Modelled, stated: Outcome | None) -> bool:
     FitRefused
         If she names a level that the outcome does not have.
     """
-    if stated is None or stated.level is None or stated.level == modelled.level:
+    if stated is None or stated.level is None:
         return False
-    if modelled.level is None or stated.level != modelled.other:
+    if modelled.level is not None and _same(stated.level, modelled.level):
+        return False
+    if modelled.other is None or not _same(stated.level, modelled.other):
         known = [level for level in (modelled.other, modelled.level) if level is not None]
         raise FitRefused(
             f"Outcome(level={stated.level!r}): the outcome {modelled.name} has "
@@ -151,3 +174,8 @@ def must_turn(modelled: Modelled, stated: Outcome | None) -> bool:
             )
         )
     return True
+
+
+def _same(stated: Scalar, level: Scalar) -> bool:
+    # statsmodels knows the levels of a categorical outcome by their text only
+    return stated == level or str(stated) == str(level)

@@ -8,7 +8,11 @@ every answer carries.
 
 from __future__ import annotations
 
-from typing import Literal, TypeAlias
+from collections.abc import ItemsView, Mapping
+from dataclasses import fields
+from typing import Any, Literal, TypeAlias
+
+import numpy as np
 
 from plainodds.errors import QuestionRefused
 from plainodds.values import Scalar, value
@@ -56,13 +60,18 @@ class Predictor:
     step: float | None = None
 
     def __post_init__(self) -> None:
-        # what people write as lists and dicts is held as tuples, so that it can be compared
-        for name in ("levels", "range"):
-            held = getattr(self, name)
-            if held is not None:
-                object.__setattr__(self, name, tuple(held))
-        if isinstance(self.level_labels, dict):
-            object.__setattr__(self, "level_labels", tuple(self.level_labels.items()))
+        # lists, dicts and numpy scalars are held as plain values, so that they can be compared;
+        # what is neither is refused where the fit is taken in, with the predictor's name
+        for field in fields(self):
+            object.__setattr__(self, field.name, _as_plain(getattr(self, field.name)))
+
+
+def _as_plain(held: Any) -> Any:
+    if isinstance(held, Mapping):
+        held = held.items()
+    if isinstance(held, list | tuple | np.ndarray | ItemsView):
+        return tuple(_as_plain(each) for each in held)
+    return held.item() if isinstance(held, np.generic) else held
 
 
 @value

@@ -22,19 +22,25 @@ def weighted_quantiles(
     ----------
     values : array (n,)
     weights : array (n,) or None
+        At least one above 0.
     shares : sequence of float in [0, 1]
+
+    Examples
+    --------
+    >>> weighted_quantiles(np.array([1.0, 2.0, 9.0]), np.array([1.0, 1.0, 2.0]), (0.5,))
+    (5.5,)
     """
     if weights is None:
         return tuple(float(q) for q in np.quantile(values, shares, method="averaged_inverted_cdf"))
     order = np.argsort(values, kind="stable")
+    order = order[weights[order] > 0]
     ordered, cumulated = values[order], np.cumsum(weights[order])
     found = []
     for share in shares:
-        target = share * cumulated[-1]
-        place = min(int(np.searchsorted(cumulated, target * (1 - 1e-12))), len(ordered) - 1)
-        following = min(place + 1, len(ordered) - 1)
-        ends_here = abs(cumulated[place] - target) <= 1e-12 * cumulated[-1]
-        found.append(
-            float((ordered[place] + ordered[following]) / 2 if ends_here else ordered[place])
-        )
+        target, slack = share * cumulated[-1], 1e-12 * cumulated[-1]
+        place = min(int(np.searchsorted(cumulated, target - slack)), len(ordered) - 1)
+        # where the weights so far are exactly the share, the next value has as good a claim
+        following = place + 1 if abs(cumulated[place] - target) <= slack else place
+        following = min(following, len(ordered) - 1)
+        found.append(float((ordered[place] + ordered[following]) / 2))
     return tuple(found)

@@ -4,6 +4,8 @@ from __future__ import annotations
 
 from collections.abc import Callable, Mapping
 from dataclasses import dataclass
+from functools import reduce
+from operator import mul
 from typing import Any
 
 import numpy as np
@@ -36,6 +38,7 @@ class Source:
     matrix : array (n, k) or None
         The result's own design matrix; None where it was removed.
     outcome, weights, offset : array (n,) or None
+        As the fit used them.
     notices : tuple of str
     """
 
@@ -65,18 +68,20 @@ def source_of(
         raise FitRefused(
             f"data= is a {type(data).__name__}; hand over a pandas DataFrame, one row per case."
         )
-    spec = getattr(model.data, "model_spec", None) or getattr(model.data, "design_info", None)
-    if spec is not None:
-        return _from_formula(model, spec, data, functions)
-    return _from_arrays(model, data)
+    for attribute in ("model_spec", "design_info"):
+        spec = getattr(model.data, attribute, None)
+        if spec is not None:
+            return _from_formula(result, spec, data, functions)
+    return _from_arrays(result, data)
 
 
 def _from_formula(
-    model: Any,
+    result: Any,
     spec: Any,
     data: pd.DataFrame | None,
     functions: Mapping[str, Callable[..., Any]],
 ) -> Source:
+    model = result.model
     matrix = _own_matrix(model)
     frame = data if data is not None else getattr(model.data, "frame", None)
     if frame is None or (matrix is None and data is None):
@@ -87,28 +92,36 @@ def _from_formula(
     if not isinstance(frame, pd.DataFrame):
         frame = pd.DataFrame(frame)
     names = tuple(map(str, frame.columns))
-    kept = _rows_used(model, frame, matrix)
+    kept = _rows_used(result, frame, matrix)
     if isinstance(spec, DesignInfo):
         factors, columns = patsy_terms(spec, names)
     else:
         from plainodds.model.design.formulaic_terms import formulaic_terms
 
-        examples = frame.iloc[np.nonzero(kept)[0]] if kept is not None else frame
-        factors, columns = formulaic_terms(spec, names, examples, functions)
-    places = {str(name): place for place, name in enumerate(frame.columns)}
+        few = slice(0, _EXAMPLES) if kept is None else np.nonzero(kept)[0][:_EXAMPLES]
+        factors, columns = formulaic_terms(spec, names, frame.iloc[few], functions)
     _refuse_repeated(names, frozenset().union(*(f.variables for f in factors)))
+    column = _reader(frame, kept)
+    if matrix is None:
+        rows = len(frame) if kept is None else int(kept.sum())
+        offset = _offset(model, rows)
+        return Source(names, column, factors, columns, None, None, None, offset, (_REMOVED,))
+    return Source(names, column, factors, columns, matrix, *_outcome_parts(model))
+
+
+def _reader(frame: pd.DataFrame, kept: NDArray[np.bool_] | None) -> Callable[[str], pd.Series[Any]]:
+    places = {str(name): place for place, name in enumerate(frame.columns)}
 
     def column(name: str) -> pd.Series[Any]:
         # a copy, so that the analyst's frame is neither kept alive nor changed
         series = frame.iloc[:, places[name]]
         return series.copy() if kept is None else series[kept]
 
-    if matrix is None:
-        return Source(names, column, factors, columns, None, None, None, None, (_REMOVED,))
-    return Source(names, column, factors, columns, matrix, *_outcome_parts(model))
+    return column
 
 
-def _from_arrays(model: Any, data: pd.DataFrame | None) -> Source:
+def _from_arrays(result: Any, data: pd.DataFrame | None) -> Source:
+    model = result.model
     matrix = _own_matrix(model)
     if matrix is None:
         raise FitRefused(
@@ -121,27 +134,24 @@ def _from_arrays(model: Any, data: pd.DataFrame | None) -> Source:
     constants = {n: float(a) for n, a, b in zip(exog_names, low, high, strict=True) if a == b}
     factors, columns = plain_columns(exog_names, constants)
     places = {name: place for place, name in enumerate(exog_names)}
-    extra: dict[str, Any] = {}
+    names = exog_names
+    read: Callable[[str], Any] | None = None
     if data is not None:
-        kept = _rows_used(model, data, matrix)
-        extra = {
-            str(name): data[name] if kept is None else data[name][kept]
-            for name in data.columns
-            if str(name) not in places
-        }
+        read = _reader(data, _rows_used(result, data, matrix))
+        names += tuple(name for name in map(str, data.columns) if name not in places)
 
     def column(name: str) -> Any:
-        return matrix[:, places[name]] if name in places else extra[name]
+        return matrix[:, places[name]] if name in places or read is None else read(name)
 
-    return Source(
-        exog_names + tuple(extra), column, factors, columns, matrix, *_outcome_parts(model)
-    )
+    return Source(names, column, factors, columns, matrix, *_outcome_parts(model))
 
 
 _REMOVED = (
-    "The result no longer carries its data: weights, offset and outcome are unknown, and averages "
-    "take every row as one."
+    "The result no longer carries its data: whether the rows handed over are those of the fit "
+    "could not be checked, weights and outcome are unknown, and averages take every row as one."
 )
+# as many rows as it takes to see which columns a factor makes
+_EXAMPLES = 20
 
 
 def _own_matrix(model: Any) -> Floats | None:
@@ -149,22 +159,34 @@ def _own_matrix(model: Any) -> Floats | None:
     return None if exog is None else np.asarray(exog, dtype=float)
 
 
-def _rows_used(model: Any, frame: pd.DataFrame, matrix: Floats | None) -> NDArray[np.bool_] | None:
+def _rows_used(result: Any, frame: pd.DataFrame, matrix: Floats | None) -> NDArray[np.bool_] | None:
     """Which rows of the frame the fit used, by position; None for all of them."""
-    dropped = getattr(model.data, "missing_row_idx", None)
+    data = result.model.data
+    dropped = getattr(data, "missing_row_idx", None)
     dropped = np.array([], dtype=int) if dropped is None else np.asarray(dropped, dtype=int)
-    used = len(matrix) if matrix is not None else len(frame) - len(dropped)
+    used = len(matrix) if matrix is not None else _rows_counted(result, len(frame) - len(dropped))
     if len(frame) == used:
         return None
-    if len(frame) - len(dropped) != used:
-        raise FitRefused(
-            f"The data have {len(frame):,} rows, and the fit used {used:,} after dropping "
-            f"{len(dropped):,} with missing values: they do not match. Hand over the data that the "
-            "model was fitted on, in the same order."
-        )
     kept = np.ones(len(frame), dtype=bool)
-    kept[dropped] = False
-    return kept
+    if len(frame) - len(dropped) == used:
+        kept[dropped] = False
+        return kept
+    # a GEE doesn't say which rows it dropped, but their labels are missing
+    labels = getattr(getattr(data, "orig_exog", None), "index", None)
+    if labels is not None and frame.index.is_unique and len(labels) == used:
+        kept = frame.index.isin(labels)
+        if frame.index[kept].equals(labels):
+            return kept
+    raise FitRefused(
+        f"The data have {len(frame):,} rows and the fit used {used:,}, and which of them cannot be "
+        "told. Hand over the very rows that the model was fitted on, in the same order: "
+        "FittedLogit(result, data=frame.dropna(subset=[...]))."
+    )
+
+
+def _rows_counted(result: Any, otherwise: int) -> int:
+    counted = getattr(result, "nobs", None) or getattr(result.model, "nobs", None)
+    return otherwise if counted is None else int(counted)
 
 
 def _refuse_repeated(names: tuple[str, ...], used: frozenset[str]) -> None:
@@ -184,19 +206,26 @@ def _outcome_parts(
     if isinstance(model, Logit):
         ignored = [w for w in ("freq_weights", "var_weights", "weights") if _given(model, w)]
         notices = tuple(
-            f"statsmodels' Logit ignores {name}; the fit is unweighted. For a weighted fit use "
-            f"GLM(family=Binomial(), {name}=...)."
+            f"statsmodels' Logit ignores {name}=: the fit is unweighted. For a weighted fit use "
+            "GLM(..., family=Binomial(), freq_weights=...) or var_weights=."
             for name in ignored
         )
         return outcome, None, _offset(model, n), notices
-    total = np.ones(n)
     # a GLM's own `weights` are those of its last iteration, a GEE's those that were handed over
     names = ("weights",) if isinstance(model, GEE) else ("freq_weights", "var_weights", "n_trials")
-    for name in names:
-        weights = getattr(model, name, None)
-        if weights is not None and np.shape(weights) == (n,):
-            total = total * np.asarray(weights, dtype=float)
-    return outcome, None if (total == 1.0).all() else total, _offset(model, n), ()
+    total = reduce(mul, (_weights(model, name, n) for name in names))
+    notices = ()
+    if isinstance(model, GEE) and np.any(_weights(model, "n_trials", n) != 1):
+        notices = (
+            "statsmodels' GEE takes the counts of each row as one share, whatever their number. "
+            "For counts to count, fit the shares with weights= set to the number of trials.",
+        )
+    return outcome, None if np.all(total == 1.0) else total, _offset(model, n), notices
+
+
+def _weights(model: Any, name: str, n: int) -> Floats:
+    weights: Any = getattr(model, name, None)
+    return np.ones(1) if np.shape(weights) != (n,) else np.asarray(weights, dtype=float)
 
 
 def _given(model: Any, name: str) -> bool:

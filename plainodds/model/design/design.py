@@ -8,12 +8,12 @@ new rows, the columns that a moved predictor touches, their derivative, and the
 split of each touched column into a part that moves and a part that stays.
 
 Raw columns come *coded*: numbers as floats, categories and yes/no as positions
-in their tuple of levels. A factor of one category only is then a table look-up.
+in their levels. A factor of one category only is then a table look-up.
 """
 
 from __future__ import annotations
 
-from collections.abc import Iterable, Mapping
+from collections.abc import Iterable, Mapping, Sequence
 from dataclasses import dataclass, field
 from functools import reduce
 from operator import mul
@@ -24,13 +24,15 @@ from numpy.typing import NDArray
 
 from plainodds.errors import QuestionRefused
 from plainodds.model.design.differences import derivative
-from plainodds.values import Scalar
 
-__all__ = ["Atom", "Coded", "Column", "Design", "Factor", "Floats", "decoded"]
+__all__ = ["Atom", "Coded", "Column", "Design", "Factor", "Floats", "Palette", "decoded"]
 
 Floats: TypeAlias = NDArray[np.float64]
 Coded: TypeAlias = Mapping[str, NDArray[Any]]
-"""Raw predictors by name: floats, or positions in the tuple of levels."""
+"""Raw predictors by name: floats, or positions in the levels."""
+
+Palette: TypeAlias = Any
+"""An array, of numpy or pandas, of what the formula reads for each level of a column."""
 
 Atom: TypeAlias = tuple[int, int]
 """A factor's position and the column of that factor."""
@@ -64,10 +66,9 @@ class Column:
     scale: float = 1.0
 
 
-def decoded(codes: NDArray[Any], levels: tuple[Scalar, ...]) -> NDArray[Any]:
-    """Turn positions back into the levels themselves."""
-    texts = any(isinstance(level, str) for level in levels)
-    return np.array(levels, dtype=object if texts else None)[codes]
+def decoded(codes: NDArray[Any], palette: Palette) -> Any:
+    """Turn positions back into what the formula reads."""
+    return palette[codes]
 
 
 @dataclass(frozen=True, eq=False)
@@ -79,26 +80,31 @@ class Design:
     factors : tuple of Factor
     columns : tuple of Column
         In the order of the coefficients.
-    levels : mapping of name to levels
+    palettes : mapping of name to Palette
         For each raw column that is a category or a yes/no.
     allowed : mapping of name to (lowest, highest)
         Bounds within which a number can be computed.
+    spreads : mapping of name to float
+        Over how much a number ranges in the data: the scale on which its slopes are taken.
     """
 
     factors: tuple[Factor, ...]
     columns: tuple[Column, ...]
-    levels: Mapping[str, tuple[Scalar, ...]]
+    palettes: Mapping[str, Palette]
     allowed: Mapping[str, tuple[float, float]] = field(default_factory=dict)
+    spreads: Mapping[str, float] = field(default_factory=dict)
     _tables: dict[int, Floats] = field(init=False, default_factory=dict)
 
     def __post_init__(self) -> None:
         for position, factor in enumerate(self.factors):
-            if len(factor.variables) == 1:
+            if len(factor.variables) == 1 and factor.variables <= self.palettes.keys():
                 (name,) = factor.variables
-                if name in self.levels:
-                    codes = np.arange(len(self.levels[name]))
-                    raw = {name: decoded(codes, self.levels[name])}
-                    self._tables[position] = factor.evaluate(raw)
+                try:
+                    codes = np.arange(len(self.palettes[name]))
+                    self._tables[position] = self.factor_values(position, {name: codes})
+                except QuestionRefused:
+                    # a level that no row has may be beyond the formula: ask again when it is met
+                    continue
 
     @property
     def variables(self) -> tuple[str, ...]:
@@ -134,7 +140,9 @@ class Design:
             (name,) = factor.variables
             return self._tables[position][coded[name]]
         raw = {
-            name: decoded(coded[name], self.levels[name]) if name in self.levels else coded[name]
+            name: decoded(coded[name], palette)
+            if (palette := self.palettes.get(name)) is not None
+            else coded[name]
             for name in factor.variables
         }
         try:
@@ -158,29 +166,34 @@ class Design:
 
     def some_columns(self, which: Iterable[int], coded: Coded, n: int) -> Floats:
         """The named columns only, shape (n, len(which)); builds the factors these need."""
-        chosen = [self.columns[i] for i in which]
-        needed = sorted({at for column in chosen for at, _ in column.atoms})
-        values = {at: self.factor_values(at, coded) for at in needed}
-        built = np.empty((n, len(chosen)))
-        for i, column in enumerate(chosen):
+        return self.values_of([self.columns[i] for i in which], coded, n)
+
+    def values_of(self, columns: Sequence[Column], coded: Coded, n: int) -> Floats:
+        """Any products of this design's factors, shape (n, len(columns))."""
+        values = {at: self.factor_values(at, coded) for at in _positions(columns)}
+        built = np.empty((n, len(columns)))
+        for i, column in enumerate(columns):
             built[:, i] = product(column, values)
         return built
 
     def row_derivatives(self, name: str, coded: Coded) -> Floats:
-        """d(row)/d(predictor) for n coded rows, shape (n, columns).
+        """d(row)/d(predictor) for n coded rows, shape (n, columns)."""
+        return self.derivatives_of(self.columns, name, coded)
+
+    def derivatives_of(self, columns: Sequence[Column], name: str, coded: Coded) -> Floats:
+        """d(column)/d(predictor) for n coded rows, shape (n, len(columns)).
 
         By the product rule over each column's factors; a factor's own derivative by
         fourth-order differences, which are exact for cubic splines between knots.
         """
-        n = len(coded[name])
-        result = np.zeros((n, len(self.columns)))
-        which = self.touched([name])
-        needed = sorted({at for i in which for at, _ in self.columns[i].atoms})
+        result = np.zeros((len(coded[name]), len(columns)))
+        moved = [i for i, column in enumerate(columns) if name in self.variables_of(column)]
+        needed = _positions([columns[i] for i in moved])
         values = {at: self.factor_values(at, coded) for at in needed}
         moving = [at for at in needed if name in self.factors[at].variables]
         slopes = {at: self._factor_derivative(at, name, coded) for at in moving}
-        for i in which:
-            column = self.columns[i]
+        for i in moved:
+            column = columns[i]
             for place, (at, k) in enumerate(column.atoms):
                 if at in slopes:
                     rest = column.atoms[:place] + column.atoms[place + 1 :]
@@ -189,14 +202,26 @@ class Design:
         return result
 
     def _factor_derivative(self, position: int, name: str, coded: Coded) -> Floats:
-        if self.factors[position].name == name:
-            return np.ones((len(coded[name]), 1))
+        factor, n = self.factors[position], len(coded[name])
+        if factor.name == name:
+            return np.ones((n, 1))
+        if factor.levels is not None:
+            # a number cut into levels has no slope within a level
+            return np.zeros_like(self.factor_values(position, coded))
+        own = {other: coded[other] for other in factor.variables}
 
         def along(x: Floats) -> Floats:
-            return self.factor_values(position, {**coded, name: x})
+            repeats = len(x) // n
+            still = {other: np.tile(codes, repeats) for other, codes in own.items()}
+            return self.factor_values(position, {**still, name: x})
 
         lower, upper = self.allowed.get(name, (-np.inf, np.inf))
-        return derivative(along, np.asarray(coded[name], dtype=float), lower, upper)
+        x = np.asarray(coded[name], dtype=float)
+        return derivative(along, x, lower, upper, self.spreads.get(name, 1.0))
+
+
+def _positions(columns: Iterable[Column]) -> list[int]:
+    return sorted({at for column in columns for at, _ in column.atoms})
 
 
 def product(column: Column, values: Mapping[int, Floats]) -> Floats | float:

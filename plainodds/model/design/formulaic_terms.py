@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Collection, Mapping
+from collections.abc import Collection, Iterable, Mapping
 from dataclasses import dataclass
 from itertools import product
 from typing import Any
@@ -36,7 +36,8 @@ class FormulaicFactor:
 
     def evaluate(self, raw: Mapping[str, NDArray[Any]]) -> Floats:
         """Evaluate with the state remembered from the fit, shape (n, width)."""
-        built = self.spec.get_model_matrix(pd.DataFrame(dict(raw)), context=self.functions)
+        columns = _as_fitted(pd.DataFrame(dict(raw)))
+        built = self.spec.get_model_matrix(columns, context=self.functions)
         return np.asarray(built[list(self.columns)], dtype=float)
 
 
@@ -73,10 +74,8 @@ def formulaic_terms(
         if key not in places:
             places[key] = len(factors)
             factor = scoped.factor.factor
-            names = frozenset(str(v) for v in spec.factor_variables[factor]) & set(known)
-            made = _one_factor(
-                spec, factor, scoped.reduced, names, examples[list(names)], functions
-            )
+            names = _raw_names(spec.factor_variables[factor], known)
+            made = _one_factor(spec, factor, scoped.reduced, names, examples, functions)
             field_names.append(made.columns)
             # a column taken as it is need not be asked of formulaic
             bare = made.levels is None and names == {factor.expr}
@@ -96,6 +95,14 @@ def formulaic_terms(
     return tuple(factors), tuple(by_name[name] for name in spec.column_names)
 
 
+def _raw_names(variables: Iterable[Any], known: Collection[str]) -> frozenset[str]:
+    """The data's columns among what formulaic says a factor reads."""
+    found = (str(variable) for variable in variables)
+    # of `site.isin(...)` formulaic says that it reads site.isin
+    names = (name if name in known else name.partition(".")[0] for name in found)
+    return frozenset(names) & set(known)
+
+
 def _one_factor(
     spec: ModelSpec,
     factor: Any,
@@ -108,7 +115,7 @@ def _one_factor(
     terms = [_INTERCEPT, Term([factor])] if reduced else [Term([factor])]
     alone = spec.update(formula=Formula(terms), structure=None, na_action="ignore")
     try:
-        built = alone.get_model_matrix(examples, context=functions)
+        built = alone.get_model_matrix(_as_fitted(examples[list(names)]), context=functions)
     except Exception as error:
         raise FitRefused(
             f"The formula's {factor.expr} cannot be computed anew ({error}). If it uses a "
@@ -118,3 +125,9 @@ def _one_factor(
     contrasts = spec.factor_contrasts.get(factor)
     levels = None if contrasts is None else tuple(contrasts.levels)
     return FormulaicFactor(factor.expr, names, alone, columns, functions, levels)
+
+
+def _as_fitted(frame: pd.DataFrame) -> pd.DataFrame:
+    """Text as objects, which is how statsmodels hands it to formulaic."""
+    text = [name for name, dtype in frame.dtypes.items() if isinstance(dtype, pd.StringDtype)]
+    return frame.astype(dict.fromkeys(text, object)) if text else frame

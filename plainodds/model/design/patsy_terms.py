@@ -9,6 +9,7 @@ from itertools import product
 from typing import Any
 
 import numpy as np
+import pandas as pd
 from numpy.typing import NDArray
 from patsy import DesignInfo, NAAction
 from patsy.categorical import categorical_to_int
@@ -27,6 +28,8 @@ class PatsyFactor:
     info: FactorInfo
     variables: frozenset[str]
     contrast: Floats | None
+    series: frozenset[str] = frozenset()
+    """Columns of which the formula asks what only a Series has, as `site.isin(...)` does."""
 
     @property
     def name(self) -> str:
@@ -40,7 +43,9 @@ class PatsyFactor:
 
     def evaluate(self, raw: Mapping[str, NDArray[Any]]) -> Floats:
         """Evaluate with the state remembered from the fit, shape (n, width)."""
-        values = self.info.factor.eval(self.info.state, dict(raw))
+        # plain arrays are evaluated many times as fast
+        columns = {n: pd.Series(v) if n in self.series else v for n, v in raw.items()}
+        values = self.info.factor.eval(self.info.state, columns)
         if self.contrast is None:
             numbers = np.asarray(values, dtype=float)
             return numbers[:, None] if numbers.ndim == 1 else numbers
@@ -69,12 +74,13 @@ def patsy_terms(
         key = (factor, None if matrix is None else matrix.tobytes())
         if key not in places:
             places[key] = len(factors)
-            names = raw_names(getattr(factor, "code", factor.name()), known)
+            code = getattr(factor, "code", factor.name())
+            names = raw_names(code, known)
             plain = matrix is None and _bare(factor, names)
             factors.append(
                 PlainFactor(*names)
                 if plain
-                else PatsyFactor(spec.factor_infos[factor], names, matrix)
+                else PatsyFactor(spec.factor_infos[factor], names, matrix, _asked(code) & names)
             )
         return places[key]
 
@@ -124,3 +130,12 @@ def raw_names(code: str, known: Collection[str]) -> frozenset[str]:
         ):
             found.add(str(node.args[0].value))
     return frozenset(found & set(known))
+
+
+def _asked(code: str) -> frozenset[str]:
+    """Names of which an attribute or a method is used."""
+    return frozenset(
+        node.value.id
+        for node in ast.walk(ast.parse(code, mode="eval"))
+        if isinstance(node, ast.Attribute) and isinstance(node.value, ast.Name)
+    )

@@ -19,7 +19,7 @@ from functools import cached_property
 import numpy as np
 from numpy.typing import NDArray
 
-from plainodds.model.design.design import Atom, Coded, Column, Design, Floats, product
+from plainodds.model.design.design import Atom, Coded, Column, Design, Floats
 
 __all__ = ["Split", "split"]
 
@@ -60,27 +60,19 @@ class Split:
     def own_values(self, moved: Coded) -> Floats:
         """What moves, at J points: shape (J, T)."""
         n = len(next(iter(moved.values())))
-        return self._parts().some_columns(range(len(self.own)), moved, n)
+        return self.design.values_of(self.own, moved, n)
 
     def own_derivatives(self, name: str, moved: Coded) -> Floats:
         """d(own)/d(predictor) at J points: shape (J, T)."""
-        return self._parts().row_derivatives(name, moved)
+        return self.design.derivatives_of(self.own, name, moved)
 
     def still_values(self, coded: Coded, n: int) -> Floats:
         """What stays, for n rows: shape (n, G)."""
-        needed = sorted({at for atoms in self.still for at, _ in atoms})
-        values = {at: self.design.factor_values(at, coded) for at in needed}
-        built = np.empty((n, len(self.still)))
-        for g, atoms in enumerate(self.still):
-            built[:, g] = product(Column("", atoms), values)
-        return built
+        return self.design.values_of([Column("", atoms) for atoms in self.still], coded, n)
 
     def membership(self) -> Floats:
         """Indicator of shape (T, G): which column belongs to which product that stays."""
         return np.asarray(self.group[:, None] == np.arange(len(self.still)), dtype=float)
-
-    def _parts(self) -> Design:
-        return Design(self.design.factors, self.own, self.design.levels, self.design.allowed)
 
 
 def split(design: Design, names: Iterable[str]) -> Split | None:
