@@ -1,0 +1,30 @@
+"""Small widgets that every view is put together from, each with a class of its own."""
+
+from __future__ import annotations
+
+import ipywidgets as widgets
+
+from plainodds.views import markup
+
+__all__ = ["block", "html", "titled"]
+
+
+def html(name: str) -> widgets.HTML:
+    """An empty place for markup."""
+    place = widgets.HTML()
+    place.add_class(f"plainodds-{name}")
+    return place
+
+
+def block(*children: widgets.Widget, name: str = "block") -> widgets.VBox:
+    """Widgets one beneath the other."""
+    box = widgets.VBox(children)
+    box.add_class(f"plainodds-{name}")
+    return box
+
+
+def titled(title: str, *children: widgets.Widget, name: str = "block") -> widgets.VBox:
+    """Widgets under a title of their own."""
+    heading = html("title")
+    heading.value = markup.element("span", title)
+    return block(heading, *children, name=name)
