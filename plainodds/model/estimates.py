@@ -140,13 +140,14 @@ def _with_covariance(result: Any) -> Estimates:
     freedom = None
     if getattr(result, "use_t", False):
         freedom = float(getattr(result, "df_resid_inference", None) or result.df_resid)
-    return Estimates(
-        np.asarray(result.params, dtype=float),
-        np.asarray(result.cov_params(), dtype=float),
-        str(getattr(result, "cov_type", "nonrobust")),
-        "",
-        freedom,
-    )
+    coefficients = np.asarray(result.params, dtype=float)
+    try:
+        covariance = np.asarray(result.cov_params(), dtype=float)
+    except ValueError:
+        # statsmodels could not invert the Hessian, and warned when it was fitted
+        covariance = np.full((len(coefficients),) * 2, np.nan)
+    kind = str(getattr(result, "cov_type", "nonrobust"))
+    return Estimates(coefficients, covariance, kind, "", freedom)
 
 
 def _checked(found: Estimates, names: list[str]) -> Estimates:

@@ -40,7 +40,13 @@ def noticed(columns: Mapping[str, NDArray[Any]]) -> dict[str, str]:
     found: dict[str, str] = {}
     if not varied:
         return found
-    for target, sources, expression, compute in _candidates(varied):
+    # a square root is the root of the square and this the square of that: of two columns
+    # that say the same, the later one is taken to follow from the earlier
+    order = {name: place for place, name in enumerate(varied)}
+    candidates = sorted(
+        _candidates(varied), key=lambda each: order[each[0]] < max(order[s] for s in each[1])
+    )
+    for target, sources, expression, compute in candidates:
         if target in found or target in sources or found.keys() & sources:
             continue
         stored = np.asarray(varied[target], dtype=float)

@@ -76,3 +76,9 @@ def chances(fit, profiles):
     model = fit.model
     rows = model.rows([model.completed(profile) for profile in profiles])
     return 1 / (1 + np.exp(-(rows @ model.coefficients + model.offset)))
+
+
+def predicted(result, frame, engine="patsy"):
+    """What statsmodels predicts; it builds new rows with the engine that is set."""
+    with formula_engine(engine):
+        return np.asarray(result.predict(frame))

@@ -149,8 +149,9 @@ class Design:
             with np.errstate(all="ignore"):
                 values = factor.evaluate(raw)
         except Exception as error:
+            reason = (str(error).splitlines() or [type(error).__name__])[0].rstrip(".")
             raise QuestionRefused(
-                f"{factor.name} cannot be computed for these values: {error}"
+                f"{factor.name} cannot be computed for these values: {reason}."
             ) from error
         if not np.isfinite(values).all():
             raise QuestionRefused(

@@ -39,6 +39,7 @@ _THREE_POINTS = np.array(
 )
 _STEP = 1e-4
 _ROUNDING = np.finfo(float).eps
+_TINY = np.finfo(float).tiny
 
 
 def derivative(
@@ -95,8 +96,12 @@ def _differences(
         place = np.where(x + (3 - shift) * step > upper, 2 + shift, place)
     moved = np.clip(x + (np.arange(5)[:, None] - place) * step, lower, upper)
     values = np.asarray(function(moved.ravel()), dtype=float).reshape(5, len(x), -1)
-    # whole weights, so that those of a constant cancel exactly
-    five = np.einsum("nj,jnk->nk", _FIVE_POINTS[place], values) / (24 * step[:, None])
-    three = np.einsum("nj,jnk->nk", _THREE_POINTS[place], values) / (2 * step[:, None])
-    rounding = _ROUNDING * np.abs(values).max(axis=0) / step[:, None]
-    return five, np.abs(five - three) + rounding
+    step = step[:, None]
+    rounding = _ROUNDING * np.abs(values).max(axis=0) / step
+    # the weights sum to zero, so a constant may be taken off, and then cancels exactly
+    values = values - values[2]
+    five = np.einsum("nj,jnk->nk", _FIVE_POINTS[place], values) / (24 * step)
+    three = np.einsum("nj,jnk->nk", _THREE_POINTS[place], values) / (2 * step)
+    # what three points miss is of order step², what five miss of order step⁴
+    steepest = np.abs(values).max(axis=0) / step
+    return five, (five - three) ** 2 / np.maximum(steepest, _TINY) + rounding

@@ -97,7 +97,7 @@ FORMULAIC = {
     "poly(age, 3)": "age",
     "{age**2} + age": "age",
     "np.log(`a b` + 10)": "a b",
-    "I(`a b` * 2) * site": "a b site",
+    "I(`a b` * 2)": "a b",
     "C(site, contr.treatment('b'))": "site",
     "C(site, contr.sum)": "site",
     "C(site, contr.helmert)": "site",
@@ -129,13 +129,22 @@ def fitted(engine, formula):
     with made.formula_engine(engine):
         # a GLM is fitted with a generalised inverse, so that collinear columns don't matter here
         # fitted from here, whose functions patsy then finds
-        result = smf.glm(f"left ~ {formula}", FRAME, family=sm.families.Binomial()).fit()
+        frame = FRAME[["left", *names_in(formula)]]
+        result = smf.glm(f"left ~ {formula}", frame, family=sm.families.Binomial()).fit()
         return result, FittedLogit(result, functions=own if engine == "formulaic" else None)
 
 
-def shuffled(seed=3, rows=12):
+def names_in(formula):
+    """The raw columns behind a formula."""
+    return ["a b"] if PREDICTORS[formula] == "a b" else PREDICTORS[formula].split()
+
+
+def shuffled(formula, seed=3, rows=12):
     """New rows: every column's own values, each column in an order of its own."""
     draw = np.random.default_rng(seed)
     return pd.DataFrame(
-        {name: FRAME[name].iloc[draw.permutation(len(FRAME))[:rows]].array for name in FRAME}
+        {
+            name: FRAME[name].iloc[draw.permutation(len(FRAME))[:rows]].array
+            for name in names_in(formula)
+        }
     )

@@ -6,7 +6,7 @@ import pytest
 from plainodds.model.design.split import split
 from tests.model import made
 from tests.model.design import formulas
-from tests.model.design.formulas import CASES, FRAME, PREDICTORS, fitted
+from tests.model.design.formulas import CASES, FRAME, fitted
 
 every_formula = pytest.mark.parametrize(("engine", "formula"), CASES)
 
@@ -15,7 +15,7 @@ every_formula = pytest.mark.parametrize(("engine", "formula"), CASES)
 def test_the_predictors_are_the_raw_columns(engine, formula):
     _, fit = fitted(engine, formula)
     names = sorted(facts.name for facts in fit.subject.predictors)
-    assert " ".join(names) == PREDICTORS[formula]
+    assert names == formulas.names_in(formula)
 
 
 @every_formula
@@ -39,16 +39,14 @@ def test_a_row_is_the_same_alone_as_among_others(engine, formula):
 @every_formula
 def test_chances_of_new_rows_are_those_that_statsmodels_predicts(engine, formula):
     result, fit = fitted(engine, formula)
-    new = formulas.shuffled()
-    names = [facts.name for facts in fit.subject.predictors]
-    profiles = [dict(zip(names, row, strict=True)) for row in new[names].itertuples(index=False)]
+    new = formulas.shuffled(formula)
+    profiles = [dict(zip(new, row, strict=True)) for row in new.itertuples(index=False)]
     if engine == "formulaic" and "doubled" in formula:
         # statsmodels hands formulaic no function of the caller's
         expected = result.predict(np.column_stack([np.ones(len(new)), 2 * new["age"] + 1]),
                                   transform=False)  # fmt: skip
     else:
-        with made.formula_engine(engine):
-            expected = result.predict(new)
+        expected = made.predicted(result, new, engine)
     np.testing.assert_allclose(made.chances(fit, profiles), expected, rtol=1e-9)
 
 
