@@ -43,6 +43,11 @@ _OTHER_DATA = (
     "the fit and {built:.6g} in the data. Hand over the data that the model was fitted on, "
     "unchanged: FittedLogit(result, data=frame)."
 )
+_FEW_DIGITS = (
+    "The data and the fit do not match: in row {row} of the rows used, {name} is {fitted:.6g} in "
+    "the fit and {built:.6g} in the data, which differ in the last digits only. Numbers kept in "
+    "few digits (float16, int8) make such a fit: turn them into float64 and fit again."
+)
 _OTHER_ROWS = (
     "The formula computes {name} from other rows too: row {row} gives {fitted:.6g} among the fit's "
     "rows and {built:.6g} alone, so it means nothing for a single profile. Use center() or "
@@ -65,6 +70,8 @@ def _refuse_differing(
 ) -> None:
     wrong = ~np.isclose(built, matrix[chosen], rtol=1e-6, atol=1e-8)
     if wrong.any():
+        if message is _OTHER_DATA and np.allclose(built, matrix[chosen], rtol=1e-2, atol=1e-3):
+            message = _FEW_DIGITS
         row, column = (int(place[0]) for place in np.nonzero(wrong))
         raise FitRefused(
             message.format(

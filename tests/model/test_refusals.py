@@ -183,6 +183,10 @@ FITS = {
         "covariance of .*nothing is not a number.*leave one",
     ),
     "dates": (lambda: glm_with("left ~ I(when.dt.year) + age"), "dates.*years since"),
+    "numbers of few digits": (
+        lambda: made.glm("left ~ np.log(year)", FRAME.astype({"year": "float16"})).fit(),
+        "differ in the last digits.*float64",
+    ),
     "from other rows": (
         lambda: glm_with("left ~ I(age - age.mean())"),
         r"from other rows too.*center\(\)",
