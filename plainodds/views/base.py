@@ -31,7 +31,7 @@ from plainodds.views.markup import Markup
 from plainodds.views.parts import block, html
 from plainodds.views.stage import Stage
 from plainodds.views.stills import bundle_of
-from plainodds.views.style import STYLE
+from plainodds.views.style import KEYS, STYLE
 
 __all__ = ["AnswerView", "Binding"]
 
@@ -81,7 +81,7 @@ class AnswerView(widgets.VBox):
         with LOCK, self._quietly():
             panel = block(*self._make_controls(), name="controls")
             style = html("style")
-            style.value = markup.style_sheet(STYLE)
+            style.value = markup.style_sheet(STYLE, KEYS)
             rest = block(self._words, self._table, self._extras.widget, name="rest")
             body = widgets.Box([block(*self._on_stage(), name="stage"), panel, rest])
             body.add_class("plainodds-body")

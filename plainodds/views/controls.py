@@ -209,11 +209,16 @@ class ChoiceControl:
         return ""
 
     def offer(self, options: Sequence[tuple[str, Any]], value: Any) -> None:
-        """Offer other values, and show one of them."""
-        if tuple(options) != self._options:
-            self._options = tuple(options)
-            # places instead of values: True equals 1, and names may repeat
-            self.widget.options = [(label, place) for place, (label, _) in enumerate(options)]
+        """Offer other values, and show one of them; the same values change nothing.
+
+        What a person has just chosen may be waiting for its turn on another thread: an
+        offer of the same values must not undo it.
+        """
+        if tuple(options) == self._options:
+            return
+        self._options = tuple(options)
+        # places instead of values: True equals 1, and names may repeat
+        self.widget.options = [(label, place) for place, (label, _) in enumerate(options)]
         self.show(value)
 
     def show(self, value: Any) -> None:

@@ -69,9 +69,12 @@ def joined(children: Iterable[str]) -> Markup:
     return Markup("".join(each if isinstance(each, Markup) else escape(each) for each in children))
 
 
-def style_sheet(rules: str) -> Markup:
-    """A style element with rules of this package's own; no text of anybody else's goes in."""
-    return Markup(f"<style>{rules}</style>")
+def style_sheet(rules: str, on_load: str | None = None) -> Markup:
+    """A style element with rules of this package's own; no text of anybody else's goes in.
+
+    `on_load` is a line of script of this package's own, carried out once the page has the rules.
+    """
+    return element("style", Markup(rules), onload=on_load)
 
 
 def data_uri(content: bytes, media_type: str) -> str:

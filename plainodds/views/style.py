@@ -7,7 +7,17 @@ lightness round and leaves the hues where they are.
 
 from __future__ import annotations
 
-__all__ = ["STYLE"]
+__all__ = ["KEYS", "STYLE"]
+
+# JupyterLab takes plain keys for its cells from everything but boxes of text: arrows would leave
+# a drop-down, and two letters would delete the cell. The attribute is its own way to forbid that;
+# shortcuts with Ctrl or Cmd remain. Where scripts are not carried out, nothing else changes.
+KEYS = (
+    "window.plainoddsKeys ??= (window.addEventListener('keydown', event =>"
+    " event.target.closest?.('.plainodds-view') && event.target.toggleAttribute("
+    "'data-lm-suppress-shortcuts', !event.ctrlKey && !event.metaKey), true), true)"
+)
+"""Lets controls have their keys; a script for the style sheet's `onload`."""
 
 STYLE = """
 .plainodds-view {

@@ -144,6 +144,20 @@ def test_a_choice_that_is_not_on_offer_joins_the_others():
     assert control.value == 0.9
 
 
+def test_an_offer_of_the_same_values_does_not_undo_what_was_just_chosen():
+    options = [("chance", "probability"), ("odds", "odds")]
+    control = ChoiceControl("Shown as", options, "probability")
+    control.widget.index = 1
+    control.offer(options, "probability")
+    assert control.value == "odds"
+
+
+def test_an_offer_of_other_values_shows_the_one_asked_for():
+    control = ChoiceControl("Shown as", [("chance", "probability"), ("odds", "odds")], "odds")
+    control.offer([("chance", "probability"), ("slope", "slope")], "slope")
+    assert control.value == "slope"
+
+
 def test_a_box_alone_gives_its_number():
     control = BoxControl("Step", 10)
     control.show(5)

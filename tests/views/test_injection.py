@@ -10,6 +10,7 @@ import statsmodels.formula.api as smf
 
 import plainodds as po
 from plainodds.display import bundle
+from plainodds.views.style import KEYS
 
 HOSTILE = "<img src=x onerror=alert(1)>"
 OWN = {"div", "p", "ul", "li", "h4", "strong", "span", "b", "style", "pre", "code", "a", "img"}
@@ -61,7 +62,8 @@ def widgets_of(view):
 def is_harmless(markup):
     for tag, attributes in Found(markup).elements:
         assert tag in OWN | TABLE
-        assert not any(name.startswith("on") for name in attributes)
+        scripts = {name: held for name, held in attributes.items() if name.startswith("on")}
+        assert scripts == {} or (tag == "style" and scripts == {"onload": KEYS})
         if tag == "img":
             assert attributes["src"].startswith("data:image/png;base64,")
 
