@@ -45,10 +45,11 @@ def test_it_runs_without_errors_or_warnings(executed):
 
 @pytest.mark.parametrize("view", ["OddsView", "CurveView", "ProfileView"])
 def test_it_opens_each_view_and_leaves_its_picture_and_words_behind(executed, view):
-    (output,) = outputs(executed, f"po.{view}(fit)")
-    assert "application/vnd.jupyter.widget-view+json" in output.data
-    assert output.data["image/png"]
-    assert output.data["text/html"]
+    live, waiting = outputs(executed, f"po.{view}(fit)")
+    assert "application/vnd.jupyter.widget-view+json" in live.data
+    assert live.data["image/png"]
+    assert "alt=" in live.data["text/html"]
+    assert live.data["text/html"] in waiting.data["text/html"]
 
 
 def test_an_answer_shows_its_picture(executed):
