@@ -218,6 +218,7 @@ def _holding(question: CurveQuestion, facts: PredictorFacts, value: Scalar) -> C
 
 
 _ROWS = 11
+_STACKED_FROM = 3
 
 
 def curve_table(answer: CurveAnswer) -> Markup:
@@ -246,7 +247,9 @@ def curve_table(answer: CurveAnswer) -> Markup:
         remarks.append("* no rows of the data near by.")
     if len(places) < len(at):
         remarks.append(f"{len(places)} of {count(len(at))} points.")
-    return markup.table(scale_title(answer), columns, rows, " ".join(remarks))
+    # many columns leave no room for an interval beside its estimate
+    stacked = "plainodds-stacked" if len(answer.lines) >= _STACKED_FROM else None
+    return markup.table(scale_title(answer), columns, rows, " ".join(remarks), stacked)
 
 
 def _spread(points: int) -> list[int]:

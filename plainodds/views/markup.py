@@ -102,7 +102,7 @@ def words_block(words: Words, *, title: str = "") -> Markup:
     lead, *rest = words.sentences or ("",)
     parts = [
         element("h4", title) if title else Markup(),
-        element("p", lead, class_="plainodds-lead") if lead else Markup(),
+        element("p", lead, class_="plainodds-lead", role="status") if lead else Markup(),
         _sentences(rest),
     ]
     if words.cautions:
@@ -151,7 +151,13 @@ class Row:
     class_: str | None = None
 
 
-def table(caption: str, columns: Sequence[Column], rows: Iterable[Row], note: str = "") -> Markup:
+def table(
+    caption: str,
+    columns: Sequence[Column],
+    rows: Iterable[Row],
+    note: str = "",
+    class_: str | None = None,
+) -> Markup:
     """A table that assistive technology reads with its caption and headings."""
     heads = (
         element("th", each.title, scope="col", class_=_cell_class(each, heading=True))
@@ -176,6 +182,7 @@ def table(caption: str, columns: Sequence[Column], rows: Iterable[Row], note: st
                 element("caption", caption),
                 element("thead", element("tr", *heads)),
                 element("tbody", *written),
+                class_=class_,
             ),
             element("p", note, class_="plainodds-note") if note else Markup(),
         ]

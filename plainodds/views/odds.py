@@ -162,7 +162,7 @@ class OddsView(AnswerView):
             return [
                 self._bind(
                     "step",
-                    BoxControl(f"Per step of{unit}", facts.step),
+                    BoxControl(f"Step{unit}", facts.step),
                     lambda question: dict(question.steps).get(facts.name, facts.step),
                     lambda question, size: replace(
                         question, steps=_put(question.steps, facts.name, size)

@@ -16,7 +16,7 @@ from plainodds.views.parts import block, html
 __all__ = ["NARROW_PX", "WIDE_PX", "Shot", "Stage"]
 
 WIDE_PX = 590
-NARROW_PX = 350
+NARROW_PX = 380
 _PIXEL_RATIO = 2
 _LARGER, _SMALLER = "Larger letters", "Smaller letters"
 

@@ -123,7 +123,7 @@ body.vscode-dark .plainodds-picture img { filter: invert(1) hue-rotate(180deg); 
   display: flex; flex-flow: row wrap; gap: 8px; align-items: center;
 }
 .plainodds-view .jupyter-button {
-  width: auto; height: 28px; line-height: 26px; padding: 0 9px; border-radius: 2px;
+  width: auto; height: 28px; line-height: 26px; padding: 0 8px; border-radius: 2px;
   border: 1px solid var(--jp-border-color1, #9aa5b1); background: var(--plainodds-paper);
   color: var(--plainodds-ink); box-shadow: none;
 }
@@ -191,10 +191,15 @@ body.vscode-dark .plainodds-picture img { filter: invert(1) hue-rotate(180deg); 
 @container (max-width: 480px) {
   .plainodds-view :is(th, td) { padding-right: 9px; font-size: 0.94em; }
   .plainodds-view .plainodds-within > th { padding-left: 7px; }
+  .plainodds-view .plainodds-number > span:not(:only-child) { white-space: normal; }
 }
+.plainodds-view .plainodds-stacked .plainodds-number > span { display: block; }
+.plainodds-view .plainodds-table .widget-html-content { overflow-x: auto; }
+.plainodds-view .plainodds-extras { display: flex; flex-direction: column; gap: 6px; }
 
 .plainodds-view pre {
-  margin: 0; padding: 9px 12px; overflow-x: auto; user-select: all;
+  margin: 0; padding: 9px 12px; user-select: all;
+  white-space: pre-wrap; word-break: normal; overflow-wrap: anywhere;
   background: var(--plainodds-raised); color: inherit; font-size: 0.95em;
   font-family: var(--jp-code-font-family, monospace); line-height: 1.4;
 }
