@@ -122,6 +122,11 @@ class _Line:
         for band in (self.band, self.supported_band):
             band.set(linewidth=0, zorder=1.5)
             axes.add_collection(band, autolim=False)
+        self.edges = Line2D(
+            [], [], color=series.colour, linewidth=0.8 * theme.hairline, linestyle="-",
+            alpha=0.55, zorder=1.6,
+        )  # fmt: skip
+        axes.add_line(self.edges)
         style: dict[str, Any] = {"color": series.colour, "linewidth": theme.line_width, "zorder": 3}
         self.supported = Line2D([], [], linestyle="-", solid_capstyle="round", **style)
         self.unsupported = Line2D([], [], dashes=series.dash, dash_capstyle="butt", **style)
@@ -151,10 +156,16 @@ class _Line:
         if line.lower is None or line.upper is None:
             self.band.set_verts([])
             self.supported_band.set_verts([])
+            self.edges.set_data([], [])
             return
         low, high = shown(scale, line.lower), shown(scale, line.upper)
         self.band.set_verts(_polygons(x, low, high, np.ones_like(held)))
         self.supported_band.set_verts(_polygons(x, low, high, held))
+        gap = [np.nan]
+        self.edges.set_data(
+            np.concatenate([x, gap, x]),
+            np.concatenate([np.where(held, low, np.nan), gap, np.where(held, high, np.nan)]),
+        )
 
 
 def _open(held: np.ndarray) -> np.ndarray:

@@ -14,7 +14,7 @@ from matplotlib.collections import LineCollection
 from matplotlib.transforms import Transform, blended_transform_factory
 
 from plainodds.answers.curve import CurveAnswer
-from plainodds.drawings.curve_scale import VerticalAxis, vertical_axis
+from plainodds.drawings.curve_scale import VerticalAxis, is_cut, vertical_axis
 from plainodds.drawings.furniture import Notes, Title, marker_line
 from plainodds.drawings.geometry import Margins, Room, apart, corner, slot_size
 from plainodds.drawings.lettering import letter, line_height, text_width, tick_style, wrapped
@@ -245,7 +245,8 @@ class CurveFrame:
         """Say what the intervals are, or why there are none."""
         if all(line.lower is None for line in answer.lines):
             return answer.subject.no_interval or "No intervals can be given."
-        return f"{name}: {confidence(answer.question.level)} interval."
+        cut = ", cut off where it leaves the axis" if is_cut(answer) else ""
+        return f"{name}: {confidence(answer.question.level)} interval{cut}."
 
 
 def _label_texts(answer: CurveAnswer, theme: Theme, most: float) -> list[str]:

@@ -206,7 +206,7 @@ def _level_labels(
         turned = [wrapped(name, 11.0 * size, theme, size, 1) for name in names]
         longest = max(text_width(label, theme, size) for label in turned)
         if room >= line_height(size) and room < 6.0 * size:
-            return turned, size, 90.0, longest
+            return turned, size, 90.0, longest + 0.4 * size
     return labels, size, 0.0, line_height(size, max(each.count("\n") for each in labels) + 1)
 
 

@@ -12,9 +12,9 @@ from plainodds.answers.curve import CurveAnswer, CurveLine, Scale
 from plainodds.drawings.ticks import fraction_ticks, round_ticks
 from plainodds.phrases.numbers import quantity, simple_fraction
 
-__all__ = ["VerticalAxis", "shown", "vertical_axis"]
+__all__ = ["VerticalAxis", "is_cut", "shown", "vertical_axis"]
 
-_FARTHEST = 1.6
+_FARTHEST = 2.0
 
 
 @dataclass(frozen=True)
@@ -116,6 +116,20 @@ def _reach(answer: CurveAnswer, to: Callable[[np.ndarray], np.ndarray]) -> tuple
         max(min(lowest, float(ends.min())), lowest - _FARTHEST * span),
         min(max(highest, float(ends.max())), highest + _FARTHEST * span),
     )
+
+
+def is_cut(answer: CurveAnswer) -> bool:
+    """Whether the axis, of whatever height, cuts off an interval that the data support."""
+    scale = answer.question.scale
+    vertical = vertical_axis(answer, height=100.0, letter=10.0)
+    for line in answer.lines:
+        if line.lower is None or line.upper is None:
+            continue
+        low = _supported(line, shown(scale, line.lower))
+        high = _supported(line, shown(scale, line.upper))
+        if (low < vertical.lower).any() or (high > vertical.upper).any():
+            return True
+    return False
 
 
 def _supported(line: CurveLine, values: np.ndarray) -> np.ndarray:

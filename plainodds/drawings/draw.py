@@ -21,7 +21,7 @@ from plainodds.drawings.odds import OddsDrawing
 from plainodds.drawings.profile import ProfileDrawing
 from plainodds.drawings.theme import Theme, theme_of
 
-__all__ = ["BORDER", "draw", "drawing_of", "figure_for", "height_for"]
+__all__ = ["BORDER", "draw", "drawing_of", "figure_for", "height_for", "theme_for"]
 
 BORDER = 0.7
 """What a figure leaves free around its picture, in letters of its theme."""
@@ -113,6 +113,14 @@ def height_for(drawing: type[Drawing[Any]], answer: Answer, theme: Theme, width:
     return drawing.natural_height(answer, theme, width - 2 * border) + 2 * border
 
 
+def theme_for(
+    drawing: type[Drawing[Any]], answer: Answer, theme: Theme, width: float, height: float
+) -> Theme:
+    """The theme with letters that fit into a figure of a size in points."""
+    border = 2 * BORDER * theme.font_size
+    return fitting_theme(drawing, answer, theme, width - border, height - border)
+
+
 def figure_for(
     drawing: type[Drawing[Any]],
     answer: Answer,
@@ -138,5 +146,4 @@ def figure_for(
     border = BORDER * theme.font_size
     across, up = border / width, border / height
     axes = figure.add_axes((across, up, 1.0 - 2.0 * across, 1.0 - 2.0 * up))
-    fitted = fitting_theme(drawing, answer, theme, width - 2 * border, height - 2 * border)
-    return figure, drawing(axes, answer, fitted)
+    return figure, drawing(axes, answer, theme_for(drawing, answer, theme, width, height))

@@ -39,7 +39,7 @@ FIGURE_SPACE = "\u2007"
 _POINT_SPACE = "\u2008"
 _ELLIPSIS = "…"
 # at low resolution letters advance by whole pixels, and a line comes out a little wider
-_HINTED = 1.03
+_HINTED = 1.04
 
 
 @lru_cache(maxsize=4096)

@@ -30,6 +30,7 @@ _WIDEST_FIGURES = 0.34
 _WIDEST_FIGURES_NARROW = 0.5
 _NARROW = 37.0  # letters
 _INDENT = 0.9  # letters
+_LABEL_LINES = 3
 GAP = 1.1
 """Between labels, plot and figures, in letters."""
 _LEAST_PLOT = 0.24
@@ -103,24 +104,25 @@ def _change(row: OddsRow) -> tuple[object, ...]:
 
 
 def _group(answer: OddsAnswer, run: list[list[OddsRow]]) -> Group:
+    """Word a group: what its slots share stands in its heading, the rest beside each."""
     subject = answer.subject
     facts = subject.predictor(run[0][0].predictor)
     changes = [change_label(facts, slot[0]) for slot in run]
     givens = [slot[0].given for slot in run]
-    if len(set(givens)) == 1:
-        rest = given_clause(subject, givens[0]) if givens[0] else ""
-        labels = changes
-    elif len(set(changes)) == 1:
-        rest = changes[0]
-        labels = [given_label(subject, given) for given in givens]
-    else:
-        rest = ""
-        labels = [
-            f"{change}, {given_label(subject, given)}" if given else change
-            for change, given in zip(changes, givens, strict=True)
-        ]
+    shared = tuple(pair for pair in givens[0] if all(pair in given for given in givens))
+    own = [tuple(pair for pair in given if pair not in shared) for given in givens]
+    one_change = len(run) > 1 and len(set(changes)) == 1
+    rest = [changes[0]] if one_change else []
+    if shared:
+        rest.append(given_clause(subject, shared))
+    labels = []
+    for change, given in zip(changes, own, strict=True):
+        parts = [] if one_change else [change]
+        if given:
+            parts.append(given_label(subject, given))
+        labels.append(", ".join(parts))
     slots = tuple(Slot(label, tuple(slot)) for label, slot in zip(labels, run, strict=True))
-    return Group(predictor_label(facts), rest, slots)
+    return Group(predictor_label(facts), ", ".join(rest), slots)
 
 
 def laid_out(groups: Sequence[Group], figures: Figures, theme: Theme, width: float) -> Layout:
@@ -164,7 +166,7 @@ def _side_by_side(groups: Sequence[Group], figures: Figures, theme: Theme, width
         top = y
         y += 0.0 if inline else _head_height(head, theme)
         for slot in group.slots:
-            label = "" if inline else wrapped(slot.label, room - indent, theme, em, 2)
+            label = "" if inline else wrapped(slot.label, room - indent, theme, em, _LABEL_LINES)
             needs = [line * (next(texts).count("\n") + 1) for _ in slot.rows]
             height = max(line_height(em, label.count("\n") + 1), sum(needs))
             slots.append((label, y + height / 2))
@@ -193,7 +195,11 @@ def _stacked(groups: Sequence[Group], figures: Figures, theme: Theme, width: flo
         heads.append((*head, y))
         y += _head_height(head, theme)
         for slot in group.slots:
-            label = "" if _is_single(group) else wrapped(slot.label, width - indent, theme, em, 2)
+            label = (
+                ""
+                if _is_single(group)
+                else wrapped(slot.label, width - indent, theme, em, _LABEL_LINES)
+            )
             lines = line_height(em, label.count("\n") + 1) if label else 0.0
             slots.append((label, y + lines / 2))
             y += lines

@@ -11,7 +11,7 @@ from matplotlib.figure import Figure
 
 from plainodds.answers.profile import ProfileAnswer
 from plainodds.answers.questions import Answer
-from plainodds.drawings.draw import drawing_of, figure_for, height_for
+from plainodds.drawings.draw import drawing_of, figure_for, height_for, theme_for
 from plainodds.drawings.drawing import Drawing
 from plainodds.drawings.geometry import POINTS_PER_INCH
 from plainodds.drawings.png import png_of
@@ -90,16 +90,18 @@ class Picture:
         if isinstance(answer, ProfileAnswer):
             drawing = RulerDrawing
         width = self.width_px / _PIXELS_PER_INCH * POINTS_PER_INCH
-        height_px = self._asked_height
+        height_px, fitted = self._asked_height, self._theme
         if height_px is None:
             needed = height_for(drawing, answer, self._theme, width)
             height_px = round(needed / POINTS_PER_INCH * _PIXELS_PER_INCH)
-        # a change of size is a change of structure
-        structure = (drawing, drawing.structure(answer), height_px)
+        height = height_px / _PIXELS_PER_INCH * POINTS_PER_INCH
+        if self._asked_height is not None:
+            fitted = theme_for(drawing, answer, self._theme, width, height)
+        # another height, or letters of another size, need another figure
+        structure = (drawing, drawing.structure(answer), height_px, fitted.font_size)
         if self._drawing is not None and structure == self.structure:
             self._drawing.update(answer)
             return
-        height = height_px / _PIXELS_PER_INCH * POINTS_PER_INCH
         self._figure, self._drawing = figure_for(
             drawing, answer, self._theme, width, height, dpi=_PIXELS_PER_INCH, kind=ScreenFigure
         )

@@ -14,7 +14,7 @@ from plainodds.drawings.furniture import marker_line
 from plainodds.drawings.geometry import corner
 from plainodds.drawings.lettering import letter, line_height, text_width
 from plainodds.drawings.theme import Theme
-from plainodds.phrases.labels import chance_of
+from plainodds.phrases.labels import chance_of, in_sentence
 from plainodds.phrases.numbers import (
     chance,
     confidence,
@@ -37,9 +37,10 @@ def points_of(answer: ProfileAnswer) -> tuple[ProfilePoint, ...]:
 
 
 def headline(answer: ProfileAnswer) -> str:
-    """The chance of the profile itself."""
+    """The chance of the profile itself, the figures first: an event may take many words."""
     held = answer.point.probability.estimate
-    return f"{chance_of(answer.subject.outcome)}: {chance(held)}, or {frequency(held)}"
+    event = in_sentence(chance_of(answer.subject.outcome))
+    return f"{chance(held)}, or {frequency(held)}: {event}"
 
 
 def notes(answer: ProfileAnswer) -> list[str]:

@@ -47,8 +47,9 @@ def window(answer: ProfileAnswer, points: Sequence[ProfilePoint]) -> tuple[float
         held = point.linear_predictor
         low = held.estimate if held.lower is None else max(held.lower, held.estimate - 2.0)
         high = held.estimate if held.upper is None else min(held.upper, held.estimate + 2.0)
-        lower = min(lower, math.floor(_bounded(low) - 0.3))
-        upper = max(upper, math.ceil(_bounded(high) + 0.3))
+        low, high = _bounded(low) - 0.3, _bounded(high) + 0.3
+        lower = math.floor(low) if low < lower else lower
+        upper = math.ceil(high) if high > upper else upper
     return lower, upper
 
 

@@ -27,7 +27,7 @@ _SIZES: dict[str, tuple[float, float | None, float]] = {
     "slide": (320.0, 180.0, 18.0),
 }
 _LEAST, _MOST = 20.0, 2000.0
-_MOST_PIXELS = 8000
+_MOST_PIXELS = 6000
 _SUFFIXES = (".svg", ".pdf", ".png")
 
 
@@ -42,7 +42,7 @@ def save(
     """Draw an answer and write it as SVG, PDF or PNG, by the path's suffix.
 
     Text stays text in SVG and PDF, and its font is in the file; PNG has 600 pixels per
-    inch, fewer where it would have more than 8,000 along a side.
+    inch, fewer where it would have more than 6,000 along a side.
 
     Parameters
     ----------

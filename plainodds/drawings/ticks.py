@@ -10,10 +10,12 @@ from typing import Any
 
 import numpy as np
 from matplotlib.axes import Axes
-from matplotlib.ticker import FixedFormatter, FixedLocator, MaxNLocator, NullLocator
+from matplotlib.ticker import MaxNLocator, NullLocator
 
 __all__ = ["bare", "fraction_ticks", "label_ticks", "outer_fractions", "round_ticks"]
 
+# where a locator remembers what it was made for
+_HELD = "plainodds_ticks"
 # what lies above 1, from coarse to fine; a ladder holds the reciprocals too
 _ABOVE: tuple[list[Fraction], ...] = (
     [Fraction(10**power) for power in range(3, 46, 3)],
@@ -98,16 +100,12 @@ def label_ticks(
     Replacing ticks costs more than all else in an update, so equal ones stay.
     """
     axis = axes.xaxis if which == "x" else axes.yaxis
-    locator, formatter = axis.get_major_locator(), axis.get_major_formatter()
-    if (
-        isinstance(locator, FixedLocator)
-        and isinstance(formatter, FixedFormatter)
-        and np.array_equal(locator(), ticks)
-        and list(formatter.seq) == list(labels)
-    ):
+    wanted = (tuple(ticks), tuple(labels))
+    if getattr(axis.get_major_locator(), _HELD, None) == wanted:
         return
     axis.set_ticks(list(ticks), labels=list(labels), **style)
     axis.set_minor_locator(NullLocator())
+    setattr(axis.get_major_locator(), _HELD, wanted)
 
 
 def bare(axes: Axes) -> None:

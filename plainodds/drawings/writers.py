@@ -121,7 +121,7 @@ def _face(family: str, weight: str | int, letters: str) -> str:
     from fontTools.ttLib import TTFont  # type: ignore[import-untyped]
 
     path = findfont(FontProperties(family=family, weight=weight))
-    font = TTFont(path, fontNumber=0, lazy=True)
+    font = TTFont(path, fontNumber=0, lazy=True, recalcTimestamp=False)
     options = subset.Options()
     options.hinting = False
     options.drop_tables += ["FFTM"]
