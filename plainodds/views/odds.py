@@ -25,7 +25,7 @@ from plainodds.views import markup
 from plainodds.views.base import AnswerView
 from plainodds.views.controls import BoxControl, ChoiceControl, Control, slug
 from plainodds.views.markup import Column, Markup, Row
-from plainodds.views.parts import block
+from plainodds.views.parts import block, html
 from plainodds.views.several import TicksControl, values_control
 
 __all__ = ["OddsView"]
@@ -95,6 +95,8 @@ class OddsView(AnswerView):
             lambda question, order: replace(question, order=order),
         )
         self._settings = block(name="set")
+        self._unshown = html("unshown")
+        self._unshown.value = markup.note("Not among the predictors shown.")
         return [
             self._chosen.widget,
             self._settings,
@@ -105,12 +107,6 @@ class OddsView(AnswerView):
 
     def _names(self, question: OddsQuestion) -> tuple[str, ...]:
         return question.predictors or tuple(each.name for each in self.subject.predictors)
-
-    def _chosen_among(self, question: OddsQuestion) -> str:
-        """The predictor whose settings are open; the first where it is not shown any more."""
-        names = self._names(question)
-        chosen: str = self._chosen.value
-        return chosen if chosen in names else names[0]
 
     def _with_predictors(self, question: OddsQuestion, names: tuple[str, ...]) -> OddsQuestion:
         """Fewer predictors: values of what none of them depends on go."""
@@ -123,14 +119,13 @@ class OddsView(AnswerView):
     def _on_chosen(self) -> None:
         with self._guarded():
             if not self._quiet:
-                self._settings.children = self._panel(self._chosen.value)
+                self._arrange(self._question)
                 self._words.value = self._words_of(self.answer)
 
     def _arrange(self, question: OddsQuestion) -> None:
-        names = self._names(question)
-        options = [(predictor_label(self.subject.predictor(name)), name) for name in names]
-        self._chosen.offer(options, self._chosen_among(question))
-        panel = tuple(self._panel(self._chosen.value))
+        chosen = self._chosen.value
+        shown = chosen in self._names(question)
+        panel = tuple(self._panel(chosen)) if shown else (self._unshown,)
         if self._settings.children != panel:
             self._settings.children = panel
 
@@ -202,7 +197,8 @@ class OddsView(AnswerView):
         if len(answer.rows) <= _SAID_AT_ONCE:
             return markup.words_block(words(answer))
         # so many rows are a wall of words: those of the predictor that is being set
-        name = self._chosen_among(answer.question)
+        names = self._names(answer.question)
+        name = self._chosen.value if self._chosen.value in names else names[0]
         part = replace(answer, rows=tuple(row for row in answer.rows if row.predictor == name))
         facts = self.subject.predictor(name)
         return markup.words_block(words(part), title=f"{predictor_label(facts)}, in words")

@@ -118,8 +118,19 @@ def test_predictors_can_be_left_out(fit, page):
         if facts.name not in ("pressure_m", "past_repairs"):
             page.change(box, value=False)
     assert view.question.predictors == ("pressure_m", "past_repairs")
-    assert labels(view._chosen) == ["Pressure", "Past repairs"]
-    assert view._chosen.value == "pressure_m"
+    assert {row.predictor for row in view.answer.rows} == {"pressure_m", "past_repairs"}
+
+
+def test_settings_of_a_predictor_that_is_not_shown_say_so(fit, page):
+    view = po.OddsView(fit, OddsQuestion(predictors=("lined",)))
+    assert controls_of(view, "reference")
+    # what is offered stays as it is: a choice that is under way must not meet another list
+    assert len(labels(view._chosen)) == len(fit.subject.predictors)
+    open_settings(view, page, "pressure_m")
+    assert not controls_of(view, "from")
+    (said,) = view._settings.children
+    assert "Not among the predictors shown" in text_of(said.value)
+    view.question = OddsQuestion(predictors=("lined", "pressure_m"))
     assert controls_of(view, "from")
 
 
