@@ -46,7 +46,8 @@ def test_lines_stand_side_by_side_and_levels_keep_apart():
 def test_a_level_without_rows_is_hollow_with_a_broken_interval():
     drawing = drawn(made.curve_of_levels())
     loose = drawing.lines[2]
-    assert len(loose.loose_points.get_xdata()) == 1
+    assert list(loose.loose_points.get_xdata()) == [2 + loose.offset]
+    assert list(loose.points.get_xdata()) == [loose.offset, 1 + loose.offset]
     assert same_color(loose.loose_points.get_markerfacecolor(), THEME.paper)
     assert len(loose.loose_intervals.get_segments()) == 1
     assert loose.loose_intervals.get_linestyles()[0][1] is not None

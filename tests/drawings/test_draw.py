@@ -79,26 +79,37 @@ def test_more_can_be_drawn_on_the_axes_in_the_answers_own_units():
 
 @pytest.mark.parametrize("engine", ["constrained", "compressed", "tight"])
 def test_a_layout_engine_finds_the_axes_as_large_as_their_slot(engine, recwarn):
-    figure = Figure(figsize=(12, 7), dpi=300, layout=engine)
-    left, right = figure.subplots(1, 2)
-    right.set_ylabel("mine")
-    draw(made.odds_answer(), ax=left)
+    answers = (
+        made.odds_answer(), made.curve_by_material(), made.profile_answer(), made.curve_of_levels()
+    )  # fmt: skip
+    figure = Figure(figsize=(14, 9), dpi=200, layout=engine)
+    grid = figure.subplots(2, 2).ravel()
+    for axes, answer in zip(grid, answers, strict=True):
+        draw(answer, ax=axes)
     figure.draw_without_rendering()
     assert not recwarn.list
-    assert left.get_position(original=True).width > 0.35
-    boxes, width, _ = texts_of(figure)
-    slot = left.get_position(original=True)
-    own = [box for text, box in boxes if text.axes is left]
-    assert all(box.x1 <= slot.x1 * width + 4 for box in own)
+    boxes, width, height = texts_of(figure)
+    for axes in grid:
+        slot = axes.get_position(original=True)
+        assert slot.width > 0.45
+        assert slot.height > 0.4
+        for box in (box for text, box in boxes if text.axes is axes):
+            assert slot.x0 * width - 4 <= box.x0 <= box.x1 <= slot.x1 * width + 4
+            assert slot.y0 * height - 4 <= box.y0 <= box.y1 <= slot.y1 * height + 4
 
 
 def test_a_picture_follows_a_figure_that_is_resized():
-    figure = draw(made.odds_answer())
-    figure.set_size_inches(9, 7)
-    boxes, width, height = texts_of(figure)
-    assert max(box.x1 for _, box in boxes) <= width
-    assert max(box.x1 for _, box in boxes) > 0.9 * width
-    assert max(box.y1 for _, box in boxes) <= height
+    figure = draw(made.odds_nasty())
+    figure.set_dpi(300)
+    (title,) = (text for text in figure.axes[0].texts if text.get_text().startswith("Odds of"))
+    lines = []
+    for width in (12, 8, 4):
+        figure.set_size_inches(width, 7)
+        figure.draw_without_rendering()
+        lines.append(title.get_text().count("\n") + 1)
+        boxes, right, _ = texts_of(figure)
+        assert max(box.x1 for _, box in boxes) <= right
+    assert lines == [1, 1, 2]
 
 
 def test_a_users_style_does_not_show():

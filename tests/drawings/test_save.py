@@ -192,6 +192,15 @@ def test_a_file_is_never_replaced_unasked(tmp_path):
     assert path.read_text().startswith("<?xml")
 
 
+def test_a_file_that_somebody_makes_meanwhile_is_not_replaced(tmp_path, monkeypatch):
+    path = tmp_path / "fig.svg"
+    path.write_text("theirs")
+    monkeypatch.setattr(type(path), "exists", lambda _: False)
+    with pytest.raises(FileExistsError, match="overwrite=True"):
+        save(made.odds_answer(), path)
+    assert path.read_text() == "theirs"
+
+
 def test_a_path_may_be_text_and_is_given_back(tmp_path):
     assert save(made.odds_answer(), str(tmp_path / "fig.PDF")) == tmp_path / "fig.PDF"
 
