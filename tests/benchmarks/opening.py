@@ -13,9 +13,9 @@ _OPEN = """
 import time, plainodds as po
 from tests.benchmarks.models import fit_of_27_columns
 fit = fit_of_27_columns()
-start = time.perf_counter()
+start, used = time.perf_counter(), time.process_time()
 view = po.{view}(fit)
-print(time.perf_counter() - start)
+print(time.perf_counter() - start, time.process_time() - used)
 """
 
 
@@ -28,7 +28,11 @@ def main() -> None:
             text=True,
             check=True,
         )
-        print(f"{view}: {float(ran.stdout):.2f} s (target under {TARGET_SECONDS:g} s)")
+        passed, used = map(float, ran.stdout.split())
+        print(
+            f"{view}: {passed:.2f} s, of which {used:.2f} s of the processor "
+            f"(target under {TARGET_SECONDS:g} s)"
+        )
 
 
 if __name__ == "__main__":
