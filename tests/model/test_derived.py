@@ -161,3 +161,12 @@ def test_an_expression_may_reach_no_more_than_numpy():
     result = made.glm("left ~ age + age_sq", FRAME).fit()
     with pytest.raises(FitRefused, match="cannot be computed"):
         FittedLogit(result, derived={"age_sq": "__import__('os').getcwd()"})
+
+
+def test_a_column_may_be_called_like_a_function_of_the_expression():
+    frame = FRAME.assign(log=FRAME["depth"])
+    result = made.glm("left ~ I(log_age * log)", frame).fit()
+    fit = FittedLogit(result, derived={"log_age": "log(age)"})
+    assert {facts.name for facts in fit.subject.predictors} == {"age", "log"}
+    rows = fit.model.design.rows(fit.model.sample.columns)
+    np.testing.assert_allclose(rows, result.model.exog, rtol=1e-12)

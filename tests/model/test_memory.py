@@ -72,6 +72,14 @@ def test_the_frame_is_let_go_with_the_result(way):
     fit.curve("age", others="observed", at=(3.0,))
 
 
+def test_no_part_of_the_frame_is_kept():
+    frame = made.cases()
+    fit = FittedLogit(made.glm("left ~ age + depth + visits + flag + soil", frame).fit())
+    for name, column in fit.model.sample.columns.items():
+        held = frame[name].cat.codes if name == "soil" else frame[name]
+        assert not np.shares_memory(column, held.to_numpy())
+
+
 @pytest.mark.parametrize("kind", ["formula", "frame", "bare arrays"])
 def test_the_design_matrix_is_the_results_own(kind):
     frame = made.cases()

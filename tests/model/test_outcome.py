@@ -21,6 +21,7 @@ def outcomes():
     frame["fate_category"] = pd.Categorical(frame["fate"], ["home", "left"])
     frame["fate_ordered"] = pd.Categorical(frame["fate"], ["left", "home"], ordered=True)
     frame["fate_interval"] = pd.cut(frame["left"], [-1, 0.5, 1])
+    frame["fate_bracket"] = np.where(frame["yes"], "a[1]", "a[0]")
     frame["two"] = frame["left"] + 1
     draw = np.random.default_rng(1)
     frame["trials"] = draw.integers(1, 9, len(frame))
@@ -41,6 +42,7 @@ CODED = [
     *((engine, name, "home", True) for engine in made.ENGINES
       for name in ("fate", "fate_object", "fate_category", "C(fate)")),
     *((engine, "fate_ordered", "left", True) for engine in made.ENGINES),
+    *((engine, "fate_bracket", "a[0]", True) for engine in made.ENGINES),
     *((engine, "C(left)", "0", True) for engine in made.ENGINES),
     *((engine, "C(two)", "1", True) for engine in made.ENGINES),
     *((engine, "yes_object", False, True) for engine in made.ENGINES),
@@ -87,7 +89,7 @@ def test_the_modelled_event_is_stated_and_its_chance_right(engine, outcome, leve
 def test_the_other_level_turns_every_sign(engine, outcome, level, flipped):
     result = fitted(engine, outcome)
     plain = FittedLogit(result)
-    others = {1: 0, "home": "left", "left": "home", "0": 1, "1": 2, False: True}
+    others = {1: 0, "home": "left", "left": "home", "a[0]": "a[1]", "0": 1, "1": 2, False: True}
     other = others.get(level, plain.subject.outcome.level and _other_interval(engine))
     stated = FittedLogit(result, outcome=Outcome(level=level))
     np.testing.assert_array_equal(stated.model.coefficients, plain.model.coefficients)

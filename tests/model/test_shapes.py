@@ -30,7 +30,9 @@ STRAIGHT = {
     "age.clip(3, 20)": False,
     "np.minimum(age, 5)": False,
     "I((age + depth)**2)": False,
+    # straight at some values of depth
     "I(np.where(depth > 0, age, age**2))": False,
+    "I(np.where(depth > 0, age**2, age))": False,
     "age * np.log(age)": False,
     "C(age > 5)": False,
     "I(1 / age)": False,

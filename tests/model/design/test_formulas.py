@@ -79,6 +79,15 @@ def test_slopes_are_those_of_numeric_differentiation(engine, formula):
         np.testing.assert_allclose(found / scale, expected / scale, atol=2e-6)
 
 
+@pytest.mark.parametrize("engine", made.ENGINES)
+def test_a_number_cut_into_levels_has_no_slope_even_where_it_is_cut(engine):
+    _, fit = fitted(engine, "visits + C(visits > 2)")
+    slopes = fit.model.design.row_derivatives("visits", fit.model.sample.columns)
+    names = [column.name for column in fit.model.design.columns]
+    assert names == ["Intercept", "C(visits > 2)[T.True]", "visits"]
+    np.testing.assert_array_equal(slopes, np.tile([0.0, 0.0, 1.0], (len(FRAME), 1)))
+
+
 @every_formula
 def test_a_moved_predictor_changes_the_touched_columns_only(engine, formula):
     _, fit = fitted(engine, formula)
