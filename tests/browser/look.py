@@ -51,7 +51,7 @@ def look(
             shown.set_notebook_width(width)
             shown.run_all()
             shown.wait_until_drawn()
-            for number, output in enumerate(shown.outputs.all(), start=1):
+            for number, output in enumerate(shown.outputs.filter(visible=True).all(), start=1):
                 path = picture.with_name(f"{picture.stem}-{number:02d}{picture.suffix}")
                 output.screenshot(path=path)
                 taken.append(path)
