@@ -1,5 +1,6 @@
 """One notebook open in JupyterLab, and what a person does with it."""
 
+import re
 from collections.abc import Iterator
 from contextlib import contextmanager
 from pathlib import Path
@@ -82,6 +83,30 @@ class NotebookPage:
         tracebacks = self.tracebacks.all_inner_texts()
         if tracebacks:
             raise AssertionError("\n\n".join(tracebacks))
+
+    def run_in_new_cell(self, source: str) -> None:
+        """Add a cell at the end, run it and wait until it has run."""
+        cells = self.panel.locator(".jp-CodeCell")
+        count = cells.count()
+        cells.last.locator(".jp-InputPrompt").click()
+        self.page.keyboard.press("b")
+        expect(cells).to_have_count(count + 1)
+        cells.last.locator(".cm-content").click()
+        self.page.keyboard.insert_text(source)
+        self.page.keyboard.press("Control+Enter")
+        expect(cells.last.locator(".jp-InputPrompt")).to_have_text(re.compile(r"\[\d+\]"))
+        self.page.keyboard.press("Escape")
+
+    def run_last_cell_again(self) -> None:
+        """Run the last cell once more and wait until it has run."""
+        prompt = self.panel.locator(".jp-CodeCell").last.locator(".jp-InputPrompt")
+        before = prompt.inner_text()
+        prompt.click()
+        # by the menu, since the focus may be in a box of text that keeps its keys
+        self.menu("Run", "notebook:run-cell")
+        another = re.compile(rf"^(?!{re.escape(before)})\[\d+\]:?$")
+        expect(prompt).to_have_text(another, timeout=_RUN_MS)
+        self.wait_for_kernel()
 
     def wait_until_drawn(self) -> None:
         """Wait until every picture is loaded and no widget is still to come."""

@@ -1,4 +1,4 @@
-"""Where a view's parts are in the page: the classes that views carry for this purpose."""
+"""A view in the page: where its parts are, and what a person does with them."""
 
 from typing import Literal
 
@@ -11,9 +11,10 @@ class ViewOnPage:
     """One OddsView, CurveView or ProfileView in an open notebook."""
 
     def __init__(
-        self, page: Page, name: Literal["odds", "curve", "profile"], occurrence: int = 0
+        self, page: Page, kind: Literal["odds", "curve", "profile"], occurrence: int = 0
     ) -> None:
-        self.root = page.locator(f".plainodds-{name}").nth(occurrence)
+        self.page = page
+        self.root = page.locator(f".plainodds-view.plainodds-{kind}").nth(occurrence)
 
     def control(self, field: str) -> Locator:
         """The control that edits a field, for example a predictor's name or "level"."""
@@ -23,10 +24,34 @@ class ViewOnPage:
         """The knob of a field's slider."""
         return self.control(field).locator(".noUi-handle")
 
+    def box(self, field: str) -> Locator:
+        """The box for a field's number."""
+        return self.control(field).locator("input").first
+
+    def enter(self, field: str, number: str) -> None:
+        """Type a number into a field's box."""
+        self.box(field).fill(number)
+        self.box(field).press("Enter")
+
+    def choose(self, field: str, label: str) -> None:
+        """Choose from a field's drop-down."""
+        self.control(field).locator("select").select_option(label=label)
+
+    def chosen(self, field: str) -> str:
+        """What a field's drop-down shows."""
+        shown = self.control(field).locator("select")
+        text = str(shown.evaluate("select => select.options[select.selectedIndex].text"))
+        # drop-downs are written with spaces that do not break
+        return text.replace("\N{NO-BREAK SPACE}", " ")
+
+    def button(self, name: str) -> Locator:
+        """A button by what is written on it."""
+        return self.root.get_by_role("button", name=name, exact=True)
+
     @property
     def picture(self) -> Locator:
         """The picture itself."""
-        return self.root.locator(".plainodds-picture img").first
+        return self.root.locator(".plainodds-picture img")
 
     @property
     def words(self) -> Locator:
@@ -41,7 +66,7 @@ class ViewOnPage:
     @property
     def code(self) -> Locator:
         """The call that gives the answer again."""
-        return self.root.locator(".plainodds-code")
+        return self.root.locator(".plainodds-code pre")
 
     @property
     def problem(self) -> Locator:
@@ -50,5 +75,10 @@ class ViewOnPage:
 
     @property
     def save(self) -> Locator:
-        """The buttons that write the figure's files."""
+        """The button that writes the picture's file, and its kinds."""
         return self.root.locator(".plainodds-save")
+
+    @property
+    def saved(self) -> Locator:
+        """Where the file was written."""
+        return self.root.locator(".plainodds-saved")

@@ -1,0 +1,44 @@
+"""The models that notebooks of the browser tests fit, and the same results here to compare with."""
+
+from typing import Any
+
+__all__ = ["PLAIN", "TESSEL_BAY", "fitted"]
+
+TESSEL_BAY = """
+import numpy as np
+import statsmodels.formula.api as smf
+
+import plainodds as po
+
+mains = po.demo.tessel_bay(rows=3000)
+result = smf.logit(
+    "burst ~ age_years * material + soil + bs(pressure_m, df=4)"
+    " + np.log2(diameter_mm) + past_repairs",
+    mains,
+).fit(disp=False)
+fit = po.FittedLogit(
+    result,
+    predictors={
+        "age_years": po.Predictor(label="Age", unit="years", step=10),
+        "pressure_m": po.Predictor(label="Pressure", unit="m"),
+        "diameter_mm": po.Predictor(label="Diameter", unit="mm"),
+    },
+    outcome=po.Outcome(event="a burst this winter", case="main", cases="mains"),
+)
+"""
+
+PLAIN = """
+import statsmodels.formula.api as smf
+
+import plainodds as po
+
+mains = po.demo.tessel_bay(rows=3000)
+result = smf.logit("burst ~ age_years + material + soil + past_repairs", mains).fit(disp=False)
+"""
+
+
+def fitted(cell: str) -> Any:
+    """What a cell calls `result`."""
+    names: dict[str, Any] = {}
+    exec(cell, names)
+    return names["result"]
