@@ -142,7 +142,7 @@ class Column:
 class Row:
     """One row of a table: its first cell is its heading.
 
-    A cell of several figures is a tuple: where it has to be broken, that is between them.
+    A cell of several pieces is a tuple: where it has to be broken, that is between them.
     `opens` is the heading of a group of rows that this row begins.
     """
 
@@ -190,9 +190,9 @@ def table(
 
 
 def _parts(cell: str | tuple[str, ...], is_number: bool = False) -> list[str]:
+    if isinstance(cell, str) and not is_number:
+        return [cell]
     parts = (cell,) if isinstance(cell, str) else cell
-    if not is_number:
-        return [" ".join(parts)]
     spans = [element("span", part) for part in parts if part]
     return [piece for span in spans for piece in (" ", span)][1:]
 

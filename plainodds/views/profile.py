@@ -198,7 +198,7 @@ def ledger_table(answer: ProfileAnswer) -> Markup:
             Row(
                 (
                     ", ".join(map(predictor_label, facts)),
-                    ", ".join(value_label(each, values[each.name]) for each in facts),
+                    _in_pieces([value_label(each, values[each.name]) for each in facts]),
                     signed(add, decimals=2),
                     f"× {ratio(row.multiplies.estimate)}",
                     chance(row.running_probability),
@@ -226,3 +226,9 @@ def ledger_table(answer: ProfileAnswer) -> Markup:
         Column("Chance so far", is_number=True),
     ]
     return markup.table("Ledger: how the chance comes about", columns, rows)
+
+
+def _in_pieces(values: list[str]) -> tuple[str, ...]:
+    """Values in a row, to be broken after a comma only."""
+    *first, last = values
+    return (*(f"{each}," for each in first), last)

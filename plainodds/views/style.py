@@ -180,7 +180,7 @@ body.vscode-dark .plainodds-picture img { filter: invert(1) hue-rotate(180deg); 
 .plainodds-view tbody tr { background: none !important; }
 .plainodds-view .plainodds-number, .plainodds-view .plainodds-number-head { text-align: right; }
 .plainodds-view .plainodds-number { font-variant-numeric: tabular-nums; }
-.plainodds-view .plainodds-number > span { white-space: nowrap; }
+.plainodds-view td > span { white-space: nowrap; }
 .plainodds-view .plainodds-unmoved :is(th, td) { color: var(--plainodds-faint); }
 .plainodds-view .plainodds-within > th { padding-left: 14px; }
 .plainodds-view .plainodds-group th { font-weight: 600; padding-top: 9px; }
@@ -191,7 +191,8 @@ body.vscode-dark .plainodds-picture img { filter: invert(1) hue-rotate(180deg); 
 @container (max-width: 480px) {
   .plainodds-view :is(th, td) { padding-right: 9px; font-size: 0.94em; }
   .plainodds-view .plainodds-within > th { padding-left: 7px; }
-  .plainodds-view .plainodds-number > span:not(:only-child) { white-space: normal; }
+  .plainodds-view td > span:not(:only-child),
+  .plainodds-view td:not(.plainodds-number) > span { white-space: normal; }
 }
 .plainodds-view .plainodds-stacked .plainodds-number > span { display: block; }
 .plainodds-view .plainodds-table .widget-html-content { overflow-x: auto; }
