@@ -19,6 +19,7 @@ from plainodds.drawings.drawing import Drawing, fitting_theme
 from plainodds.drawings.geometry import POINTS_PER_INCH, slot_size
 from plainodds.drawings.odds import OddsDrawing
 from plainodds.drawings.profile import ProfileDrawing
+from plainodds.drawings.stamps import root_figure
 from plainodds.drawings.theme import Theme, theme_of
 
 __all__ = ["BORDER", "draw", "drawing_of", "figure_for", "height_for", "theme_for"]
@@ -97,7 +98,7 @@ def draw(answer: Answer, ax: Axes | None = None, theme: str | Theme = "page") ->
     if ax is not None:
         width, height = slot_size(ax)
         drawing(ax, answer, fitting_theme(drawing, answer, chosen, width, height))
-        figure = ax.get_figure(root=True)
+        figure = root_figure(ax)
         assert figure is not None
         return figure
     width = _WIDTH * POINTS_PER_INCH

@@ -15,6 +15,8 @@ from typing import Any
 from matplotlib.axes import Axes
 from matplotlib.transforms import Affine2D, Bbox, ScaledTranslation, Transform
 
+from plainodds.drawings.stamps import root_figure
+
 __all__ = ["POINTS_PER_INCH", "Margins", "Room", "apart", "corner", "shifted", "slot_size"]
 
 POINTS_PER_INCH = 72.0
@@ -114,7 +116,7 @@ def corner(axes: Axes, across: float, up: float) -> Transform:
     across, up : float
         The origin, in fractions of the plot: ``corner(axes, 0, 1)`` is its upper left.
     """
-    figure = axes.get_figure(root=True)
+    figure = root_figure(axes)
     assert figure is not None
     return (
         Affine2D().scale(1.0 / POINTS_PER_INCH)
@@ -125,7 +127,7 @@ def corner(axes: Axes, across: float, up: float) -> Transform:
 
 def shifted(axes: Axes, right: float) -> Transform:
     """Data coordinates of axes, so many points to the right."""
-    figure = axes.get_figure(root=True)
+    figure = root_figure(axes)
     assert figure is not None
     return axes.transData + ScaledTranslation(right / POINTS_PER_INCH, 0.0, figure.dpi_scale_trans)
 

@@ -40,6 +40,8 @@ _POINT_SPACE = "\u2008"
 _ELLIPSIS = "…"
 # at low resolution letters advance by whole pixels, and a line comes out a little wider
 _HINTED = 1.04
+# a width that was made from a text's own is to hold that text
+_ROUNDING = 1e-6
 
 
 @lru_cache(maxsize=4096)
@@ -60,6 +62,7 @@ def line_height(size: float, lines: int = 1) -> float:
 
 def elided(text: str, width: float, theme: Theme, size: float, weight: Weight = "normal") -> str:
     """Cut a line so that it fits into a width in points, and mark the cut with "…"."""
+    width += _ROUNDING
     if text_width(text, theme, size, weight) <= width:
         return text
     low, high = 0, len(text)
@@ -80,6 +83,7 @@ def wrapped(
 
     Lines are broken at spaces; a single word that is too long is elided where it stands.
     """
+    width += _ROUNDING
     done: list[str] = []
     words = text.split(" ")
     while words and len(done) < lines - 1:

@@ -11,12 +11,13 @@ import math
 from typing import Any
 
 import numpy as np
+from matplotlib.artist import Artist
 from matplotlib.backends.backend_agg import RendererAgg
 from matplotlib.figure import Figure
 from matplotlib.text import Text
 from matplotlib.transforms import IdentityTransform
 
-__all__ = ["ScreenFigure", "StampedText"]
+__all__ = ["ScreenFigure", "StampedText", "root_figure"]
 
 _EDGE = 2  # pixels around the letters
 
@@ -39,6 +40,12 @@ class ScreenFigure(Figure):
         return held
 
 
+def root_figure(artist: Artist) -> Figure | None:
+    """The figure that an artist is on, beyond all subfigures; from matplotlib 3.9 on."""
+    parent: Any = artist.figure
+    return None if parent is None else parent.figure
+
+
 class StampedText(Text):
     """A text that keeps its pixels on a `ScreenFigure`.
 
@@ -49,7 +56,7 @@ class StampedText(Text):
 
     def draw(self, renderer: Any) -> None:
         """Draw the text, from its stamp where it has a valid one."""
-        figure = self.get_figure(root=True)
+        figure = root_figure(self)
         plain = self.get_bbox_patch() is not None or not isinstance(renderer, RendererAgg)
         if plain or not isinstance(figure, ScreenFigure):
             super().draw(renderer)
@@ -75,7 +82,7 @@ class StampedText(Text):
 
     def _drawn_alone(self, renderer: RendererAgg) -> tuple[np.ndarray, float, float]:
         """The text's pixels, and where their lower left corner is from the text's place."""
-        figure = self.get_figure(root=True)
+        figure = root_figure(self)
         assert isinstance(figure, ScreenFigure)
         sheet = figure.sheet(renderer)
         alone = Text()
