@@ -104,6 +104,11 @@ def from_json(text: str) -> Any:
     ------
     ValueError
         If the text is not JSON or names a value class that does not exist.
+
+    Examples
+    --------
+    >>> from_json('[1, "two"]')
+    (1, 'two')
     """
     return _decoded(json.loads(text))
 

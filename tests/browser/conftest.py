@@ -15,8 +15,6 @@ def pytest_collection_modifyitems(items):
     for item in items:
         if HERE in item.path.parents:
             item.add_marker(pytest.mark.browser)
-            # one worker, one browser, one server
-            item.add_marker(pytest.mark.xdist_group("browser"))
 
 
 @pytest.fixture(scope="session")
