@@ -7,14 +7,18 @@ from typing import Any, Literal
 
 import pandas as pd
 
+from plainodds.answers.change import ChangeAnswer, ChangeQuestion, answer_change
 from plainodds.answers.curve import CurveAnswer, CurveQuestion, Others, Scale, answer_curve
+from plainodds.answers.effects import EffectsAnswer, EffectsQuestion, answer_effects
+from plainodds.answers.moves import Shift, stated_moves
 from plainodds.answers.odds import OddsAnswer, OddsQuestion, answer_odds, answer_odds_of
 from plainodds.answers.profile import ProfileAnswer, ProfileQuestion, answer_profile
 from plainodds.answers.questions import Answer, Question
+from plainodds.answers.where import stated_rows
 from plainodds.errors import FitRefused, QuestionRefused
 from plainodds.model.fitted import FittedModel
 from plainodds.model.intake import take_in
-from plainodds.model.predictors import Outcome, Predictor, Subject
+from plainodds.model.predictors import Outcome, Predictor, Sampling, Subject
 from plainodds.values import Scalar, pairs, plain
 
 __all__ = ["FittedLogit", "odds_of"]
@@ -22,6 +26,8 @@ __all__ = ["FittedLogit", "odds_of"]
 _ANSWERERS: dict[type[Question], Callable[[FittedModel, Any], Answer]] = {
     OddsQuestion: answer_odds,
     CurveQuestion: answer_curve,
+    EffectsQuestion: answer_effects,
+    ChangeQuestion: answer_change,
     ProfileQuestion: answer_profile,
 }
 
@@ -47,6 +53,21 @@ class FittedLogit:
         Functions of your own that a formulaic formula mentions.
     offset : float, optional
         Where the model has an offset: the value at which it is held. Default: its median.
+    sampling : {"cohort", "case-control"}, optional
+        A sample chosen by the outcome tells odds ratios but no chances: questions about
+        chances are refused unless `prevalence` is stated.
+    prevalence : float, optional
+        The population's share of events, for a case-control sample. Every chance is then
+        corrected by shifting the intercept (King & Zeng 2001, Political Analysis 9:137),
+        and averages weigh events and non-events to that share; odds ratios stay.
+
+    Notes
+    -----
+    Weights are the fit's own. Averages over the rows weigh each row by its frequency weight
+    times its variance weight times its trials. An interval takes the coefficients'
+    covariance as the fit gives it: with frequency weights a row of weight 3 counts as three
+    cases, with variance weights as one case of three times the information. Survey weights
+    are neither; fit them with a robust covariance, which is then used.
 
     Raises
     ------
@@ -74,12 +95,24 @@ class FittedLogit:
         derived: Mapping[str, str] | None = None,
         functions: Mapping[str, Callable[..., Any]] | None = None,
         offset: float | None = None,
+        sampling: Sampling | None = None,
+        prevalence: float | None = None,
     ) -> None:
         if isinstance(result, FittedLogit):
             raise FitRefused(
                 "This is a FittedLogit already; ask it, or hand over what fit() returned."
             )
-        self.model = take_in(result, data, predictors, outcome, derived, functions, offset)
+        self.model = take_in(
+            result,
+            data,
+            predictors,
+            outcome,
+            derived,
+            functions,
+            offset,
+            sampling,
+            prevalence,
+        )
 
     @property
     def subject(self) -> Subject:
@@ -100,7 +133,7 @@ class FittedLogit:
 
         Parameters
         ----------
-        question : OddsQuestion, CurveQuestion or ProfileQuestion
+        question : OddsQuestion, CurveQuestion, EffectsQuestion, ChangeQuestion or ProfileQuestion
 
         Raises
         ------
@@ -129,6 +162,7 @@ class FittedLogit:
         references: Mapping[str, Scalar] | None = None,
         given: Mapping[str, Any] | None = None,
         order: Literal["model", "size"] = "model",
+        interval: Literal["wald", "likelihood"] = "wald",
         level: float = 0.95,
     ) -> OddsAnswer:
         """By what are the odds multiplied when a predictor changes?
@@ -151,6 +185,10 @@ class FittedLogit:
             Where an interacting predictor's odds ratio is stated; default: every level,
             or the quartiles of a number.
         order : {"model", "size"}
+        interval : {"wald", "likelihood"}
+            Estimate plus and minus standard errors, or the values that the likelihood
+            allows, by refitting (Venzon & Moolgavkar 1988); an end that does not exist is
+            infinite.
         level : float
             Confidence level.
 
@@ -174,7 +212,9 @@ class FittedLogit:
         >>> row.odds_ratio.lower < row.odds_ratio.estimate < row.odds_ratio.upper
         True
         """
-        question = _odds_question(predictors, steps, between, references, given, order, level)
+        question = _odds_question(
+            predictors, steps, between, references, given, order, interval, level
+        )
         return answer_odds(self.model, question)
 
     def curve(
@@ -233,6 +273,132 @@ class FittedLogit:
         question = CurveQuestion(predictor, by, _tuple(by_values), held, scale, _tuple(at), level)
         return answer_curve(self.model, question)
 
+    def effects(
+        self,
+        predictors: str | Iterable[str] = (),
+        *,
+        others: Literal["observed", "typical"] | Mapping[str, Scalar] = "observed",
+        number: Literal["slope", "step"] = "slope",
+        by: str | None = None,
+        where: Mapping[str, Any] | Any | None = None,
+        sample: Literal["fixed", "drawn"] = "fixed",
+        level: float = 0.95,
+    ) -> EffectsAnswer:
+        """How much does the chance change with each predictor, for people like ours?
+
+        One effect per predictor, through every column that it moves: interactions,
+        polynomials, splines, transforms, derived columns.
+
+        Parameters
+        ----------
+        predictors : str or iterable of str
+            Whose effects; all when left out.
+        others : {"observed", "typical"} or mapping
+            Averaged over the rows, each with its own values; at the typical profile; or at
+            stated values, the rest typical.
+        number : {"slope", "step"}
+            For a number: dπ/dx per unit, or the change when it goes up by its step.
+        by : str, optional
+            A category or yes/no: the effects among the rows of each of its levels.
+        where : mapping or boolean mask, optional
+            Among which rows: levels, (lowest, highest) of a number, or one True or False
+            for each row that the fit used.
+        sample : {"fixed", "drawn"}
+            Whether the interval is about these very rows, or also counts that they were
+            drawn from a larger population.
+        level : float
+            Confidence level.
+
+        Raises
+        ------
+        QuestionRefused
+            For an unknown predictor or level, a `where` that no row meets, or a
+            case-control sample without a prevalence.
+
+        Notes
+        -----
+        Exact delta-method gradients (Greene, Econometric Analysis); observed values: Hanmer
+        & Kalkan 2013 (AJPS 57:263). "drawn" adds Σ (wᵢ²/fᵢ)(θᵢ − θ̂)² to the variance, with
+        wᵢ the rows' normalised weights, fᵢ how many cases a row stands for and θᵢ its own
+        effect (Dowd, Greene & Norton 2014, Health Serv Res 49:731).
+
+        Examples
+        --------
+        >>> import statsmodels.formula.api as smf
+        >>> import plainodds as po
+        >>> pipes = po.demo.tessel_bay()
+        >>> fit = po.FittedLogit(smf.logit("burst ~ age_years * material", pipes).fit(disp=0))
+        >>> [row.predictor for row in fit.effects().rows]
+        ['material', 'material', 'age_years']
+        """
+        chosen, mask = stated_rows(self.model, where)
+        question = EffectsQuestion(
+            predictors=(predictors,) if isinstance(predictors, str) else tuple(predictors),
+            others=others if isinstance(others, str) else pairs(others),
+            number=number,
+            by=by,
+            where=chosen,
+            sample=sample,
+            level=level,
+        )
+        return answer_effects(self.model, question, mask)
+
+    def change(
+        self,
+        moves: str | Mapping[str, Any],
+        start: Scalar | Shift | None = None,
+        end: Scalar | None = None,
+        *,
+        others: Literal["observed", "typical"] | Mapping[str, Scalar] = "observed",
+        where: Mapping[str, Any] | Any | None = None,
+        sample: Literal["fixed", "drawn"] = "fixed",
+        level: float = 0.95,
+    ) -> ChangeAnswer:
+        """What becomes of the chance when one or several predictors change?
+
+        Parameters
+        ----------
+        moves : str or mapping
+            A predictor, with `start` and `end`; or predictors that move together, each with
+            (from, to) or a Shift, as ``{"age_years": (60, 0), "material": ("cast iron", "PVC")}``.
+        start, end : scalar
+            From where to where; or a single Shift, for everybody from his own value:
+            ``change("age_years", po.Shift(by=-10, lowest=0))``.
+        others, where, sample, level
+            As in `effects`.
+
+        Raises
+        ------
+        QuestionRefused
+            For an unknown predictor, level or value, a change from a value to itself, a
+            shift of levels, or a shift to where the formula cannot be computed.
+
+        Notes
+        -----
+        One joint delta method for both chances, their difference and ratios, ratios on the
+        log scale (Localio, Margolis & Berlin 2007, J Clin Epidemiol 60:874); the number
+        needed in its two pieces where the difference's interval includes 0 (Altman 1998,
+        BMJ 317:1309).
+
+        Examples
+        --------
+        >>> import statsmodels.formula.api as smf
+        >>> import plainodds as po
+        >>> pipes = po.demo.tessel_bay()
+        >>> fit = po.FittedLogit(smf.logit("burst ~ age_years * material", pipes).fit(disp=0))
+        >>> fit.change("age_years", 20, 60).comparison.risk_difference.estimate > 0
+        True
+        """
+        chosen, mask = stated_rows(self.model, where)
+        question = ChangeQuestion(
+            stated_moves(moves, start, end),
+            others=others if isinstance(others, str) else pairs(others),
+            where=chosen,
+            sample=sample,
+            level=level,
+        )
+        return answer_change(self.model, question, mask)
+
     def profile(
         self,
         values: Mapping[str, Scalar] | None = None,
@@ -286,6 +452,7 @@ def odds_of(
     references: Mapping[str, Scalar] | None = None,
     given: Mapping[str, Any] | None = None,
     order: Literal["model", "size"] = "model",
+    interval: Literal["wald", "likelihood"] = "wald",
     level: float = 0.95,
 ) -> OddsAnswer:
     """The same odds ratios in several fitted models, side by side.
@@ -294,7 +461,7 @@ def odds_of(
     ----------
     results : mapping of name to result or FittedLogit
         As ``{"crude": r1, "adjusted": r2}``.
-    predictors, steps, between, references, given, order, level
+    predictors, steps, between, references, given, order, interval, level
         As in `FittedLogit.odds`. Changes that are not stated are those of the first
         model that has the predictor.
 
@@ -317,7 +484,7 @@ def odds_of(
         str(name): result if isinstance(result, FittedLogit) else FittedLogit(result)
         for name, result in results.items()
     }
-    question = _odds_question(predictors, steps, between, references, given, order, level)
+    question = _odds_question(predictors, steps, between, references, given, order, interval, level)
     return answer_odds_of({name: fit.model for name, fit in fits.items()}, question)
 
 
@@ -328,6 +495,7 @@ def _odds_question(
     references: Mapping[str, Scalar] | None,
     given: Mapping[str, Any] | None,
     order: Literal["model", "size"],
+    interval: Literal["wald", "likelihood"],
     level: float,
 ) -> OddsQuestion:
     if order not in ("model", "size"):
@@ -343,6 +511,7 @@ def _odds_question(
         references=pairs(references),
         given=pairs({name: tuple(held) for name, held in listed.items()}),
         order=order,
+        interval=interval,
         level=level,
     )
 

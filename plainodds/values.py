@@ -64,7 +64,14 @@ def pairs(mapping: Mapping[str, Any] | Iterable[tuple[str, Any]] | None) -> Pair
     if mapping is None:
         return ()
     items = mapping.items() if isinstance(mapping, Mapping) else mapping
-    return tuple((str(name), _held(held)) for name, held in items)
+    return tuple((str(name), _named(str(name), held)) for name, held in items)
+
+
+def _named(name: str, item: Any) -> Any:
+    try:
+        return _held(item)
+    except QuestionRefused as refusal:
+        raise QuestionRefused(f"{name}: {refusal}") from refusal
 
 
 def _held(item: Any) -> Any:
@@ -100,6 +107,15 @@ def to_json(item: Any) -> str:
 def from_json(text: str) -> Any:
     """Read a value back from the text that `to_json` wrote.
 
+    Parameters
+    ----------
+    text : str
+
+    Returns
+    -------
+    object
+        The value, equal to the one that was written.
+
     Raises
     ------
     ValueError
@@ -107,8 +123,8 @@ def from_json(text: str) -> Any:
 
     Examples
     --------
-    >>> from_json('[1, "two"]')
-    (1, 'two')
+    >>> from_json('[1, "two", {"value": "float", "is": "inf"}]')
+    (1, 'two', inf)
     """
     return _decoded(json.loads(text))
 

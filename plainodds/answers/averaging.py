@@ -1,4 +1,4 @@
-"""Averaging over the sample, fast, in one place.
+"""Averaging over the sample at given values, fast, in one place.
 
 Every row keeps its own values but for the predictors that are moved; the
 probabilities (or their slopes) are averaged with the rows' weights, together with
@@ -8,41 +8,56 @@ Muller & MacLehose 2014 (Int J Epidemiol 43:962); Hanmer & Kalkan 2013 (AJPS 57:
 
 from __future__ import annotations
 
-from collections.abc import Iterator, Mapping
+from collections.abc import Iterator
 from dataclasses import dataclass
-from typing import Any
+from typing import Protocol
 
 import numpy as np
-from numpy.typing import NDArray
 
-from plainodds.errors import QuestionRefused
+from plainodds.answers import rebuilding
+from plainodds.answers.population import Averages, Population, block_of, rest_of, slices
 from plainodds.model.design.design import Coded, Floats
 from plainodds.model.design.split import Split, split
 from plainodds.model.fitted import FittedModel
 from plainodds.model.products import product, transposed_product
-from plainodds.scales import probability_from_linear_predictor
 
-__all__ = ["Averages", "averaged_probability", "averaged_slope"]
+__all__ = ["Averager", "Exact", "averaged_probability", "averaged_slope", "row_probabilities"]
 
 # Numbers worked on at once, rows of a block times points, so that they stay in the cache.
 _CACHED = 131_072
 
 
+class Averager(Protocol):
+    """What averages over a population: exactly, or by a sketch of it."""
+
+    @property
+    def population(self) -> Population:
+        """The rows averaged over."""
+
+    def probability(self, moved: Coded) -> Averages:
+        """The average probability at J moved points."""
+
+    def slope(self, name: str, moved: Coded) -> Averages:
+        """The average of dπ/d(name) at J moved points."""
+
+
 @dataclass(frozen=True, eq=False)
-class Averages:
-    """Averages at J points.
+class Exact:
+    """Averages over each and every row."""
 
-    Attributes
-    ----------
-    value : array (J,)
-    gradient : array (J, k)
-    """
+    model: FittedModel
+    population: Population
 
-    value: Floats
-    gradient: Floats
+    def probability(self, moved: Coded) -> Averages:
+        """The average probability at J moved points."""
+        return averaged_probability(self.model, moved, self.population)
+
+    def slope(self, name: str, moved: Coded) -> Averages:
+        """The average of dπ/d(name) at J moved points."""
+        return averaged_slope(self.model, name, moved, self.population)
 
 
-def averaged_probability(model: FittedModel, moved: Coded) -> Averages:
+def averaged_probability(model: FittedModel, moved: Coded, population: Population) -> Averages:
     """The average probability when every row is given the moved values.
 
     Parameters
@@ -50,20 +65,17 @@ def averaged_probability(model: FittedModel, moved: Coded) -> Averages:
     model : FittedModel
     moved : mapping of name to coded array (J,)
         Point j gives every row the j-th value of each moved predictor.
-
-    Raises
-    ------
-    QuestionRefused
-        If the model has no rows to average over.
+    population : Population
+        The rows averaged over.
     """
-    parts = _split(model, moved)
+    parts = split(model.design, moved)
     if parts is None:
-        return _probability_by_rebuilding(model, moved)
+        return rebuilding.averaged_probability(model, rebuilding.setters(moved), population)
     own = parts.own_values(moved)
     strength = _strength(model, parts, own)
     total = np.zeros(len(own))
     gradient = np.zeros((parts.width, len(own)))
-    for still, carried, weights in _blocks(model, parts, len(own)):
+    for still, carried, weights in _blocks(model, parts, len(own), population):
         pi = _probability(still, strength)
         total += np.einsum("i,ij->j", weights, pi)
         np.subtract(pi, pi * pi, out=pi)
@@ -72,7 +84,7 @@ def averaged_probability(model: FittedModel, moved: Coded) -> Averages:
     return Averages(total, _assembled(parts, rest, own * staying))
 
 
-def averaged_slope(model: FittedModel, name: str, moved: Coded) -> Averages:
+def averaged_slope(model: FittedModel, name: str, moved: Coded, population: Population) -> Averages:
     """The average of dπ/d(name) when every row is given the moved values.
 
     Parameters
@@ -81,17 +93,18 @@ def averaged_slope(model: FittedModel, name: str, moved: Coded) -> Averages:
     name : str
         A number among the moved predictors.
     moved : mapping of name to coded array (J,)
+    population : Population
     """
-    parts = _split(model, moved)
+    parts = split(model.design, moved)
     if parts is None:
-        return _slope_by_rebuilding(model, name, moved)
+        return rebuilding.averaged_slope(model, name, rebuilding.setters(moved), population)
     own, own_slope = parts.own_values(moved), parts.own_derivatives(name, moved)
     strength = _strength(model, parts, own)
     slope_strength = _strength(model, parts, own_slope)
     slope_strength[-1] = 0.0
     total = np.zeros(len(own))
     gradient = np.zeros((parts.width, 2 * len(own)))
-    for still, carried, weights in _blocks(model, parts, len(own)):
+    for still, carried, weights in _blocks(model, parts, len(own), population):
         pi = _probability(still, strength)
         # curving π(1−π)(1−2π)·dη/dx and sloping π(1−π), side by side for one product
         both = np.empty((len(still), 2, len(own)))
@@ -106,10 +119,16 @@ def averaged_slope(model: FittedModel, name: str, moved: Coded) -> Averages:
     return Averages(total, _assembled(parts, rest, moving))
 
 
-def _split(model: FittedModel, moved: Coded) -> Split | None:
-    if not model.sample.rows:
-        raise QuestionRefused("The model carries no rows to average over; ask others='typical'.")
-    return split(model.design, moved)
+def row_probabilities(model: FittedModel, moved: Coded) -> Iterator[tuple[slice, Floats]]:
+    """Each row's probability at each point, block by block: (rows, J)."""
+    parts = split(model.design, moved)
+    if parts is None:
+        yield from rebuilding.row_probabilities(model, rebuilding.setters(moved))
+        return
+    own = parts.own_values(moved)
+    strength = _strength(model, parts, own)
+    for block in slices(model.sample.rows, _size(len(own))):
+        yield block, _probability(_staying(model, parts, block)[1], strength)
 
 
 def _strength(model: FittedModel, parts: Split, own: Floats) -> Floats:
@@ -132,40 +151,32 @@ def _assembled(parts: Split, rest: Floats, moving: Floats) -> Floats:
 
 
 def _blocks(
-    model: FittedModel, parts: Split, points: int
+    model: FittedModel, parts: Split, points: int, population: Population
 ) -> Iterator[tuple[Floats, Floats, Floats]]:
-    """What is needed of the rows, block by block.
+    """What is needed of the rows, block by block; blocks that nobody is counted in are skipped.
 
     Yields what stays, with the rest of η as last column; what carries the gradient,
     the resting columns and what stays, weighted; and the weights.
     """
-    weights = _normalised_weights(model)
-    for block in _slices(model.sample.rows, points):
-        resting = model.sample.matrix[block][:, parts.resting]
-        staying = parts.still_values(_block_of(model, block), len(resting))
-        eta = np.einsum("ij,j->i", resting, model.coefficients[parts.resting])
-        w = weights[block]
-        carried = np.concatenate([resting, staying], axis=1) * w[:, None]
-        yield np.column_stack([staying, _rest(model, eta, block)]), carried, w
+    for block in slices(model.sample.rows, _size(points)):
+        weights = population.weights[block]
+        if not weights.any():
+            continue
+        resting, still = _staying(model, parts, block)
+        carried = np.concatenate([resting, still[:, :-1]], axis=1) * weights[:, None]
+        yield still, carried, weights
 
 
-def _slices(rows: int, points: int) -> Iterator[slice]:
-    size = max(256, _CACHED // points)
-    return (slice(start, min(start + size, rows)) for start in range(0, rows, size))
+def _staying(model: FittedModel, parts: Split, block: slice) -> tuple[Floats, Floats]:
+    """The resting columns; and what stays, with the rest of η as last column."""
+    X = model.sample.matrix[block]
+    resting, staying = X[:, parts.resting], parts.still_rows(X, block_of(model, block))
+    eta = np.einsum("ij,j->i", resting, model.coefficients[parts.resting])
+    return resting, np.column_stack([staying, rest_of(model, eta, block)])
 
 
-def _normalised_weights(model: FittedModel) -> Floats:
-    if model.sample.weights is None:
-        return np.full(model.sample.rows, 1.0 / model.sample.rows)
-    return np.asarray(model.sample.weights / model.sample.weights.sum())
-
-
-def _block_of(model: FittedModel, block: slice) -> dict[str, NDArray[Any]]:
-    return {name: column[block] for name, column in model.sample.columns.items()}
-
-
-def _rest(model: FittedModel, eta: Floats, block: slice) -> Floats:
-    return eta if model.sample.offset is None else eta + model.sample.offset[block]
+def _size(points: int) -> int:
+    return max(256, _CACHED // points)
 
 
 def _probability(still: Floats, strength: Floats) -> Floats:
@@ -176,45 +187,3 @@ def _probability(still: Floats, strength: Floats) -> Floats:
         np.exp(pi, out=pi)
     pi += 1.0
     return np.reciprocal(pi, out=pi)
-
-
-def _rebuilt(
-    model: FittedModel, moved: Coded, j: int
-) -> Iterator[tuple[Floats, dict[str, NDArray[Any]], Floats, Floats]]:
-    """Rows rebuilt with the moved values of point j: where the design cannot be split."""
-    touched = model.design.touched(moved)
-    weights = _normalised_weights(model)
-    for block in _slices(model.sample.rows, 1):
-        X = model.sample.matrix[block].copy()
-        coded = _block_of(model, block)
-        coded |= {name: np.repeat(values[j : j + 1], len(X)) for name, values in moved.items()}
-        X[:, touched] = model.design.some_columns(touched, coded, len(X))
-        eta = _rest(model, X @ model.coefficients, block)
-        yield X, coded, probability_from_linear_predictor(eta), weights[block]
-
-
-def _probability_by_rebuilding(model: FittedModel, moved: Coded) -> Averages:
-    points = _points(moved)
-    value, gradient = np.zeros(points), np.zeros((points, len(model.coefficients)))
-    for j in range(points):
-        for X, _, pi, weights in _rebuilt(model, moved, j):
-            value[j] += weights @ pi
-            gradient[j] += X.T @ (weights * pi * (1 - pi))
-    return Averages(value, gradient)
-
-
-def _slope_by_rebuilding(model: FittedModel, name: str, moved: Coded) -> Averages:
-    points = _points(moved)
-    value, gradient = np.zeros(points), np.zeros((points, len(model.coefficients)))
-    for j in range(points):
-        for X, coded, pi, weights in _rebuilt(model, moved, j):
-            row_slopes = model.design.row_derivatives(name, coded)
-            steepness = row_slopes @ model.coefficients
-            sloping = weights * pi * (1 - pi)
-            value[j] += sloping @ steepness
-            gradient[j] += X.T @ (sloping * (1 - 2 * pi) * steepness) + row_slopes.T @ sloping
-    return Averages(value, gradient)
-
-
-def _points(moved: Mapping[str, NDArray[Any]]) -> int:
-    return len(next(iter(moved.values())))

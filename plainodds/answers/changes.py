@@ -7,8 +7,6 @@ from collections.abc import Iterator, Mapping
 from itertools import product
 from typing import Any, ClassVar, Literal
 
-import numpy as np
-
 from plainodds.answers.estimate import Estimate
 from plainodds.answers.questions import Question
 from plainodds.errors import QuestionRefused
@@ -37,6 +35,8 @@ class OddsQuestion(Question):
         The modifiers' values at which an interacting predictor's rows are stated.
     order : {"model", "size"}
         Rows as the model mentions the predictors, or by the size of the odds ratio.
+    interval : {"wald", "likelihood"}
+        Estimate plus and minus standard errors, or the values that the likelihood allows.
     level : float
         Confidence level of the intervals.
     models : tuple of str
@@ -49,6 +49,7 @@ class OddsQuestion(Question):
     references: Pairs = ()
     given: Pairs = ()
     order: Literal["model", "size"] = "model"
+    interval: Literal["wald", "likelihood"] = "wald"
     level: float = 0.95
     models: tuple[str, ...] = ()
 
@@ -170,18 +171,10 @@ def _level_changes(
     if facts.name in references:
         reference = checked(facts, references[facts.name])
     else:
-        reference = _coded_reference(model, facts)
+        reference = facts.levels[model.coded_reference(facts)]
     for level in facts.levels:
-        if level != reference:
+        if level != reference and level in facts.levels_with_rows:
             yield reference, level, False
-
-
-def _coded_reference(model: FittedModel, facts: PredictorFacts) -> Scalar:
-    """The level that the fit's own coding sets to zero; else the first."""
-    profiles = [model.completed({facts.name: level}) for level in facts.levels]
-    rows = model.rows(profiles)[:, model.design.touched([facts.name])]
-    zero = np.nonzero((rows == 0).all(axis=1))[0]
-    return facts.levels[int(zero[0])] if len(zero) == 1 else facts.levels[0]
 
 
 def _combinations(

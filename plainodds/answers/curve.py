@@ -8,8 +8,9 @@ from typing import ClassVar, Literal, TypeAlias
 import numpy as np
 from numpy.typing import NDArray
 
-from plainodds.answers.averaging import averaged_probability, averaged_slope
+from plainodds.answers.averaging import Averager, Exact
 from plainodds.answers.delta import Intervals, checked_level, mapped, wald
+from plainodds.answers.population import everyone
 from plainodds.answers.questions import Answer, Question
 from plainodds.answers.support import Support, is_supported, support_of
 from plainodds.errors import QuestionRefused
@@ -120,7 +121,9 @@ class CurveAnswer(Answer):
     held: Pairs
 
 
-def answer_curve(model: FittedModel, question: CurveQuestion) -> CurveAnswer:
+def answer_curve(
+    model: FittedModel, question: CurveQuestion, averager: Averager | None = None
+) -> CurveAnswer:
     """The chance, its slope, the odds or η along a predictor, with intervals.
 
     With the others held, Wald intervals on η are carried over to the scale asked for
@@ -129,6 +132,13 @@ def answer_curve(model: FittedModel, question: CurveQuestion) -> CurveAnswer:
     (Muller & MacLehose 2014). Slopes have Wald intervals on their own scale, with the
     exact gradient (Greene, Econometric Analysis).
 
+    Parameters
+    ----------
+    model : FittedModel
+    question : CurveQuestion
+    averager : Averager, optional
+        What averages over the rows; exactly over every row when left out.
+
     Raises
     ------
     QuestionRefused
@@ -136,6 +146,7 @@ def answer_curve(model: FittedModel, question: CurveQuestion) -> CurveAnswer:
         the predictor itself.
     """
     level = checked_level(question.level)
+    model.refuse_case_control()
     facts = model.subject.predictor(question.predictor)
     by = _by_facts(model, question)
     if question.scale not in ("probability", "slope", "odds", "linear_predictor"):
@@ -151,7 +162,8 @@ def answer_curve(model: FittedModel, question: CurveQuestion) -> CurveAnswer:
     values = _by_values(by, question.by_values) if by is not None else (None,)
     if question.others == "observed":
         held: Pairs = ()
-        found = _observed(model, question, facts, by, at, values, level)
+        averager = averager or Exact(model, everyone(model))
+        found = _observed(model, averager, question, facts, by, at, values, level)
     else:
         profile = model.completed({} if question.others == "typical" else _stated(question))
         moving = {facts.name} | ({by.name} if by is not None else set())
@@ -236,6 +248,7 @@ def _held(
 
 def _observed(
     model: FittedModel,
+    averager: Averager,
     question: CurveQuestion,
     facts: PredictorFacts,
     by: PredictorFacts | None,
@@ -249,9 +262,9 @@ def _observed(
     if by is not None:
         moved[by.name] = code_values(by, [b for b, _ in points if b is not None])
     if question.scale == "slope":
-        slopes = averaged_slope(model, facts.name, moved)
+        slopes = averager.slope(facts.name, moved)
         return wald(model, slopes.value, slopes.gradient, level)
-    averages = averaged_probability(model, moved)
+    averages = averager.probability(moved)
     eta = linear_predictor_from_probability(averages.value)
     with np.errstate(divide="ignore", invalid="ignore"):
         gradients = averages.gradient / probability_slope(averages.value)[:, None]

@@ -66,7 +66,13 @@ def interval_factor(model: FittedModel, level: float) -> float:
     return float(t.ppf(tail, model.degrees_of_freedom))
 
 
-def wald(model: FittedModel, estimate: Floats, gradients: Floats, level: float) -> Intervals:
+def wald(
+    model: FittedModel,
+    estimate: Floats,
+    gradients: Floats,
+    level: float,
+    extra: Floats | None = None,
+) -> Intervals:
     """Wald intervals on the scale of the estimate.
 
     Parameters
@@ -76,11 +82,15 @@ def wald(model: FittedModel, estimate: Floats, gradients: Floats, level: float) 
     gradients : array (m, k)
         Derivatives of each estimate with respect to the coefficients.
     level : float
+    extra : array (m,), optional
+        Variance from another source than the coefficients, to be added.
     """
     estimate = np.asarray(estimate, dtype=float)
     if model.covariance is None:
         return Intervals(estimate, None, None, None)
     variance = np.einsum("ij,ij->i", gradients @ model.covariance, gradients)
+    if extra is not None:
+        variance = variance + extra
     # rounding can leave a variance of zero a hair below it
     se = np.sqrt(np.maximum(variance, 0.0))
     reach = interval_factor(model, level) * se

@@ -2,11 +2,17 @@
 
 from __future__ import annotations
 
+import math
 from collections.abc import Mapping
 from dataclasses import replace
 
+import numpy as np
+from numpy.typing import NDArray
+
 from plainodds.answers.changes import OddsQuestion, OddsRow, changes_asked
-from plainodds.answers.delta import checked_level, mapped, p_values, wald
+from plainodds.answers.delta import Intervals, checked_level, mapped, p_values, wald
+from plainodds.answers.likelihood import likelihood_of
+from plainodds.answers.progress import Progress, silent
 from plainodds.answers.questions import Answer
 from plainodds.errors import QuestionRefused
 from plainodds.model.fitted import FittedModel
@@ -15,6 +21,8 @@ from plainodds.scales import odds_from_linear_predictor, probability_from_linear
 from plainodds.values import Pairs, pairs, value
 
 __all__ = ["OddsAnswer", "OddsQuestion", "OddsRow", "answer_odds", "answer_odds_of"]
+
+Floats = NDArray[np.float64]
 
 
 @value
@@ -29,7 +37,8 @@ class OddsAnswer(Answer):
     rows : tuple of OddsRow
     typical_probability : float
         The chance at the typical profile: tells whether an odds ratio may be taken
-        for a risk ratio (it may not above about 10 %).
+        for a risk ratio (it may not above about 10 %); nan where the sample is
+        case-control and no prevalence is stated.
     """
 
     question: OddsQuestion
@@ -38,7 +47,9 @@ class OddsAnswer(Answer):
     typical_probability: float
 
 
-def answer_odds(model: FittedModel, question: OddsQuestion) -> OddsAnswer:
+def answer_odds(
+    model: FittedModel, question: OddsQuestion, progress: Progress = silent
+) -> OddsAnswer:
     """Odds ratios of stated changes, with Wald intervals on the log scale.
 
     The odds ratio of a change from x₀ to x₁ is exp((x₁ − x₀)'β), and its log has the
@@ -46,10 +57,21 @@ def answer_odds(model: FittedModel, question: OddsQuestion) -> OddsAnswer:
     modifier needs no new fit. Source: Hosmer, Lemeshow & Sturdivant, Applied Logistic
     Regression, ch. 3.
 
+    With `interval="likelihood"` the interval holds the values that the likelihood allows
+    (Venzon & Moolgavkar 1988) and the test is the likelihood-ratio test.
+
+    Parameters
+    ----------
+    model : FittedModel
+    question : OddsQuestion
+    progress : callable, optional
+        Told after each row how many of how many are done; may raise to stop.
+
     Raises
     ------
     QuestionRefused
-        For an unknown predictor, level, value or setting.
+        For an unknown predictor, level, value or setting, or a likelihood interval of a
+        fit that has none.
     """
     level = checked_level(question.level)
     changes = list(changes_asked(model, question))
@@ -57,16 +79,38 @@ def answer_odds(model: FittedModel, question: OddsQuestion) -> OddsAnswer:
     ends = [model.completed((*row.given, (row.predictor, row.end))) for row in changes]
     contrasts = model.rows(ends) - model.rows(starts)
     logs = wald(model, contrasts @ model.coefficients, contrasts, level)
+    tests = p_values(model, logs)
+    if question.interval == "likelihood":
+        logs, tests = _by_likelihood(model, logs, contrasts, level, progress)
+    elif question.interval != "wald":
+        raise QuestionRefused(f"interval={question.interval!r}: choose 'wald' or 'likelihood'.")
     ratios = mapped(logs, odds_from_linear_predictor, odds_from_linear_predictor)
     rows = tuple(
         replace(row, odds_ratio=ratios.at(i), log_odds_ratio=logs.at(i), p_value=p)
-        for i, (row, p) in enumerate(zip(changes, p_values(model, logs), strict=True))
+        for i, (row, p) in enumerate(zip(changes, tests, strict=True))
     )
     if question.order == "size":
         rows = tuple(sorted(rows, key=lambda row: -abs(row.log_odds_ratio.estimate)))
-    typical = model.rows([model.typical]) @ model.coefficients + model.offset
-    probability = float(probability_from_linear_predictor(typical)[0])
-    return OddsAnswer(question, model.subject, rows, probability)
+    return OddsAnswer(question, model.subject, rows, _typical_probability(model))
+
+
+def _typical_probability(model: FittedModel) -> float:
+    if model.subject.sampling == "case-control" and model.subject.prevalence is None:
+        return math.nan
+    eta = model.rows([model.typical]) @ model.coefficients + model.offset
+    return float(probability_from_linear_predictor(eta)[0])
+
+
+def _by_likelihood(
+    model: FittedModel, logs: Intervals, contrasts: Floats, level: float, progress: Progress
+) -> tuple[Intervals, tuple[float | None, ...]]:
+    likelihood = likelihood_of(model)
+    ends, tests = np.empty((2, len(contrasts))), []
+    for i, contrast in enumerate(contrasts):
+        ends[:, i] = likelihood.interval(contrast, level)
+        tests.append(likelihood.p_value(contrast))
+        progress(i + 1, len(contrasts))
+    return Intervals(logs.estimate, logs.se, ends[0], ends[1]), tuple(tests)
 
 
 def answer_odds_of(models: Mapping[str, FittedModel], question: OddsQuestion) -> OddsAnswer:
@@ -104,8 +148,7 @@ def answer_odds_of(models: Mapping[str, FittedModel], question: OddsQuestion) ->
     )
     first = next(iter(models.values()))
     question = replace(question, models=tuple(models))
-    typical = answer_odds(first, OddsQuestion(predictors=())).typical_probability
-    return OddsAnswer(question, _joined(models), tuple(rows), typical)
+    return OddsAnswer(question, _joined(models), tuple(rows), _typical_probability(first))
 
 
 def _joined(models: Mapping[str, FittedModel]) -> Subject:

@@ -2,10 +2,13 @@
 
 from __future__ import annotations
 
+from dataclasses import replace
 from typing import ClassVar
 
 import numpy as np
+from numpy.typing import NDArray
 
+from plainodds.answers.comparing import Comparison, compared
 from plainodds.answers.delta import Intervals, checked_level, mapped, wald
 from plainodds.answers.estimate import Estimate
 from plainodds.answers.familiarity import Familiarity, familiarity_of
@@ -28,6 +31,8 @@ __all__ = [
     "ProfileQuestion",
     "answer_profile",
 ]
+
+Floats = NDArray[np.float64]
 
 
 @value
@@ -95,21 +100,6 @@ class LedgerRow:
 
 
 @value
-class Comparison:
-    """A profile compared with another: from `against` to `values`.
-
-    Attributes
-    ----------
-    odds_ratio, risk_difference, risk_ratio : Estimate
-        By one joint delta method; ratios on the log scale.
-    """
-
-    odds_ratio: Estimate
-    risk_difference: Estimate
-    risk_ratio: Estimate
-
-
-@value
 class ProfileAnswer(Answer):
     """One profile explained.
 
@@ -147,6 +137,7 @@ def answer_profile(model: FittedModel, question: ProfileQuestion) -> ProfileAnsw
         For an unknown predictor or level, or a value that cannot be computed.
     """
     level = checked_level(question.level)
+    model.refuse_case_control()
     values = model.completed(question.values)
     against = None if question.against is None else model.completed(question.against)
     start_values = model.typical if against is None else against
@@ -166,7 +157,7 @@ def answer_profile(model: FittedModel, question: ProfileQuestion) -> ProfileAnsw
 
 
 def _point(
-    model: FittedModel, values: Pairs, row: np.ndarray, eta: Intervals, position: int
+    model: FittedModel, values: Pairs, row: Floats, eta: Intervals, position: int
 ) -> ProfilePoint:
     odds = mapped(eta, odds_from_linear_predictor, odds_from_linear_predictor)
     probability = mapped(
@@ -183,29 +174,19 @@ def _point(
     )
 
 
-def _comparison(model: FittedModel, rows: np.ndarray, eta: np.ndarray, level: float) -> Comparison:
+def _comparison(model: FittedModel, rows: Floats, eta: Floats, level: float) -> Comparison:
     pi = probability_from_linear_predictor(eta)
-    slope = probability_slope(pi)
-    contrast = rows[0] - rows[1]
-    log_odds_ratio = wald(model, eta[:1] - eta[1:], contrast[None], level)
-    difference = wald(
-        model, pi[:1] - pi[1:], (slope[0] * rows[0] - slope[1] * rows[1])[None], level
-    )
-    log_risk_ratio = wald(
-        model,
-        np.log(pi[:1]) - np.log(pi[1:]),
-        ((1 - pi[0]) * rows[0] - (1 - pi[1]) * rows[1])[None],
-        level,
-    )
-    return Comparison(
+    gradient = probability_slope(pi)[:, None] * rows
+    # from η itself, so that an odds ratio survives chances that round to 0 or 1
+    log_odds_ratio = wald(model, eta[:1] - eta[1:], rows[:1] - rows[1:], level)
+    return replace(
+        compared(model, pi[::-1], gradient[::-1], level),
         odds_ratio=mapped(log_odds_ratio, np.exp, np.exp).at(0),
-        risk_difference=difference.at(0),
-        risk_ratio=mapped(log_risk_ratio, np.exp, np.exp).at(0),
     )
 
 
 def _ledger(
-    model: FittedModel, contrast: np.ndarray, start: float, level: float
+    model: FittedModel, contrast: Floats, start: float, level: float
 ) -> tuple[LedgerRow, ...]:
     """One row per group of predictors that share terms: so no order matters."""
     groups = _groups(model)

@@ -7,7 +7,9 @@ from typing import Any
 
 import pandas as pd
 
+from plainodds.answers.change import ChangeAnswer
 from plainodds.answers.curve import CurveAnswer
+from plainodds.answers.effects import EffectsAnswer
 from plainodds.answers.estimate import Estimate
 from plainodds.answers.odds import OddsAnswer
 from plainodds.answers.profile import ProfileAnswer
@@ -94,6 +96,42 @@ def _(answer: ProfileAnswer) -> pd.DataFrame:
             | _numbers(getattr(answer.comparison, measure))
             for measure in ("odds_ratio", "risk_difference", "risk_ratio")
         ]
+    return pd.DataFrame(rows)
+
+
+@table.register
+def _(answer: EffectsAnswer) -> pd.DataFrame:
+    by = answer.question.by
+    rows = [
+        ({} if by is None else {by: row.by})
+        | {"predictor": row.predictor, "from": row.start, "to": row.end, "step": row.step}
+        | _numbers(row.effect)
+        | {"p_value": row.p_value}
+        for row in answer.rows
+    ]
+    return pd.DataFrame(rows).astype({"p_value": float})
+
+
+@table.register
+def _(answer: ChangeAnswer) -> pd.DataFrame:
+    measures = {
+        "from": answer.start,
+        "to": answer.end,
+        "risk_difference": answer.comparison.risk_difference,
+        "risk_ratio": answer.comparison.risk_ratio,
+        "odds_ratio": answer.comparison.odds_ratio,
+    }
+    rows = [{"measure": name} | _numbers(estimate) for name, estimate in measures.items()]
+    for name, unit in (("per_100", 100.0), ("per_1000", 1000.0)):
+        difference = _numbers(answer.comparison.risk_difference)
+        rows.append({"measure": name} | {key: unit * held for key, held in difference.items()})
+    needed = answer.number_needed
+    # its interval has two pieces, which two columns cannot hold: see number_needed
+    nothing = float("nan")
+    rows.append(
+        {"measure": "number_needed"}
+        | {"estimate": needed.estimate, "se": nothing, "lower": nothing, "upper": nothing}
+    )
     return pd.DataFrame(rows)
 
 

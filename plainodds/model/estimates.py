@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import math
 from dataclasses import dataclass
 from typing import Any
 
@@ -38,6 +39,8 @@ class Estimates:
         Why there is no covariance; empty where there is one.
     degrees_of_freedom : float or None
         Of the t distribution where the result uses it; None for the normal.
+    no_likelihood : str
+        Why likelihood intervals cannot be had; empty where they can.
     """
 
     coefficients: Floats
@@ -45,6 +48,7 @@ class Estimates:
     covariance_kind: str
     no_interval: str
     degrees_of_freedom: float | None
+    no_likelihood: str
 
 
 def refuse_other_models(result: Any) -> None:
@@ -133,7 +137,8 @@ def _refuse_other_families(model: Any) -> None:
 
 
 def _without_covariance(result: Any) -> Estimates:
-    return Estimates(np.asarray(result.params, dtype=float), None, "none", _PENALISED, None)
+    coefficients = np.asarray(result.params, dtype=float)
+    return Estimates(coefficients, None, "none", _PENALISED, None, _PENALISED)
 
 
 def _with_covariance(result: Any) -> Estimates:
@@ -147,7 +152,31 @@ def _with_covariance(result: Any) -> Estimates:
         # statsmodels could not invert the Hessian, and warned when it was fitted
         covariance = np.full((len(coefficients),) * 2, np.nan)
     kind = str(getattr(result, "cov_type", "nonrobust"))
-    return Estimates(coefficients, covariance, kind, "", freedom)
+    return Estimates(coefficients, covariance, kind, "", freedom, _no_likelihood(result))
+
+
+def _no_likelihood(result: Any) -> str:
+    if isinstance(result.model, GEE):
+        return (
+            "a GEE has no likelihood, it solves estimating equations; ask interval='wald', which "
+            "uses its own covariance."
+        )
+    kind = str(getattr(result, "cov_type", "nonrobust"))
+    if kind != "nonrobust":
+        return (
+            f"the fit's covariance is {kind}, because the likelihood alone is not trusted; an "
+            "interval from the likelihood would ignore that. Ask interval='wald'."
+        )
+    if getattr(result, "k_constr", 0) or getattr(result, "constraints", None) is not None:
+        return (
+            "the fit is under constraints, and the refits would not keep them; ask interval='wald'."
+        )
+    if not math.isclose(float(getattr(result, "scale", 1.0)), 1.0):
+        return (
+            f"the fit has a scale of {float(result.scale):.3g} beside the binomial variance, so "
+            "the deviance has no χ² distribution; ask interval='wald'."
+        )
+    return ""
 
 
 def _checked(found: Estimates, names: list[str]) -> Estimates:

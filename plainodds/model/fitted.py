@@ -37,12 +37,19 @@ class Sample:
     weights : array (n,) or None
         Frequency times variance weights times trials; None where all are 1.
     offset : array (n,) or None
+    outcome : array (n,) or None
+        Share of events in each row; None where the result no longer carries it.
+    frequencies : array (n,) or None
+        How many cases a row stands for: frequency weights times trials; None where all
+        are 1.
     """
 
     matrix: Floats
     columns: Coded
     weights: Floats | None
     offset: Floats | None
+    outcome: Floats | None = None
+    frequencies: Floats | None = None
 
     @property
     def rows(self) -> int:
@@ -68,6 +75,11 @@ class FittedModel:
     sample : Sample
     subject : Subject
         What every answer carries.
+    no_likelihood : str
+        Why likelihood intervals cannot be had; empty where they can.
+    intercept_shift : float
+        What is added to every η for the population's share of events, in case-control
+        samples (King & Zeng 2001, Political Analysis 9:137); else 0.
     """
 
     coefficients: Floats
@@ -76,11 +88,13 @@ class FittedModel:
     design: Design
     sample: Sample
     subject: Subject
+    no_likelihood: str = ""
+    intercept_shift: float = 0.0
 
     @property
     def offset(self) -> float:
-        """The value at which the offset is held; 0 where there is none."""
-        return self.subject.offset or 0.0
+        """What a profile's η has beside its columns: the held offset, the intercept's shift."""
+        return (self.subject.offset or 0.0) + self.intercept_shift
 
     @cached_property
     def typical(self) -> Pairs:
@@ -118,6 +132,37 @@ class FittedModel:
     def rows(self, profiles: Sequence[Pairs]) -> Floats:
         """Design rows of whole profiles, shape (len(profiles), k)."""
         return self.design.rows(self.coded(profiles))
+
+    def coded_values(self, facts: PredictorFacts, values: Sequence[Any]) -> NDArray[Any]:
+        """Values of one predictor as floats, or as positions of its levels.
+
+        Raises
+        ------
+        QuestionRefused
+            For an unknown level, text where a number belongs, or a missing value.
+        """
+        return code_values(facts, [checked(facts, value) for value in values])
+
+    def coded_reference(self, facts: PredictorFacts) -> int:
+        """Position of the level that the fit's own coding sets to zero; else 0."""
+        profiles = [self.completed({facts.name: level}) for level in facts.levels]
+        rows = self.rows(profiles)[:, self.design.touched([facts.name])]
+        zero = np.nonzero((rows == 0).all(axis=1))[0]
+        return int(zero[0]) if len(zero) == 1 else 0
+
+    def refuse_case_control(self) -> None:
+        """Refuse a question about probabilities where the sample cannot tell them.
+
+        Raises
+        ------
+        QuestionRefused
+        """
+        if self.subject.sampling == "case-control" and self.subject.prevalence is None:
+            raise QuestionRefused(
+                "The sample is marked as case-control: its share of events was chosen, not found, "
+                "so it tells odds ratios but no chances. State the population's share, "
+                "FittedLogit(result, sampling='case-control', prevalence=0.02), or ask odds()."
+            )
 
     @cached_property
     def standard_deviations(self) -> dict[str, float]:

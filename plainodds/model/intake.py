@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import math
 from collections.abc import Callable, Mapping
 from typing import Any
 
@@ -17,7 +18,14 @@ from plainodds.model.fitted import FittedModel, Sample
 from plainodds.model.matching import refuse_rows_that_do_not_match, refuse_wrong_derivations
 from plainodds.model.noticed import noticed
 from plainodds.model.outcome import modelled_outcome, must_turn, outcome_facts
-from plainodds.model.predictors import Outcome, Predictor, PredictorFacts, Setting, Subject
+from plainodds.model.predictors import (
+    Outcome,
+    Predictor,
+    PredictorFacts,
+    Sampling,
+    Setting,
+    Subject,
+)
 from plainodds.model.quantiles import weighted_quantiles
 from plainodds.model.raw import RawColumn, coded_column
 from plainodds.model.shapes import allowed_range, is_linear, shares_terms_with
@@ -38,6 +46,8 @@ def take_in(
     derived: Mapping[str, str] | None,
     functions: Mapping[str, Callable[..., Any]] | None,
     offset: float | None,
+    sampling: Sampling | None,
+    prevalence: float | None,
 ) -> FittedModel:
     """Take a fitted statsmodels result in.
 
@@ -49,7 +59,7 @@ def take_in(
         With the reason and the way out.
     """
     refuse_other_models(result)
-    stated = read_statements(predictors, outcome, derived, functions, offset)
+    stated = read_statements(predictors, outcome, derived, functions, offset, sampling, prevalence)
     source = source_of(result, data, stated.functions)
     modelled = modelled_outcome(result.model, source.outcome)
     turned = must_turn(modelled, stated.outcome)
@@ -69,16 +79,20 @@ def take_in(
         {name: column.values for name, column in raw.items()},
         source.weights,
         None if source.offset is None else sign * source.offset,
+        _events(source, turned),
+        source.frequencies,
     )
-    facts, notices = outcome_facts(modelled, stated.outcome, _share(source, turned), turned)
+    share = _share(sample)
+    known = _facts(design, raw, source.weights, stated.predictors)
+    facts, notices = outcome_facts(modelled, stated.outcome, share, turned)
     subject = Subject(
         outcome=facts,
-        predictors=_facts(design, raw, source.weights, stated.predictors),
+        predictors=known,
         rows=len(matrix),
         covariance_kind=estimates.covariance_kind,
         no_interval=estimates.no_interval,
         offset=_held_offset(sample, stated.offset, sign),
-        notices=notices + source.notices + _suggestions(raw, declared),
+        notices=notices + source.notices + _empty_levels(known) + _suggestions(raw, declared),
         setting=Setting(
             predictors=tuple(stated.predictors.items()),
             outcome=stated.outcome,
@@ -86,7 +100,11 @@ def take_in(
             functions=tuple(stated.functions),
             offset=stated.offset,
             with_data=data is not None,
+            sampling=sampling,
+            prevalence=stated.prevalence,
         ),
+        sampling=stated.sampling,
+        prevalence=stated.prevalence,
     )
     return FittedModel(
         coefficients=sign * estimates.coefficients,
@@ -95,6 +113,8 @@ def take_in(
         design=design,
         sample=sample,
         subject=subject,
+        no_likelihood=estimates.no_likelihood,
+        intercept_shift=_intercept_shift(share, stated.prevalence),
     )
 
 
@@ -193,11 +213,29 @@ def _rebuilt(design: Design, raw: Mapping[str, RawColumn]) -> Floats:
         ) from error
 
 
-def _share(source: Source, turned: bool) -> float:
+def _events(source: Source, turned: bool) -> Floats | None:
     if source.outcome is None:
+        return None
+    events = np.asarray(source.outcome, dtype=float)
+    return 1.0 - events if turned else events
+
+
+def _share(sample: Sample) -> float:
+    if sample.outcome is None:
         return float("nan")
-    share = float(np.average(np.asarray(source.outcome, dtype=float), weights=source.weights))
-    return 1.0 - share if turned else share
+    return float(np.average(sample.outcome, weights=sample.weights))
+
+
+def _intercept_shift(share: float, prevalence: float | None) -> float:
+    """The prior correction of King & Zeng 2001 (Political Analysis 9:137)."""
+    if prevalence is None:
+        return 0.0
+    if math.isnan(share):
+        raise FitRefused(
+            "prevalence= needs the sample's own share of events, and the result no longer carries "
+            "its outcome. Fit again and keep the data."
+        )
+    return -math.log((1 - prevalence) / prevalence * share / (1 - share))
 
 
 def _held_offset(sample: Sample, stated: float | None, sign: float) -> float | None:
@@ -211,6 +249,16 @@ def _held_offset(sample: Sample, stated: float | None, sign: float) -> float | N
     if stated is not None:
         return sign * stated
     return weighted_quantiles(sample.offset, sample.weights, (0.5,))[0]
+
+
+def _empty_levels(known: tuple[PredictorFacts, ...]) -> tuple[str, ...]:
+    return tuple(
+        f"No row has {facts.name} = {level!r}, so nothing is known of it; odds ratios and effects "
+        "leave it out."
+        for facts in known
+        for level in facts.levels
+        if level not in facts.levels_with_rows
+    )
 
 
 def _suggestions(

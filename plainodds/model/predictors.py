@@ -20,6 +20,8 @@ from plainodds.values import Scalar, value
 __all__ = ["Kind", "Outcome", "OutcomeFacts", "Predictor", "PredictorFacts", "Setting", "Subject"]
 
 Kind: TypeAlias = Literal["number", "whole number", "yes/no", "category"]
+Sampling: TypeAlias = Literal["cohort", "case-control"]
+"""How the rows came: as they are, or chosen by their outcome."""
 
 
 @value
@@ -158,6 +160,13 @@ class PredictorFacts:
         """Whether the predictor takes numbers, and not levels."""
         return self.kind in ("number", "whole number")
 
+    @property
+    def levels_with_rows(self) -> tuple[Scalar, ...]:
+        """The levels that some row has: of the others a fit knows nothing."""
+        return tuple(
+            level for level, count in zip(self.levels, self.level_counts, strict=True) if count
+        )
+
     def level_label(self, level: Scalar) -> str:
         """How people call a level."""
         return self.level_labels[self.levels.index(level)]
@@ -199,6 +208,8 @@ class Setting:
     functions: tuple[str, ...] = ()
     offset: float | None = None
     with_data: bool = False
+    sampling: Sampling | None = None
+    prevalence: float | None = None
 
 
 @value
@@ -221,6 +232,9 @@ class Subject:
     notices : tuple of str
         What the analyst should know about how the fit was taken in.
     setting : Setting
+    sampling : {"cohort", "case-control"}
+    prevalence : float or None
+        The population's share of events, stated for a case-control sample.
     """
 
     outcome: OutcomeFacts
@@ -231,6 +245,8 @@ class Subject:
     offset: float | None
     notices: tuple[str, ...]
     setting: Setting
+    sampling: Sampling = "cohort"
+    prevalence: float | None = None
 
     def predictor(self, name: str) -> PredictorFacts:
         """The facts of one predictor.

@@ -39,6 +39,8 @@ class Source:
         The result's own design matrix; None where it was removed.
     outcome, weights, offset : array (n,) or None
         As the fit used them.
+    frequencies : array (n,) or None
+        How many cases a row stands for: frequency weights times trials.
     notices : tuple of str
     """
 
@@ -49,6 +51,7 @@ class Source:
     matrix: Floats | None
     outcome: NDArray[Any] | None
     weights: Floats | None
+    frequencies: Floats | None
     offset: Floats | None
     notices: tuple[str, ...]
 
@@ -105,7 +108,7 @@ def _from_formula(
     if matrix is None:
         rows = len(frame) if kept is None else int(kept.sum())
         offset = _offset(model, rows)
-        return Source(names, column, factors, columns, None, None, None, offset, (_REMOVED,))
+        return Source(names, column, factors, columns, None, None, None, None, offset, (_REMOVED,))
     return Source(names, column, factors, columns, matrix, *_outcome_parts(model))
 
 
@@ -199,8 +202,8 @@ def _refuse_repeated(names: tuple[str, ...], used: frozenset[str]) -> None:
 
 def _outcome_parts(
     model: Any,
-) -> tuple[NDArray[Any] | None, Floats | None, Floats | None, tuple[str, ...]]:
-    """Outcome, weights and offset as the fit used them, with notices."""
+) -> tuple[NDArray[Any] | None, Floats | None, Floats | None, Floats | None, tuple[str, ...]]:
+    """Outcome, weights, frequencies and offset as the fit used them, with notices."""
     outcome = getattr(model, "endog", None)
     n = len(model.exog)
     if isinstance(model, Logit):
@@ -210,7 +213,7 @@ def _outcome_parts(
             "GLM(..., family=Binomial(), freq_weights=...) or var_weights=."
             for name in ignored
         )
-        return outcome, None, _offset(model, n), notices
+        return outcome, None, None, _offset(model, n), notices
     # a GLM's own `weights` are those of its last iteration, a GEE's those that were handed over
     names = ("weights",) if isinstance(model, GEE) else ("freq_weights", "var_weights", "n_trials")
     total = reduce(mul, (_weights(model, name, n) for name in names))
@@ -220,7 +223,13 @@ def _outcome_parts(
             "statsmodels' GEE takes the counts of each row as one share, whatever their number. "
             "For counts to count, fit the shares with weights= set to the number of trials.",
         )
-    return outcome, None if np.all(total == 1.0) else total, _offset(model, n), notices
+    cases = ("freq_weights", "n_trials") if not isinstance(model, GEE) else ()
+    frequencies = reduce(mul, (_weights(model, name, n) for name in cases), np.ones(1))
+    return outcome, _unless_one(total), _unless_one(frequencies), _offset(model, n), notices
+
+
+def _unless_one(weights: Floats) -> Floats | None:
+    return None if np.all(weights == 1.0) else weights
 
 
 def _weights(model: Any, name: str, n: int) -> Floats:

@@ -8,7 +8,7 @@ from dataclasses import dataclass
 from typing import Any, get_args
 
 from plainodds.errors import FitRefused
-from plainodds.model.predictors import Kind, Outcome, Predictor
+from plainodds.model.predictors import Kind, Outcome, Predictor, Sampling
 
 __all__ = ["Statements", "read_statements"]
 
@@ -22,10 +22,18 @@ class Statements:
     derived: Mapping[str, str]
     functions: Mapping[str, Callable[..., Any]]
     offset: float | None
+    sampling: Sampling
+    prevalence: float | None
 
 
 def read_statements(
-    predictors: Any, outcome: Any, derived: Any, functions: Any, offset: Any
+    predictors: Any,
+    outcome: Any,
+    derived: Any,
+    functions: Any,
+    offset: Any,
+    sampling: Any,
+    prevalence: Any,
 ) -> Statements:
     """Read the analyst's statements, which need not be of the right kind.
 
@@ -67,8 +75,32 @@ def read_statements(
             "leave it out for the median."
         )
     return Statements(
-        stated, outcome, expressions, handed, None if offset is None else float(offset)
+        stated,
+        outcome,
+        expressions,
+        handed,
+        None if offset is None else float(offset),
+        _sampling(sampling, prevalence),
+        None if prevalence is None else float(prevalence),
     )
+
+
+def _sampling(sampling: Any, prevalence: Any) -> Sampling:
+    if sampling not in (None, *get_args(Sampling)):
+        raise FitRefused(f"sampling={sampling!r}: choose 'cohort' or 'case-control'.")
+    if prevalence is None:
+        return sampling or "cohort"
+    if sampling == "cohort":
+        raise FitRefused(
+            "prevalence= corrects the chances of a case-control sample; a cohort's own share of "
+            "events needs no correction. Leave one of the two out."
+        )
+    if not _is_number(prevalence) or not 0 < prevalence < 1:
+        raise FitRefused(
+            f"prevalence={prevalence!r} is not a share between 0 and 1. State the population's "
+            "share of events, for example prevalence=0.02 for 2 in 100."
+        )
+    return "case-control"
 
 
 def _mapping(held: Any, argument: str, example: str) -> dict[str, Any]:

@@ -6,10 +6,19 @@ import statsmodels.api as sm
 import statsmodels.formula.api as smf
 
 import plainodds as po
-from plainodds.answers.averaging import averaged_probability, averaged_slope
+from plainodds.answers.averaging import Exact
+from plainodds.answers.population import everyone
 from plainodds.model.products import product, transposed_product
 
 GRID = np.array([5.0, 20.0, 45.0, 80.0])
+
+
+def averaged(model, moved):
+    return Exact(model, everyone(model)).probability(moved)
+
+
+def sloped(model, name, moved):
+    return Exact(model, everyone(model)).slope(name, moved)
 
 
 def plain_loop(result, frame, name, values, weights=None, **predict):
@@ -41,13 +50,13 @@ def with_coefficients(model, coefficients):
 
 
 def test_averages_equal_the_plain_loop(fit, result, pipes):
-    averages = averaged_probability(fit.model, {"age_years": GRID})
+    averages = averaged(fit.model, {"age_years": GRID})
     assert averages.value == pytest.approx(plain_loop(result, pipes, "age_years", GRID), rel=1e-12)
 
 
 def test_averages_over_two_moved_predictors_equal_the_plain_loop(fit, result, pipes):
     moved = {"age_years": GRID, "material": np.array([2, 2, 0, 1])}
-    averages = averaged_probability(fit.model, moved)
+    averages = averaged(fit.model, moved)
     levels = ["PVC", "PVC", "cast iron", "ductile iron"]
     expected = [
         result.predict(pipes.assign(age_years=a, material=m)).mean()
@@ -59,9 +68,9 @@ def test_averages_over_two_moved_predictors_equal_the_plain_loop(fit, result, pi
 def test_the_gradient_is_the_numeric_one(fit):
     moved = {"age_years": GRID, "material": np.array([2, 2, 0, 1])}
     model = fit.model
-    found = averaged_probability(model, moved).gradient
+    found = averaged(model, moved).gradient
     numeric = numeric_gradient(
-        lambda b: averaged_probability(with_coefficients(model, b), moved).value,
+        lambda b: averaged(with_coefficients(model, b), moved).value,
         model.coefficients,
     )
     assert found == pytest.approx(numeric, abs=1e-8, rel=1e-6)
@@ -71,18 +80,18 @@ def test_the_gradient_is_the_numeric_one(fit):
 def test_averaged_slopes_are_the_averages_numeric_derivative(fit, name):
     low, high = fit.subject.predictor(name).quartiles[0], fit.subject.predictor(name).quartiles[2]
     x = np.array([low + 0.3, (low + high) / 2, high + 0.2])
-    found = averaged_slope(fit.model, name, {name: x}).value
+    found = sloped(fit.model, name, {name: x}).value
     h = 1e-4
-    up = averaged_probability(fit.model, {name: x + h}).value
-    down = averaged_probability(fit.model, {name: x - h}).value
+    up = averaged(fit.model, {name: x + h}).value
+    down = averaged(fit.model, {name: x - h}).value
     assert found == pytest.approx((up - down) / (2 * h), rel=1e-6)
 
 
 def test_the_slopes_gradient_is_the_numeric_one(fit):
     moved = {"age_years": GRID}
-    found = averaged_slope(fit.model, "age_years", moved).gradient
+    found = sloped(fit.model, "age_years", moved).gradient
     numeric = numeric_gradient(
-        lambda b: averaged_slope(with_coefficients(fit.model, b), "age_years", moved).value,
+        lambda b: sloped(with_coefficients(fit.model, b), "age_years", moved).value,
         fit.model.coefficients,
     )
     assert found == pytest.approx(numeric, abs=1e-9, rel=1e-6)
@@ -96,10 +105,10 @@ def tangled(pipes):
 
 def test_what_cannot_be_split_is_rebuilt_to_the_same_average(tangled, pipes):
     model = po.FittedLogit(tangled).model
-    averages = averaged_probability(model, {"age_years": GRID})
+    averages = averaged(model, {"age_years": GRID})
     assert averages.value == pytest.approx(plain_loop(tangled, pipes, "age_years", GRID), rel=1e-12)
     numeric = numeric_gradient(
-        lambda b: averaged_probability(with_coefficients(model, b), {"age_years": GRID}).value,
+        lambda b: averaged(with_coefficients(model, b), {"age_years": GRID}).value,
         model.coefficients,
     )
     assert averages.gradient == pytest.approx(numeric, abs=1e-8, rel=1e-6)
@@ -108,14 +117,12 @@ def test_what_cannot_be_split_is_rebuilt_to_the_same_average(tangled, pipes):
 def test_slopes_of_what_cannot_be_split_are_numeric_derivatives(tangled):
     model = po.FittedLogit(tangled).model
     h = 1e-4
-    up = averaged_probability(model, {"age_years": GRID + h}).value
-    down = averaged_probability(model, {"age_years": GRID - h}).value
-    slopes = averaged_slope(model, "age_years", {"age_years": GRID})
+    up = averaged(model, {"age_years": GRID + h}).value
+    down = averaged(model, {"age_years": GRID - h}).value
+    slopes = sloped(model, "age_years", {"age_years": GRID})
     assert slopes.value == pytest.approx((up - down) / (2 * h), rel=1e-6)
     numeric = numeric_gradient(
-        lambda b: (
-            averaged_slope(with_coefficients(model, b), "age_years", {"age_years": GRID}).value
-        ),
+        lambda b: sloped(with_coefficients(model, b), "age_years", {"age_years": GRID}).value,
         model.coefficients,
     )
     assert slopes.gradient == pytest.approx(numeric, abs=1e-9, rel=1e-5)
@@ -137,7 +144,7 @@ def test_each_row_keeps_its_own_offset(pipes):
     offset = np.linspace(-1, 1, len(pipes))
     family = sm.families.Binomial()
     result = smf.glm("burst ~ age_years", pipes, family=family, offset=offset).fit()
-    found = averaged_probability(po.FittedLogit(result).model, {"age_years": GRID}).value
+    found = averaged(po.FittedLogit(result).model, {"age_years": GRID}).value
     assert found == pytest.approx(
         plain_loop(result, pipes, "age_years", GRID, offset=offset), rel=1e-12
     )

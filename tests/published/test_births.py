@@ -56,3 +56,22 @@ def test_crude_and_adjusted_stand_side_by_side():
     assert [row.log_odds_ratio.estimate for row in answer.rows] == pytest.approx(
         [crude.params["smoke"], adjusted.params["smoke"]]
     )
+
+
+def test_average_effects_are_statsmodels_where_no_predictor_shares_a_term(result):
+    theirs = result.get_margeff().summary_frame()
+    fit = po.FittedLogit(result)
+    for name in ("age", "lwt", "ftv"):
+        (row,) = fit.effects(name).rows
+        assert row.effect.estimate == pytest.approx(theirs.loc[name, "dy/dx"], rel=1e-8)
+        assert row.effect.se == pytest.approx(theirs.loc[name, "Std. Err."], rel=1e-6)
+
+
+def test_smoking_alone_gives_the_two_by_two_tables_risks():
+    mothers = births()
+    fit = po.FittedLogit(smf.logit("low ~ smoke", mothers).fit(disp=0, tol=1e-12))
+    answer = fit.change("smoke", 0, 1)
+    risks = mothers.groupby("smoke").low.mean()
+    assert answer.start.estimate == pytest.approx(risks[0])
+    assert answer.end.estimate == pytest.approx(risks[1])
+    assert answer.comparison.risk_ratio.estimate == pytest.approx(risks[1] / risks[0])

@@ -59,3 +59,20 @@ def test_the_slopes_standard_error_is_statsmodels(fit, result, students, predict
     at = means.pop(predictor)
     slope = fit.curve(predictor, others=means, scale="slope", at=[at]).lines[0]
     assert slope.se[0] == pytest.approx(effects.loc[predictor, "Std. Err."], rel=1e-6)
+
+
+AVERAGE_EFFECTS = {"GPA": 0.363, "TUCE": 0.012, "PSI": 0.358}
+
+
+@pytest.mark.parametrize("predictor", AVERAGE_EFFECTS)
+def test_average_effects_are_greenes(result, predictor):
+    # PSI as what it is, a yes/no: its effect is the average discrete change
+    (row,) = po.FittedLogit(result).effects(predictor).rows
+    assert row.effect.estimate == pytest.approx(AVERAGE_EFFECTS[predictor], abs=6e-4)
+
+
+@pytest.mark.parametrize("predictor", SLOPES_AT_THE_MEANS)
+def test_effects_at_the_means_are_the_slopes_there(fit, students, predictor):
+    means = students.drop(columns="GRADE").mean().to_dict()
+    (row,) = fit.effects(predictor, others=means).rows
+    assert row.effect.estimate == pytest.approx(SLOPES_AT_THE_MEANS[predictor], abs=5e-4)

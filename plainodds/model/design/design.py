@@ -24,6 +24,7 @@ from numpy.typing import NDArray
 
 from plainodds.errors import QuestionRefused
 from plainodds.model.design.differences import derivative
+from plainodds.model.design.tabulated import FEW, Table, tabulated
 
 __all__ = ["Atom", "Coded", "Column", "Design", "Factor", "Floats", "Palette", "decoded"]
 
@@ -94,6 +95,7 @@ class Design:
     allowed: Mapping[str, tuple[float, float]] = field(default_factory=dict)
     spreads: Mapping[str, float] = field(default_factory=dict)
     _tables: dict[int, Floats] = field(init=False, default_factory=dict)
+    _slopes: dict[int, Table] = field(init=False, default_factory=dict)
 
     def __post_init__(self) -> None:
         for position, factor in enumerate(self.factors):
@@ -181,6 +183,11 @@ class Design:
         """d(row)/d(predictor) for n coded rows, shape (n, columns)."""
         return self.derivatives_of(self.columns, name, coded)
 
+    def touched_derivatives(self, name: str, coded: Coded) -> tuple[NDArray[np.intp], Floats]:
+        """Positions of the T columns that a predictor touches, and their derivatives, (n, T)."""
+        touched = self.touched([name])
+        return touched, self.derivatives_of([self.columns[i] for i in touched], name, coded)
+
     def derivatives_of(self, columns: Sequence[Column], name: str, coded: Coded) -> Floats:
         """d(column)/d(predictor) for n coded rows, shape (n, len(columns)).
 
@@ -188,18 +195,19 @@ class Design:
         fourth-order differences, which are exact for cubic splines between knots.
         """
         result = np.zeros((len(coded[name]), len(columns)))
-        moved = [i for i, column in enumerate(columns) if name in self.variables_of(column)]
-        needed = _positions([columns[i] for i in moved])
-        values = {at: self.factor_values(at, coded) for at in needed}
-        moving = [at for at in needed if name in self.factors[at].variables]
+        # each place where a factor moves, with the product of the factors beside it
+        parts = [
+            (i, at, k, Column(column.name, column.atoms[:p] + column.atoms[p + 1 :], column.scale))
+            for i, column in enumerate(columns)
+            for p, (at, k) in enumerate(column.atoms)
+            if name in self.factors[at].variables
+        ]
+        moving = {at for _, at, _, _ in parts}
         slopes = {at: self._factor_derivative(at, name, coded) for at in moving}
-        for i in moved:
-            column = columns[i]
-            for place, (at, k) in enumerate(column.atoms):
-                if at in slopes:
-                    rest = column.atoms[:place] + column.atoms[place + 1 :]
-                    still = product(Column(column.name, rest, column.scale), values)
-                    result[:, i] += slopes[at][:, k] * still
+        beside = _positions([rest for *_, rest in parts])
+        values = {at: self.factor_values(at, coded) for at in beside}
+        for i, at, k, rest in parts:
+            result[:, i] += slopes[at][:, k] * product(rest, values)
         return result
 
     def _factor_derivative(self, position: int, name: str, coded: Coded) -> Floats:
@@ -209,16 +217,24 @@ class Design:
         if factor.levels is not None:
             # a number cut into levels has no slope within a level
             return np.zeros_like(self.factor_values(position, coded))
-        own = {other: coded[other] for other in factor.variables}
+        others = {other: coded[other] for other in factor.variables - {name}}
 
         def along(x: Floats) -> Floats:
-            repeats = len(x) // n
-            still = {other: np.tile(codes, repeats) for other, codes in own.items()}
+            still = {other: np.tile(codes, len(x) // n) for other, codes in others.items()}
             return self.factor_values(position, {**still, name: x})
 
         lower, upper = self.allowed.get(name, (-np.inf, np.inf))
+        spread = self.spreads.get(name, 1.0)
+
+        def differentiated(x: Floats) -> Floats:
+            return derivative(along, x, lower, upper, spread)
+
         x = np.asarray(coded[name], dtype=float)
-        return derivative(along, x, lower, upper, self.spreads.get(name, 1.0))
+        if n <= FEW or others:
+            return differentiated(x)
+        if position not in self._slopes:
+            self._slopes[position] = tabulated(differentiated, float(x.min()), float(x.max()))
+        return self._slopes[position](x)
 
 
 def _positions(columns: Iterable[Column]) -> list[int]:

@@ -70,6 +70,26 @@ class Split:
         """What stays, for n rows: shape (n, G)."""
         return self.design.values_of([Column("", atoms) for atoms in self.still], coded, n)
 
+    @cached_property
+    def _standing(self) -> dict[int, int]:
+        """Which products that stay are columns of the design, by themselves."""
+        by_atoms = {
+            self.design.columns[i].atoms: int(i)
+            for i in self.resting
+            if self.design.columns[i].scale == 1.0
+        }
+        return {g: by_atoms[atoms] for g, atoms in enumerate(self.still) if atoms in by_atoms}
+
+    def still_rows(self, matrix: Floats, coded: Coded) -> Floats:
+        """What stays, for rows whose design is known: shape (n, G)."""
+        built = np.empty((len(matrix), len(self.still)))
+        missing = [g for g in range(len(self.still)) if g not in self._standing]
+        for g, i in self._standing.items():
+            built[:, g] = matrix[:, i]
+        columns = [Column("", self.still[g]) for g in missing]
+        built[:, missing] = self.design.values_of(columns, coded, len(matrix))
+        return built
+
     def membership(self) -> Floats:
         """Indicator of shape (T, G): which column belongs to which product that stays."""
         return np.asarray(self.group[:, None] == np.arange(len(self.still)), dtype=float)
