@@ -8,7 +8,10 @@ from dataclasses import MISSING, dataclass, fields, is_dataclass
 from keyword import iskeyword
 from typing import Any, get_args, get_type_hints
 
+from plainodds.answers.change import ChangeQuestion
+from plainodds.answers.moves import Move, Shift
 from plainodds.answers.questions import Answer, Question
+from plainodds.answers.where import Mask
 from plainodds.model.predictors import Predictor, Setting
 from plainodds.values import Pairs
 
@@ -30,8 +33,9 @@ def code(answer: Answer) -> str:
     str
         Python source that uses the names of what it starts from: ``result`` (or
         ``results``, the mapping of fits, where several models stand side by side), ``data``
-        where the data were handed over apart from the result, and the functions of
-        the analyst's own that were stated. It ends with the answer in ``answer``.
+        where the data were handed over apart from the result, the functions of the
+        analyst's own that were stated, and ``mask`` where rows were chosen by one. It ends
+        with the answer in ``answer``.
 
     Examples
     --------
@@ -57,6 +61,7 @@ def code(answer: Answer) -> str:
         stated = [_Text("result"), *_stated(answer.subject.setting)]
         lines.append(_statement("fit", "po.FittedLogit", stated))
         arguments = _arguments(question)
+        lines += _masks(question)
         lines.append(_statement("answer", f"fit.{question.method}", arguments))
     return "\n".join(lines) + "\n"
 
@@ -120,10 +125,30 @@ def _arguments(question: Question, leaving_out: tuple[str, ...] = ()) -> list[_P
         positional = field.name in question.positional
         if field.name in leaving_out or (field.default is not MISSING and held == field.default):
             continue
+        if isinstance(question, ChangeQuestion) and field.name == "moves":
+            arguments += _moves(question)
+            continue
         may_be_pairs = hints[field.name] == Pairs or Pairs in get_args(hints[field.name])
         piece = _mapping(held) if may_be_pairs and isinstance(held, tuple) else _piece(held)
         arguments.append(piece if positional else _named(f"{field.name}=", piece))
     return arguments
+
+
+def _moves(question: ChangeQuestion) -> list[_Piece]:
+    """One predictor with from and to, or with its shift; several as a mapping."""
+    if len(question.moves) > 1:
+        return [_mapping(question.moves)]
+    ((name, move),) = question.moves
+    ends = [move] if isinstance(move, Shift) else [move.start, move.end]
+    return [_piece(name), *map(_piece, ends)]
+
+
+def _masks(question: Question) -> list[str]:
+    """What the name ``mask`` stands for, since an answer holds no rows."""
+    where = getattr(question, "where", None)
+    if not isinstance(where, Mask):
+        return []
+    return [f"# mask: one True or False for each row used, {where.rows:,} of them True"]
 
 
 def _stated(setting: Setting) -> list[_Piece]:
@@ -142,6 +167,10 @@ def _stated(setting: Setting) -> list[_Piece]:
         stated.append(_named("functions=", _mapping(functions)))
     if setting.offset is not None:
         stated.append(_Text(_atom(setting.offset), "offset="))
+    if setting.sampling is not None:
+        stated.append(_Text(_atom(setting.sampling), "sampling="))
+    if setting.prevalence is not None:
+        stated.append(_Text(_atom(setting.prevalence), "prevalence="))
     return stated
 
 
@@ -158,6 +187,10 @@ def _mapping(items: Iterable[tuple[Any, Any]]) -> _Group:
 def _piece(held: Any) -> _Piece:
     if isinstance(held, _Text):
         return held
+    if isinstance(held, Mask):
+        return _Text("mask")
+    if isinstance(held, Move):
+        held = (held.start, held.end)
     if isinstance(held, tuple):
         return _Group("(", tuple(map(_piece, held)), ")", alone=",")
     if is_dataclass(held) and not isinstance(held, type):

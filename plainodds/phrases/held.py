@@ -2,11 +2,13 @@
 
 from __future__ import annotations
 
-from plainodds.answers.curve import CurveAnswer
-from plainodds.phrases.parts import profile_words, rows_words
+from plainodds.answers.curve import CurveAnswer, Others
+from plainodds.model.predictors import Subject
+from plainodds.phrases.parts import case_words, profile_words, rows_words
 from plainodds.phrases.units import tidy
+from plainodds.values import Pairs
 
-__all__ = ["others_words"]
+__all__ = ["held_case", "held_words", "kept_words", "others_words"]
 
 
 def others_words(answer: CurveAnswer, *, at_most: int = 8) -> list[str]:
@@ -17,15 +19,15 @@ def others_words(answer: CurveAnswer, *, at_most: int = 8) -> list[str]:
         return []
     if question.others == "observed":
         averaged = "changes in the chance" if question.scale == "slope" else "chances"
-        return [
-            f"Each {tidy(subject.outcome.case)} keeps its own values of the other predictors, and "
-            f"the {averaged} are averaged over the {rows_words(subject)}"
-        ]
-    if not answer.held:
-        return []
-    chosen = {name for name, _ in question.others} if question.others != "typical" else set()
-    stated = tuple(pair for pair in answer.held if pair[0] in chosen)
-    typical = tuple(pair for pair in answer.held if pair[0] not in chosen)
+        return [kept_words(subject, averaged, rows_words(subject))]
+    return held_words(subject, answer.held, question.others, at_most=at_most)
+
+
+def held_words(subject: Subject, held: Pairs, others: Others, *, at_most: int = 8) -> list[str]:
+    """Say at which values predictors are held, those stated before those typical."""
+    chosen = set() if isinstance(others, str) else {name for name, _ in others}
+    stated = tuple(pair for pair in held if pair[0] in chosen)
+    typical = tuple(pair for pair in held if pair[0] not in chosen)
     told = []
     if stated:
         told.append(f"Held as stated: {profile_words(subject, stated, at_most=at_most)}")
@@ -35,6 +37,21 @@ def others_words(answer: CurveAnswer, *, at_most: int = 8) -> list[str]:
         if stated and not one:
             opening = "The remaining predictors are"
         value = "its typical value" if one else "their typical values"
-        held = profile_words(subject, typical, at_most=at_most)
-        told.append(f"{opening} held at {value}: {held}")
+        values = profile_words(subject, typical, at_most=at_most)
+        told.append(f"{opening} held at {value}: {values}")
     return told
+
+
+def held_case(subject: Subject, held: Pairs, others: Others) -> str:
+    """Whom a held profile describes: "a pipe with lined yes, otherwise typical"."""
+    names = set() if isinstance(others, str) else {name for name, _ in others}
+    stated = tuple(pair for pair in held if pair[0] in names)
+    return case_words(subject, stated, whole=len(stated) == len(held))
+
+
+def kept_words(subject: Subject, averaged: str, rows: str) -> str:
+    """Say that nothing else is held, and over which rows what is averaged."""
+    return (
+        f"Each {tidy(subject.outcome.case)} keeps its own values of the other predictors, and the "
+        f"{averaged} are averaged over the {rows}"
+    )

@@ -8,6 +8,7 @@ shows a label does that.
 from __future__ import annotations
 
 from plainodds.answers.curve import CurveAnswer, Scale
+from plainodds.answers.effects import EffectRow, EffectsAnswer
 from plainodds.answers.odds import OddsRow
 from plainodds.model.predictors import OutcomeFacts, PredictorFacts, Subject
 from plainodds.phrases.numbers import quantity
@@ -18,6 +19,8 @@ __all__ = [
     "axis_title",
     "chance_of",
     "change_label",
+    "effect_label",
+    "effects_title",
     "from_to",
     "given_clause",
     "given_label",
@@ -154,6 +157,22 @@ def from_to(facts: PredictorFacts, start: Scalar, end: Scalar) -> str:
     return f"from {low} to {high}"
 
 
+def effect_label(facts: PredictorFacts, row: EffectRow) -> str:
+    """The change that a difference of the chance belongs to.
+
+    Returns
+    -------
+    str
+        "per additional year" for a slope, "per 10 years more" for a step, "PVC against
+        cast iron" for levels.
+    """
+    if row.start is not None and row.end is not None:
+        return f"{value_label(facts, row.end)} against {value_label(facts, row.start)}"
+    if row.step is not None:
+        return step_label(facts, row.step)
+    return f"per additional {per_unit(facts.unit)}"
+
+
 def row_label(subject: Subject, row: OddsRow) -> str:
     """The whole label of an odds ratio: predictor, change and what it is given."""
     facts = subject.predictor(row.predictor)
@@ -214,3 +233,16 @@ def scale_title(answer: CurveAnswer) -> str:
         return title
     facts = answer.subject.predictor(answer.question.predictor)
     return f"{title}: percentage points per {per_unit(facts.unit)} more"
+
+
+def effects_title(answer: EffectsAnswer) -> str:
+    """The title of an axis of differences, which are 100 times the answer's.
+
+    Returns
+    -------
+    str
+        As in "Change of the average chance of burst this winter (percentage points)".
+    """
+    average = "average " if answer.question.others == "observed" else ""
+    event = tidy(answer.subject.outcome.event)
+    return f"Change of the {average}chance of {event} (percentage points)"

@@ -5,7 +5,6 @@ from __future__ import annotations
 import math
 
 from plainodds import scales
-from plainodds.answers.estimate import Estimate
 from plainodds.answers.odds import OddsAnswer, OddsRow
 from plainodds.model.predictors import PredictorFacts
 from plainodds.phrases.alternative import alternative
@@ -19,6 +18,11 @@ from plainodds.phrases.labels import (
     step_label,
     value_label,
 )
+from plainodds.phrases.likelihood import (
+    interval_method,
+    likelihood_cautions,
+    odds_ratio_words,
+)
 from plainodds.phrases.numbers import (
     chance,
     confidence,
@@ -30,11 +34,9 @@ from plainodds.phrases.numbers import (
 from plainodds.phrases.parts import (
     ASSOCIATION,
     beyond_saying,
-    covariance_words,
     is_beyond_saying,
     model_cautions,
     rather,
-    ratio_with_interval,
     rows_words,
     sentence,
     signed_with_interval,
@@ -57,15 +59,28 @@ def _(answer: OddsAnswer, audience: Audience = "plain") -> Words:
 
 def _plain(answer: OddsAnswer) -> Words:
     moves = [_chances(answer, row) for row in answer.rows]
-    known = [answer.typical_probability, *(each for move in moves if move for each in move)]
+    typical = _typical_chance(answer)
+    known = [typical, *(each for move in moves if move for each in move)]
     over = denominator(known)
     told = [
         sentence(_plain_row(answer, row, move, over))
         for row, move in zip(answer.rows, moves, strict=True)
     ]
-    start = [] if math.isnan(answer.typical_probability) else [_typical(answer, over)]
-    cautions = (*_reading(answer, known), ASSOCIATION, *_changes(answer), *_extremes(answer))
+    start = [] if math.isnan(typical) else [_typical(answer, over)]
+    cautions = (*_reading(answer, known), ASSOCIATION, *_cautions(answer))
     return Words((*start, *told), (*cautions, *model_cautions(answer.subject)))
+
+
+def _typical_chance(answer: OddsAnswer) -> float:
+    """The chance at the typical profile; not known where the sample tells no chances."""
+    subject = answer.subject
+    if subject.sampling == "case-control" and subject.prevalence is None:
+        return math.nan
+    return answer.typical_probability
+
+
+def _cautions(answer: OddsAnswer) -> tuple[str, ...]:
+    return (*_changes(answer), *_extremes(answer), *likelihood_cautions(answer))
 
 
 def _typical(answer: OddsAnswer, over: int) -> str:
@@ -83,7 +98,7 @@ def _plain_row(
 ) -> str:
     subject = answer.subject
     opening = _opening(answer, row)
-    odds = _odds_words(row.odds_ratio, answer.question.level)
+    odds = _odds_words(row, answer.question.level)
     if move is None:
         return f"{opening}, the odds of {tidy(subject.outcome.event)} are {odds}"
     before, after = move
@@ -112,12 +127,13 @@ def _change(facts: PredictorFacts, row: OddsRow) -> str:
     return f"with {name} {from_to(facts, row.start, row.end)}"
 
 
-def _odds_words(estimate: Estimate, level: float) -> str:
+def _odds_words(row: OddsRow, level: float) -> str:
     """What happens to the odds, to follow "the odds are"."""
+    estimate = row.odds_ratio
     number = estimate.estimate
     if math.isnan(number):
         return "multiplied by a number that is not known"
-    multiplied = f"multiplied by {ratio_with_interval(estimate, level)}"
+    multiplied = f"multiplied by {odds_ratio_words(row, level)}"
     if estimate.lower is None or estimate.upper is None:
         both_sides = False
     else:
@@ -138,7 +154,7 @@ def _chances(answer: OddsAnswer, row: OddsRow) -> tuple[float, float] | None:
     subject = answer.subject
     typical = subject.predictor(row.predictor).typical
     given_typical = all(subject.predictor(name).typical == held for name, held in row.given)
-    if row.model or not given_typical or not 0 < answer.typical_probability < 1:
+    if row.model or not given_typical or not 0 < _typical_chance(answer) < 1:
         return None
     start = float(scales.linear_predictor_from_probability(answer.typical_probability))
     if not row.per_step and row.start != typical:
@@ -156,7 +172,7 @@ def _alike(one: OddsRow, other: OddsRow) -> bool:
 
 
 def _reading(answer: OddsAnswer, chances: list[float]) -> tuple[str, ...]:
-    typical = answer.typical_probability
+    typical = _typical_chance(answer)
     plain = "An odds ratio is not a ratio of chances"
     if math.isnan(typical):
         return (f"{plain}; the two are close only where the chances are under about 10%.",)
@@ -209,19 +225,16 @@ def _extremes(answer: OddsAnswer) -> tuple[str, ...]:
 
 
 def _technical(answer: OddsAnswer) -> Words:
-    subject, level = answer.subject, answer.question.level
+    subject = answer.subject
     told = [sentence(_technical_row(answer, row)) for row in answer.rows]
     method = (
         "Odds ratios are exponents of the change in the linear predictor, "
         f"from {rows_words(subject)}"
     )
     if any(row.odds_ratio.lower is not None for row in answer.rows):
-        method += (
-            f"; {confidence(level)} intervals are Wald intervals on the log scale, with "
-            f"{covariance_words(subject)}"
-        )
-    reading = _reading(answer, [answer.typical_probability])
-    cautions = (*reading, ASSOCIATION, *_changes(answer), *_extremes(answer))
+        method += f"; {interval_method(answer)}"
+    reading = _reading(answer, [_typical_chance(answer)])
+    cautions = (*reading, ASSOCIATION, *_cautions(answer))
     return Words((*told, sentence(method)), (*cautions, *model_cautions(subject)))
 
 
@@ -230,7 +243,7 @@ def _technical_row(answer: OddsAnswer, row: OddsRow) -> str:
     model = f"Model “{tidy(row.model)}”: " if row.model else ""
     level = answer.question.level
     text = (
-        f"{model}{label}: odds ratio {ratio_with_interval(row.odds_ratio, level)}, log odds ratio "
+        f"{model}{label}: odds ratio {odds_ratio_words(row, level)}, log odds ratio "
         f"{signed_with_interval(row.log_odds_ratio, level)}{standard_error(row.log_odds_ratio)}"
     )
     return text if row.p_value is None else f"{text}, p-value {p_value(row.p_value)}"
@@ -263,5 +276,5 @@ def _short(answer: OddsAnswer, row: OddsRow) -> str:
     model = f", in the model “{tidy(row.model)}”" if row.model else ""
     facts = answer.subject.predictor(row.predictor)
     given = f", {given_clause(answer.subject, row.given)}" if row.given else ""
-    odds = ratio_with_interval(row.odds_ratio, answer.question.level)
+    odds = odds_ratio_words(row, answer.question.level)
     return f"{odds} for {predictor_name(facts)}, {change_label(facts, row)}{given}{model}"

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import math
-from collections.abc import Callable
+from collections.abc import Callable, Iterable
 
 from plainodds.answers.estimate import Estimate
 from plainodds.model.predictors import OutcomeFacts, Subject
@@ -16,6 +16,7 @@ from plainodds.phrases.numbers import (
     frequency,
     percentage_points,
     points_on_sides,
+    points_span,
     quantity,
     ratio,
     ratio_interval,
@@ -30,12 +31,15 @@ __all__ = [
     "ASSOCIATION",
     "article",
     "beyond_saying",
+    "case_words",
     "chance_with_interval",
     "covariance_words",
     "difference_with_interval",
     "interval",
     "is_beyond_saying",
     "model_cautions",
+    "odds_ratio_cautions",
+    "points_with_interval",
     "profile_words",
     "rather",
     "ratio_with_interval",
@@ -66,6 +70,7 @@ _COVARIANCE = {
 }
 _LISTED_AT_MOST = 8
 _BEYOND_SAYING = 1000.0
+_RARE = 0.10
 
 
 def sentence(text: str) -> str:
@@ -138,6 +143,12 @@ def difference_with_interval(estimate: Estimate, level: float) -> str:
     return told + interval(estimate, points_on_sides, level)
 
 
+def points_with_interval(estimate: Estimate, level: float) -> str:
+    """As in "+3.4 percentage points (95% interval 1.2 to 5.6 percentage points)"."""
+    told = percentage_points(estimate.estimate, sign=True)
+    return told + interval(estimate, points_span, level)
+
+
 def _side(difference: float) -> str:
     return "higher" if difference > 0 else "lower"
 
@@ -175,6 +186,16 @@ def beyond_saying(found: str) -> str:
     )
 
 
+def odds_ratio_cautions(chances: Iterable[float]) -> tuple[str, ...]:
+    """That an odds ratio is no ratio of chances, where these chances are common."""
+    if not any(each > _RARE for each in chances):
+        return ()
+    return (
+        "An odds ratio is not a ratio of chances: where chances are above about 10%, as here, it "
+        "lies further from 1 than the ratio of the chances does",
+    )
+
+
 def model_cautions(subject: Subject, *, offset_held: bool = True) -> tuple[str, ...]:
     """What holds for every answer of this fitted model.
 
@@ -189,7 +210,24 @@ def model_cautions(subject: Subject, *, offset_held: bool = True) -> tuple[str, 
         if not offset_held:
             held = "here each row keeps its own"
         cautions.append(f"The model has an offset, an amount that is taken as known; {held}.")
+    cautions += _sampling_cautions(subject)
     return (*cautions, *(sentence(notice) for notice in subject.notices))
+
+
+def _sampling_cautions(subject: Subject) -> list[str]:
+    if subject.prevalence is not None:
+        return [
+            "The sample was chosen by its outcome (case-control), so every chance is corrected to "
+            f"a stated share of {tidy(subject.outcome.event)} in the population of "
+            f"{quantity(100 * subject.prevalence, '%')}, and averages are weighed to it; odds "
+            "ratios at given values need no correction."
+        ]
+    if subject.sampling == "case-control":
+        return [
+            "The sample was chosen by its outcome (case-control), so it tells odds ratios but no "
+            "chances."
+        ]
+    return []
 
 
 def profile_words(subject: Subject, values: Pairs, *, at_most: int = _LISTED_AT_MOST) -> str:
@@ -222,6 +260,19 @@ def rather(here: float, there: float, over: int) -> str:
 def typical_case(outcome: OutcomeFacts) -> str:
     """Who is typical: "a typical pipe"."""
     return f"a typical {tidy(outcome.case)}"
+
+
+def case_words(
+    subject: Subject, chosen: Pairs, *, whole: bool, at_most: int = _LISTED_AT_MOST
+) -> str:
+    """Whom stated values describe: "a pipe with pipe age 40 years, otherwise typical".
+
+    `whole` where no other predictor is left.
+    """
+    if not chosen:
+        return typical_case(subject.outcome)
+    text = f"{article(subject.outcome.case)} with {profile_words(subject, chosen, at_most=at_most)}"
+    return text if whole else f"{text}, otherwise typical"
 
 
 def typical_words(subject: Subject) -> str:

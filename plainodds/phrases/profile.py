@@ -19,14 +19,14 @@ from plainodds.phrases.numbers import (
 )
 from plainodds.phrases.parts import (
     ASSOCIATION,
-    article,
     beyond_saying,
+    case_words,
     chance_with_interval,
     covariance_words,
     difference_with_interval,
     is_beyond_saying,
     model_cautions,
-    profile_words,
+    odds_ratio_cautions,
     rather,
     ratio_with_interval,
     rows_words,
@@ -41,7 +41,6 @@ from plainodds.values import Pairs
 
 __all__: list[str] = []
 
-_RARE = 0.10
 _NOTHING = 1e-9
 _EVERYTHING = 1_000_000
 
@@ -82,13 +81,10 @@ def _denominator(answer: ProfileAnswer) -> int:
 
 def _who(answer: ProfileAnswer, point: ProfilePoint, stated: Pairs, at_most: int = 8) -> str:
     """Whom a profile describes: "a pipe with pipe age 40 years and otherwise typical"."""
-    subject = answer.subject
     names = {name for name, _ in stated}
     chosen = tuple(pair for pair in point.values if pair[0] in names)
-    if not chosen:
-        return typical_case(subject.outcome)
-    text = f"{article(subject.outcome.case)} with {profile_words(subject, chosen, at_most=at_most)}"
-    return text if len(chosen) == len(point.values) else f"{text}, otherwise typical"
+    whole = len(chosen) == len(point.values)
+    return case_words(answer.subject, chosen, whole=whole, at_most=at_most)
 
 
 def _chance_told(answer: ProfileAnswer, over: int) -> str:
@@ -167,16 +163,12 @@ def _group(answer: ProfileAnswer, row: LedgerRow) -> str:
     return f"{listed(together)} together" if len(together) > 1 else listed(together)
 
 
-def _reading(answer: ProfileAnswer) -> list[str]:
+def _reading(answer: ProfileAnswer) -> tuple[str, ...]:
     if answer.comparison is None:
-        return []
-    chances = (answer.point.probability.estimate, answer.start.probability.estimate)
-    if not max(chances) > _RARE:
-        return []
-    return [
-        "An odds ratio is not a ratio of chances: where chances are above about 10%, as here, it "
-        "lies further from 1 than the ratio of the chances does"
-    ]
+        return ()
+    return odds_ratio_cautions(
+        (answer.point.probability.estimate, answer.start.probability.estimate)
+    )
 
 
 def _technical(answer: ProfileAnswer) -> Words:

@@ -5,8 +5,8 @@ import re
 _FIGURE = re.compile(r"(?<![\w.,])[+−]?\d[\d,]*(?:\.\d+)?")
 _LIMITS = ("under 0.1%", "over 99.9%", "under 0.001", "over 1,000", "over 0.99")
 _FORBIDDEN = re.compile(
-    r"\b(significan\w*|insignifican\w*|times (more|less|as) likely|caus\w+|effects?|leads? to|"
-    r"due to|because of|risk factor|nan|inf|none(?! of))\b",
+    r"\b(significan\w*|insignifican\w*|times (more|less|as) likely|caus\w+|leads? to|"
+    r"(?<!marginal )effects?|due to|because of|risk factor|nan|inf|none(?! of))\b",
     re.IGNORECASE,
 )
 

@@ -12,12 +12,17 @@ from hypothesis import given
 from hypothesis import strategies as st
 
 import plainodds as po
+from plainodds.answers.change import ChangeQuestion
 from plainodds.answers.curve import CurveQuestion
+from plainodds.answers.effects import EffectsQuestion
+from plainodds.answers.moves import Move, Shift
 from plainodds.answers.odds import OddsQuestion
 from plainodds.answers.profile import ProfileQuestion
+from plainodds.answers.where import Mask
 from plainodds.model.predictors import Outcome, Predictor, Setting
 from plainodds.phrases import code
 from tests.phrases.made import curve_answer, odds_answer, odds_row, profile_answer, subject
+from tests.phrases.made_changes import change_answer, effect_row, effects_answer
 
 WIDTH = 88
 
@@ -25,7 +30,7 @@ WIDTH = 88
 class Recorder:
     """Stands for FittedLogit and for odds_of, and remembers how it was called."""
 
-    Predictor, Outcome = Predictor, Outcome
+    Predictor, Outcome, Shift = Predictor, Outcome, Shift
 
     def __init__(self):
         self.calls = []
@@ -60,6 +65,8 @@ def asked(question):
         CurveQuestion: curve_answer(),
         OddsQuestion: odds_answer(odds_row()),
         ProfileQuestion: profile_answer(),
+        ChangeQuestion: change_answer(),
+        EffectsQuestion: effects_answer(effect_row()),
     }
     return replace(made[type(question)], question=question)
 
@@ -88,6 +95,39 @@ def test_the_plainest_code():
         (OddsQuestion(given=(("m", ("x", "y")),)), 'fit.odds(given={"m": ("x", "y")})'),
         (OddsQuestion(references=(("m", True),)), 'fit.odds(references={"m": True})'),
         (OddsQuestion(order="size"), 'fit.odds(order="size")'),
+        (OddsQuestion(interval="likelihood"), 'fit.odds(interval="likelihood")'),
+        (ChangeQuestion((("a", Move(20, 60)),)), 'fit.change("a", 20, 60)'),
+        (ChangeQuestion((("m", Move("x", "y")),)), 'fit.change("m", "x", "y")'),
+        (
+            ChangeQuestion((("a", Shift(by=-10, lowest=0)),)),
+            'fit.change("a", po.Shift(by=-10, lowest=0))',
+        ),
+        (
+            ChangeQuestion((("a", Move(60, 0)), ("m", Move("x", "y")))),
+            'fit.change({"a": (60, 0), "m": ("x", "y")})',
+        ),
+        (
+            ChangeQuestion((("a", Shift(times=1.1)), ("m", Move("x", "y"))), level=0.9),
+            'fit.change({"a": po.Shift(times=1.1), "m": ("x", "y")}, level=0.9)',
+        ),
+        (
+            ChangeQuestion((("a", Move(0, 1)),), others=(("b", 2),)),
+            'fit.change("a", 0, 1, others={"b": 2})',
+        ),
+        (
+            ChangeQuestion((("a", Move(0, 1)),), where=(("b", (2, 3)), ("m", "x"))),
+            'fit.change("a", 0, 1, where={"b": (2, 3), "m": "x"})',
+        ),
+        (
+            ChangeQuestion((("a", Move(0, 1)),), where=Mask(3, "ab"), sample="drawn"),
+            'fit.change("a", 0, 1, where=mask, sample="drawn")',
+        ),
+        (EffectsQuestion(), "fit.effects()"),
+        (
+            EffectsQuestion(("a",), number="step", by="m", where=Mask(3, "ab")),
+            'fit.effects(predictors=("a",), number="step", by="m", where=mask)',
+        ),
+        (EffectsQuestion(others=(("a", 1),)), 'fit.effects(others={"a": 1})'),
         (CurveQuestion("a", others="observed"), 'fit.curve("a", others="observed")'),
         (CurveQuestion("a", others=(("b", 1),)), 'fit.curve("a", others={"b": 1})'),
         (CurveQuestion("a", at=(1.0, 2.5)), 'fit.curve("a", at=(1.0, 2.5))'),
@@ -202,6 +242,21 @@ def test_an_infinite_number_is_python_too():
     assert kwargs == {"predictors": {"a": infinite}}
 
 
+def test_which_rows_a_mask_stands_for_is_said_in_a_comment():
+    question = EffectsQuestion(where=Mask(1234, "ab"))
+    assert code(asked(question)).splitlines()[-2:] == [
+        "# mask: one True or False for each row used, 1,234 of them True",
+        "answer = fit.effects(where=mask)",
+    ]
+    assert "mask" not in code(asked(EffectsQuestion(where=(("a", 1),))))
+
+
+def test_how_the_sample_came_is_stated_again():
+    text = code(with_setting(sampling="case-control", prevalence=0.02))
+    assert 'po.FittedLogit(result, sampling="case-control", prevalence=0.02)' in text
+    assert "sampling" not in code(with_setting(prevalence=0.02))
+
+
 def test_several_models_are_asked_together():
     question = OddsQuestion(predictors=("a",), models=("crude", "it's"))
     text = code(asked(question))
@@ -266,6 +321,18 @@ def again(answer, **namespace):
         lambda fit: fit.curve("age", by="lined", scale="slope", at=[10, 20.5]),
         lambda fit: fit.curve("site", by="visits", by_values=[0, 2], others={"age": 40}),
         lambda fit: fit.curve("visits", scale="odds", level=0.8),
+        lambda fit: fit.odds("visits", interval="likelihood"),
+        lambda fit: fit.change("age", 20, 60),
+        lambda fit: fit.change("site", "a", "b's", others="typical"),
+        lambda fit: fit.change("age", po.Shift(by=-10, lowest=0), sample="drawn"),
+        lambda fit: fit.change({"age": (60, 0), "site": ("a", 'c"')}, others={"visits": 2}),
+        lambda fit: fit.change({"age": po.Shift(times=1.1), "lined": (False, True)}),
+        lambda fit: fit.change("visits", 0, 1, where={"age": (20, 60), "site": ["a", "b's"]}),
+        lambda fit: fit.change("age", 20, 60, where={}),
+        lambda fit: fit.effects(),
+        lambda fit: fit.effects(["age", "site"], number="step", by="lined", level=0.9),
+        lambda fit: fit.effects(others={"age": 40}, by="site"),
+        lambda fit: fit.effects(where={"lined": True}, sample="drawn"),
         lambda fit: fit.profile(),
         lambda fit: fit.profile({"site": 'c"', "lined": True, "age": np.float64(33.3)}),
         lambda fit: fit.profile({"age": 60}, against={"age": 20, "lined": True}, level=0.99),
@@ -273,6 +340,29 @@ def again(answer, **namespace):
 )
 def test_the_code_of_a_real_answer_gives_an_equal_answer(fit, result, ask):
     answer = ask(fit)
+    assert again(answer, result=result) == answer
+
+
+@pytest.mark.parametrize(
+    "ask",
+    [
+        lambda fit, mask: fit.change("age", 20, 60, where=mask),
+        lambda fit, mask: fit.change("age", po.Shift(by=5, highest=90), where=mask),
+        lambda fit, mask: fit.effects(where=mask, by="site"),
+    ],
+)
+def test_the_code_of_an_answer_about_masked_rows_wants_the_mask(fit, frame, result, ask):
+    mask = (frame["age"] > 40).to_numpy()
+    answer = ask(fit, mask)
+    assert again(answer, result=result, mask=mask) == answer
+    assert again(answer, result=result, mask=~mask) != answer
+    with pytest.raises(NameError, match="mask"):
+        again(answer, result=result)
+
+
+@pytest.mark.parametrize("stated", [{"prevalence": 0.02}, {"sampling": "cohort"}])
+def test_the_code_states_how_the_sample_came(result, stated):
+    answer = po.FittedLogit(result, **stated).change("age", 20, 60)
     assert again(answer, result=result) == answer
 
 

@@ -368,3 +368,31 @@ def test_counts_and_levels():
     assert numbers.confidence(0.95) == "95%"
     assert numbers.confidence(0.999) == "99.9%"
     assert numbers.confidence(0.29) == "29%"
+
+
+@pytest.mark.parametrize(
+    ("number", "told"),
+    [(1.0, "1"), (1.04, "1"), (9.94, "9.9"), (9.96, "10"), (24.3, "24"), (1234.6, "1,235")],
+)
+def test_a_number_needed_has_one_decimal_where_it_is_small(number, told):
+    assert numbers.needed(number) == told
+
+
+@given(st.floats(-1, 1), st.sampled_from([100, 1_000, 10_000]))
+def test_cases_apart_are_the_rounded_difference_and_its_side(difference, over):
+    told = numbers.cases_apart(difference, over)
+    cases = round(abs(difference) * over)
+    if difference == 0:
+        assert told == "no more and no fewer"
+    else:
+        assert told.endswith("more" if difference > 0 else "fewer")
+        assert told.startswith("under 1 " if cases == 0 else f"{cases:,} ")
+
+
+@given(st.floats(0, 1), st.floats(0, 1))
+def test_a_changes_denominator_is_no_coarser_than_its_chances(start, end):
+    over = numbers.denominator_of_change(start, end)
+    assert over >= numbers.denominator([start, end])
+    assert over in (100, 1_000, 10_000)
+    if abs(end - start) >= 0.05:
+        assert over == numbers.denominator([start, end])

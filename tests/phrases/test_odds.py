@@ -283,3 +283,78 @@ def test_what_is_no_answer_has_no_words():
         words("answer")
     with pytest.raises(TypeError, match="no picture of str"):
         alternative("answer")
+
+
+def likelihood_answer(lower=0.2, upper=1.4, **stated):
+    ends = {"lower": lower, "upper": upper}
+    logs = Estimate(0.7, 0.3, **ends)
+    ratio = Estimate(math.exp(0.7), 0.6, math.exp(lower), math.exp(upper))
+    row = odds_row(odds_ratio=ratio, log_odds_ratio=logs)
+    return odds_answer(row, question=OddsQuestion(interval="likelihood"), **stated)
+
+
+@pytest.mark.parametrize("audience", ["plain", "technical"])
+def test_likelihood_intervals_are_said_to_be_such(audience):
+    said = words(likelihood_answer(), audience)
+    assert any("2.01 (95% interval 1.22 to 4.06)" in sentence for sentence in said.sentences)
+    assert any("are likelihood intervals" in caution for caution in said.cautions)
+    assert not any("no upper end" in each for each in (*said.sentences, *said.cautions))
+    wald = words(odds_answer(odds_row()), audience)
+    assert "likelihood" not in str(wald)
+
+
+def test_technical_words_name_the_likelihood_methods():
+    told = words(likelihood_answer(), "technical").sentences[-1]
+    assert "profile-likelihood intervals" in told
+    assert "likelihood-ratio tests" in told
+    assert "Wald" not in told
+
+
+@pytest.mark.parametrize(
+    ("lower", "upper", "told", "open_ends"),
+    [
+        (0.2, math.inf, "interval from 1.22, no upper end)", {"upper"}),
+        (-math.inf, 1.4, "interval up to 4.06, no lower end)", {"lower"}),
+        (-math.inf, math.inf, "interval without an end on either side)", {"lower", "upper"}),
+    ],
+)
+def test_an_end_that_does_not_exist_is_said_to_be_open(lower, upper, told, open_ends):
+    answer = likelihood_answer(lower, upper)
+    meaning = {"upper": "any larger value", "lower": "any smaller value"}
+    for audience in ("plain", "technical"):
+        said = words(answer, audience)
+        assert any(told in sentence for sentence in said.sentences)
+        for end, rest in meaning.items():
+            caution = f"There is no {end} end for pipe age: the data do not rule out {rest}."
+            assert (caution in said.cautions) == (end in open_ends)
+        for sentence in (*said.sentences, *said.cautions, alternative(answer)):
+            assert faults(sentence) == []
+    assert told in alternative(answer)
+
+
+def test_a_wald_end_too_large_to_be_held_is_not_called_open():
+    told = words(odds_answer(odds_row(log=800.0, se=1.0))).sentences[1]
+    assert "no upper end" not in told
+
+
+def test_a_case_control_sample_without_a_share_is_told_in_odds_only():
+    answer = odds_answer(odds_row(log=0.7), typical=0.23, sampling="case-control")
+    said = words(answer)
+    assert said.sentences == (
+        "Per 10 years more of pipe age, the odds of burst this winter are higher, multiplied by "
+        "2.01 (95% interval 1.66 to 2.45).",
+    )
+    assert (
+        "The sample was chosen by its outcome (case-control), so it tells odds ratios but no "
+        "chances." in said.cautions
+    )
+    assert not any("23%" in caution for caution in words(answer, "technical").cautions)
+
+
+def test_chances_corrected_to_a_populations_share_are_said_to_be():
+    said = words(odds_answer(odds_row(), sampling="case-control", prevalence=0.02))
+    assert said.sentences[0].startswith("For a typical pipe")
+    assert any(
+        "corrected to a stated share of burst this winter in the population of 2%" in caution
+        for caution in said.cautions
+    )

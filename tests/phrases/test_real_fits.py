@@ -2,6 +2,7 @@
 
 import numpy as np
 import pytest
+import statsmodels.api as sm
 import statsmodels.formula.api as smf
 
 import plainodds as po
@@ -42,6 +43,23 @@ QUESTIONS = {
     "typical profile": lambda fit: fit.profile(),
     "profile": lambda fit: fit.profile({"age_years": 80, "material": "PVC"}),
     "profile against another": lambda fit: fit.profile({"age_years": 80}, against={"soil": "high"}),
+    "odds by likelihood": lambda fit: fit.odds("past_repairs", interval="likelihood"),
+    "change": lambda fit: fit.change("age_years", 20, 60),
+    "change of several": lambda fit: fit.change(
+        {"age_years": (60, 0), "material": ("cast iron", "PVC")}, where={"soil": ("low", "high")}
+    ),
+    "shift": lambda fit: fit.change(
+        "age_years", po.Shift(by=-10, lowest=0), where=(PIPES["age_years"] > 30).to_numpy()
+    ),
+    "change at a profile": lambda fit: fit.change(
+        "past_repairs", 0, 2, others={"material": "PVC"}, level=0.9
+    ),
+    "change beyond the data": lambda fit: fit.change("age_years", 20, 300, sample="drawn"),
+    "effects": lambda fit: fit.effects(),
+    "effects by levels": lambda fit: fit.effects(by="material", where={"age_years": (20, 60)}),
+    "effects of steps": lambda fit: fit.effects(["age_years", "past_repairs"], number="step"),
+    "effects at the typical profile": lambda fit: fit.effects(others="typical"),
+    "effects at a profile": lambda fit: fit.effects(others={"soil": "high"}, by="material"),
     "profile beyond the data": lambda fit: fit.profile({"age_years": 300}),
 }
 
@@ -116,3 +134,52 @@ def test_chances_at_another_reference_are_those_of_the_model(fit):
 def test_numbers_of_numpy_make_no_difference(fit):
     one, other = fit.profile({"age_years": 80}), fit.profile({"age_years": np.int64(80)})
     assert str(words(one)) == str(words(other))
+
+
+def test_a_changes_figures_are_those_of_the_table(fit):
+    answer = fit.change("age_years", 20, 60)
+    table = po.table(answer).set_index("measure")
+    for audience in ("plain", "technical"):
+        told = " ".join(words(answer, audience).sentences)
+        for measure in ("from", "to", "risk_difference"):
+            for number in table.loc[measure, ["estimate", "lower", "upper"]]:
+                assert says(told, number, 100)
+        for measure in ("risk_ratio", "odds_ratio", "per_1000"):
+            for number in table.loc[measure, ["estimate", "lower", "upper"]]:
+                assert says(told, number)
+        assert says(told, table.loc["number_needed", "estimate"])
+
+
+def test_each_effect_of_the_table_is_said_with_its_interval(fit):
+    answer = fit.effects()
+    plain = " ".join(words(answer).sentences)
+    technical = words(answer, "technical").sentences
+    for sentence, (_, row) in zip(technical, po.table(answer).iterrows(), strict=False):
+        for number in (row.estimate, row.lower, row.upper):
+            assert says(sentence, abs(number), 100) or says(sentence, number, 100)
+            assert says(plain, abs(number), 100)
+
+
+def test_a_case_control_sample_tells_no_chances_unless_the_populations_share_is_stated(fit):
+    result = smf.logit("burst ~ age_years + soil", PIPES).fit(disp=False)
+    sampled = po.FittedLogit(result, sampling="case-control")
+    for audience in ("plain", "technical"):
+        said = words(sampled.odds(), audience)
+        assert "%" not in " ".join(said.sentences).replace("95% interval", "")
+        assert any("odds ratios but no chances" in caution for caution in said.cautions)
+    stated = po.FittedLogit(result, prevalence=0.004)
+    said = words(stated.odds())
+    assert says(said.sentences[0], stated.profile().point.probability.estimate, 100)
+    assert any("in the population of 0.4%" in caution for caution in said.cautions)
+
+
+def test_an_open_end_of_a_likelihood_interval_is_said_to_be_open():
+    separated = PIPES.assign(bad=(PIPES["burst"] == 1) & (PIPES["age_years"] > 60))
+    result = smf.glm("burst ~ bad + past_repairs", separated, family=sm.families.Binomial()).fit()
+    said = words(po.FittedLogit(result).odds("bad", interval="likelihood"))
+    assert "no upper end)" in said.sentences[-1]
+    assert "There is no upper end for bad: the data do not rule out any larger value." in (
+        said.cautions
+    )
+    for sentence in (*said.sentences, *said.cautions):
+        assert faults(sentence) == []

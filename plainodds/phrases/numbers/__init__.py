@@ -8,11 +8,13 @@ minus sign (U+2212).
 from plainodds.phrases.numbers.chances import (
     chance,
     denominator,
+    denominator_of_change,
     frequencies,
     frequency,
     frequency_span,
     told_apart,
 )
+from plainodds.phrases.numbers.counts import cases_apart, cases_on_sides, needed
 from plainodds.phrases.numbers.quantities import confidence, count, quantity, signed, summing
 from plainodds.phrases.numbers.ratios import p_value, ratio, ratio_interval, simple_fraction
 from plainodds.phrases.numbers.signs import MINUS, NOT_KNOWN
@@ -21,13 +23,17 @@ from plainodds.phrases.numbers.spans import percentage_points, points_on_sides, 
 __all__ = [
     "MINUS",
     "NOT_KNOWN",
+    "cases_apart",
+    "cases_on_sides",
     "chance",
     "confidence",
     "count",
     "denominator",
+    "denominator_of_change",
     "frequencies",
     "frequency",
     "frequency_span",
+    "needed",
     "p_value",
     "percentage_points",
     "points_on_sides",

@@ -11,6 +11,7 @@ __all__ = [
     "chance",
     "chance_decimals",
     "denominator",
+    "denominator_of_change",
     "frequencies",
     "frequency",
     "frequency_span",
@@ -19,6 +20,7 @@ __all__ = [
 
 _LEAST_CHANCE = 0.001
 _DENOMINATORS = (100, 1_000, 10_000)
+_LEAST_APART = 5
 
 
 def chance(probability: float, *, decimals: int | None = None) -> str:
@@ -112,6 +114,21 @@ def denominator(chances: Iterable[float]) -> int:
         same = round(low * smallest) == round(high * smallest)
         return 1_000 if same and round(low * 1_000) != round(high * 1_000) else smallest
     return smallest
+
+
+def denominator_of_change(start: float, end: float) -> int:
+    """Choose the one denominator over which two chances and their difference are told.
+
+    That of the two chances, or 1,000 where their difference would come to fewer than
+    five in 100 and be lost in rounding.
+
+    Examples
+    --------
+    >>> denominator_of_change(0.2, 0.3), denominator_of_change(0.076, 0.064)
+    (100, 1000)
+    """
+    over = denominator((start, end))
+    return max(over, 1_000) if 0 < abs(end - start) * over < _LEAST_APART else over
 
 
 def frequency(probability: float, over: int | None = None) -> str:

@@ -1,0 +1,75 @@
+"""Likelihood intervals of odds ratios in words, and ends that do not exist."""
+
+from __future__ import annotations
+
+import math
+
+from plainodds.answers.odds import OddsAnswer, OddsRow
+from plainodds.phrases.labels import listed, predictor_name
+from plainodds.phrases.numbers import confidence, ratio
+from plainodds.phrases.parts import covariance_words, ratio_with_interval
+
+__all__ = ["interval_method", "likelihood_cautions", "odds_ratio_words"]
+
+
+def odds_ratio_words(row: OddsRow, level: float) -> str:
+    """As in "2.02 (95% interval 1.08 to 3.78)"; an end that does not exist is said to be none.
+
+    Returns
+    -------
+    str
+        "12.3 (95% interval from 1.42, no upper end)" where there is none.
+    """
+    open_below, open_above = _open_ends(row)
+    odds = row.odds_ratio
+    if not (open_below or open_above) or odds.lower is None or odds.upper is None:
+        return ratio_with_interval(odds, level)
+    told = "without an end on either side"
+    if not open_below:
+        told = f"from {ratio(odds.lower)}, no upper end"
+    elif not open_above:
+        told = f"up to {ratio(odds.upper)}, no lower end"
+    return f"{ratio(odds.estimate)} ({confidence(level)} interval {told})"
+
+
+def _open_ends(row: OddsRow) -> tuple[bool, bool]:
+    """Whether an end does not exist; on the log scale, since exp of a large number overflows."""
+    logs = row.log_odds_ratio
+    return logs.lower == -math.inf, logs.upper == math.inf
+
+
+def likelihood_cautions(answer: OddsAnswer) -> tuple[str, ...]:
+    """What likelihood intervals are, and what an open end means; empty for Wald intervals."""
+    if answer.question.interval != "likelihood":
+        return ()
+    told = [
+        "The intervals are likelihood intervals: they hold the values under which the data are "
+        "still about as well explained as under the best one."
+    ]
+    for place, end, further in ((1, "upper", "larger"), (0, "lower", "smaller")):
+        names = {
+            predictor_name(answer.subject.predictor(row.predictor)): None
+            for row in answer.rows
+            if _open_ends(row)[place]
+        }
+        if names:
+            told.append(
+                f"There is no {end} end for {listed(list(names))}: the data do not rule out any "
+                f"{further} value."
+            )
+    return tuple(told)
+
+
+def interval_method(answer: OddsAnswer) -> str:
+    """How intervals and tests are made, to follow a semicolon."""
+    level = confidence(answer.question.level)
+    if answer.question.interval == "likelihood":
+        return (
+            f"{level} intervals are profile-likelihood intervals (values whose refitted deviance "
+            "is within the chi-squared limit of the minimum), p-values are of likelihood-ratio "
+            f"tests, standard errors rest on {covariance_words(answer.subject)}"
+        )
+    return (
+        f"{level} intervals are Wald intervals on the log scale, with "
+        f"{covariance_words(answer.subject)}"
+    )
