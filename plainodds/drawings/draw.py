@@ -9,13 +9,17 @@ from matplotlib.axes import Axes
 from matplotlib.backends.backend_agg import FigureCanvasAgg
 from matplotlib.figure import Figure
 
+from plainodds.answers.change import ChangeAnswer
 from plainodds.answers.curve import CurveAnswer
+from plainodds.answers.effects import EffectsAnswer
 from plainodds.answers.odds import OddsAnswer
 from plainodds.answers.profile import ProfileAnswer
 from plainodds.answers.questions import Answer
+from plainodds.drawings.change import ChangeDrawing
 from plainodds.drawings.curve import CurveDrawing
 from plainodds.drawings.curve_levels import LevelsDrawing
 from plainodds.drawings.drawing import Drawing, fitting_theme
+from plainodds.drawings.effects import EffectsDrawing
 from plainodds.drawings.geometry import POINTS_PER_INCH, slot_size
 from plainodds.drawings.odds import OddsDrawing
 from plainodds.drawings.profile import ProfileDrawing
@@ -56,6 +60,16 @@ def _(answer: CurveAnswer) -> type[Drawing[Any]]:
 @drawing_of.register
 def _(answer: ProfileAnswer) -> type[Drawing[Any]]:
     return ProfileDrawing
+
+
+@drawing_of.register
+def _(answer: EffectsAnswer) -> type[Drawing[Any]]:
+    return EffectsDrawing
+
+
+@drawing_of.register
+def _(answer: ChangeAnswer) -> type[Drawing[Any]]:
+    return ChangeDrawing
 
 
 def draw(answer: Answer, ax: Axes | None = None, theme: str | Theme = "page") -> Figure:

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 from dataclasses import dataclass
+from typing import Any
 
 from plainodds.answers.odds import OddsAnswer, OddsRow
 from plainodds.drawings.lettering import align_decimals, line_height, text_width, wrapped
@@ -38,10 +39,10 @@ _LEAST_PLOT = 0.24
 
 @dataclass(frozen=True)
 class Slot:
-    """One change, with one row for each model that has it."""
+    """One change, with one row of the answer for each series that has it."""
 
     label: str
-    rows: tuple[OddsRow, ...]
+    rows: tuple[Any, ...]
 
 
 @dataclass(frozen=True)
