@@ -1,6 +1,7 @@
 """plainodds: from a fitted binary logit model to a checked, explained, exportable account."""
 
 from plainodds import demo, display
+from plainodds.answers.moves import Shift
 from plainodds.answers.tables import ledger, table
 from plainodds.drawings import draw, save
 from plainodds.errors import FitRefused, QuestionRefused
@@ -8,10 +9,12 @@ from plainodds.fitted import FittedLogit, odds_of
 from plainodds.model.predictors import Outcome, Predictor
 from plainodds.phrases import alternative, code, words
 from plainodds.values import from_json, to_json
-from plainodds.views import CurveView, OddsView, ProfileView
+from plainodds.views import ChangeView, CurveView, EffectsView, OddsView, ProfileView
 
 __all__ = [
+    "ChangeView",
     "CurveView",
+    "EffectsView",
     "FitRefused",
     "FittedLogit",
     "OddsView",
@@ -19,6 +22,7 @@ __all__ = [
     "Predictor",
     "ProfileView",
     "QuestionRefused",
+    "Shift",
     "alternative",
     "code",
     "demo",

@@ -16,7 +16,7 @@ import ipywidgets as widgets
 import traitlets
 from IPython.display import display
 
-from plainodds.answers.questions import Question
+from plainodds.answers.questions import Answer, Question
 from plainodds.errors import FitRefused, QuestionRefused
 from plainodds.fitted import FittedLogit
 from plainodds.model.predictors import Subject
@@ -77,7 +77,7 @@ class AnswerView(widgets.VBox):
         self._question = self._checked(question or self._first_question())
         self._stage = Stage(self._resize)
         self._messages, self._words, self._table = map(html, ("problem", "words", "table"))
-        self._extras = Extras(lambda: self.answer, self._stem, self._guarded)
+        self._extras = Extras(lambda: self.answer, self._exactly, self._stem, self._guarded)
         with LOCK, self._quietly():
             panel = block(*self._make_controls(), name="controls")
             style = html("style")
@@ -122,6 +122,23 @@ class AnswerView(widgets.VBox):
     def _shown(self, answer: Any) -> None:
         """Show what this kind of view shows besides."""
 
+    def _ask(self, question: Any) -> Answer:
+        """Find the answer that is shown."""
+        return self.fit.ask(question)
+
+    def _exactly(self, then: Callable[[Answer], None]) -> None:
+        """Do something with the answer as it is given away."""
+        then(self.answer)
+
+    @property
+    def _wanted(self) -> Any:
+        """The question that controls show and edit."""
+        return self._question
+
+    def _set(self, question: Any) -> None:
+        """Show a question that was set from Python."""
+        self._show(question)
+
     # the question, from Python
 
     @property
@@ -144,7 +161,7 @@ class AnswerView(widgets.VBox):
     @question.setter
     def question(self, question: Question) -> None:
         with LOCK:
-            self._show(self._checked(question))
+            self._set(self._checked(question))
 
     @property
     def picture_width(self) -> int:
@@ -221,7 +238,7 @@ class AnswerView(widgets.VBox):
             with self._guarded(), self._putting_back(binding):
                 with self._quietly():
                     remark = control.take(source)
-                self._show(binding.write(self._question, control.value), remark, control)
+                self._show(binding.write(self._wanted, control.value), remark, control)
 
     def _button(self, label: str, name: str, change: Callable[[Any], Any]) -> widgets.Button:
         """Make a button that changes the question."""
@@ -230,7 +247,7 @@ class AnswerView(widgets.VBox):
 
         def pressed(_: widgets.Button) -> None:
             with self._guarded():
-                self._show(change(self._question))
+                self._show(change(self._wanted))
 
         button.on_click(pressed)
         return button
@@ -251,7 +268,7 @@ class AnswerView(widgets.VBox):
             yield
         except Exception:
             with self._quietly():
-                binding.control.show(binding.read(self._question))
+                binding.control.show(binding.read(self._wanted))
             raise
 
     @contextmanager
@@ -272,7 +289,7 @@ class AnswerView(widgets.VBox):
         self._messages.value = markup.notice(remark, is_problem=False)
 
     def _redraw(self, question: Any, edited: Control | None = None) -> None:
-        answer = self.fit.ask(question)
+        answer = self._ask(question)
         # everything that can fail comes before anything that can be seen
         shown = self._stage.taken(answer)
         said, listed = self._words_of(answer), self._table_of(answer)

@@ -26,7 +26,10 @@ __all__ = [
     "Control",
     "NumberControl",
     "SwitchControl",
+    "cleaned",
+    "limits",
     "predictor_control",
+    "settled",
     "slider_range",
     "slug",
 ]
@@ -81,14 +84,14 @@ def slider_range(facts: PredictorFacts) -> tuple[float, float, float]:
     if facts.kind == "whole number":
         step = max(1.0, float(round(step)))
     first, last = (
-        _cleaned(math.ceil(low / step - 1e-9) * step),
-        _cleaned(math.floor(high / step + 1e-9) * step),
+        cleaned(math.ceil(low / step - 1e-9) * step),
+        cleaned(math.floor(high / step + 1e-9) * step),
     )
     if last - first < 4 * step:
         # a range so narrow that round values would leave the slider nowhere to go
         step = 1.0 if facts.kind == "whole number" else (high - low) / 100
         first, last = low, high
-    return first, last, _cleaned(step)
+    return first, last, cleaned(step)
 
 
 def limits(facts: PredictorFacts) -> tuple[float, float]:
@@ -96,7 +99,31 @@ def limits(facts: PredictorFacts) -> tuple[float, float]:
     return max(facts.offered[0], facts.allowed[0]), min(facts.offered[1], facts.allowed[1])
 
 
-def _cleaned(number: float) -> float:
+def settled(facts: PredictorFacts, ends: tuple[float, float], entered: float) -> tuple[float, str]:
+    """The number that can be had for the one entered, and what had to be changed.
+
+    Parameters
+    ----------
+    facts : PredictorFacts
+    ends : (float, float)
+        What may be asked.
+    entered : float
+    """
+    low, high = ends
+    number, why = entered, ""
+    if not low <= entered <= high:
+        why = f"goes from {quantity(low)} to {value_label(facts, high)} here"
+        number = min(max(entered, low), high)
+    elif facts.kind == "whole number" and not entered.is_integer():
+        why = "takes whole numbers"
+        number = min(max(float(round(entered)), low), high)
+    if not why:
+        return number, ""
+    wanted = value_label(facts, entered)
+    return number, f"{predictor_label(facts)} {why}; {wanted} was set to {quantity(number)}."
+
+
+def cleaned(number: float) -> float:
     """A slider's value without the noise of its steps."""
     return float(f"{number:.10g}")
 
@@ -131,27 +158,14 @@ class NumberControl:
         """Let the box follow the slider, or the slider the box."""
         if source is self.slider:
             # the slider itself stays as it is: its user may be ahead of the kernel
-            self.box.value = _cleaned(self.slider.value)
+            self.box.value = cleaned(self.slider.value)
             return ""
         entered = float(self.box.value)
-        number, why = self._settled(entered)
+        number, remark = settled(self._facts, (self._low, self._high), entered)
         if number != entered:
             self.box.value = number
         self.slider.value = number
-        if not why:
-            return ""
-        wanted = value_label(self._facts, entered)
-        return f"{predictor_label(self._facts)} {why}; {wanted} was set to {quantity(number)}."
-
-    def _settled(self, number: float) -> tuple[float, str]:
-        whole = self._facts.kind == "whole number"
-        if not self._low <= number <= self._high:
-            ends = f"{quantity(self._low)} to {value_label(self._facts, self._high)}"
-            return min(max(number, self._low), self._high), f"goes from {ends} here"
-        if whole and not number.is_integer():
-            nearest = min(max(float(round(number)), self._low), self._high)
-            return nearest, "takes whole numbers"
-        return number, ""
+        return remark
 
     def show(self, value: Scalar) -> None:
         """Show a number; a range that is too narrow for it gives way."""

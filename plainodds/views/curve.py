@@ -2,14 +2,13 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable, Sequence
+from collections.abc import Callable
 from dataclasses import replace
 from typing import Any
 
 import ipywidgets as widgets
 
 from plainodds.answers.curve import CurveAnswer, CurveLine, CurveQuestion, Scale
-from plainodds.model.predictors import PredictorFacts
 from plainodds.phrases.labels import (
     axis_title,
     line_label,
@@ -28,13 +27,13 @@ from plainodds.phrases.numbers import (
     signed,
     span,
 )
-from plainodds.values import Scalar
 from plainodds.views import markup
-from plainodds.views.base import AnswerView
-from plainodds.views.controls import ChoiceControl, Control, predictor_control, slug
+from plainodds.views.controls import ChoiceControl, Control, slug
 from plainodds.views.markup import Column, Markup, Row
-from plainodds.views.parts import block
+from plainodds.views.others import OthersPart, without
+from plainodds.views.parts import block, fill
 from plainodds.views.several import values_control
+from plainodds.views.sketched import SketchedView
 
 __all__ = ["CurveView"]
 
@@ -44,15 +43,10 @@ _SCALES = (
     ("odds", "odds"),
     ("log odds", "linear_predictor"),
 )
-_OTHERS = (
-    ("held at typical values", "typical"),
-    ("as observed, averaged", "observed"),
-    ("held at values I choose", "held"),
-)
 _MOST_LINES = 6
 
 
-class CurveView(AnswerView):
+class CurveView(SketchedView):
     """How does the chance change along a predictor?
 
     Choose the predictor, a second one that gets a line for each of its values, what the
@@ -70,6 +64,8 @@ class CurveView(AnswerView):
     question : CurveQuestion
         May be set; ``view.question = fit.curve("age_years", others="observed").question``.
     answer : CurveAnswer
+    is_exact : bool
+        Whether `answer` is exact; by a sketch where rows are many and averaged over.
 
     Raises
     ------
@@ -90,10 +86,10 @@ class CurveView(AnswerView):
 
     kind = "curve"
     asks = CurveQuestion
+    exact_is_quick = False
 
     def __init__(self, result: Any, question: CurveQuestion | None = None) -> None:
         self._by_values: dict[str, Control] = {}
-        self._held: dict[str, Control] = {}
         super().__init__(result, question)
 
     def _first_question(self) -> CurveQuestion:
@@ -108,19 +104,17 @@ class CurveView(AnswerView):
         named = [(predictor_label(each), each.name) for each in subject.predictors]
         self._predictor = ChoiceControl("Along", named, asked.predictor)
         self._by = ChoiceControl("A line for each value of", self._by_options(asked), asked.by)
-        self._others = ChoiceControl("The other predictors are", _OTHERS, "typical")
         self._scale = ChoiceControl("Shown as", self._scale_options(asked), asked.scale)
         self._bind("predictor", self._predictor, lambda q: q.predictor, self._with_predictor)
         self._bind("by", self._by, lambda q: q.by, self._with_by)
-        self._bind("others", self._others, _kind_of_others, _with_others)
+        self._others = OthersPart(subject, self._bind)
         self._bind("scale", self._scale, lambda q: q.scale, lambda q, v: replace(q, scale=v))
-        self._by_place, self._held_place = block(name="place"), block(name="place")
+        self._by_place = block(name="place")
         return [
             self._predictor.widget,
             self._by.widget,
             self._by_place,
-            self._others.widget,
-            self._held_place,
+            *self._others.widgets,
             self._scale.widget,
             self._level_control().widget,
         ]
@@ -135,7 +129,7 @@ class CurveView(AnswerView):
 
     def _with_predictor(self, question: CurveQuestion, name: str) -> CurveQuestion:
         """Along another predictor: what would stand in its way goes."""
-        changed = replace(question, predictor=name, at=(), others=_without(question, name))
+        changed = replace(question, predictor=name, at=(), others=without(question, name))
         if question.by == name:
             changed = replace(changed, by=None, by_values=())
         if question.scale == "slope" and not self.subject.predictor(name).is_number:
@@ -143,19 +137,14 @@ class CurveView(AnswerView):
         return changed
 
     def _with_by(self, question: CurveQuestion, name: str | None) -> CurveQuestion:
-        return replace(question, by=name, by_values=(), others=_without(question, name))
+        return replace(question, by=name, by_values=(), others=without(question, name))
 
     def _arrange(self, question: CurveQuestion) -> None:
         self._by.offer(self._by_options(question), question.by)
         self._scale.offer(self._scale_options(question), question.scale)
         lines = [] if question.by is None else [self._by_values_control(question.by).widget]
-        _fill(self._by_place, lines)
-        held = []
-        if _kind_of_others(question) == "held":
-            moving = (question.predictor, question.by)
-            names = [each.name for each in self.subject.predictors if each.name not in moving]
-            held = [self._held_control(name).widget for name in names]
-        _fill(self._held_place, held)
+        fill(self._by_place, lines)
+        self._others.arrange(question, (question.predictor, question.by))
 
     def _by_values_control(self, name: str) -> Control:
         if name not in self._by_values:
@@ -169,52 +158,13 @@ class CurveView(AnswerView):
             )
         return self._by_values[name]
 
-    def _held_control(self, name: str) -> Control:
-        if name not in self._held:
-            facts = self.subject.predictor(name)
-            self._held[name] = self._bind(
-                f"held-{slug(name)}",
-                predictor_control(facts),
-                lambda question: _stated(question).get(name, facts.typical),
-                lambda question, value: _holding(question, facts, value),
-            )
-        return self._held[name]
-
     def _stem(self) -> str:
         question = self._question
         by = f"-by-{slug(question.by)}" if question.by is not None else ""
         return f"curve-{slug(question.predictor)}{by}"
 
-    def _table_of(self, answer: CurveAnswer) -> Markup:
+    def _exact_table_of(self, answer: CurveAnswer) -> Markup:
         return curve_table(answer)
-
-
-def _fill(place: widgets.Box, children: Sequence[widgets.Widget]) -> None:
-    if tuple(place.children) != tuple(children):
-        place.children = tuple(children)
-
-
-def _kind_of_others(question: CurveQuestion) -> str:
-    return question.others if isinstance(question.others, str) else "held"
-
-
-def _with_others(question: CurveQuestion, kind: Any) -> CurveQuestion:
-    return replace(question, others=() if kind == "held" else kind)
-
-
-def _stated(question: CurveQuestion) -> dict[str, Scalar]:
-    return {} if isinstance(question.others, str) else dict(question.others)
-
-
-def _without(question: CurveQuestion, name: str | None) -> Any:
-    if isinstance(question.others, str):
-        return question.others
-    return tuple(pair for pair in question.others if pair[0] != name)
-
-
-def _holding(question: CurveQuestion, facts: PredictorFacts, value: Scalar) -> CurveQuestion:
-    stated = _stated(question) | {facts.name: value}
-    return replace(question, others=tuple(stated.items()))
 
 
 _ROWS = 11

@@ -25,6 +25,8 @@ class Extras:
     ----------
     answer : callable
         Gives the answer that is shown.
+    exactly : callable
+        Does something with the answer as it is given away, now or when it is computed.
     stem : callable
         Gives the beginning of a file's name.
     guarded : callable
@@ -34,10 +36,12 @@ class Extras:
     def __init__(
         self,
         answer: Callable[[], Answer],
+        exactly: Callable[[Callable[[Answer], None]], None],
         stem: Callable[[], str],
         guarded: Callable[[], AbstractContextManager[None]],
     ) -> None:
-        self._answer, self._stem, self._guarded = answer, stem, guarded
+        self._answer, self._exactly = answer, exactly
+        self._stem, self._guarded = stem, guarded
         self.code_button = widgets.Button(description=_SHOW)
         self.code = html("code")
         self.save_button = widgets.Button(description="Save the picture")
@@ -74,7 +78,10 @@ class Extras:
 
     def _on_save(self, _: widgets.Button) -> None:
         with self._guarded():
-            saved = save_beside(self._answer(), self._stem(), self.kind.value)
-            self.saved.value = markup.download(
-                saved.path.name, str(saved.path.parent), saved.content, saved.media_type
-            )
+            self._exactly(self._save)
+
+    def _save(self, answer: Answer) -> None:
+        saved = save_beside(answer, self._stem(), self.kind.value)
+        self.saved.value = markup.download(
+            saved.path.name, str(saved.path.parent), saved.content, saved.media_type
+        )

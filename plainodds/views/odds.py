@@ -8,7 +8,7 @@ from typing import Any
 
 import ipywidgets as widgets
 
-from plainodds.answers.odds import OddsAnswer, OddsQuestion, OddsRow
+from plainodds.answers.odds import OddsAnswer, OddsQuestion, OddsRow, answer_odds
 from plainodds.model.predictors import PredictorFacts
 from plainodds.phrases import words
 from plainodds.phrases.labels import (
@@ -22,10 +22,12 @@ from plainodds.phrases.labels import (
 from plainodds.phrases.numbers import NOT_KNOWN, confidence, p_value, ratio, ratio_interval
 from plainodds.values import Pairs
 from plainodds.views import markup
-from plainodds.views.base import AnswerView
 from plainodds.views.controls import BoxControl, ChoiceControl, Control, slug
+from plainodds.views.likelihood import interval_controls
+from plainodds.views.long_work import Work
 from plainodds.views.markup import Column, Markup, Row
 from plainodds.views.parts import block, html
+from plainodds.views.patient import PatientView
 from plainodds.views.several import TicksControl, values_control
 
 __all__ = ["OddsView"]
@@ -34,7 +36,7 @@ _ORDERS = (("as in the model", "model"), ("largest first", "size"))
 _SAID_AT_ONCE = 8
 
 
-class OddsView(AnswerView):
+class OddsView(PatientView):
     """By what are the odds multiplied when a predictor changes?
 
     Choose which predictors are shown, in which order and with which intervals; and for
@@ -103,7 +105,17 @@ class OddsView(AnswerView):
             shown.widget,
             order.widget,
             self._level_control().widget,
+            *interval_controls(self.fit.model, self._bind),
         ]
+
+    def _work_before(self, question: OddsQuestion) -> Work | None:
+        if question.interval != "likelihood" or self._has(question):
+            return None
+        return self._answering(
+            question,
+            "Refitting for likelihood intervals",
+            lambda progress: answer_odds(self.fit.model, question, progress),
+        )
 
     def _names(self, question: OddsQuestion) -> tuple[str, ...]:
         return question.predictors or tuple(each.name for each in self.subject.predictors)

@@ -2,11 +2,13 @@
 
 from __future__ import annotations
 
+from collections.abc import Sequence
+
 import ipywidgets as widgets
 
 from plainodds.views import markup
 
-__all__ = ["block", "html", "titled"]
+__all__ = ["block", "fill", "html", "titled"]
 
 
 def html(name: str) -> widgets.HTML:
@@ -21,6 +23,12 @@ def block(*children: widgets.Widget, name: str = "block") -> widgets.VBox:
     box = widgets.VBox(children)
     box.add_class(f"plainodds-{name}")
     return box
+
+
+def fill(place: widgets.Box, children: Sequence[widgets.Widget]) -> None:
+    """Put widgets into a place; the same ones change nothing."""
+    if tuple(place.children) != tuple(children):
+        place.children = tuple(children)
 
 
 def titled(title: str, *children: widgets.Widget, name: str = "block") -> widgets.VBox:

@@ -73,6 +73,28 @@ STYLE = """
 body[data-jp-theme-light="false"] .plainodds-picture img,
 body.vscode-dark .plainodds-picture img { filter: invert(1) hue-rotate(180deg); }
 
+/* work that is over at once is not told of; while it goes on the last picture steps back */
+@keyframes plainodds-appear { from { visibility: hidden; opacity: 0; } }
+@keyframes plainodds-step-back { to { opacity: 0.4; } }
+.plainodds-view .plainodds-stage { position: relative; }
+.plainodds-view .plainodds-work:empty { display: none; }
+.plainodds-view .plainodds-work {
+  position: absolute; top: 0; right: 0; z-index: 1; max-width: 100%; box-sizing: border-box;
+  display: flex; flex-flow: row wrap; align-items: center; gap: 6px 12px; padding: 7px 12px;
+  background: var(--plainodds-paper); border: 1px solid var(--plainodds-rule);
+  border-left: 5px solid var(--plainodds-focus);
+  animation: plainodds-appear 1ms 300ms backwards;
+}
+.plainodds-view .plainodds-work-said { width: auto; }
+.plainodds-view .plainodds-work-said .widget-html-content {
+  display: flex; flex-flow: row wrap; align-items: center; gap: 4px 12px;
+  font-variant-numeric: tabular-nums;
+}
+.plainodds-view progress { width: 120px; accent-color: var(--plainodds-focus); }
+.plainodds-view .plainodds-stage:has(.plainodds-work-said) .plainodds-picture {
+  animation: plainodds-step-back 1ms 300ms forwards;
+}
+
 .plainodds-view .plainodds-controls .widget-inline-hbox,
 .plainodds-view .plainodds-controls .widget-checkbox {
   width: 100%; height: auto; flex-wrap: wrap; align-items: center; gap: 3px 8px;
@@ -114,6 +136,10 @@ body.vscode-dark .plainodds-picture img { filter: invert(1) hue-rotate(180deg); 
 .plainodds-view .plainodds-ticks { display: flex; flex-flow: row wrap; gap: 5px 14px; }
 .plainodds-view .plainodds-ticks .widget-checkbox { width: auto; }
 .plainodds-view .plainodds-ticks .widget-checkbox .widget-label-basic { font-weight: 400; }
+.plainodds-view .plainodds-span { display: flex; flex-direction: column; gap: 5px; }
+.plainodds-view :is(.plainodds-place, .plainodds-extras) > .jupyter-button {
+  align-self: flex-start;
+}
 .plainodds-view .plainodds-title { font-weight: 600; line-height: 1.3; }
 .plainodds-view .plainodds-set {
   display: flex; flex-direction: column; gap: 12px;
@@ -189,6 +215,7 @@ body.vscode-dark .plainodds-picture img { filter: invert(1) hue-rotate(180deg); 
 }
 .plainodds-view tr > :last-child { padding-right: 0; }
 @container (max-width: 480px) {
+  .plainodds-view progress { width: 56px; }
   .plainodds-view :is(th, td) { padding-right: 9px; font-size: 0.94em; }
   .plainodds-view .plainodds-within > th { padding-left: 7px; }
   .plainodds-view td > span:not(:only-child),

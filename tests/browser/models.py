@@ -2,7 +2,7 @@
 
 from typing import Any
 
-__all__ = ["PLAIN", "TESSEL_BAY", "fitted"]
+__all__ = ["MANY", "PLAIN", "TESSEL_BAY", "fitted", "named"]
 
 TESSEL_BAY = """
 import numpy as np
@@ -36,9 +36,17 @@ mains = po.demo.tessel_bay(rows=3000)
 result = smf.logit("burst ~ age_years + material + soil + past_repairs", mains).fit(disp=False)
 """
 
+MANY = PLAIN.replace("rows=3000", "rows=150_000")
+
+
+def named(cell: str, *wanted: str) -> tuple[Any, ...]:
+    """What a cell calls by these names."""
+    names: dict[str, Any] = {}
+    exec(cell, names)
+    return tuple(names[each] for each in wanted)
+
 
 def fitted(cell: str) -> Any:
     """What a cell calls `result`."""
-    names: dict[str, Any] = {}
-    exec(cell, names)
-    return names["result"]
+    (result,) = named(cell, "result")
+    return result

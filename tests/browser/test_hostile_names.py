@@ -31,7 +31,13 @@ fit = po.FittedLogit(
 )
 """
 
-VIEWS = {"odds": "po.OddsView(fit)", "curve": "po.CurveView(fit)", "profile": "po.ProfileView(fit)"}
+VIEWS = {
+    "odds": "po.OddsView(fit)",
+    "curve": "po.CurveView(fit)",
+    "profile": "po.ProfileView(fit)",
+    "effects": "po.EffectsView(fit)",
+    "change": "po.ChangeView(fit, fit.change('group', BAD, 'a').question)",
+}
 
 
 @pytest.fixture(scope="module")

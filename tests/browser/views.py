@@ -6,13 +6,13 @@ from playwright.sync_api import Locator, Page
 
 __all__ = ["ViewOnPage"]
 
+Kind = Literal["odds", "curve", "profile", "effects", "change"]
+
 
 class ViewOnPage:
-    """One OddsView, CurveView or ProfileView in an open notebook."""
+    """One view in an open notebook."""
 
-    def __init__(
-        self, page: Page, kind: Literal["odds", "curve", "profile"], occurrence: int = 0
-    ) -> None:
+    def __init__(self, page: Page, kind: Kind, occurrence: int = 0) -> None:
         self.page = page
         self.root = page.locator(f".plainodds-view.plainodds-{kind}").nth(occurrence)
 

@@ -97,16 +97,16 @@ def test_another_by_starts_with_all_its_values(fit, page):
 
 def test_others_can_be_held_at_values_of_ones_own(fit, page):
     view = po.CurveView(fit)
-    assert view._held_place.children == ()
+    assert view._others.place.children == ()
     choose(page, control_of(view, "others"), "held")
     assert view.question.others == ()
-    assert len(view._held_place.children) == 3
-    page.change(view._held["past_repairs"].slider, value=2.0)
+    assert len(view._others.place.children) == 3
+    page.change(view._others.held["past_repairs"].slider, value=2.0)
     assert view.question.others == (("past_repairs", 2),)
     assert dict(view.answer.held)["past_repairs"] == 2
     choose(page, control_of(view, "others"), "typical")
     assert view.question.others == "typical"
-    assert view._held_place.children == ()
+    assert view._others.place.children == ()
 
 
 def test_what_the_curve_moves_is_not_held(fit, page):
@@ -114,7 +114,11 @@ def test_what_the_curve_moves_is_not_held(fit, page):
     choose(page, control_of(view, "predictor"), "pressure_m")
     assert view.question.others == ()
     assert view.problem is None
-    names = [name for name, held in view._held.items() if held.widget in view._held_place.children]
+    names = [
+        name
+        for name, held in view._others.held.items()
+        if held.widget in view._others.place.children
+    ]
     assert "pressure_m" not in names
 
 
@@ -144,7 +148,7 @@ def test_controls_show_the_question_that_is_set(fit, page, question):
     for control in controls[3:]:
         assert view._bindings[id(control)].write(question, control.value) == question
     for name, value in () if isinstance(question.others, str) else question.others:
-        assert view._held[name].value == value
+        assert view._others.held[name].value == value
 
 
 def test_the_table_has_a_column_for_each_line_and_says_how_many_points_it_leaves_out(fit):

@@ -14,6 +14,7 @@ from plainodds.views.style import KEYS
 
 HOSTILE = "<img src=x onerror=alert(1)>"
 OWN = {"div", "p", "ul", "li", "h4", "strong", "span", "b", "style", "pre", "code", "a", "img"}
+VIEWS = [po.OddsView, po.CurveView, po.ProfileView, po.EffectsView, po.ChangeView]
 TABLE = {"table", "caption", "thead", "tbody", "tr", "th", "td"}
 
 
@@ -75,11 +76,16 @@ def opened(fit, kind):
         view.question = fit.curve("x", by=HOSTILE, others={}).question
     if kind is po.ProfileView:
         view.question = fit.profile({"x": 40.0, HOSTILE: HOSTILE}, against={"x": 1.0}).question
+    if kind is po.EffectsView:
+        view.question = fit.effects(by=HOSTILE, where={HOSTILE: HOSTILE}).question
+    if kind is po.ChangeView:
+        view.question = fit.change({HOSTILE: (HOSTILE, "other"), "x": (0.0, 1.0)}).question
+        view.question = fit.change(HOSTILE, HOSTILE, "other", others={}).question
     view._extras.code_button.click()
     return view
 
 
-@pytest.mark.parametrize("kind", [po.OddsView, po.CurveView, po.ProfileView])
+@pytest.mark.parametrize("kind", VIEWS)
 def test_nothing_in_a_view_executes(fit, kind, page):
     view = opened(fit, kind)
     places = [each for each in widgets_of(view) if isinstance(each, widgets.HTML)]
@@ -89,7 +95,7 @@ def test_nothing_in_a_view_executes(fit, kind, page):
     assert HOSTILE in read
 
 
-@pytest.mark.parametrize("kind", [po.OddsView, po.CurveView, po.ProfileView])
+@pytest.mark.parametrize("kind", VIEWS)
 def test_names_of_controls_are_text(fit, kind, page):
     described = [each for each in widgets_of(opened(fit, kind)) if getattr(each, "description", "")]
     assert any(HOSTILE in each.description for each in described)
@@ -98,7 +104,7 @@ def test_names_of_controls_are_text(fit, kind, page):
         assert not any("<" in name or " " in name for name in each._dom_classes)
 
 
-@pytest.mark.parametrize("kind", [po.OddsView, po.CurveView, po.ProfileView])
+@pytest.mark.parametrize("kind", VIEWS)
 def test_a_saved_view_executes_nothing(fit, kind, page):
     is_harmless(opened(fit, kind)._repr_mimebundle_()["text/html"])
 
@@ -110,7 +116,7 @@ def test_an_error_about_it_executes_nothing(fit, page):
     is_harmless(view._messages.value)
 
 
-@pytest.mark.parametrize("ask", ["odds", "profile"])
+@pytest.mark.parametrize("ask", ["odds", "profile", "effects"])
 def test_an_answer_in_a_cell_executes_nothing(fit, ask):
     data, _ = bundle(getattr(fit, ask)())
     is_harmless(data["text/html"])
