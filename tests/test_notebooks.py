@@ -43,9 +43,23 @@ def test_it_runs_without_errors_or_warnings(executed):
     assert noise == []
 
 
-@pytest.mark.parametrize("view", ["OddsView", "CurveView", "ProfileView"])
-def test_it_opens_each_view_and_leaves_its_picture_and_words_behind(executed, view):
-    live, waiting = outputs(executed, f"po.{view}(fit)")
+def views_opened(notebook):
+    return [each.source for each in notebook.cells if each.source.endswith("View(fit)")]
+
+
+def test_it_opens_the_views_that_matter_most(executed):
+    assert {"po.OddsView(fit)", "po.CurveView(fit)", "po.ProfileView(fit)"} <= set(
+        views_opened(executed)
+    )
+
+
+def test_each_view_leaves_its_picture_and_words_behind(executed):
+    for source in views_opened(executed):
+        live, waiting = outputs(executed, source)
+        assert_left_behind(live, waiting)
+
+
+def assert_left_behind(live, waiting):
     assert "application/vnd.jupyter.widget-view+json" in live.data
     assert live.data["image/png"]
     assert "alt=" in live.data["text/html"]

@@ -70,7 +70,7 @@ def _moves(view: AnswerView) -> Callable[[], None]:
         box, values = view._panel("past_repairs")[0], cycle((1.0, 2.0, 3.0, 4.0))
         return lambda: _send(box, value=next(values))
     view.question = view.fit.curve("age_years", by="material", others={}).question
-    slider, values = view._held["pressure_m"].slider, cycle(map(float, range(40, 70)))
+    slider, values = view._others.held["pressure_m"].slider, cycle(map(float, range(40, 70)))
     return lambda: _send(slider, value=next(values))
 
 
