@@ -14,6 +14,7 @@ from plainodds.answers.curve import Others
 from plainodds.answers.delta import checked_level, mapped, wald
 from plainodds.answers.drawn import Rows, Sampling, spread_of
 from plainodds.answers.estimate import Estimate
+from plainodds.answers.held import held_probabilities, stated_values
 from plainodds.answers.moves import Move, Shift, checked_moves, shifted, shifting_mover
 from plainodds.answers.population import Averages, Population, everyone
 from plainodds.answers.questions import Answer, Question
@@ -127,7 +128,6 @@ def answer_change(
         counted = population.counted
         drawn = spread_of(question.sample, model, population)(_rows(model, moves), 2)
     else:
-        _refuse_rows(question)
         held, averages = _at_profile(model, question, moves)
         counted = 0
     start, end = _chances(model, averages, level, drawn)
@@ -186,24 +186,10 @@ def _rows(model: FittedModel, moves: Moves) -> Rows:
     return rebuilding.row_probabilities(model, movers)
 
 
-def _refuse_rows(question: ChangeQuestion) -> None:
-    if question.where is not None:
-        raise QuestionRefused("where= chooses rows to average over; it needs others='observed'.")
-    if question.sample != "fixed":
-        raise QuestionRefused(
-            "sample='drawn' is about rows averaged over; at a profile there are none. Ask "
-            "others='observed', or leave sample out."
-        )
-
-
 def _at_profile(
     model: FittedModel, question: ChangeQuestion, moves: Moves
 ) -> tuple[Pairs, Averages]:
-    if isinstance(question.others, str) and question.others != "typical":
-        raise QuestionRefused(
-            f"others={question.others!r}: choose 'observed', 'typical' or a mapping of values."
-        )
-    stated = {} if isinstance(question.others, str) else dict(question.others)
+    stated = stated_values(question.others, question.where, question.sample)
     moved = {name for name, _ in moves}
     for name in moved & set(stated):
         raise QuestionRefused(f"others= holds {name!r}, which the change itself moves.")
@@ -217,11 +203,9 @@ def _at_profile(
             elif place == "end":
                 facts = model.subject.predictor(name)
                 values[name] = float(shifted(facts, move, np.array([float(base[name])]))[0])
-        ends.append(model.completed(values))
-    rows = model.rows(ends)
-    pi = probability_from_linear_predictor(rows @ model.coefficients + model.offset)
+        ends.append(values)
     held = tuple((name, v) for name, v in base.items() if name not in moved)
-    return held, Averages(pi, probability_slope(pi)[:, None] * rows)
+    return held, held_probabilities(model, ends)
 
 
 def _chances(

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Iterator
-from typing import Any, ClassVar
+from typing import ClassVar
 
 import numpy as np
 from numpy.typing import NDArray
@@ -13,6 +13,7 @@ from plainodds.answers.delta import Intervals, checked_level, p_values, wald
 from plainodds.answers.drawn import Sampling, spread_of
 from plainodds.answers.effect_parts import Effect, Number
 from plainodds.answers.estimate import Estimate
+from plainodds.answers.held import stated_values
 from plainodds.answers.held_effects import held_effects
 from plainodds.answers.observed_effects import observed_effects
 from plainodds.answers.population import Population, everyone
@@ -204,18 +205,7 @@ def _levels_of(model: FittedModel, name: str) -> PredictorFacts:
 def _at_profiles(
     model: FittedModel, chosen: list[PredictorFacts], question: EffectsQuestion
 ) -> tuple[Pairs, list[tuple[Scalar | None, list[Effect]]]]:
-    if isinstance(question.others, str) and question.others != "typical":
-        raise QuestionRefused(
-            f"others={question.others!r}: choose 'observed', 'typical' or a mapping of values."
-        )
-    if question.where is not None:
-        raise QuestionRefused("where= chooses rows to average over; it needs others='observed'.")
-    if question.sample == "drawn":
-        raise QuestionRefused(
-            "sample='drawn' is about rows averaged over; at a profile there are none. Ask "
-            "others='observed', or leave sample out."
-        )
-    stated: dict[str, Any] = {} if isinstance(question.others, str) else dict(question.others)
+    stated = stated_values(question.others, question.where, question.sample)
     if question.by is None:
         profile = model.completed(stated)
         return profile, [(None, list(held_effects(model, chosen, question.number, profile)))]

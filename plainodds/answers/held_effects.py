@@ -3,7 +3,6 @@
 from __future__ import annotations
 
 from collections.abc import Iterator
-from typing import Any
 
 import numpy as np
 
@@ -13,7 +12,7 @@ from plainodds.answers.effect_parts import (
     level_contrasts,
     refuse_steps_out_of_range,
 )
-from plainodds.answers.population import Averages
+from plainodds.answers.held import held_probabilities
 from plainodds.model.fitted import FittedModel
 from plainodds.model.predictors import PredictorFacts
 from plainodds.scales import (
@@ -37,7 +36,7 @@ def held_effects(
         elif facts.is_number:
             reached = float(base[facts.name]) + facts.step
             refuse_steps_out_of_range(facts, reached)
-            averages = _probabilities(model, [profile, {**base, facts.name: reached}])
+            averages = held_probabilities(model, [profile, {**base, facts.name: reached}])
             yield Effect(
                 facts.name,
                 None,
@@ -49,7 +48,7 @@ def held_effects(
             )
         else:
             profiles = [{**base, facts.name: level} for level in facts.levels]
-            averages = _probabilities(model, profiles)
+            averages = held_probabilities(model, profiles)
             yield from level_contrasts(
                 facts, averages, model.coded_reference(facts), np.zeros((len(profiles),) * 2)
             )
@@ -62,9 +61,3 @@ def _held_slope(model: FittedModel, name: str, profile: Pairs) -> Effect:
     steepness = row_slope @ model.coefficients
     gradient = probability_slope(pi) * row_slope + probability_curvature(pi) * steepness * row
     return Effect(name, None, None, None, float(probability_slope(pi) * steepness), gradient, 0.0)
-
-
-def _probabilities(model: FittedModel, profiles: list[Any]) -> Averages:
-    rows = model.rows([model.completed(profile) for profile in profiles])
-    pi = probability_from_linear_predictor(rows @ model.coefficients + model.offset)
-    return Averages(pi, probability_slope(pi)[:, None] * rows)
