@@ -275,11 +275,17 @@ class AnswerView(widgets.VBox):
     def _guarded(self) -> Iterator[None]:
         """Hold the lock, and show an error here, since it would show nowhere else."""
         with LOCK:
+            before = self.problem
             try:
                 yield
             except Exception as error:
                 self.problem = error
                 self._messages.value = markup.notice(_told(error), is_problem=True)
+            else:
+                # what has succeeded since makes an old message out of date
+                if before is not None and self.problem is before:
+                    self.problem = None
+                    self._messages.value = ""
 
     # showing
 

@@ -269,6 +269,13 @@ def test_ranges_of_differences_say_their_sides():
     assert numbers.points_on_sides(-0.021, 0.0) == "0 to 2.1 lower"
 
 
+def test_a_tiny_end_of_a_range_is_told_beside_the_other_end():
+    tail = " percentage points"
+    assert numbers.points_span(-0.00017, -0.000004) == "−0.017 to −0.0004" + tail
+    assert numbers.points_span(-0.00017, -4e-10) == "−0.017 to just below 0" + tail
+    assert numbers.points_span(4e-10, 0.00017) == "just above 0 to 0.017" + tail
+
+
 @given(st.floats(-1e12, 1e12))
 def test_a_quantity_keeps_its_whole_part_and_four_figures(x):
     value, half = figures(numbers.quantity(x))[0] if abs(x) >= 1e-5 else (x, 0.0)

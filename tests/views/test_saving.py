@@ -68,3 +68,18 @@ def test_a_folder_that_cannot_be_written_to_is_said(fit, page, tmp_path, monkeyp
     page.press(view._extras.save_button)
     assert "FileNotFoundError" in text_of(view._messages.value)
     assert view._extras.saved.value == ""
+
+
+def test_the_message_goes_once_saving_works(fit, page, tmp_path, monkeypatch):
+    view = po.ProfileView(fit)
+    gone = tmp_path / "gone"
+    gone.mkdir()
+    monkeypatch.chdir(gone)
+    gone.rmdir()
+    page.press(view._extras.save_button)
+    assert view.problem is not None
+    monkeypatch.chdir(tmp_path)
+    page.press(view._extras.save_button)
+    assert view._messages.value == ""
+    assert view.problem is None
+    assert "Saved as" in view._extras.saved.value

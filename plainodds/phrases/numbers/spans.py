@@ -18,6 +18,8 @@ Say: TypeAlias = Callable[..., str]
 
 _MOST_DECIMALS = 4
 _LEAST_POINTS = 0.001
+# an end of a range is told beside the other one, so that a smaller figure still says something
+_LEAST_END = 0.00001
 
 
 def span(lower: float, upper: float, say: Say = chance) -> str:
@@ -148,7 +150,9 @@ def _points(difference: float, decimals: int | None = None, sign: bool = False) 
     if difference == 0:
         return "0"
     points = 100 * difference
-    if 0 < abs(points) < _LEAST_POINTS:
+    if decimals is not None and abs(points) < _LEAST_END:
+        return "just above 0" if points > 0 else "just below 0"
+    if decimals is None and abs(points) < _LEAST_POINTS:
         within = f"{_LEAST_POINTS:g}"
         return f"under {within}" if points > 0 else f"between {MINUS}{within} and 0"
     places = _points_decimals(difference) if decimals is None else decimals
