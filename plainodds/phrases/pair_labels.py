@@ -1,0 +1,200 @@
+"""What two predictors together are called: titles, axes, stretches and combinations.
+
+Used by sentences, drawings and views alike, so that all say the same.
+"""
+
+from __future__ import annotations
+
+import math
+from typing import Literal
+
+from plainodds.answers.joint import JointCell
+from plainodds.answers.moves import Move
+from plainodds.answers.pair import PairAnswer
+from plainodds.answers.stretches import Stretch
+from plainodds.model.predictors import PredictorFacts, Subject
+from plainodds.phrases.labels import (
+    from_to,
+    predictor_name,
+    sentence_case,
+    step_label,
+    value_label,
+)
+from plainodds.phrases.moves import moves_label, moves_words
+from plainodds.phrases.numbers import chance
+from plainodds.phrases.units import per_unit, tidy
+from plainodds.values import Scalar
+
+__all__ = [
+    "at_value",
+    "change_words",
+    "combination_label",
+    "effect_axis_title",
+    "followed_label",
+    "has_others",
+    "interaction_label",
+    "is_averaged",
+    "odds_step",
+    "pair_noun",
+    "pair_title",
+    "per_additional",
+    "share_label",
+    "stretch_label",
+    "stretch_span",
+]
+
+Sign = Literal["above", "below", "open"]
+
+
+def has_others(answer: PairAnswer) -> bool:
+    """Whether the model has predictors besides the two."""
+    both = {answer.question.a, answer.question.b}
+    return any(facts.name not in both for facts in answer.subject.predictors)
+
+
+def is_averaged(answer: PairAnswer) -> bool:
+    """Whether the answer's chances are averages over rows that differ in something."""
+    if answer.question.others != "observed":
+        return False
+    return has_others(answer) or bool(answer.sloped) or answer.subject.offset is not None
+
+
+def pair_noun(answer: PairAnswer) -> str:
+    """What is averaged or not: "average chance" or "chance"."""
+    return "average chance" if is_averaged(answer) else "chance"
+
+
+def pair_title(answer: PairAnswer) -> str:
+    """The title of everything about two predictors.
+
+    Returns
+    -------
+    str
+        As in "Chance of burst this winter: pipe age and material together".
+    """
+    subject, question = answer.subject, answer.question
+    of = "odds" if question.scale == "odds" else pair_noun(answer)
+    a, b = (predictor_name(subject.predictor(name)) for name in (question.a, question.b))
+    return f"{sentence_case(of)} of {tidy(subject.outcome.event)}: {a} and {b} together"
+
+
+def at_value(subject: Subject, name: str, value: Scalar) -> str:
+    """A predictor at a value, to follow "with": "soil high", "pipe age 20 years"."""
+    facts = subject.predictor(name)
+    return f"{predictor_name(facts)} {value_label(facts, value)}"
+
+
+def per_additional(facts: PredictorFacts) -> str:
+    """What a slope is stated for: "per additional year of pipe age"."""
+    return f"per additional {per_unit(facts.unit)} of {predictor_name(facts)}"
+
+
+def change_words(answer: PairAnswer) -> str:
+    """The change of `a`, to follow "with": "material PVC rather than cast iron"."""
+    return moves_words(answer.subject, ((answer.question.a, Move(*answer.a_change)),))
+
+
+def followed_label(answer: PairAnswer) -> str:
+    """What of `a` is followed along `b`, as a heading.
+
+    Returns
+    -------
+    str
+        "Material PVC against cast iron", "Pipe age from 20 to 60 years"; for slopes "Per
+        additional year of pipe age", and on the odds scale "Per 10 years more of pipe age".
+    """
+    facts = answer.subject.predictor(answer.question.a)
+    if facts.name not in answer.sloped:
+        return moves_label(answer.subject, ((facts.name, Move(*answer.a_change)),))
+    if answer.question.scale == "probability":
+        return sentence_case(per_additional(facts))
+    return sentence_case(odds_step(answer))
+
+
+def odds_step(answer: PairAnswer) -> str:
+    """The change of a sloped `a` that its odds ratio belongs to, within a sentence."""
+    facts = answer.subject.predictor(answer.question.a)
+    start, end = answer.a_change
+    if not facts.linear:
+        return f"{predictor_name(facts)} {from_to(facts, start, end)}"
+    return f"{step_label(facts, float(end) - float(start))} of {predictor_name(facts)}"
+
+
+def effect_axis_title(answer: PairAnswer) -> str:
+    """The title of the axis along which the effect of `a` is drawn.
+
+    Returns
+    -------
+    str
+        On the probability scale figures are percentage points, that is 100 times the
+        answer's; on the odds scale they are odds ratios.
+    """
+    event, question = tidy(answer.subject.outcome.event), answer.question
+    if question.scale == "odds":
+        return f"Odds ratio of {event}"
+    per = ""
+    if question.a in answer.sloped:
+        unit = answer.subject.predictor(question.a).unit
+        per = f" per {per_unit(unit)} more"
+    return f"Change of the {pair_noun(answer)} of {event} (percentage points{per})"
+
+
+def interaction_label(answer: PairAnswer, scale: Literal["probability", "odds"]) -> str:
+    """What the interaction is called on a scale.
+
+    Returns
+    -------
+    str
+        "Ratio of odds ratios" on the odds scale. On the probability scale "Difference of
+        differences", or for slopes "Difference of slopes", "Change of the difference per
+        additional year of pipe age" and "Change of the slope per additional metre".
+    """
+    if scale == "odds":
+        return "Ratio of odds ratios"
+    question = answer.question
+    a_sloped, b_sloped = question.a in answer.sloped, question.b in answer.sloped
+    if not b_sloped:
+        return "Difference of slopes" if a_sloped else "Difference of differences"
+    what = "slope" if a_sloped else "difference"
+    return f"Change of the {what} {per_additional(answer.subject.predictor(question.b))}"
+
+
+def stretch_span(answer: PairAnswer, stretch: Stretch) -> str:
+    """Where a stretch lies along `b`: "12 to 68 years", "soil high"."""
+    facts = answer.subject.predictor(answer.question.b)
+    if not facts.is_number:
+        return at_value(answer.subject, facts.name, stretch.start)
+    if stretch.start == stretch.end or (
+        value_label(facts, stretch.start) == value_label(facts, stretch.end)
+    ):
+        return value_label(facts, stretch.start)
+    return from_to(facts, stretch.start, stretch.end).removeprefix("from ")
+
+
+def share_label(answer: PairAnswer, share: float) -> str:
+    """How many of the rows: "71% of the pipes"; empty where nobody knows."""
+    cases = tidy(answer.subject.outcome.cases)
+    if math.isnan(share):
+        return ""
+    if share <= 0:
+        return f"no {cases}"
+    return f"all {cases}" if share >= 1 else f"{chance(share)} of the {cases}"
+
+
+def stretch_label(answer: PairAnswer, stretch: Stretch) -> str:
+    """A stretch with its verdict and share, beside a drawing.
+
+    Returns
+    -------
+    str
+        As in "12 to 68 years: higher (71% of the pipes)".
+    """
+    told = {"above": "higher", "below": "lower", "open": "left open"}[stretch.sign]
+    share = share_label(answer, stretch.share)
+    return f"{stretch_span(answer, stretch)}: {told}{f' ({share})' if share else ''}"
+
+
+def combination_label(answer: PairAnswer, cell: JointCell) -> str:
+    """One combination of both: "soil low and material PVC"."""
+    subject, question = answer.subject, answer.question
+    return f"{at_value(subject, question.a, cell.a)} and {at_value(subject, question.b, cell.b)}"
