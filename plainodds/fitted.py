@@ -12,6 +12,7 @@ from plainodds.answers.curve import CurveAnswer, CurveQuestion, Others, Scale, a
 from plainodds.answers.effects import EffectsAnswer, EffectsQuestion, answer_effects
 from plainodds.answers.moves import Shift, stated_moves
 from plainodds.answers.odds import OddsAnswer, OddsQuestion, answer_odds, answer_odds_of
+from plainodds.answers.pair import PairAnswer, PairQuestion, answer_pair
 from plainodds.answers.profile import ProfileAnswer, ProfileQuestion, answer_profile
 from plainodds.answers.questions import Answer, Question
 from plainodds.answers.where import stated_rows
@@ -28,6 +29,7 @@ _ANSWERERS: dict[type[Question], Callable[[FittedModel, Any], Answer]] = {
     CurveQuestion: answer_curve,
     EffectsQuestion: answer_effects,
     ChangeQuestion: answer_change,
+    PairQuestion: answer_pair,
     ProfileQuestion: answer_profile,
 }
 
@@ -133,7 +135,9 @@ class FittedLogit:
 
         Parameters
         ----------
-        question : OddsQuestion, CurveQuestion, EffectsQuestion, ChangeQuestion or ProfileQuestion
+        question : Question
+            As OddsQuestion, CurveQuestion, EffectsQuestion, ChangeQuestion, PairQuestion or
+            ProfileQuestion.
 
         Raises
         ------
@@ -398,6 +402,87 @@ class FittedLogit:
             level=level,
         )
         return answer_change(self.model, question, mask)
+
+    def pair(
+        self,
+        a: str,
+        b: str,
+        *,
+        a_values: Sequence[Scalar] = (),
+        b_values: Sequence[Scalar] = (),
+        number: Literal["change", "slope"] = "change",
+        others: Literal["typical", "observed"] | Mapping[str, Scalar] = "typical",
+        scale: Literal["probability", "odds"] = "probability",
+        shape: Literal["lines", "map"] = "lines",
+        test: Literal["wald", "likelihood_ratio"] = "wald",
+        level: float = 0.95,
+    ) -> PairAnswer:
+        """How do two predictors act together?
+
+        The effect of `a` as `b` varies and where it differs from nothing; the interaction
+        itself on the probability scale, at a profile and averaged over the rows, and on
+        the odds scale; a test of all terms that join the two; and for two levels of each
+        the joint table.
+
+        Parameters
+        ----------
+        a, b : str
+            Two predictors. The effect of `a` is followed as `b` varies.
+        a_values, b_values : (from, to), optional
+            The change of each that is compared. Default: a number goes from its lower to
+            its upper quartile, a category from its reference to its most frequent other
+            level.
+        number : {"change", "slope"}
+            How a number without stated values enters: by its change, or by dπ/dx per unit
+            (on the odds scale: per step).
+        others : {"typical", "observed"} or mapping
+            What the remaining predictors do, as in `curve`.
+        scale : {"probability", "odds"}
+            Of the lines, the map and the effect; the interaction is told on both.
+        shape : {"lines", "map"}
+            Lines of one predictor by values of the other, or for two numbers also a map.
+        test : {"wald", "likelihood_ratio"}
+            Of the whole group of terms that join the two.
+        level : float
+            Confidence level.
+
+        Raises
+        ------
+        QuestionRefused
+            For the same predictor twice, an unknown predictor, level, value or setting, a
+            level that no row has, a map of levels, or a test that the fit does not have.
+
+        Notes
+        -----
+        On the probability scale the interaction is a cross difference or cross partial with
+        its own delta-method interval, never a product's coefficient: it may differ from 0
+        without any product term (Ai & Norton 2003, Economics Letters 80:123). Bounds of
+        the stretches: Johnson & Neyman 1936; Bauer & Curran 2005 (Multivariate Behav Res
+        40:373). Joint table: Knol & VanderWeele 2012 (Int J Epidemiol 41:514).
+
+        Examples
+        --------
+        >>> import statsmodels.formula.api as smf
+        >>> import plainodds as po
+        >>> pipes = po.demo.tessel_bay()
+        >>> fit = po.FittedLogit(smf.logit("burst ~ age_years + material", pipes).fit(disp=0))
+        >>> found = fit.pair("age_years", "material").interaction
+        >>> found.joined, found.ratio.estimate, found.at_profile.estimate < 0
+        (False, 1.0, True)
+        """
+        question = PairQuestion(
+            a,
+            b,
+            a_values=_tuple(a_values),
+            b_values=_tuple(b_values),
+            number=number,
+            others=others if isinstance(others, str) else pairs(others),
+            scale=scale,
+            shape=shape,
+            test=test,
+            level=level,
+        )
+        return answer_pair(self.model, question)
 
     def profile(
         self,

@@ -19,6 +19,7 @@ __all__ = [
     "probability_from_linear_predictor",
     "probability_from_odds",
     "probability_slope",
+    "probability_third_derivative",
 ]
 
 Floats = NDArray[np.float64]
@@ -55,6 +56,13 @@ def linear_predictor_from_probability(probability: ArrayLike) -> Floats:
     pi = np.asarray(probability, dtype=float)
     with np.errstate(divide="ignore"):
         return np.asarray(np.log(pi) - np.log1p(-pi))
+
+
+def probability_third_derivative(probability: ArrayLike) -> Floats:
+    """d³π/dη³ = π(1 − π)(1 − 6π(1 − π))."""
+    pi = np.asarray(probability, dtype=float)
+    slope = pi * (1.0 - pi)
+    return np.asarray(slope * (1.0 - 6.0 * slope))
 
 
 def odds_from_linear_predictor(linear_predictor: ArrayLike) -> Floats:

@@ -16,12 +16,19 @@ import numpy as np
 
 from plainodds.answers import rebuilding
 from plainodds.answers.population import Averages, Population, block_of, rest_of, slices
-from plainodds.model.design.design import Coded, Floats
+from plainodds.model.design.design import Coded, Column, Floats
 from plainodds.model.design.split import Split, split
 from plainodds.model.fitted import FittedModel
 from plainodds.model.products import product, transposed_product
 
-__all__ = ["Averager", "Exact", "averaged_probability", "averaged_slope", "row_probabilities"]
+__all__ = [
+    "Averager",
+    "Exact",
+    "averaged_own_slope",
+    "averaged_probability",
+    "averaged_slope",
+    "row_probabilities",
+]
 
 # Numbers worked on at once, rows of a block times points, so that they stay in the cache.
 _CACHED = 131_072
@@ -117,6 +124,52 @@ def averaged_slope(model: FittedModel, name: str, moved: Coded, population: Popu
     _, sloping_still = _untangled(parts, gradient[:, len(own) :])
     moving = own * curving_still + own_slope * sloping_still
     return Averages(total, _assembled(parts, rest, moving))
+
+
+def averaged_own_slope(
+    model: FittedModel, name: str, moved: Coded, population: Population
+) -> Averages:
+    """The average of dπ/d(name) at each row's own value of it, with other predictors moved.
+
+    Parameters
+    ----------
+    model : FittedModel
+    name : str
+        A number that is not among the moved predictors.
+    moved : mapping of name to coded array (J,)
+    population : Population
+    """
+    parts = split(model.design, moved)
+    if parts is None:
+        return rebuilding.averaged_slope(model, name, rebuilding.setters(moved), population)
+    own = parts.own_values(moved)
+    strength = _strength(model, parts, own)
+    resting = [model.design.columns[i] for i in parts.resting]
+    staying = [Column("", atoms) for atoms in parts.still]
+    total = np.zeros(len(own))
+    gradient = np.zeros((parts.width, len(own)))
+    for block in slices(model.sample.rows, _size(len(own))):
+        weights = population.weights[block]
+        if not weights.any():
+            continue
+        held, still = _staying(model, parts, block)
+        derivatives = model.design.derivatives_of(
+            [*resting, *staying], name, block_of(model, block)
+        )
+        # what the rest of η gains, as last column beside what each product that stays gains
+        rest_slope = np.einsum(
+            "ij,j->i", derivatives[:, : len(resting)], model.coefficients[parts.resting]
+        )
+        still_slope = np.column_stack([derivatives[:, len(resting) :], rest_slope])
+        pi = _probability(still, strength)
+        sloping = (pi - pi * pi) * weights[:, None]
+        curving = sloping * product(still_slope, strength)
+        total += curving.sum(axis=0)
+        curving *= 1 - 2 * pi
+        carried = np.concatenate([held, still[:, :-1]], axis=1)
+        gradient += transposed_product(carried, curving) + transposed_product(derivatives, sloping)
+    rest, moving = _untangled(parts, gradient)
+    return Averages(total, _assembled(parts, rest, own * moving))
 
 
 def row_probabilities(model: FittedModel, moved: Coded) -> Iterator[tuple[slice, Floats]]:

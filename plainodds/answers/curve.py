@@ -10,6 +10,7 @@ from numpy.typing import NDArray
 
 from plainodds.answers.averaging import Averager, Exact
 from plainodds.answers.delta import Intervals, checked_level, mapped, wald
+from plainodds.answers.points import POINTS, grid_along
 from plainodds.answers.population import everyone
 from plainodds.answers.questions import Answer, Question
 from plainodds.answers.support import Support, is_supported, support_of
@@ -35,7 +36,6 @@ __all__ = [
     "answer_curve",
 ]
 
-_POINTS = 101
 Floats = NDArray[np.float64]
 
 Others: TypeAlias = Literal["typical", "observed"] | Pairs
@@ -204,12 +204,7 @@ def _points_along(facts: PredictorFacts, stated: tuple[Scalar, ...]) -> tuple[Sc
         return tuple(checked(facts, each) for each in stated)
     if not facts.is_number:
         return facts.levels
-    low = max(facts.offered[0], facts.allowed[0])
-    high = min(facts.offered[1], facts.allowed[1])
-    grid = np.linspace(low, high, _POINTS)
-    if facts.kind == "whole number":
-        grid = np.unique(np.clip(np.round(grid), low, high))
-    return tuple(checked(facts, float(x)) for x in grid)
+    return tuple(checked(facts, float(x)) for x in grid_along(facts, POINTS))
 
 
 def _by_values(by: PredictorFacts, stated: tuple[Scalar, ...]) -> tuple[Scalar, ...]:

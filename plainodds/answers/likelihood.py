@@ -87,6 +87,20 @@ class Likelihood:
         refit = self.refit(contrast, at, self._best.coefficients)
         return refit.deviance - self._best.deviance
 
+    def excess_without(self, contrasts: Floats) -> float:
+        """By how much the deviance exceeds its minimum when every contrast Lβ is held at 0.
+
+        Parameters
+        ----------
+        contrasts : array (q, k)
+            L, of rank q.
+        """
+        _, _, directions = np.linalg.svd(contrasts, full_matrices=True)
+        free = directions[len(contrasts) :].T
+        start = free @ (free.T @ self._best.coefficients)
+        _, deviance, _ = self._minimised(start, free)
+        return max(deviance - self._best.deviance, 0.0)
+
     @cached_property
     def _best(self) -> _Refit:
         """The unconstrained minimum, polished from where the fit ended."""
@@ -202,8 +216,16 @@ def _solved(curvature: Floats, gradient: Floats) -> Floats:
         return np.asarray(np.linalg.pinv(curvature, hermitian=True) @ gradient)
 
 
-def likelihood_of(model: FittedModel) -> Likelihood:
+def likelihood_of(
+    model: FittedModel, asked: str = "interval='likelihood'", instead: str = "interval='wald'"
+) -> Likelihood:
     """The likelihood of a fitted model's rows.
+
+    Parameters
+    ----------
+    model : FittedModel
+    asked, instead : str
+        What was asked and what can be asked in its place, as a refusal words it.
 
     Raises
     ------
@@ -211,13 +233,14 @@ def likelihood_of(model: FittedModel) -> Likelihood:
         Where the fit was not by maximum likelihood or its covariance is another one.
     """
     if model.no_likelihood:
-        raise QuestionRefused(f"interval='likelihood': {model.no_likelihood}")
+        reason = model.no_likelihood.replace("interval='wald'", instead)
+        raise QuestionRefused(f"{asked}: {reason}")
     sample = model.sample
     n = sample.rows
     if sample.outcome is None or not n:
         raise QuestionRefused(
-            "interval='likelihood' refits the model, and the result no longer carries its outcome. "
-            "Ask interval='wald', or fit again and keep the data."
+            f"{asked} refits the model, and the result no longer carries its outcome. "
+            f"Ask {instead}, or fit again and keep the data."
         )
     return Likelihood(
         sample.matrix,

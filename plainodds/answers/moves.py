@@ -16,7 +16,15 @@ from plainodds.model.fitted import FittedModel, checked
 from plainodds.model.predictors import PredictorFacts
 from plainodds.values import Scalar, plain, value
 
-__all__ = ["Move", "Shift", "checked_moves", "shifted", "shifting_mover", "stated_moves"]
+__all__ = [
+    "Move",
+    "Shift",
+    "checked_moves",
+    "refuse_empty_levels",
+    "shifted",
+    "shifting_mover",
+    "stated_moves",
+]
 
 
 @value
@@ -108,7 +116,7 @@ def checked_moves(
             settled.append((name, move))
         else:
             start, end = checked(facts, move.start), checked(facts, move.end)
-            _refuse_empty_levels(facts, (start, end))
+            refuse_empty_levels(facts, (start, end))
             if start == end and len(moves) == 1:
                 raise QuestionRefused(f"{name}: from {start!r} to {end!r} is no change.")
             settled.append((name, Move(start, end)))
@@ -117,7 +125,13 @@ def checked_moves(
     return tuple(settled)
 
 
-def _refuse_empty_levels(facts: PredictorFacts, values: tuple[Scalar, Scalar]) -> None:
+def refuse_empty_levels(facts: PredictorFacts, values: tuple[Scalar, Scalar]) -> None:
+    """Refuse levels that no row has.
+
+    Raises
+    ------
+    QuestionRefused
+    """
     for level in values:
         if not facts.is_number and level not in facts.levels_with_rows:
             raise QuestionRefused(

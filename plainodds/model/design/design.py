@@ -203,14 +203,15 @@ class Design:
             if name in self.factors[at].variables
         ]
         moving = {at for _, at, _, _ in parts}
-        slopes = {at: self._factor_derivative(at, name, coded) for at in moving}
+        slopes = {at: self.factor_derivative(at, name, coded) for at in moving}
         beside = _positions([rest for *_, rest in parts])
         values = {at: self.factor_values(at, coded) for at in beside}
         for i, at, k, rest in parts:
             result[:, i] += slopes[at][:, k] * product(rest, values)
         return result
 
-    def _factor_derivative(self, position: int, name: str, coded: Coded) -> Floats:
+    def factor_derivative(self, position: int, name: str, coded: Coded) -> Floats:
+        """d(factor)/d(predictor) for n coded rows, shape (n, width)."""
         factor, n = self.factors[position], len(coded[name])
         if factor.name == name:
             return np.ones((n, 1))

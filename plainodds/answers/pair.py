@@ -1,0 +1,233 @@
+"""Two predictors together: how the effect of one depends on the other, on both scales."""
+
+from __future__ import annotations
+
+from plainodds.answers.along import effect_along
+from plainodds.answers.averaging import Averager, Exact
+from plainodds.answers.crossing import averaged_crossing, crossing_at_profile, double_contrast
+from plainodds.answers.curve import CurveAnswer, CurveQuestion, answer_curve
+from plainodds.answers.delta import mapped, p_values, wald
+from plainodds.answers.estimate import Estimate
+from plainodds.answers.joined import JoinedTest, joining_contrasts, tested
+from plainodds.answers.joint import JointTable, joint_table_of
+from plainodds.answers.pair_settled import PairQuestion, Settled, settled
+from plainodds.answers.population import everyone
+from plainodds.answers.questions import Answer
+from plainodds.answers.stretches import EffectAlong, Stretch
+from plainodds.answers.surface import Surface, surface_of
+from plainodds.model.fitted import FittedModel
+from plainodds.model.predictors import PredictorFacts, Subject
+from plainodds.scales import odds_from_linear_predictor
+from plainodds.values import Pairs, Scalar, value
+
+__all__ = [
+    "EffectAlong",
+    "Interaction",
+    "PairAnswer",
+    "PairQuestion",
+    "Stretch",
+    "answer_pair",
+]
+
+
+@value
+class Interaction:
+    """The interaction itself, on both scales.
+
+    Attributes
+    ----------
+    at_profile : Estimate or None
+        On the probability scale at the held profile: the cross difference of the four
+        chances; for two slopes the cross partial ∂²π/∂a∂b; for a slope and a change the
+        difference of slopes. None where the sample tells no chances.
+    averaged : Estimate or None
+        The same averaged over the rows; None where there are none, or no chances.
+    at_profile_p_value, averaged_p_value : float or None
+        Wald tests of 0.
+    ratio : Estimate
+        On the odds scale: the ratio of odds ratios; exactly 1 without a shared term.
+    log_ratio : Estimate
+    joined : bool
+        Whether any term of the model joins the two predictors.
+    test : JoinedTest or None
+        Of the whole group of such terms; None where there is none, or no covariance.
+    """
+
+    at_profile: Estimate | None
+    averaged: Estimate | None
+    at_profile_p_value: float | None
+    averaged_p_value: float | None
+    ratio: Estimate
+    log_ratio: Estimate
+    joined: bool
+    test: JoinedTest | None
+
+
+@value
+class PairAnswer(Answer):
+    """Two predictors together.
+
+    Attributes
+    ----------
+    question : PairQuestion
+    subject : Subject
+    a_change, b_change : (from, to)
+        The settled changes. A sloped number's is one step from its typical value: that
+        of its odds ratio.
+    sloped : tuple of str
+        Which of the two are taken as slopes on the probability scale.
+    held : pairs of (predictor, value)
+        The profile of the remaining predictors at which `interaction.at_profile` holds,
+        and everything else unless `others` is "observed".
+    counted : int
+        Rows that `interaction.averaged` averages over; 0 where there are none.
+    lines : CurveAnswer or None
+        Lines of one predictor by values of the other: along a number where there is one.
+        None where the sample tells no chances.
+    surface : Surface or None
+        Where the question asks for a map.
+    effect : EffectAlong
+        Of `a` along `b`, on the question's scale.
+    interaction : Interaction
+    joint : JointTable or None
+        Where both changes are between two levels or two stated values.
+    """
+
+    question: PairQuestion
+    subject: Subject
+    a_change: tuple[Scalar, Scalar]
+    b_change: tuple[Scalar, Scalar]
+    sloped: tuple[str, ...]
+    held: Pairs
+    counted: int
+    lines: CurveAnswer | None
+    surface: Surface | None
+    effect: EffectAlong
+    interaction: Interaction
+    joint: JointTable | None
+
+
+def answer_pair(
+    model: FittedModel, question: PairQuestion, averager: Averager | None = None
+) -> PairAnswer:
+    """Two predictors together, on the probability scale and on the odds scale.
+
+    Sources: Ai & Norton 2003 (Economics Letters 80:123) for the interaction on the
+    probability scale; Johnson & Neyman 1936 and Bauer & Curran 2005 for where an effect
+    differs from nothing; Knol & VanderWeele 2012 (Int J Epidemiol 41:514) for the joint
+    table.
+
+    Parameters
+    ----------
+    model : FittedModel
+    question : PairQuestion
+    averager : Averager, optional
+        What averages over the rows; exactly over every row when left out.
+
+    Raises
+    ------
+    QuestionRefused
+        For the same predictor twice, an unknown predictor, level, value or setting, a map
+        of levels, chances that a case-control sample does not tell, or a test that the fit
+        does not have.
+    """
+    pair = settled(model, question)
+    if averager is None and model.sample.rows and _tells_chances(model):
+        averager = Exact(model, everyone(model))
+    if question.others == "observed" and averager is None:
+        # says why nobody can be averaged over
+        everyone(model)
+    moving = averager if question.others == "observed" else None
+    return PairAnswer(
+        question=question,
+        subject=model.subject,
+        a_change=pair.a_change,
+        b_change=pair.b_change,
+        sloped=pair.sloped,
+        held=pair.held,
+        counted=0 if averager is None else averager.population.counted,
+        lines=_lines(model, question, pair, moving) if _tells_chances(model) else None,
+        surface=(
+            surface_of(model, pair, question.scale, moving) if question.shape == "map" else None
+        ),
+        effect=effect_along(model, pair, question.scale, moving),
+        interaction=_interaction(model, question, pair, averager),
+        joint=_joint(model, question, pair, moving),
+    )
+
+
+def _tells_chances(model: FittedModel) -> bool:
+    subject = model.subject
+    return subject.sampling != "case-control" or subject.prevalence is not None
+
+
+def _lines(
+    model: FittedModel, question: PairQuestion, pair: Settled, averager: Averager | None
+) -> CurveAnswer:
+    """Lines along a number where there is one, by the other predictor."""
+    along, by, by_values = pair.a, pair.b, question.b_values
+    if not along.is_number and by.is_number:
+        along, by, by_values = pair.b, pair.a, question.a_values
+    asked = CurveQuestion(
+        along.name,
+        by.name,
+        by_values=by_values if by.is_number else _levels_known(by),
+        others=question.others,
+        scale=question.scale,
+        at=() if along.is_number else _levels_known(along),
+        level=question.level,
+    )
+    return answer_curve(model, asked, averager)
+
+
+def _levels_known(facts: PredictorFacts) -> tuple[Scalar, ...]:
+    """The levels that some row has, where there are others; else nothing need be said."""
+    known = facts.levels_with_rows
+    return () if known == facts.levels else known
+
+
+def _interaction(
+    model: FittedModel, question: PairQuestion, pair: Settled, averager: Averager | None
+) -> Interaction:
+    at_profile = averaged = None
+    p_at_profile = p_averaged = None
+    if _tells_chances(model):
+        found = crossing_at_profile(model, pair)
+        intervals = wald(model, found.value, found.gradient, pair.level)
+        at_profile, (p_at_profile,) = intervals.at(0), p_values(model, intervals)
+    if averager is not None:
+        found = averaged_crossing(model, pair, averager)
+        intervals = wald(model, found.value, found.gradient, pair.level)
+        averaged, (p_averaged,) = intervals.at(0), p_values(model, intervals)
+    contrast = double_contrast(model, pair)[None]
+    logs = wald(model, contrast @ model.coefficients, contrast, pair.level)
+    ratio = mapped(logs, odds_from_linear_predictor, odds_from_linear_predictor)
+    contrasts = joining_contrasts(model, pair.a.name, pair.b.name)
+    return Interaction(
+        at_profile=at_profile,
+        averaged=averaged,
+        at_profile_p_value=p_at_profile,
+        averaged_p_value=p_averaged,
+        ratio=ratio.at(0),
+        log_ratio=logs.at(0),
+        joined=len(contrasts) > 0,
+        test=tested(model, contrasts, question.test),
+    )
+
+
+def _joint(
+    model: FittedModel, question: PairQuestion, pair: Settled, averager: Averager | None
+) -> JointTable | None:
+    for facts, stated in ((pair.a, question.a_values), (pair.b, question.b_values)):
+        if facts.is_number and not stated:
+            return None
+    return joint_table_of(
+        model,
+        pair.a.name,
+        pair.b.name,
+        pair.a_change,
+        pair.b_change,
+        pair.base,
+        averager,
+        pair.level,
+    )

@@ -1,0 +1,158 @@
+"""Where along a predictor an effect differs from nothing."""
+
+from __future__ import annotations
+
+from collections.abc import Callable
+from typing import Literal, TypeAlias
+
+import numpy as np
+from numpy.typing import NDArray
+
+from plainodds.answers.delta import Intervals
+from plainodds.answers.roots import roots_between, turning_points
+from plainodds.values import Scalar, value
+
+__all__ = ["EffectAlong", "Measured", "Stretch", "bounds_along", "signs", "turns_along"]
+
+Floats = NDArray[np.float64]
+Sign: TypeAlias = Literal["above", "below", "open"]
+
+Measured: TypeAlias = Callable[[Floats], Intervals]
+"""An effect at n values of a number, on a scale on which 0 is no effect."""
+
+# a turn of less than this share of the largest effect is rounding
+_ROUNDING = 1e-9
+
+
+@value
+class Stretch:
+    """A stretch of one predictor on which another one's effect is told the same way.
+
+    Attributes
+    ----------
+    start, end : scalar
+        Its ends; the same level twice where the predictor has levels.
+    sign : {"above", "below", "open"}
+        The whole interval above no effect, below it, or holding it.
+    share : float
+        Of the rows; nan where the model carries none.
+    """
+
+    start: Scalar
+    end: Scalar
+    sign: Sign
+    share: float
+
+
+@value
+class EffectAlong:
+    """The effect of `a` as `b` varies.
+
+    Attributes
+    ----------
+    at : tuple of scalars
+        Values of `b`.
+    estimate : tuple of float
+        Risk differences, slopes per unit, or odds ratios: as the question asks.
+    se, lower, upper : tuple of float, or None where no interval can be had
+    supported : tuple of bool
+        Whether rows lie near each value.
+    stretches : tuple of Stretch
+        Cover the range of `at`, in order; empty where there is no interval.
+    turns : tuple of float
+        Values of a numeric `b` at which the effect turns from growing to shrinking or
+        back: there the interaction changes its sign.
+    """
+
+    at: tuple[Scalar, ...]
+    estimate: tuple[float, ...]
+    se: tuple[float, ...] | None
+    lower: tuple[float, ...] | None
+    upper: tuple[float, ...] | None
+    supported: tuple[bool, ...]
+    stretches: tuple[Stretch, ...]
+    turns: tuple[float, ...]
+
+
+def signs(found: Intervals) -> tuple[Sign, ...]:
+    """On which side of no effect each interval lies; empty where there are none."""
+    if found.lower is None or found.upper is None:
+        return ()
+    return tuple(
+        "above" if low > 0 else "below" if high < 0 else "open"
+        for low, high in zip(found.lower, found.upper, strict=True)
+    )
+
+
+def bounds_along(measured: Measured, at: Floats, found: Intervals) -> Floats:
+    """Where an end of the interval is 0, between the first and the last of some values.
+
+    A grid's cell is looked into where an end changes its sign within it, and where an end
+    comes close to 0 and turns back, so that it may have crossed twice.
+
+    Parameters
+    ----------
+    measured : callable
+    at : array (n,)
+        Increasing values.
+    found : Intervals
+        What `measured` gives there.
+    """
+    roots = [np.empty(0)]
+    for end in ("lower", "upper"):
+        ends = getattr(found, end)
+        if ends is None or len(at) < 2:
+            continue
+
+        def along(x: Floats, end: str = end) -> Floats:
+            return np.asarray(getattr(measured(x), end))
+
+        nodes, values = _with_dips(along, at, ends)
+        cells = np.nonzero((values[:-1] > 0) != (values[1:] > 0))[0]
+        roots.append(
+            roots_between(along, nodes[cells], nodes[cells + 1], values[cells], values[cells + 1])
+        )
+    return np.unique(np.concatenate(roots))
+
+
+def _with_dips(
+    along: Callable[[Floats], Floats], at: Floats, ends: Floats
+) -> tuple[Floats, Floats]:
+    """The grid with a point more where the function dips through 0 within a cell."""
+    size = np.abs(ends)
+    before, after = np.append(np.inf, size[:-1]), np.append(size[1:], np.inf)
+    change = np.abs(np.diff(ends))
+    near = np.maximum(np.append(0.0, change), np.append(change, 0.0))
+    # how far it changes from point to point tells how far it can dip between them
+    dips = np.nonzero((size <= before) & (size <= after) & (size > 0) & (size <= 2 * near))[0]
+    last = len(at) - 1
+    where, value = turning_points(
+        along, at[np.maximum(dips - 1, 0)], at[np.minimum(dips + 1, last)], -np.sign(ends[dips])
+    )
+    through = np.sign(value) == -np.sign(ends[dips])
+    nodes = np.append(at, where[through])
+    order = np.argsort(nodes, kind="stable")
+    return nodes[order], np.append(ends, value[through])[order]
+
+
+def turns_along(measured: Measured, at: Floats, estimate: Floats) -> tuple[float, ...]:
+    """Where an effect turns from growing to shrinking or back, in order."""
+    scale = float(np.abs(estimate).max())
+    if len(at) < 3 or float(np.ptp(estimate)) <= _ROUNDING * scale:
+        return ()
+    steps = np.diff(estimate)
+    # a step of rounding says nothing: the effect goes on as before
+    direction = np.where(np.abs(steps) > 1e-12 * scale, np.sign(steps), 0.0)
+    told = np.nonzero(direction)[0]
+    changes = np.nonzero(np.diff(direction[told]))[0]
+    low, high = at[told[changes]], at[told[changes + 1] + 1]
+    where, value = turning_points(
+        lambda x: measured(x).estimate, low, high, direction[told[changes]]
+    )
+    turns: list[float] = []
+    level = float(estimate[0])
+    for x, reached in zip(where.tolist(), value.tolist(), strict=True):
+        if abs(reached - level) > _ROUNDING * scale:
+            turns.append(x)
+            level = reached
+    return tuple(turns)
