@@ -13,7 +13,7 @@ from plainodds.answers.averaging import Averager, averaged_own_slope
 from plainodds.answers.crossing import held_slopes
 from plainodds.answers.delta import Intervals, interval_factor, mapped, wald
 from plainodds.answers.pair_settled import Settled
-from plainodds.answers.points import POINTS, chances_at, grid_along, rows_at
+from plainodds.answers.points import POINTS, grid_along
 from plainodds.answers.population import Averages, everyone
 from plainodds.answers.stretches import (
     EffectAlong,
@@ -86,15 +86,19 @@ def effect_along(
 
 
 def _measure(model: FittedModel, pair: Settled, scale: str, averager: Averager | None) -> Measured:
-    """The effect at values of `b`: a risk difference, a slope or a log odds ratio."""
+    """The effect at values of `b`: a risk difference, a slope or a log odds ratio.
+
+    What the rows leave open is nan.
+    """
     if scale == "odds":
-        measured = _log_odds_ratios(model, pair, averager)
+        effects = _log_odds_ratios(model, pair, averager)
     else:
         effects = _effects(model, pair, averager)
 
-        def measured(b: Codes) -> Intervals:
-            found = effects(b)
-            return wald(model, found.value, found.gradient, pair.level)
+    def measured(b: Codes) -> Intervals:
+        found = effects(b)
+        unknown = np.where(model.estimable.determined(found.gradient), 0.0, np.nan)
+        return wald(model, found.value + unknown, found.gradient, pair.level)
 
     return measured
 
@@ -105,7 +109,7 @@ def _effects(
     if pair.a.name in pair.sloped:
         name = pair.a.name
         if averager is None:
-            return lambda b: held_slopes(model, pair, name, {pair.b.name: b})
+            return lambda b: held_slopes(pair.around, name, {pair.b.name: b})
         population = averager.population
         return lambda b: averaged_own_slope(model, name, {pair.b.name: b}, population)
 
@@ -119,17 +123,17 @@ def _effects(
 
 def _log_odds_ratios(
     model: FittedModel, pair: Settled, averager: Averager | None
-) -> Callable[[Codes], Intervals]:
-    def held(b: Codes) -> Intervals:
+) -> Callable[[Codes], Averages]:
+    def held(b: Codes) -> Averages:
         contrasts = _contrasts(model, pair, b)
-        return wald(model, contrasts @ model.coefficients, contrasts, pair.level)
+        return Averages(contrasts @ model.coefficients, contrasts)
 
-    def averaged(b: Codes) -> Intervals:
+    def averaged(b: Codes) -> Averages:
         ends, n = _chances(model, pair, averager, b), len(b)
         eta = linear_predictor_from_probability(ends.value)
         with np.errstate(divide="ignore", invalid="ignore"):
             gradient = ends.gradient / probability_slope(ends.value)[:, None]
-        return wald(model, eta[n:] - eta[:n], gradient[n:] - gradient[:n], pair.level)
+        return Averages(eta[n:] - eta[:n], gradient[n:] - gradient[:n])
 
     return held if averager is None else averaged
 
@@ -142,11 +146,11 @@ def _moved(model: FittedModel, pair: Settled, b: Codes) -> dict[str, Codes]:
 
 def _chances(model: FittedModel, pair: Settled, averager: Averager | None, b: Codes) -> Averages:
     moved: Coded = _moved(model, pair, b)
-    return chances_at(model, pair.base, moved) if averager is None else averager.probability(moved)
+    return pair.around.chances(moved) if averager is None else averager.probability(moved)
 
 
 def _contrasts(model: FittedModel, pair: Settled, b: Codes) -> Floats:
-    rows = rows_at(model, pair.base, _moved(model, pair, b))
+    rows = pair.around.rows(_moved(model, pair, b))
     return np.asarray(rows[len(b) :] - rows[: len(b)])
 
 
@@ -182,7 +186,7 @@ def _quadratic_roots(square: float, linear: float, constant: float) -> Floats:
     larger = -(linear + np.copysign(np.sqrt(inner), linear)) / 2
     with np.errstate(divide="ignore", invalid="ignore"):
         roots = np.array([np.divide(larger, square), np.divide(constant, larger)])
-    return roots[np.isfinite(roots)]
+    return np.asarray(roots[np.isfinite(roots)])
 
 
 def _stretches(

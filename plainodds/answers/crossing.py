@@ -17,7 +17,7 @@ from numpy.typing import NDArray
 
 from plainodds.answers.averaging import Averager, averaged_own_slope
 from plainodds.answers.pair_settled import Settled
-from plainodds.answers.points import chances_at, coded_at, rows_at
+from plainodds.answers.points import Around
 from plainodds.answers.population import Averages, Population, block_of, rest_of, slices
 from plainodds.model.design.cross import cross_derivatives
 from plainodds.model.design.design import Coded, Floats
@@ -52,7 +52,7 @@ def corners(model: FittedModel, pair: Settled) -> dict[str, NDArray[np.generic]]
 
 def double_contrast(model: FittedModel, pair: Settled) -> Floats:
     """The row whose product with β is the log of the ratio of odds ratios, shape (k,)."""
-    both, a, b, neither = rows_at(model, pair.base, corners(model, pair))
+    both, a, b, neither = pair.around.rows(corners(model, pair))
     # in this order a column without a part in the interaction cancels exactly
     return np.asarray((both - a) - (b - neither))
 
@@ -63,11 +63,12 @@ def crossing_at_profile(model: FittedModel, pair: Settled) -> Averages:
     Slopes are taken at the typical values of their predictors.
     """
     if len(pair.sloped) == 2:
-        return _partial_at_profile(model, pair)
+        a, b = pair.sloped
+        return _partial_at_profile(pair.around, a, b)
     if len(pair.sloped) == 1:
         name, ends = _sloped_and_changed(model, pair)
-        return _difference(held_slopes(model, pair, name, ends))
-    return _contrasted(chances_at(model, pair.base, corners(model, pair)))
+        return _difference(held_slopes(pair.around, name, ends))
+    return _contrasted(pair.around.chances(corners(model, pair)))
 
 
 def averaged_crossing(model: FittedModel, pair: Settled, averager: Averager) -> Averages:
@@ -77,17 +78,18 @@ def averaged_crossing(model: FittedModel, pair: Settled, averager: Averager) -> 
     where it is in each row.
     """
     if len(pair.sloped) == 2:
-        return _averaged_partial(model, *pair.sloped, averager.population)
+        a, b = pair.sloped
+        return _averaged_partial(model, a, b, averager.population)
     if len(pair.sloped) == 1:
         name, ends = _sloped_and_changed(model, pair)
         return _difference(averaged_own_slope(model, name, ends, averager.population))
     return _contrasted(averager.probability(corners(model, pair)))
 
 
-def held_slopes(model: FittedModel, pair: Settled, name: str, moved: Coded) -> Averages:
-    """dπ/d(name) at the held profile with another predictor moved to J values."""
-    rows = rows_at(model, pair.base, moved)
-    slopes = model.design.row_derivatives(name, coded_at(model, pair.base, moved))
+def held_slopes(around: Around, name: str, moved: Coded) -> Averages:
+    """dπ/d(name) at a held profile with another predictor moved to J values."""
+    model, rows = around.model, around.rows(moved)
+    slopes = model.design.row_derivatives(name, around.coded(moved))
     pi = probability_from_linear_predictor(rows @ model.coefficients + model.offset)
     steepness = slopes @ model.coefficients
     gradient = (
@@ -113,11 +115,10 @@ def _contrasted(four: Averages) -> Averages:
     return Averages(_FOUR[None] @ four.value, _FOUR[None] @ four.gradient)
 
 
-def _partial_at_profile(model: FittedModel, pair: Settled) -> Averages:
-    coded = model.coded([pair.base])
-    row = model.rows([pair.base])
+def _partial_at_profile(around: Around, a: str, b: str) -> Averages:
+    model, row = around.model, around.row
     eta = row @ model.coefficients + model.offset
-    return _partials(model, *pair.sloped, row, coded, eta, np.ones(1))
+    return _partials(model, a, b, row, around.held, eta, np.ones(1))
 
 
 def _averaged_partial(model: FittedModel, a: str, b: str, population: Population) -> Averages:

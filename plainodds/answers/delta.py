@@ -8,6 +8,7 @@ from __future__ import annotations
 
 from collections.abc import Callable
 from dataclasses import dataclass
+from functools import lru_cache
 
 import numpy as np
 from numpy.typing import NDArray
@@ -60,10 +61,14 @@ def checked_level(level: float) -> float:
 
 def interval_factor(model: FittedModel, level: float) -> float:
     """How many standard errors an interval reaches: normal, or t where the result uses it."""
-    tail = (1 + level) / 2
-    if model.degrees_of_freedom is None:
-        return float(norm.ppf(tail))
-    return float(t.ppf(tail, model.degrees_of_freedom))
+    return _quantile((1 + level) / 2, model.degrees_of_freedom)
+
+
+@lru_cache
+def _quantile(share: float, degrees_of_freedom: float | None) -> float:
+    if degrees_of_freedom is None:
+        return float(norm.ppf(share))
+    return float(t.ppf(share, degrees_of_freedom))
 
 
 def wald(

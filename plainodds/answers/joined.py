@@ -13,7 +13,6 @@ from scipy.stats import f as f_distribution
 from plainodds.answers.likelihood import likelihood_of
 from plainodds.model.design.design import Floats
 from plainodds.model.fitted import FittedModel, code_values
-from plainodds.model.products import transposed_product
 from plainodds.values import value
 
 __all__ = ["JoinedTest", "joining_contrasts", "tested"]
@@ -22,6 +21,7 @@ _POINTS = 25
 _FEW = 5
 _MOST_SETTINGS = 128
 _ROUNDING = 1e-9
+_LEFT_OPEN = 1e-7
 
 
 @value
@@ -181,33 +181,13 @@ def _estimable(model: FittedModel, contrasts: Floats) -> Floats:
     A contrast is estimable if it is 0 along every direction in which the coefficients may
     move without any row's linear predictor moving.
     """
-    if not len(contrasts) or not model.sample.rows:
+    told = model.estimable
+    if not len(contrasts) or not told.open.shape[1]:
         return contrasts
-    free = _free_directions(model)
-    if not free.shape[1]:
-        return contrasts
-    left = contrasts @ free
-    left /= np.linalg.norm(contrasts, axis=1, keepdims=True)
+    scaled = contrasts / told.scale
+    left = scaled @ told.open / np.linalg.norm(scaled, axis=1, keepdims=True)
     directions, strength, _ = np.linalg.svd(left)
-    rank = int((strength > _ROUNDING).sum())
-    return np.asarray(directions[:, rank:].T @ contrasts)
-
-
-def _free_directions(model: FittedModel) -> Floats:
-    """Directions, one per column, in which no row's linear predictor moves: usually none."""
-    k = len(model.coefficients)
-    moments = np.zeros((k, k))
-    for block in model.sample.blocks():
-        X = model.sample.matrix[block]
-        moments += transposed_product(X, X)
-    size = np.sqrt(np.diag(moments))
-    size = np.where(size > 0, size, 1.0)
-    if np.linalg.eigvalsh(moments / np.outer(size, size))[0] > _ROUNDING:
-        return np.zeros((k, 0))
-    # squares lose half of the digits, so nearly collinear columns are looked at anew
-    triangle = np.zeros((0, k))
-    for block in model.sample.blocks():
-        triangle = np.linalg.qr(np.vstack([triangle, model.sample.matrix[block] / size]), mode="r")
-    _, strength, directions = np.linalg.svd(triangle)
-    strength = np.append(strength, np.zeros(k - len(strength)))
-    return np.asarray(directions[strength <= _ROUNDING * strength[0]].T / size[:, None])
+    rank = int((strength > _LEFT_OPEN).sum())
+    return np.asarray(
+        directions[:, rank:].T @ (contrasts / np.linalg.norm(scaled, axis=1, keepdims=True))
+    )

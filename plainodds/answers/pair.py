@@ -7,12 +7,13 @@ from plainodds.answers.averaging import Averager, Exact
 from plainodds.answers.crossing import averaged_crossing, crossing_at_profile, double_contrast
 from plainodds.answers.curve import CurveAnswer, CurveQuestion, answer_curve
 from plainodds.answers.delta import mapped, p_values, wald
-from plainodds.answers.estimate import Estimate
+from plainodds.answers.estimate import UNKNOWN, Estimate
 from plainodds.answers.joined import JoinedTest, joining_contrasts, tested
 from plainodds.answers.joint import JointTable, joint_table_of
 from plainodds.answers.pair_settled import PairQuestion, Settled, settled
-from plainodds.answers.population import everyone
+from plainodds.answers.population import Averages, everyone
 from plainodds.answers.questions import Answer
+from plainodds.answers.remembered import remembered
 from plainodds.answers.stretches import EffectAlong, Stretch
 from plainodds.answers.surface import Surface, surface_of
 from plainodds.model.fitted import FittedModel
@@ -189,30 +190,50 @@ def _levels_known(facts: PredictorFacts) -> tuple[Scalar, ...]:
 def _interaction(
     model: FittedModel, question: PairQuestion, pair: Settled, averager: Averager | None
 ) -> Interaction:
-    at_profile = averaged = None
-    p_at_profile = p_averaged = None
+    at_profile: tuple[Estimate | None, float | None] = (None, None)
+    averaged: tuple[Estimate | None, float | None] = (None, None)
     if _tells_chances(model):
-        found = crossing_at_profile(model, pair)
-        intervals = wald(model, found.value, found.gradient, pair.level)
-        at_profile, (p_at_profile,) = intervals.at(0), p_values(model, intervals)
+        at_profile = _estimated(model, crossing_at_profile(model, pair), pair.level)
     if averager is not None:
-        found = averaged_crossing(model, pair, averager)
-        intervals = wald(model, found.value, found.gradient, pair.level)
-        averaged, (p_averaged,) = intervals.at(0), p_values(model, intervals)
+        averaged = _estimated(model, _averaged(model, pair, averager), pair.level)
     contrast = double_contrast(model, pair)[None]
     logs = wald(model, contrast @ model.coefficients, contrast, pair.level)
     ratio = mapped(logs, odds_from_linear_predictor, odds_from_linear_predictor)
-    contrasts = joining_contrasts(model, pair.a.name, pair.b.name)
+    names = pair.a.name, pair.b.name
+    contrasts = remembered(model, ("joining", *names), lambda: joining_contrasts(model, *names))
+    (determined,) = model.estimable.determined(contrast)
     return Interaction(
-        at_profile=at_profile,
-        averaged=averaged,
-        at_profile_p_value=p_at_profile,
-        averaged_p_value=p_averaged,
-        ratio=ratio.at(0),
-        log_ratio=logs.at(0),
+        at_profile=at_profile[0],
+        averaged=averaged[0],
+        at_profile_p_value=at_profile[1],
+        averaged_p_value=averaged[1],
+        ratio=ratio.at(0) if determined else UNKNOWN,
+        log_ratio=logs.at(0) if determined else UNKNOWN,
         joined=len(contrasts) > 0,
-        test=tested(model, contrasts, question.test),
+        test=remembered(
+            model,
+            ("joined", *names, question.test),
+            lambda: tested(model, contrasts, question.test),
+        ),
     )
+
+
+def _averaged(model: FittedModel, pair: Settled, averager: Averager) -> Averages:
+    """The averaged interaction, which no held value changes: kept while sliders move."""
+    if not isinstance(averager, Exact):
+        return averaged_crossing(model, pair, averager)
+    changes = pair.a.name, pair.b.name, pair.a_change, pair.b_change, pair.sloped
+    return remembered(
+        model, ("averaged crossing", *changes), lambda: averaged_crossing(model, pair, averager)
+    )
+
+
+def _estimated(model: FittedModel, found: Averages, level: float) -> tuple[Estimate, float | None]:
+    """A value with its interval and the test of 0; unknown where the rows leave it open."""
+    if not model.estimable.determined(found.gradient).all():
+        return UNKNOWN, None
+    intervals = wald(model, found.value, found.gradient, level)
+    return intervals.at(0), p_values(model, intervals)[0]
 
 
 def _joint(
@@ -227,7 +248,7 @@ def _joint(
         pair.b.name,
         pair.a_change,
         pair.b_change,
-        pair.base,
+        pair.around.profile,
         averager,
         pair.level,
     )

@@ -8,6 +8,7 @@ from typing import ClassVar, Literal
 from plainodds.answers.curve import Others
 from plainodds.answers.delta import checked_level
 from plainodds.answers.moves import refuse_empty_levels
+from plainodds.answers.points import Around
 from plainodds.answers.questions import Question
 from plainodds.errors import QuestionRefused
 from plainodds.model.fitted import FittedModel, checked
@@ -66,7 +67,7 @@ class Settled:
     a_change, b_change : (from, to)
     sloped : tuple of str
         Which of the two enter by their slope on the probability scale.
-    base : pairs of (predictor, value)
+    around : Around
         The whole held profile, `a` and `b` at their typical values.
     level : float
     """
@@ -76,13 +77,13 @@ class Settled:
     a_change: tuple[Scalar, Scalar]
     b_change: tuple[Scalar, Scalar]
     sloped: tuple[str, ...]
-    base: Pairs
+    around: Around
     level: float
 
     @property
     def held(self) -> Pairs:
         """The profile without the two predictors themselves."""
-        return tuple((n, v) for n, v in self.base if n not in (self.a.name, self.b.name))
+        return tuple((n, v) for n, v in self.around.profile if n not in (self.a.name, self.b.name))
 
 
 def settled(model: FittedModel, question: PairQuestion) -> Settled:
@@ -116,7 +117,7 @@ def settled(model: FittedModel, question: PairQuestion) -> Settled:
         _change(model, a, "a_values", question.a_values, a.name in sloped),
         _change(model, b, "b_values", question.b_values, b.name in sloped),
         sloped,
-        model.completed(_stated_others(question)),
+        Around(model, model.completed(_stated_others(question))),
         level,
     )
 

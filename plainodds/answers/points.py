@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+from dataclasses import dataclass
+from functools import cached_property
 from typing import Any
 
 import numpy as np
@@ -14,7 +16,7 @@ from plainodds.model.predictors import PredictorFacts
 from plainodds.scales import probability_from_linear_predictor, probability_slope
 from plainodds.values import Pairs
 
-__all__ = ["POINTS", "chances_at", "coded_at", "grid_along", "linear_predictors_at", "rows_at"]
+__all__ = ["POINTS", "Around", "chances_at", "grid_along", "rows_at"]
 
 POINTS = 101
 """How many points a line is drawn through."""
@@ -33,34 +35,56 @@ def grid_along(facts: PredictorFacts, points: int) -> Floats:
     return grid
 
 
-def coded_at(model: FittedModel, base: Pairs, moved: Coded) -> dict[str, NDArray[Any]]:
-    """A whole profile at n points, where the moved predictors take n values each."""
-    n = len(next(iter(moved.values())))
-    held = model.coded([base])
-    return {name: np.repeat(code, n) for name, code in held.items()} | dict(moved)
+@dataclass(frozen=True, eq=False)
+class Around:
+    """What a model says around one whole profile.
+
+    Points are given by the predictors that move, as a mapping of name to coded array
+    (n,); all others stay as the profile has them.
+    """
+
+    model: FittedModel
+    profile: Pairs
+
+    @cached_property
+    def held(self) -> dict[str, NDArray[Any]]:
+        """The profile as coded columns of one value each."""
+        return self.model.coded([self.profile])
+
+    @cached_property
+    def row(self) -> Floats:
+        """The profile's own design row, shape (1, k)."""
+        return self.model.design.rows(self.held)
+
+    def coded(self, moved: Coded) -> dict[str, NDArray[Any]]:
+        """Every predictor at n points."""
+        n = len(next(iter(moved.values())))
+        return {name: np.repeat(code, n) for name, code in self.held.items()} | dict(moved)
+
+    def rows(self, moved: Coded) -> Floats:
+        """Design rows of n points, shape (n, k); only what moves is built for each."""
+        n = len(next(iter(moved.values())))
+        rows = np.repeat(self.row, n, axis=0)
+        touched = self.model.design.touched(moved)
+        rows[:, touched] = self.model.design.some_columns(touched, self.coded(moved), n)
+        return rows
+
+    def linear_predictors(self, moved: Coded) -> Floats:
+        """η at n points, shape (n,)."""
+        return np.asarray(self.rows(moved) @ self.model.coefficients + self.model.offset)
+
+    def chances(self, moved: Coded) -> Averages:
+        """The chance at n points with its gradient, as averages of one profile each would be."""
+        rows = self.rows(moved)
+        pi = probability_from_linear_predictor(rows @ self.model.coefficients + self.model.offset)
+        return Averages(pi, probability_slope(pi)[:, None] * rows)
 
 
 def rows_at(model: FittedModel, base: Pairs, moved: Coded) -> Floats:
-    """Design rows of n points, shape (n, k); only what moves is built for each."""
-    n = len(next(iter(moved.values())))
-    rows = np.repeat(model.rows([base]), n, axis=0)
-    touched = model.design.touched(moved)
-    rows[:, touched] = model.design.some_columns(touched, coded_at(model, base, moved), n)
-    return rows
-
-
-def linear_predictors_at(model: FittedModel, base: Pairs, moved: Coded) -> Floats:
-    """η at n points, shape (n,)."""
-    n = len(next(iter(moved.values())))
-    touched = model.design.touched(moved)
-    still = model.rows([base])[0] * model.coefficients
-    still[touched] = 0.0
-    columns = model.design.some_columns(touched, coded_at(model, base, moved), n)
-    return np.asarray(columns @ model.coefficients[touched] + still.sum() + model.offset)
+    """Design rows of n points around a whole profile, shape (n, k)."""
+    return Around(model, base).rows(moved)
 
 
 def chances_at(model: FittedModel, base: Pairs, moved: Coded) -> Averages:
-    """The chance at n points with its gradient, as averages of one profile each would be."""
-    rows = rows_at(model, base, moved)
-    pi = probability_from_linear_predictor(rows @ model.coefficients + model.offset)
-    return Averages(pi, probability_slope(pi)[:, None] * rows)
+    """The chance at n points around a whole profile, with its gradient."""
+    return Around(model, base).chances(moved)

@@ -119,20 +119,31 @@ def _with_dips(
     along: Callable[[Floats], Floats], at: Floats, ends: Floats
 ) -> tuple[Floats, Floats]:
     """The grid with a point more where the function dips through 0 within a cell."""
-    size = np.abs(ends)
-    before, after = np.append(np.inf, size[:-1]), np.append(size[1:], np.inf)
-    change = np.abs(np.diff(ends))
-    near = np.maximum(np.append(0.0, change), np.append(change, 0.0))
-    # how far it changes from point to point tells how far it can dip between them
-    dips = np.nonzero((size <= before) & (size <= after) & (size > 0) & (size <= 2 * near))[0]
     last = len(at) - 1
-    where, value = turning_points(
-        along, at[np.maximum(dips - 1, 0)], at[np.minimum(dips + 1, last)], -np.sign(ends[dips])
-    )
+    dips = _may_dip(ends)
+    low, high = at[np.maximum(dips - 1, 0)], at[np.minimum(dips + 1, last)]
+    where, value = turning_points(along, low, high, -np.sign(ends[dips]))
     through = np.sign(value) == -np.sign(ends[dips])
     nodes = np.append(at, where[through])
     order = np.argsort(nodes, kind="stable")
     return nodes[order], np.append(ends, value[through])[order]
+
+
+def _may_dip(ends: Floats) -> NDArray[np.intp]:
+    """Points nearest to 0 among their neighbours, where a parabola comes much nearer still."""
+    size = np.abs(ends)
+    before, after = np.append(np.inf, size[:-1]), np.append(size[1:], np.inf)
+    candidates = np.nonzero((size > 0) & (size <= before) & (size <= after))[0]
+    if len(ends) < 3:
+        return candidates
+    # at either end of the grid the parabola through the first or the last three points
+    middle = np.clip(candidates, 1, len(ends) - 2)
+    left, centre, right = (size[middle + shift] for shift in (-1, 0, 1))
+    bend = left - 2 * centre + right
+    with np.errstate(divide="ignore", invalid="ignore"):
+        beside = (left - right) / (2 * bend)
+        lowest = centre - bend * beside**2 / 2
+    return candidates[(bend > 0) & (np.abs(beside) <= 1) & (lowest < size[candidates] / 2)]
 
 
 def turns_along(measured: Measured, at: Floats, estimate: Floats) -> tuple[float, ...]:

@@ -2,12 +2,14 @@
 
 from __future__ import annotations
 
+from typing import Any
+
 import numpy as np
 from numpy.typing import NDArray
 
 from plainodds.answers.averaging import Averager
 from plainodds.answers.pair_settled import Settled
-from plainodds.answers.points import grid_along, linear_predictors_at
+from plainodds.answers.points import grid_along
 from plainodds.model.design.design import Floats
 from plainodds.model.fitted import FittedModel
 from plainodds.model.predictors import PredictorFacts
@@ -65,7 +67,7 @@ def surface_of(model: FittedModel, pair: Settled, scale: str, averager: Averager
     shape = len(b_at), len(a_at)
     moved = {pair.a.name: np.tile(a_at, len(b_at)), pair.b.name: np.repeat(b_at, len(a_at))}
     if averager is None:
-        eta = linear_predictors_at(model, pair.base, moved).reshape(shape)
+        eta = pair.around.linear_predictors(moved).reshape(shape)
         chance = probability_from_linear_predictor(eta)
         estimate = odds_from_linear_predictor(eta) if scale == "odds" else chance
     else:
@@ -117,5 +119,5 @@ def _cells(facts: PredictorFacts, x: Floats) -> NDArray[np.intp]:
     return np.clip(((x - facts.minimum) / width * _CELLS).astype(np.intp), 0, _CELLS - 1)
 
 
-def _nested(grid: NDArray[np.generic]) -> tuple[tuple[object, ...], ...]:
+def _nested(grid: NDArray[Any]) -> tuple[tuple[Any, ...], ...]:
     return tuple(tuple(line) for line in grid.tolist())
