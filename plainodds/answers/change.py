@@ -9,9 +9,10 @@ from numpy.typing import NDArray
 
 from plainodds.answers import averaging, rebuilding
 from plainodds.answers.averaging import Averager, Exact
+from plainodds.answers.chances import chances
 from plainodds.answers.comparing import Comparison, NumberNeeded, compared, number_needed
 from plainodds.answers.curve import Others
-from plainodds.answers.delta import checked_level, mapped, wald
+from plainodds.answers.delta import checked_level
 from plainodds.answers.drawn import Rows, Sampling, spread_of
 from plainodds.answers.estimate import Estimate
 from plainodds.answers.held import held_probabilities, stated_values
@@ -22,11 +23,6 @@ from plainodds.answers.where import Where, chosen_rows
 from plainodds.errors import QuestionRefused
 from plainodds.model.fitted import FittedModel
 from plainodds.model.predictors import PredictorFacts, Subject
-from plainodds.scales import (
-    linear_predictor_from_probability,
-    probability_from_linear_predictor,
-    probability_slope,
-)
 from plainodds.values import Pairs, value
 
 __all__ = ["ChangeAnswer", "ChangeQuestion", "answer_change"]
@@ -130,13 +126,13 @@ def answer_change(
     else:
         held, averages = _at_profile(model, question, moves)
         counted = 0
-    start, end = _chances(model, averages, level, drawn)
+    both = chances(model, averages, level, drawn)
     comparison = compared(model, averages.value, averages.gradient, level, drawn)
     return ChangeAnswer(
         question=question,
         subject=model.subject,
-        start=start,
-        end=end,
+        start=both.at(0),
+        end=both.at(1),
         comparison=comparison,
         number_needed=number_needed(comparison.risk_difference),
         held=held,
@@ -206,23 +202,6 @@ def _at_profile(
         ends.append(values)
     held = tuple((name, v) for name, v in base.items() if name not in moved)
     return held, held_probabilities(model, ends)
-
-
-def _chances(
-    model: FittedModel, averages: Averages, level: float, drawn: Floats
-) -> tuple[Estimate, Estimate]:
-    """Intervals on the logit of each chance, so that they stay within 0 and 1."""
-    pi = averages.value
-    with np.errstate(divide="ignore", invalid="ignore"):
-        by_logit = 1.0 / probability_slope(pi)
-    extra = by_logit**2 * np.diag(drawn)
-    eta = linear_predictor_from_probability(pi)
-    intervals = mapped(
-        wald(model, eta, by_logit[:, None] * averages.gradient, level, extra),
-        probability_from_linear_predictor,
-        lambda x: probability_slope(probability_from_linear_predictor(x)),
-    )
-    return intervals.at(0), intervals.at(1)
 
 
 def _beyond(model: FittedModel, moves: Moves, question: ChangeQuestion) -> tuple[str, ...]:

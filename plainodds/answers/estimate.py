@@ -2,9 +2,11 @@
 
 from __future__ import annotations
 
+import math
+
 from plainodds.values import value
 
-__all__ = ["Estimate"]
+__all__ = ["UNKNOWN", "Estimate"]
 
 
 @value
@@ -25,3 +27,7 @@ class Estimate:
     se: float | None
     lower: float | None
     upper: float | None
+
+
+UNKNOWN = Estimate(math.nan, None, None, None)
+"""Of a quantity that the rows leave open."""

@@ -14,6 +14,7 @@ from numpy.typing import NDArray
 
 from plainodds.errors import QuestionRefused
 from plainodds.model.design.design import Coded, Design, Floats
+from plainodds.model.estimable import Estimable, estimable
 from plainodds.model.predictors import PredictorFacts, Subject
 from plainodds.model.products import product, transposed_product
 from plainodds.scales import probability_from_linear_predictor, probability_slope
@@ -188,6 +189,11 @@ class FittedModel:
                 w *= self.sample.weights[block]
             information += transposed_product(X, X * w[:, None])
         return np.asarray(np.linalg.pinv(information, hermitian=True))
+
+    @cached_property
+    def estimable(self) -> Estimable:
+        """Which functions of the coefficients the rows determine."""
+        return estimable(self.sample.matrix, self.sample.weights)
 
     @cached_property
     def leverage_quantiles(self) -> tuple[float, float]:
