@@ -13,7 +13,7 @@ from plainodds.answers.chances import chances
 from plainodds.answers.comparing import compared
 from plainodds.answers.delta import Intervals, mapped, wald
 from plainodds.answers.estimate import UNKNOWN, Estimate
-from plainodds.answers.points import chances_at, rows_at
+from plainodds.answers.points import Around
 from plainodds.answers.population import Averages
 from plainodds.model.design.design import Coded, Floats
 from plainodds.model.fitted import FittedModel
@@ -155,14 +155,15 @@ def joint_table_of(
         For an unknown predictor, level or value.
     """
     corners = [(x, y) for y in b_change for x in a_change]
-    rows = rows_at(model, base, _moved(model, a, b, corners))
+    around = Around(model, base)
+    rows = around.rows(_moved(model, a, b, corners))
     lowest = _reference(model, rows)
     order = [corner ^ lowest for corner in range(4)]
     corners, rows = [corners[place] for place in order], rows[order]
     contrasts = rows[1:] - rows[0]
     # in this order a column that does not join the two cancels exactly
     joining = (rows[3] - rows[1]) - (rows[2] - rows[0])
-    averages = _averages(model, base, _moved(model, a, b, corners), averager)
+    averages = _averages(around, _moved(model, a, b, corners), averager)
     return JointTable(
         cells=_cells(model, (a, b), corners, contrasts, averages, level),
         recoded=tuple(name for name, bit in ((a, _A), (b, _B)) if lowest & bit),
@@ -191,13 +192,12 @@ def _moved(model: FittedModel, a: str, b: str, corners: Corners) -> dict[str, ND
     }
 
 
-def _averages(
-    model: FittedModel, base: Pairs, moved: Coded, averager: Averager | None
-) -> Averages | None:
+def _averages(around: Around, moved: Coded, averager: Averager | None) -> Averages | None:
     """The chance of each combination, averaged or held; None where the sample tells none."""
-    if model.subject.sampling == "case-control" and model.subject.prevalence is None:
+    subject = around.model.subject
+    if subject.sampling == "case-control" and subject.prevalence is None:
         return None
-    return chances_at(model, base, moved) if averager is None else averager.probability(moved)
+    return around.chances(moved) if averager is None else averager.probability(moved)
 
 
 def _known(intervals: Intervals, determined: NDArray[np.bool_]) -> tuple[Estimate, ...]:
