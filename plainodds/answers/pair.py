@@ -148,9 +148,7 @@ def answer_pair(
         held=pair.held,
         counted=0 if averager is None else averager.population.counted,
         lines=_lines(model, question, pair, moving) if _tells_chances(model) else None,
-        surface=(
-            surface_of(model, pair, question.scale, moving) if question.shape == "map" else None
-        ),
+        surface=_surface(model, question, pair, moving) if question.shape == "map" else None,
         effect=effect_along(model, pair, question.scale, moving),
         interaction=_interaction(model, question, pair, averager),
         joint=_joint(model, question, pair, moving),
@@ -185,6 +183,19 @@ def _levels_known(facts: PredictorFacts) -> tuple[Scalar, ...]:
     """The levels that some row has, where there are others; else nothing need be said."""
     known = facts.levels_with_rows
     return () if known == facts.levels else known
+
+
+def _surface(
+    model: FittedModel, question: PairQuestion, pair: Settled, averager: Averager | None
+) -> Surface:
+    if averager is None:
+        return surface_of(model, pair, question.scale, None)
+    # the averages over everyone are the same whatever is asked of the two numbers
+    return remembered(
+        model,
+        ("averaged surface", pair.a.name, pair.b.name, question.scale),
+        lambda: surface_of(model, pair, question.scale, averager),
+    )
 
 
 def _interaction(

@@ -7,6 +7,7 @@ from collections.abc import Hashable
 from plainodds.answers.change import ChangeAnswer, ChangeQuestion, answer_change
 from plainodds.answers.curve import CurveAnswer, CurveQuestion, answer_curve
 from plainodds.answers.moves import Move
+from plainodds.answers.pair import PairAnswer, PairQuestion, answer_pair
 from plainodds.answers.population import Population, everyone
 from plainodds.answers.questions import Question
 from plainodds.answers.sketch import Sketch, sketch_of
@@ -25,6 +26,13 @@ def sketched(question: Question) -> Hashable | None:
     if isinstance(question, CurveQuestion) and question.others == "observed":
         names = (question.predictor, question.by)
         return tuple(name for name in names if name is not None), None
+    if (
+        isinstance(question, PairQuestion)
+        and question.others == "observed"
+        # a slope at each row's own value needs the rows
+        and question.number == "change"
+    ):
+        return (question.a, question.b), None
     if (
         isinstance(question, ChangeQuestion)
         and question.others == "observed"
@@ -59,9 +67,11 @@ def _population(model: FittedModel, where: Pairs | None) -> Population:
 
 
 def answer_by_sketch(
-    model: FittedModel, question: CurveQuestion | ChangeQuestion, sketch: Sketch
-) -> CurveAnswer | ChangeAnswer:
+    model: FittedModel, question: CurveQuestion | ChangeQuestion | PairQuestion, sketch: Sketch
+) -> CurveAnswer | ChangeAnswer | PairAnswer:
     """Answer a question by the sketch that `sketch_for` made for it or its like."""
     if isinstance(question, CurveQuestion):
         return answer_curve(model, question, sketch)
+    if isinstance(question, PairQuestion):
+        return answer_pair(model, question, sketch)
     return answer_change(model, question, averager=sketch)

@@ -23,7 +23,7 @@ from plainodds.model.design.split import Split, split
 from plainodds.model.fitted import FittedModel
 from plainodds.scales import probability_from_linear_predictor
 
-__all__ = ["Sketch", "sketch_of"]
+__all__ = ["Sketch", "patterns_of", "sketch_of"]
 
 _SPACING = 0.004
 _MOST_POINTS = 32_768
@@ -114,7 +114,7 @@ def sketch_of(model: FittedModel, names: tuple[str, ...], population: Population
     parts = split(model.design, names)
     if parts is None:
         return None
-    found = _patterns(model, parts)
+    found = patterns_of(model, parts)
     if found is None:
         return None
     patterns, pattern_of = found
@@ -148,8 +148,11 @@ def sketch_of(model: FittedModel, names: tuple[str, ...], population: Population
     return Sketch(model, population, parts, patterns, grid, gathered(population.weights), carried)
 
 
-def _patterns(model: FittedModel, parts: Split) -> tuple[Floats, NDArray[np.intp]] | None:
-    """What stays for each distinct pattern of modifiers, and each row's pattern."""
+def patterns_of(model: FittedModel, parts: Split) -> tuple[Floats, NDArray[np.intp]] | None:
+    """What stays for each distinct pattern of modifiers, and each row's pattern.
+
+    None where there are more than a few.
+    """
     factors = {at for atoms in parts.still for at, _ in atoms}
     names = sorted(frozenset().union(*(parts.design.factors[at].variables for at in factors)))
     code: NDArray[Any] = np.zeros(model.sample.rows, dtype=np.intp)

@@ -143,7 +143,8 @@ def _may_dip(ends: Floats) -> NDArray[np.intp]:
     with np.errstate(divide="ignore", invalid="ignore"):
         beside = (left - right) / (2 * bend)
         lowest = centre - bend * beside**2 / 2
-    return candidates[(bend > 0) & (np.abs(beside) <= 1) & (lowest < size[candidates] / 2)]
+    much_nearer = (bend > 0) & (np.abs(beside) <= 1) & (lowest < size[candidates] / 2)
+    return np.asarray(candidates[much_nearer])
 
 
 def turns_along(measured: Measured, at: Floats, estimate: Floats) -> tuple[float, ...]:

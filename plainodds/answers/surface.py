@@ -7,6 +7,7 @@ from typing import Any
 import numpy as np
 from numpy.typing import NDArray
 
+from plainodds.answers.averaged_values import affordable_points, averaged_values
 from plainodds.answers.averaging import Averager
 from plainodds.answers.pair_settled import Settled
 from plainodds.answers.points import grid_along
@@ -16,7 +17,6 @@ from plainodds.model.predictors import PredictorFacts
 from plainodds.scales import (
     linear_predictor_from_probability,
     odds_from_linear_predictor,
-    odds_from_probability,
     probability_from_linear_predictor,
 )
 from plainodds.values import value
@@ -63,17 +63,18 @@ def surface_of(model: FittedModel, pair: Settled, scale: str, averager: Averager
     averager : Averager or None
         What averages over the rows; None at the held profile.
     """
-    a_at, b_at = grid_along(pair.a, _POINTS), grid_along(pair.b, _POINTS)
+    names = pair.a.name, pair.b.name
+    points = _POINTS if averager is None else affordable_points(model, names, _POINTS)
+    a_at, b_at = grid_along(pair.a, points), grid_along(pair.b, points)
     shape = len(b_at), len(a_at)
     moved = {pair.a.name: np.tile(a_at, len(b_at)), pair.b.name: np.repeat(b_at, len(a_at))}
     if averager is None:
         eta = pair.around.linear_predictors(moved).reshape(shape)
         chance = probability_from_linear_predictor(eta)
-        estimate = odds_from_linear_predictor(eta) if scale == "odds" else chance
     else:
-        chance = averager.probability(moved).value.reshape(shape)
+        chance = averaged_values(model, moved, averager.population).reshape(shape)
         eta = linear_predictor_from_probability(chance)
-        estimate = odds_from_probability(chance) if scale == "odds" else chance
+    estimate = odds_from_linear_predictor(eta) if scale == "odds" else chance
     crossing = _crossing(eta if scale == "odds" else chance, a_at, b_at)
     return Surface(
         tuple(a_at.tolist()),

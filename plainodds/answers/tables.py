@@ -8,15 +8,16 @@ from typing import Any
 import pandas as pd
 
 from plainodds.answers.change import ChangeAnswer
+from plainodds.answers.columns import numbers, written
 from plainodds.answers.curve import CurveAnswer
 from plainodds.answers.effects import EffectsAnswer
-from plainodds.answers.estimate import Estimate
 from plainodds.answers.odds import OddsAnswer
+from plainodds.answers.pair import PairAnswer
+from plainodds.answers.pair_tables import joint_table, pair_table
 from plainodds.answers.profile import ProfileAnswer
 from plainodds.answers.questions import Answer
-from plainodds.values import Pairs
 
-__all__ = ["ledger", "table"]
+__all__ = ["joint_table", "ledger", "table"]
 
 
 @singledispatch
@@ -25,7 +26,7 @@ def table(answer: Answer) -> pd.DataFrame:
 
     Parameters
     ----------
-    answer : OddsAnswer, CurveAnswer or ProfileAnswer
+    answer : Answer
 
     Returns
     -------
@@ -55,9 +56,9 @@ def _(answer: OddsAnswer) -> pd.DataFrame:
             "from": row.start,
             "to": row.end,
             "per_step": row.per_step,
-            "given": _written(row.given),
+            "given": written(row.given),
         }
-        | _numbers(row.odds_ratio)
+        | numbers(row.odds_ratio)
         | {"p_value": row.p_value}
         for row in answer.rows
     ]
@@ -73,8 +74,8 @@ def _(answer: CurveAnswer) -> pd.DataFrame:
         if question.by is not None:
             part[question.by] = [line.by] * len(line.at)
         part["estimate"] = list(line.estimate)
-        for name, numbers in (("se", line.se), ("lower", line.lower), ("upper", line.upper)):
-            part[name] = [float("nan")] * len(line.at) if numbers is None else list(numbers)
+        for name, held in (("se", line.se), ("lower", line.lower), ("upper", line.upper)):
+            part[name] = [float("nan")] * len(line.at) if held is None else list(held)
         part["supported"] = list(line.supported)
         parts.append(pd.DataFrame(part))
     return pd.concat(parts, ignore_index=True)
@@ -86,14 +87,14 @@ def _(answer: ProfileAnswer) -> pd.DataFrame:
     if answer.comparison is not None:
         profiles.append(("against", answer.start))
     rows = [
-        {"profile": name, "scale": scale} | _numbers(getattr(point, scale))
+        {"profile": name, "scale": scale} | numbers(getattr(point, scale))
         for name, point in profiles
         for scale in ("linear_predictor", "odds", "probability")
     ]
     if answer.comparison is not None:
         rows += [
             {"profile": "profile against", "scale": measure}
-            | _numbers(getattr(answer.comparison, measure))
+            | numbers(getattr(answer.comparison, measure))
             for measure in ("odds_ratio", "risk_difference", "risk_ratio")
         ]
     return pd.DataFrame(rows)
@@ -105,7 +106,7 @@ def _(answer: EffectsAnswer) -> pd.DataFrame:
     rows = [
         ({} if by is None else {by: row.by})
         | {"predictor": row.predictor, "from": row.start, "to": row.end, "step": row.step}
-        | _numbers(row.effect)
+        | numbers(row.effect)
         | {"p_value": row.p_value}
         for row in answer.rows
     ]
@@ -121,9 +122,9 @@ def _(answer: ChangeAnswer) -> pd.DataFrame:
         "risk_ratio": answer.comparison.risk_ratio,
         "odds_ratio": answer.comparison.odds_ratio,
     }
-    rows = [{"measure": name} | _numbers(estimate) for name, estimate in measures.items()]
+    rows = [{"measure": name} | numbers(estimate) for name, estimate in measures.items()]
     for name, unit in (("per_100", 100.0), ("per_1000", 1000.0)):
-        difference = _numbers(answer.comparison.risk_difference)
+        difference = numbers(answer.comparison.risk_difference)
         rows.append({"measure": name} | {key: unit * held for key, held in difference.items()})
     needed = answer.number_needed
     # its interval has two pieces, which two columns cannot hold: see number_needed
@@ -133,6 +134,9 @@ def _(answer: ChangeAnswer) -> pd.DataFrame:
         | {"estimate": needed.estimate, "se": nothing, "lower": nothing, "upper": nothing}
     )
     return pd.DataFrame(rows)
+
+
+table.register(PairAnswer, pair_table)
 
 
 def ledger(answer: ProfileAnswer) -> pd.DataFrame:
@@ -163,8 +167,8 @@ def ledger(answer: ProfileAnswer) -> pd.DataFrame:
     values = dict(answer.point.values)
     start = answer.start
     rows: list[dict[str, Any]] = [
-        {"predictors": "start", "values": _written(start.values)}
-        | _numbers(start.linear_predictor)
+        {"predictors": "start", "values": written(start.values)}
+        | numbers(start.linear_predictor)
         | {
             "multiplies_odds": start.odds.estimate,
             "running_linear_predictor": start.linear_predictor.estimate,
@@ -174,9 +178,9 @@ def ledger(answer: ProfileAnswer) -> pd.DataFrame:
     rows += [
         {
             "predictors": ", ".join(row.predictors),
-            "values": _written(tuple((name, values[name]) for name in row.predictors)),
+            "values": written(tuple((name, values[name]) for name in row.predictors)),
         }
-        | _numbers(row.adds)
+        | numbers(row.adds)
         | {
             "multiplies_odds": row.multiplies.estimate,
             "running_linear_predictor": row.running_linear_predictor,
@@ -185,19 +189,3 @@ def ledger(answer: ProfileAnswer) -> pd.DataFrame:
         for row in answer.ledger
     ]
     return pd.DataFrame(rows)
-
-
-def _numbers(estimate: Estimate) -> dict[str, float]:
-    def or_nan(number: float | None) -> float:
-        return float("nan") if number is None else number
-
-    return {
-        "estimate": estimate.estimate,
-        "se": or_nan(estimate.se),
-        "lower": or_nan(estimate.lower),
-        "upper": or_nan(estimate.upper),
-    }
-
-
-def _written(values: Pairs) -> str:
-    return ", ".join(f"{name} = {held}" for name, held in values)
