@@ -21,11 +21,12 @@ from plainodds.phrases.labels import (
     value_label,
 )
 from plainodds.phrases.moves import moves_label, moves_words
-from plainodds.phrases.numbers import chance
+from plainodds.phrases.numbers import chance, quantity
 from plainodds.phrases.units import per_unit, tidy
 from plainodds.values import Scalar
 
 __all__ = [
+    "Sign",
     "at_value",
     "change_words",
     "combination_label",
@@ -34,10 +35,12 @@ __all__ = [
     "has_others",
     "interaction_label",
     "is_averaged",
-    "odds_step",
+    "odds_opening",
     "pair_noun",
     "pair_title",
     "per_additional",
+    "place_label",
+    "rows_label",
     "share_label",
     "stretch_label",
     "stretch_span",
@@ -108,15 +111,24 @@ def followed_label(answer: PairAnswer) -> str:
         return moves_label(answer.subject, ((facts.name, Move(*answer.a_change)),))
     if answer.question.scale == "probability":
         return sentence_case(per_additional(facts))
-    return sentence_case(odds_step(answer))
+    return sentence_case(odds_opening(answer).removeprefix("with "))
 
 
-def odds_step(answer: PairAnswer) -> str:
-    """The change of a sloped `a` that its odds ratio belongs to, within a sentence."""
+def odds_opening(answer: PairAnswer) -> str:
+    """The change of `a` that its odds ratio belongs to, as a sentence starts.
+
+    Returns
+    -------
+    str
+        "with material PVC rather than cast iron"; for slopes "per 10 years more of pipe
+        age", or "with pipe age from 40 to 50 years" where steps differ.
+    """
     facts = answer.subject.predictor(answer.question.a)
+    if facts.name not in answer.sloped:
+        return f"with {change_words(answer)}"
     start, end = answer.a_change
     if not facts.linear:
-        return f"{predictor_name(facts)} {from_to(facts, start, end)}"
+        return f"with {predictor_name(facts)} {from_to(facts, start, end)}"
     return f"{step_label(facts, float(end) - float(start))} of {predictor_name(facts)}"
 
 
@@ -131,7 +143,7 @@ def effect_axis_title(answer: PairAnswer) -> str:
     """
     event, question = tidy(answer.subject.outcome.event), answer.question
     if question.scale == "odds":
-        return f"Odds ratio of {event}"
+        return f"Odds ratio of {event}{', of averages' if is_averaged(answer) else ''}"
     per = ""
     if question.a in answer.sloped:
         unit = answer.subject.predictor(question.a).unit
@@ -164,11 +176,29 @@ def stretch_span(answer: PairAnswer, stretch: Stretch) -> str:
     facts = answer.subject.predictor(answer.question.b)
     if not facts.is_number:
         return at_value(answer.subject, facts.name, stretch.start)
-    if stretch.start == stretch.end or (
-        value_label(facts, stretch.start) == value_label(facts, stretch.end)
-    ):
-        return value_label(facts, stretch.start)
-    return from_to(facts, stretch.start, stretch.end).removeprefix("from ")
+    low, high = _placed(facts, stretch.start), _placed(facts, stretch.end)
+    if value_label(facts, low) == value_label(facts, high):
+        return value_label(facts, low)
+    return from_to(facts, low, high).removeprefix("from ")
+
+
+def place_label(facts: PredictorFacts, place: Scalar) -> str:
+    """A place along a number, as coarse as a hundredth of the data's range.
+
+    Ends of stretches and turns fall between values that anybody has, and their further
+    figures say nothing: "74 years" for 74.1623.
+    """
+    return value_label(facts, _placed(facts, place))
+
+
+def _placed(facts: PredictorFacts, place: Scalar) -> Scalar:
+    width = facts.maximum - facts.minimum
+    if isinstance(place, str) or not (math.isfinite(width) and width > 0):
+        return place
+    unit = 10.0 ** math.floor(math.log10(width / 100))
+    if facts.kind == "whole number":
+        unit = max(unit, 1.0)
+    return round(float(place) / unit) * unit
 
 
 def share_label(answer: PairAnswer, share: float) -> str:
@@ -192,6 +222,17 @@ def stretch_label(answer: PairAnswer, stretch: Stretch) -> str:
     told = {"above": "higher", "below": "lower", "open": "left open"}[stretch.sign]
     share = share_label(answer, stretch.share)
     return f"{stretch_span(answer, stretch)}: {told}{f' ({share})' if share else ''}"
+
+
+def rows_label(answer: PairAnswer, cell: JointCell) -> str:
+    """The data behind one combination: "31 of 300 pipes"; empty where the model has no rows."""
+    cases = tidy(answer.subject.outcome.cases)
+    if cell.rows is None:
+        return ""
+    if cell.rows == 0:
+        return f"no {cases}"
+    of = f"{quantity(cell.rows)} {tidy(answer.subject.outcome.case) if cell.rows == 1 else cases}"
+    return of if cell.events is None else f"{quantity(cell.events)} of {of}"
 
 
 def combination_label(answer: PairAnswer, cell: JointCell) -> str:

@@ -154,8 +154,10 @@ def _side(difference: float) -> str:
 
 
 def say_level_once(told: list[str], level: float) -> list[str]:
-    """Name the confidence level in the first of several texts only."""
-    return [*told[:1], *(text.replace(f"({confidence(level)} interval ", "(") for text in told[1:])]
+    """Name the confidence level only in the first of several texts that has an interval."""
+    opening = f"({confidence(level)} interval "
+    first = next((place for place, text in enumerate(told) if opening in text), len(told))
+    return [*told[: first + 1], *(text.replace(opening, "(") for text in told[first + 1 :])]
 
 
 def rows_words(subject: Subject) -> str:
