@@ -147,6 +147,8 @@ def _of_averages(answer: PairAnswer) -> list[str]:
     if not is_averaged(answer):
         return []
     typical = "with the other predictors at their typical values"
+    if not has_others(answer):
+        typical = "at typical values"
     if answer.question.scale == "probability":
         return [f"Odds ratios here hold {typical}; they are not ratios of the odds of averages"]
     b = predictor_name(answer.subject.predictor(answer.question.b))

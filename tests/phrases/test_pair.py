@@ -441,6 +441,24 @@ def test_odds_ratios_of_averages_are_told_apart_from_those_at_typical_values():
     assert any(each.startswith("Odds ratios here hold with") for each in chances.cautions)
 
 
+def test_two_predictors_alone_have_no_others_to_speak_of():
+    both = tuple(facts for facts in PREDICTORS if facts.name in ("material", "lined"))
+
+    def alone(**stated):
+        answer = pair_answer(predictors=both, **stated)
+        return replace(answer, held=())
+
+    for others in ("typical", "observed"):
+        told = words(alone(others=others)).sentences
+        assert told[0].startswith("With lined no, the chance of burst this winter is 8.3% with")
+        assert not any("average" in each or "same comparison" in each for each in told)
+        assert not any("other predictors" in each for each in told)
+    told = words(alone(others="observed", offset=0.3))
+    assert told.sentences[0].startswith("With lined no, the average chance of burst this winter")
+    assert any("the same comparison gives" in each for each in told.sentences)
+    assert "Odds ratios here hold at typical values; they" in str(told)
+
+
 def test_an_answer_without_intervals_says_why_and_leaves_nothing_open():
     answer = pair_answer(se=None, no_interval="The fit has no covariance matrix")
     for audience in ("plain", "technical"):

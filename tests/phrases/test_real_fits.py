@@ -60,6 +60,22 @@ QUESTIONS = {
     "effects of steps": lambda fit: fit.effects(["age_years", "past_repairs"], number="step"),
     "effects at the typical profile": lambda fit: fit.effects(others="typical"),
     "effects at a profile": lambda fit: fit.effects(others={"soil": "high"}, by="material"),
+    "pair of levels": lambda fit: fit.pair("material", "soil", b_values=("low", "high")),
+    "pair averaged": lambda fit: fit.pair("soil", "age_years", others="observed"),
+    "pair of a number and a level": lambda fit: fit.pair("age_years", "material"),
+    "pair on the odds scale": lambda fit: fit.pair(
+        "material", "age_years", scale="odds", test="likelihood_ratio"
+    ),
+    "pair of slopes": lambda fit: fit.pair("age_years", "pressure_m", number="slope"),
+    "pair of slopes averaged": lambda fit: fit.pair(
+        "past_repairs", "pressure_m", number="slope", others="observed", scale="odds"
+    ),
+    "pair as a map": lambda fit: fit.pair(
+        "age_years", "pressure_m", shape="map", others={"soil": "high"}
+    ),
+    "pair of stated values": lambda fit: fit.pair(
+        "age_years", "past_repairs", a_values=(60, 20), b_values=(0, 3), level=0.9
+    ),
     "profile beyond the data": lambda fit: fit.profile({"age_years": 300}),
 }
 
@@ -158,6 +174,58 @@ def test_each_effect_of_the_table_is_said_with_its_interval(fit):
         for number in (row.estimate, row.lower, row.upper):
             assert says(sentence, abs(number), 100) or says(sentence, number, 100)
             assert says(plain, abs(number), 100)
+
+
+def test_the_four_chances_are_those_of_the_profiles(fit):
+    answer = fit.pair("age_years", "material", a_values=(20, 60), b_values=("cast iron", "PVC"))
+    told = words(answer).sentences[0]
+    for material in ("cast iron", "PVC"):
+        for age in (20, 60):
+            profile = fit.profile({"age_years": age, "material": material})
+            assert says(told, profile.point.probability.estimate, 100)
+
+
+def test_the_four_averages_are_those_of_the_changes(fit):
+    answer = fit.pair("soil", "past_repairs", others="observed", b_values=(0, 2))
+    told = words(answer).sentences
+    assert answer.a_change == ("low", "moderate")
+    for repairs in (0, 2):
+        change = fit.change({"soil": ("low", "moderate"), "past_repairs": (repairs, repairs)})
+        for chance in (change.start, change.end):
+            assert says(told[0], chance.estimate, 100)
+        assert says(told[1], abs(change.comparison.risk_difference.estimate), 1000)
+
+
+def test_an_interactions_figures_are_those_of_the_answer_on_both_scales(fit):
+    answer = fit.pair("age_years", "material", a_values=(20, 60), b_values=("cast iron", "PVC"))
+    found = answer.interaction
+    plain, technical = (" ".join(words(answer, each).sentences) for each in ("plain", "technical"))
+    for number in (found.at_profile.estimate, found.at_profile.lower, found.at_profile.upper):
+        assert says(plain, abs(number), 1000)
+        assert says(technical, number, 100)
+    for number in (found.averaged.estimate, found.averaged.lower, found.averaged.upper):
+        assert says(plain, abs(number), 100)
+        assert says(technical, number, 100)
+    for told in (plain, technical):
+        for number in (found.ratio.estimate, found.ratio.lower, found.ratio.upper):
+            assert says(told, number)
+    odds = fit.odds("age_years", between={"age_years": (20, 60)})
+    for row in odds.rows:
+        if dict(row.given)["material"] in ("cast iron", "PVC"):
+            assert says(plain, row.odds_ratio.estimate)
+            assert says(plain, row.odds_ratio.lower)
+
+
+def test_an_interaction_of_a_case_control_sample_is_told_in_odds(fit):
+    result = smf.logit("burst ~ age_years * soil", PIPES).fit(disp=False)
+    sampled = po.FittedLogit(result, sampling="case-control")
+    for audience in ("plain", "technical"):
+        said = words(sampled.pair("soil", "age_years", scale="odds"), audience)
+        told = " ".join(said.sentences).replace("of chances on the logit scale", "")
+        assert "chance" not in told
+        assert "ratio of odds ratios" in told.lower()
+        for sentence in (*said.sentences, *said.cautions):
+            assert faults(sentence) == []
 
 
 def test_a_case_control_sample_tells_no_chances_unless_the_populations_share_is_stated(fit):
