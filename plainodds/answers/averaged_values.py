@@ -20,7 +20,7 @@ __all__ = ["affordable_points", "averaged_values"]
 _ROWS = 4_096
 _MOST = 40_000_000
 _REBUILT = 2_000_000
-# past this a chance is 0 or 1 to every digit, and exp still a number
+# up to this exp, and the product of two of them, is still a number
 _FAR = 350.0
 
 
@@ -101,14 +101,19 @@ def _by_polynomial(rest: Floats, weights: Floats, shifts: Floats) -> Floats:
 
 
 def _averages(rest: Floats, weights: Floats, shifts: Floats) -> Floats:
-    """Σᵢ wᵢ / (1 + exp(−restᵢ) exp(−shift)), a product and no exponential for each pair."""
-    of_rows = np.exp(-np.clip(rest, -_FAR, _FAR))
-    of_shifts = np.exp(-np.clip(shifts, -_FAR, _FAR))
+    """Σᵢ wᵢ / (1 + exp(−restᵢ) exp(−shift)): mostly a product, and no exponential, for each pair."""
+    middle = (float(shifts.min()) + float(shifts.max())) / 2
+    rest, shifts = rest + middle, shifts - middle
+    moderate = max(np.abs(rest).max(initial=0.0), np.abs(shifts).max()) < _FAR
+    of_rows, of_shifts = (np.exp(-rest), np.exp(-shifts)) if moderate else (rest, shifts)
     total = np.zeros(len(shifts))
     for block in slices(len(rest), _ROWS):
-        chances = np.multiply.outer(of_rows[block], of_shifts)
-        chances += 1.0
-        np.reciprocal(chances, out=chances)
+        if moderate:
+            chances = np.multiply.outer(of_rows[block], of_shifts)
+            chances += 1.0
+            np.reciprocal(chances, out=chances)
+        else:
+            chances = probability_from_linear_predictor(np.add.outer(rest[block], shifts))
         total += np.einsum("i,ij->j", weights[block], chances)
     return total
 

@@ -176,7 +176,9 @@ def _lines(
         at=() if along.is_number else _levels_known(along),
         level=question.level,
     )
-    return answer_curve(model, asked, averager)
+    if not isinstance(averager, Exact):
+        return answer_curve(model, asked, averager)
+    return remembered(model, ("lines", asked), lambda: answer_curve(model, asked, averager))
 
 
 def _levels_known(facts: PredictorFacts) -> tuple[Scalar, ...]:
