@@ -23,7 +23,7 @@ from plainodds.drawings.ticks import label_ticks, round_ticks
 from plainodds.phrases.labels import scale_title
 from plainodds.phrases.numbers import count, quantity
 
-__all__ = ["CurveDrawing"]
+__all__ = ["CurveDrawing", "LineArtists", "curve_notes"]
 
 _MARKS_ON_A_LINE = 4
 
@@ -49,7 +49,7 @@ class CurveDrawing:
         self._answer = answer
         self.frame = CurveFrame(axes, answer, theme, lambda: self.update(self._answer))
         self.lines = [
-            _Line(axes, theme, place, len(answer.lines)) for place in range(len(answer.lines))
+            LineArtists(axes, theme, place, len(answer.lines)) for place in range(len(answer.lines))
         ]
         axes.tick_params(axis="x", labelbottom=True)
         self.update(answer)
@@ -80,7 +80,14 @@ class CurveDrawing:
     @staticmethod
     def least_height(answer: CurveAnswer, theme: Theme, width: float) -> float:
         """Height in points below which the plot itself would vanish."""
-        return CurveFrame.least_height(answer, _rows(answer, theme), _notes(answer), theme, width)
+        return CurveFrame.least_height(
+            answer, _rows(answer, theme), curve_notes(answer), theme, width
+        )
+
+    @staticmethod
+    def notes(answer: CurveAnswer) -> list[str]:
+        """What the small print says."""
+        return curve_notes(answer)
 
     def update(self, answer: CurveAnswer) -> None:
         """Show another answer of the same structure."""
@@ -88,7 +95,7 @@ class CurveDrawing:
         theme, em = self._theme, self._theme.font_size
         rows = _rows(answer, theme)
         vertical = self.frame.place(
-            answer, rows, _notes(answer), tick_lines=line_height(theme.small), rows_from=0.0
+            answer, rows, self.notes(answer), tick_lines=line_height(theme.small), rows_from=0.0
         )
         plot, _ = self.frame.room.plot_size()
         lower, upper = _horizontal(answer)
@@ -110,7 +117,7 @@ class CurveDrawing:
         self.frame.place_labels(answer, ends, leaders=True)
 
 
-class _Line:
+class LineArtists:
     """The artists of one line."""
 
     def __init__(self, axes: Axes, theme: Theme, place: int, count: int) -> None:
@@ -226,7 +233,8 @@ def _rows(answer: CurveAnswer, theme: Theme) -> Rows:
     return Rows(captions, 0.8 * step, step)
 
 
-def _notes(answer: CurveAnswer) -> list[str]:
+def curve_notes(answer: CurveAnswer) -> list[str]:
+    """Say what bands, broken lines and the rows beneath mean."""
     cases = answer.subject.outcome.cases
     notes = [CurveFrame.interval_note(answer, "Band")]
     if not all(all(line.supported) for line in answer.lines):

@@ -17,7 +17,14 @@ from plainodds.answers.curve import CurveAnswer
 from plainodds.drawings.curve_scale import VerticalAxis, is_cut, vertical_axis
 from plainodds.drawings.furniture import Notes, Title, marker_line
 from plainodds.drawings.geometry import Margins, Room, apart, corner, slot_size
-from plainodds.drawings.lettering import letter, line_height, text_width, tick_style, wrapped
+from plainodds.drawings.lettering import (
+    elided,
+    letter,
+    line_height,
+    text_width,
+    tick_style,
+    wrapped,
+)
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import bare, label_ticks
 from plainodds.phrases.labels import axis_title, predictor_label, scale_title, value_label
@@ -25,7 +32,7 @@ from plainodds.phrases.numbers import confidence
 
 __all__ = ["CurveFrame", "Rows"]
 
-_WIDEST_LABELS = 0.3
+_WIDEST_LABELS, _WIDEST_CAPTIONS = 0.3, 0.42
 _MOST_LINES = 3
 
 
@@ -53,6 +60,11 @@ class CurveFrame:
     theme : Theme
     resized : callable
         Draws the answer anew when the slot has another size.
+
+    Attributes
+    ----------
+    least : Margins
+        Room to leave around the plot at least, so that it stands in line with another one.
     """
 
     def __init__(
@@ -60,6 +72,7 @@ class CurveFrame:
     ) -> None:
         self.axes, self._theme = axes, theme
         self.room = Room(axes, resized)
+        self.least = Margins(0.0, 0.0, 0.0, 0.0)
         self.logarithmic = answer.question.scale == "odds"
         if self.logarithmic:
             axes.set_yscale("log")
@@ -126,7 +139,8 @@ class CurveFrame:
         em = theme.font_size
         around = Title.height(scale_title(answer), theme, width) + rows.depth
         around += Notes.height(notes, theme, width) + 2 * line_height(theme.small) + 2 * em
-        labels = line_height(em) * len(answer.lines) if answer.question.by else 0.0
+        texts = _label_texts(answer, theme, _WIDEST_LABELS * width)
+        labels = sum(line_height(em, text.count("\n") + 1) for text in texts)
         return around + max(7 * em, labels)
 
     def place(
@@ -153,10 +167,11 @@ class CurveFrame:
         theme, em, small = self._theme, self._theme.font_size, self._theme.small
         width, height = slot_size(self.axes)
         title = scale_title(answer)
-        top = Title.height(title, theme, width) + 0.9 * em
+        top = max(Title.height(title, theme, width) + 0.9 * em, self.least.top)
         x_title = line_height(small)
         title_top = rows.depth + 0.35 * em + tick_lines + 0.4 * em
         bottom = title_top + x_title + Notes.height(notes, theme, width)
+        bottom = max(bottom, self.least.bottom)
         vertical = vertical_axis(answer, height - top - bottom, small)
         left = max((text_width(text, theme, small) for text in vertical.labels), default=0.0)
         left += 0.4 * em
@@ -185,12 +200,13 @@ class CurveFrame:
         em = theme.font_size
         most = _WIDEST_LABELS * width
         texts = [text_width(text, theme, em) for text in _label_texts(answer, theme, most)]
-        mark = 1.0 * em if len(answer.lines) > 1 else 0.0
-        texts += [mark - 1.9 * em + text_width(text, theme, theme.small) for text in rows.captions]
+        mark = 2.0 * em if len(answer.lines) > 1 else 0.7 * em
+        captions = [mark + text_width(text, theme, theme.small) for text in rows.captions]
         if answer.question.by:
             heading = predictor_label(answer.subject.predictor(answer.question.by))
             texts.append(text_width(heading, theme, theme.small) - 0.9 * em)
-        return min(most, max(texts, default=0.0) + 2.6 * em)
+        beneath = min(_WIDEST_CAPTIONS * width, max(captions, default=0.0))
+        return max(min(most, max(texts, default=0.0) + 2.6 * em), beneath)
 
     def place_labels(self, answer: CurveAnswer, ends: Sequence[float], leaders: bool) -> None:
         """Set the lines' labels as near to their ends as they go without overlap.
@@ -210,7 +226,9 @@ class CurveFrame:
         most = self.room.margins.right
         texts = _label_texts(answer, theme, most)
         sizes = [line_height(em, text.count("\n") + 1) for text in texts]
-        top = plot + self.room.margins.top * 0.35 - line_height(theme.small)
+        above = self.room.margins.top
+        title = Title.height(scale_title(answer), theme, slot_size(self.axes)[0])
+        top = plot + min(0.35 * above, above - title) - line_height(theme.small)
         middles = apart([end * plot for end in ends], sizes, 0.0, max(top, 1.0))
         for label, mark, text, middle in zip(
             self.labels, self.label_marks, texts, middles, strict=True
@@ -234,9 +252,11 @@ class CurveFrame:
         marked = 2.0 * em if self.caption_marks else 0.7 * em
         for place, (text, words) in enumerate(zip(self.captions, rows.captions, strict=True)):
             middle = -start - (place + 0.6) * rows.step
-            text.set_text(words)
+            size = min(self._theme.small, 0.95 * rows.step)
+            room = max(self.room.margins.right - marked, em)
+            text.set_text(elided(words, room, self._theme, size))
             text.set_position((marked, middle))
-            text.set_fontsize(min(self._theme.small, 0.95 * rows.step))
+            text.set_fontsize(size)
         for place, mark in enumerate(self.caption_marks):
             mark.set_data([1.5 * em], [-start - (place + 0.6) * rows.step])
 

@@ -21,7 +21,7 @@ from plainodds.drawings.ticks import label_ticks
 from plainodds.phrases.labels import scale_title, value_label
 from plainodds.phrases.numbers import chance, count, percentage_points, ratio, signed
 
-__all__ = ["LevelsDrawing"]
+__all__ = ["LevelPoints", "LevelsDrawing", "level_labels", "levels_notes"]
 
 _LEVEL_LINES = 3
 _SAY: dict[Scale, Callable[[float], str]] = {
@@ -52,7 +52,7 @@ class LevelsDrawing:
         self._answer = answer
         self.frame = CurveFrame(axes, answer, theme, lambda: self.update(self._answer))
         levels, lines = len(answer.lines[0].at), len(answer.lines)
-        self.lines = [_Points(axes, theme, place, lines) for place in range(lines)]
+        self.lines = [LevelPoints(axes, theme, place, lines) for place in range(lines)]
         beneath = blended_transform_factory(axes.transData, corner(axes, 0, 0))
         self.counts = [
             [
@@ -91,8 +91,15 @@ class LevelsDrawing:
     @staticmethod
     def least_height(answer: CurveAnswer, theme: Theme, width: float) -> float:
         """Height in points below which the plot itself would vanish."""
-        least = CurveFrame.least_height(answer, _rows(answer, theme), _notes(answer), theme, width)
+        least = CurveFrame.least_height(
+            answer, _rows(answer, theme), levels_notes(answer), theme, width
+        )
         return least + _label_depth(answer, theme, width) - line_height(theme.small)
+
+    @staticmethod
+    def notes(answer: CurveAnswer) -> list[str]:
+        """What the small print says."""
+        return levels_notes(answer)
 
     def update(self, answer: CurveAnswer) -> None:
         """Show another answer of the same structure."""
@@ -102,9 +109,9 @@ class LevelsDrawing:
         at = answer.lines[0].at
         rows = _rows(answer, theme)
         room = _level_room(answer, theme, slot_size(self.axes)[0])
-        labels, size, rotation, depth = _level_labels(_names(answer), room, theme)
+        labels, size, rotation, depth = level_labels(_names(answer), room, theme)
         beneath = depth + 0.4 * em
-        vertical = self.frame.place(answer, rows, _notes(answer), depth, beneath)
+        vertical = self.frame.place(answer, rows, self.notes(answer), depth, beneath)
         style = tick_style(theme, size) | {"color": theme.ink, "rotation": rotation}
         label_ticks(self.axes, "x", range(len(at)), labels, style)
         self.axes.tick_params(axis="x", pad=0.35 * em)
@@ -137,7 +144,7 @@ class LevelsDrawing:
             text.set_position((x, estimate))
 
 
-class _Points:
+class LevelPoints:
     """The artists of one line's points."""
 
     def __init__(self, axes: Axes, theme: Theme, place: int, count: int) -> None:
@@ -191,10 +198,10 @@ def _level_room(answer: CurveAnswer, theme: Theme, width: float) -> float:
 
 
 def _label_depth(answer: CurveAnswer, theme: Theme, width: float) -> float:
-    return _level_labels(_names(answer), _level_room(answer, theme, width), theme)[3]
+    return level_labels(_names(answer), _level_room(answer, theme, width), theme)[3]
 
 
-def _level_labels(
+def level_labels(
     names: Sequence[str], room: float, theme: Theme
 ) -> tuple[list[str], float, float, float]:
     """Labels that fit a level's width in points: their lines, size, rotation and depth."""
@@ -215,7 +222,8 @@ def _rows(answer: CurveAnswer, theme: Theme) -> Rows:
     return Rows(tuple(answer.subject.outcome.cases for _ in answer.support), step, step)
 
 
-def _notes(answer: CurveAnswer) -> list[str]:
+def levels_notes(answer: CurveAnswer) -> list[str]:
+    """Say what lines through points and hollow points mean."""
     cases = answer.subject.outcome.cases
     notes = [CurveFrame.interval_note(answer, "Line through a point")]
     if not all(all(line.supported) for line in answer.lines):

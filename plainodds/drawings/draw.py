@@ -13,6 +13,7 @@ from plainodds.answers.change import ChangeAnswer
 from plainodds.answers.curve import CurveAnswer
 from plainodds.answers.effects import EffectsAnswer
 from plainodds.answers.odds import OddsAnswer
+from plainodds.answers.pair import PairAnswer
 from plainodds.answers.profile import ProfileAnswer
 from plainodds.answers.questions import Answer
 from plainodds.drawings.change import ChangeDrawing
@@ -22,6 +23,7 @@ from plainodds.drawings.drawing import Drawing, fitting_theme
 from plainodds.drawings.effects import EffectsDrawing
 from plainodds.drawings.geometry import POINTS_PER_INCH, slot_size
 from plainodds.drawings.odds import OddsDrawing
+from plainodds.drawings.pair import PairDrawing
 from plainodds.drawings.profile import ProfileDrawing
 from plainodds.drawings.stamps import root_figure
 from plainodds.drawings.theme import Theme, theme_of
@@ -70,6 +72,11 @@ def _(answer: EffectsAnswer) -> type[Drawing[Any]]:
 @drawing_of.register
 def _(answer: ChangeAnswer) -> type[Drawing[Any]]:
     return ChangeDrawing
+
+
+@drawing_of.register
+def _(answer: PairAnswer) -> type[Drawing[Any]]:
+    return PairDrawing
 
 
 def draw(answer: Answer, ax: Axes | None = None, theme: str | Theme = "page") -> Figure:

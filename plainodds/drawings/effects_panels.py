@@ -19,7 +19,14 @@ from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import round_ticks
 from plainodds.phrases.numbers import quantity
 
-__all__ = ["PanelArtists", "PlacedPanel", "height_of", "placed_panels"]
+__all__ = [
+    "AxisArtists",
+    "PanelArtists",
+    "PlacedPanel",
+    "height_of",
+    "placed_panels",
+    "point_ticks",
+]
 
 _MOST_TICKS = 9
 
@@ -45,8 +52,17 @@ class PlacedPanel:
         return [self.top + y for slot in self.layout.rows for y in slot]
 
 
-class PanelArtists:
-    """Grid, zero line, tick labels and dots of one panel."""
+class AxisArtists:
+    """Grid, line of no effect, tick labels and dots of rows that have an axis of their own.
+
+    Parameters
+    ----------
+    axes : Axes
+        Their horizontal axis is one of several, all of which have 0 in one place.
+    theme : Theme
+    series : int
+        How many series of dots there are.
+    """
 
     def __init__(self, axes: Axes, theme: Theme, series: int) -> None:
         self._theme = theme
@@ -67,14 +83,30 @@ class PanelArtists:
         self.dots = [Dots(axes, theme, place, transform) for place in range(series)]
         self.limits = Limits(-1.0, 1.0, False)
 
-    def update(
-        self, placed: PlacedPanel, series: Sequence[object], first_span: float, plot_width: float
+    def set_axis(
+        self,
+        limits: Limits,
+        first_span: float,
+        spans: Sequence[tuple[float, float]],
+        ticks: Sequence[tuple[float, str]],
+        bottom: float,
     ) -> None:
-        """Show a panel on its own axis, which may be another than the picture's first."""
-        self.limits = limits = placed.limits
+        """Set the axis and what belongs to it.
+
+        Parameters
+        ----------
+        limits : Limits
+        first_span : float
+            Length of the axis that the axes themselves have.
+        spans : sequence of (float, float)
+            Heights between which grid lines run.
+        ticks : sequence of (float, str)
+            Places, within the limits, and labels.
+        bottom : float
+            Height beneath which the tick labels stand.
+        """
+        self.limits = limits
         self._scale.clear().scale(first_span / limits.span, 1.0)
-        spans = [(placed.top + a, placed.top + b) for a, b in placed.layout.spans]
-        ticks = _ticks(limits, plot_width, placed.layout.left, self._theme)
         self.grid.set_segments([[(x, a), (x, b)] for a, b in spans for x, _ in ticks])
         self.zero.set_segments([[(0.0, a), (0.0, b)] for a, b in spans])
         for text in self.ticks[len(ticks) :]:
@@ -82,8 +114,21 @@ class PanelArtists:
         for text, (x, words) in zip(self.ticks, ticks, strict=False):
             text.set_text(words)
             text.set_position(
-                ((x - limits.lower) / limits.span, placed.bottom + 0.15 * self._theme.font_size)
+                ((x - limits.lower) / limits.span, bottom + 0.15 * self._theme.font_size)
             )
+
+
+class PanelArtists(AxisArtists):
+    """The artists of one panel."""
+
+    def update(
+        self, placed: PlacedPanel, series: Sequence[object], first_span: float, plot_width: float
+    ) -> None:
+        """Show a panel on its own axis, which may be another than the picture's first."""
+        limits = placed.limits
+        spans = [(placed.top + a, placed.top + b) for a, b in placed.layout.spans]
+        ticks = point_ticks(limits, plot_width, placed.layout.left, self._theme)
+        self.set_axis(limits, first_span, spans, ticks, placed.bottom)
         heights = dict(zip(map(id, placed.panel.rows), placed.heights, strict=True))
         for name, dots in zip(series, self.dots, strict=True):
             own = [row for row in placed.panel.rows if row.by == name]
@@ -116,7 +161,9 @@ def height_of(placed: Sequence[PlacedPanel], theme: Theme) -> float:
     return placed[-1].bottom + _ticks_height(theme)
 
 
-def _ticks(limits: Limits, plot_width: float, left: float, theme: Theme) -> list[tuple[float, str]]:
+def point_ticks(
+    limits: Limits, plot_width: float, left: float, theme: Theme
+) -> list[tuple[float, str]]:
     """Round numbers of percentage points, as differences of chances, with their labels."""
     most = max(2, min(_MOST_TICKS - 2, int(plot_width / (4.2 * theme.small))))
     ticks = []
