@@ -50,7 +50,8 @@ def test_the_face_has_what_the_readme_promises():
     promised = {
         "FittedLogit", "Predictor", "Outcome",
         "table", "draw", "words", "code", "save",
-        "OddsView", "CurveView", "ProfileView",
+        "OddsView", "CurveView", "ProfileView", "ChangeView", "EffectsView", "PairView",
+        "joint_table",
     }  # fmt: skip
     assert promised <= set(plainodds.__all__)
 

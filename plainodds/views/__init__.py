@@ -4,6 +4,7 @@ from plainodds.views.change import ChangeView
 from plainodds.views.curve import CurveView
 from plainodds.views.effects import EffectsView
 from plainodds.views.odds import OddsView
+from plainodds.views.pair import PairView
 from plainodds.views.profile import ProfileView
 
-__all__ = ["ChangeView", "CurveView", "EffectsView", "OddsView", "ProfileView"]
+__all__ = ["ChangeView", "CurveView", "EffectsView", "OddsView", "PairView", "ProfileView"]

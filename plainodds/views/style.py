@@ -70,6 +70,29 @@ STYLE = """
   display: flex; flex-direction: column; gap: 8px;
 }
 .plainodds-view .plainodds-letters { align-self: flex-start; }
+
+/* switches stand in a line above the picture that they turn */
+.plainodds-view .plainodds-switches { display: flex; flex-flow: row wrap; gap: 4px 28px; }
+.plainodds-view .plainodds-either {
+  width: auto; height: auto; display: flex; flex-flow: row wrap; align-items: center;
+  gap: 2px 12px;
+}
+.plainodds-view .plainodds-either > .widget-label {
+  width: auto; height: auto; margin: 0; text-align: left; line-height: 1.3; font-weight: 600;
+  color: var(--plainodds-ink);
+}
+.plainodds-view .plainodds-either .widget-radio-box {
+  display: flex; flex-flow: row wrap; gap: 2px 12px; width: auto; height: auto;
+  margin: 0 !important;
+}
+.plainodds-view .plainodds-either .widget-radio-box label {
+  display: flex; flex-direction: row-reverse; justify-content: flex-end; align-items: center;
+  gap: 5px; width: auto; height: auto; margin: 0; padding: 2px 0; line-height: 1.3;
+  min-height: 24px; box-sizing: border-box;
+}
+.plainodds-view .plainodds-either input[type="radio"] {
+  margin: 0; width: 15px; height: 15px; flex: none; accent-color: var(--plainodds-focus);
+}
 body[data-jp-theme-light="false"] .plainodds-picture img,
 body.vscode-dark .plainodds-picture img { filter: invert(1) hue-rotate(180deg); }
 
@@ -218,10 +241,16 @@ body.vscode-dark .plainodds-picture img { filter: invert(1) hue-rotate(180deg); 
   .plainodds-view progress { width: 56px; }
   .plainodds-view :is(th, td) { padding-right: 9px; font-size: 0.94em; }
   .plainodds-view .plainodds-within > th { padding-left: 7px; }
+  .plainodds-view .plainodds-joint :is(th, td) { padding-right: 6px; font-size: 0.88em; }
+  .plainodds-view .plainodds-joint .plainodds-within > th { padding-left: 0; }
   .plainodds-view td > span:not(:only-child),
   .plainodds-view td:not(.plainodds-number) > span { white-space: normal; }
 }
 .plainodds-view .plainodds-stacked .plainodds-number > span { display: block; }
+.plainodds-view .plainodds-part table { min-width: min(100%, 440px); }
+.plainodds-view .plainodds-part + .plainodds-part, .plainodds-view table + table,
+.plainodds-view .plainodds-note + table { margin-top: 14px; }
+.plainodds-view .plainodds-joint :is(th, td):first-child { padding-right: 10px; }
 .plainodds-view .plainodds-table .widget-html-content { overflow-x: auto; }
 .plainodds-view .plainodds-extras { display: flex; flex-direction: column; gap: 6px; }
 

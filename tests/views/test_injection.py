@@ -14,7 +14,7 @@ from plainodds.views.style import KEYS
 
 HOSTILE = "<img src=x onerror=alert(1)>"
 OWN = {"div", "p", "ul", "li", "h4", "strong", "span", "b", "style", "pre", "code", "a", "img"}
-VIEWS = [po.OddsView, po.CurveView, po.ProfileView, po.EffectsView, po.ChangeView]
+VIEWS = [po.OddsView, po.CurveView, po.ProfileView, po.EffectsView, po.ChangeView, po.PairView]
 TABLE = {"table", "caption", "thead", "tbody", "tr", "th", "td"}
 
 
@@ -81,6 +81,9 @@ def opened(fit, kind):
     if kind is po.ChangeView:
         view.question = fit.change({HOSTILE: (HOSTILE, "other"), "x": (0.0, 1.0)}).question
         view.question = fit.change(HOSTILE, HOSTILE, "other", others={}).question
+    if kind is po.PairView:
+        levels = (HOSTILE, "other")
+        view.question = fit.pair("x", HOSTILE, a_values=(0.0, 1.0), b_values=levels).question
     view._extras.code_button.click()
     return view
 
