@@ -101,7 +101,7 @@ def _by_polynomial(rest: Floats, weights: Floats, shifts: Floats) -> Floats:
 
 
 def _averages(rest: Floats, weights: Floats, shifts: Floats) -> Floats:
-    """Σᵢ wᵢ / (1 + exp(−restᵢ) exp(−shift)): mostly a product, and no exponential, for each pair."""
+    """Σᵢ wᵢ / (1 + exp(−restᵢ) exp(−shift)): mostly a product for each pair, no exp."""
     middle = (float(shifts.min()) + float(shifts.max())) / 2
     rest, shifts = rest + middle, shifts - middle
     moderate = max(np.abs(rest).max(initial=0.0), np.abs(shifts).max()) < _FAR

@@ -5,11 +5,12 @@ from __future__ import annotations
 from plainodds.answers.along import effect_along
 from plainodds.answers.averaging import Averager, Exact
 from plainodds.answers.crossing import averaged_crossing, crossing_at_profile, double_contrast
-from plainodds.answers.curve import CurveAnswer, CurveQuestion, answer_curve
+from plainodds.answers.curve import CurveAnswer
 from plainodds.answers.delta import mapped, p_values, wald
 from plainodds.answers.estimate import UNKNOWN, Estimate
 from plainodds.answers.joined import JoinedTest, joining_contrasts, tested
 from plainodds.answers.joint import JointTable, joint_table_of
+from plainodds.answers.pair_lines import lines_of
 from plainodds.answers.pair_settled import PairQuestion, Settled, settled
 from plainodds.answers.population import Averages, everyone
 from plainodds.answers.questions import Answer
@@ -17,7 +18,7 @@ from plainodds.answers.remembered import remembered
 from plainodds.answers.stretches import EffectAlong, Stretch
 from plainodds.answers.surface import Surface, surface_of
 from plainodds.model.fitted import FittedModel
-from plainodds.model.predictors import PredictorFacts, Subject
+from plainodds.model.predictors import Subject
 from plainodds.scales import odds_from_linear_predictor
 from plainodds.values import Pairs, Scalar, value
 
@@ -147,7 +148,7 @@ def answer_pair(
         sloped=pair.sloped,
         held=pair.held,
         counted=0 if averager is None else averager.population.counted,
-        lines=_lines(model, question, pair, moving) if _tells_chances(model) else None,
+        lines=lines_of(model, question, pair, moving) if _tells_chances(model) else None,
         surface=_surface(model, question, pair, moving) if question.shape == "map" else None,
         effect=effect_along(model, pair, question.scale, moving),
         interaction=_interaction(model, question, pair, averager),
@@ -158,33 +159,6 @@ def answer_pair(
 def _tells_chances(model: FittedModel) -> bool:
     subject = model.subject
     return subject.sampling != "case-control" or subject.prevalence is not None
-
-
-def _lines(
-    model: FittedModel, question: PairQuestion, pair: Settled, averager: Averager | None
-) -> CurveAnswer:
-    """Lines along a number where there is one, by the other predictor."""
-    along, by, by_values = pair.a, pair.b, question.b_values
-    if not along.is_number and by.is_number:
-        along, by, by_values = pair.b, pair.a, question.a_values
-    asked = CurveQuestion(
-        along.name,
-        by.name,
-        by_values=by_values if by.is_number else _levels_known(by),
-        others=question.others,
-        scale=question.scale,
-        at=() if along.is_number else _levels_known(along),
-        level=question.level,
-    )
-    if not isinstance(averager, Exact):
-        return answer_curve(model, asked, averager)
-    return remembered(model, ("lines", asked), lambda: answer_curve(model, asked, averager))
-
-
-def _levels_known(facts: PredictorFacts) -> tuple[Scalar, ...]:
-    """The levels that some row has, where there are others; else nothing need be said."""
-    known = facts.levels_with_rows
-    return () if known == facts.levels else known
 
 
 def _surface(

@@ -133,23 +133,22 @@ def joint_table(answer: PairAnswer) -> pd.DataFrame:
 
 def _without_two_values(answer: PairAnswer) -> str:
     question = answer.question
-    wanting = {
-        name: argument
-        for name, argument, stated in (
-            (question.a, "a_values", question.a_values),
-            (question.b, "b_values", question.b_values),
-        )
-        if answer.subject.predictor(name).is_number and not stated
-    }
-    suggested = []
-    for name, argument in wanting.items():
-        low, _, high = answer.subject.predictor(name).quartiles
-        suggested.append(f"{argument}=({low:g}, {high:g})")
+    wanting, stated = [], []
+    for name, argument, values in (
+        (question.a, "a_values", question.a_values),
+        (question.b, "b_values", question.b_values),
+    ):
+        facts = answer.subject.predictor(name)
+        if values:
+            stated.append(f"{argument}={values!r}")
+        elif facts.is_number:
+            wanting.append(name)
+            stated.append(f"{argument}=({facts.quartiles[0]:g}, {facts.quartiles[2]:g})")
     is_or_are = "is a number" if len(wanting) == 1 else "are numbers"
     return (
         f"A joint table compares two values of each predictor, and {' and '.join(wanting)} "
         f"{is_or_are} without two stated ones. State them: "
-        f"pair({question.a!r}, {question.b!r}, {', '.join(suggested)})."
+        f"pair({question.a!r}, {question.b!r}, {', '.join(stated)})."
     )
 
 

@@ -6,7 +6,7 @@ import statsmodels.api as sm
 import statsmodels.formula.api as smf
 
 import plainodds as po
-from plainodds.answers.averaging import Exact
+from plainodds.answers.averaging import Exact, averaged_own_slope
 from plainodds.answers.population import everyone
 from plainodds.model.products import product, transposed_product
 
@@ -166,3 +166,54 @@ def test_products_in_pieces_are_products(rows):
     matrix = rng.normal(size=(5, 900))
     assert product(one, matrix) == pytest.approx(one @ matrix)
     assert transposed_product(one, other) == pytest.approx(one.T @ other)
+
+
+OWN = {
+    # formula, the sloped number, what everybody is given
+    "levels": ("age_years * material + soil", "age_years", {"material": np.array([0, 1, 2])}),
+    "a spline": (
+        "bs(pressure_m, df=4) * age_years + soil",
+        "pressure_m",
+        {"age_years": GRID},
+    ),
+    "splined by the other": (
+        "bs(pressure_m, df=4) * age_years + I(age_years**2)",
+        "age_years",
+        {"pressure_m": np.array([40.0, 55.0, 70.0])},
+    ),
+    "nothing shared": ("age_years + material", "age_years", {"material": np.array([0, 2])}),
+    "tangled": ("np.log1p(age_years * past_repairs)", "age_years", {"past_repairs": GRID[:2]}),
+}
+
+
+def own_slopes(model, name, moved):
+    return averaged_own_slope(model, name, moved, everyone(model))
+
+
+@pytest.mark.parametrize("case", OWN)
+def test_slopes_at_own_values_are_numeric_derivatives_with_the_other_moved(pipes, case):
+    formula, name, moved = OWN[case]
+    inner = pipes[pipes.pressure_m.between(*np.quantile(pipes.pressure_m, [0.01, 0.99]))]
+    # fitted on all, so that the knots leave room for a step
+    result = smf.logit(f"burst ~ {formula}", pipes).fit(disp=0)
+    model = po.FittedLogit(result).model
+    ((other, values),) = moved.items()
+    levels = np.array(["cast iron", "ductile iron", "PVC"])
+    among = everyone(model).among(pipes.index.isin(inner.index), "pressures within")
+    found = averaged_own_slope(model, name, moved, among).value
+    for value, slope in zip(values, found, strict=True):
+        frame = inner.assign(**{other: levels[value] if other == "material" else value})
+        h = 1e-4
+        up, down = (result.predict(frame.assign(**{name: frame[name] + s})).mean() for s in (h, -h))
+        assert slope == pytest.approx((up - down) / (2 * h), rel=1e-5, abs=1e-9)
+
+
+@pytest.mark.parametrize("case", OWN)
+def test_the_gradient_of_slopes_at_own_values_is_the_numeric_one(pipes, case):
+    formula, name, moved = OWN[case]
+    model = po.FittedLogit(smf.logit(f"burst ~ {formula}", pipes).fit(disp=0)).model
+    found = own_slopes(model, name, moved).gradient
+    numeric = numeric_gradient(
+        lambda c: own_slopes(with_coefficients(model, c), name, moved).value, model.coefficients
+    )
+    assert found == pytest.approx(numeric, rel=1e-5, abs=1e-6 * np.abs(found).max())

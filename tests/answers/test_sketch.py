@@ -62,6 +62,10 @@ def test_moving_every_predictor_needs_no_rest(pipes):
         lambda f: f.change("age_years", 20, 60),
         lambda f: f.change({"age_years": (80, 10), "material": ("PVC", "cast iron")}),
         lambda f: f.change("age_years", 20, 60, where={"soil": "high"}),
+        lambda f: f.pair("age_years", "material", others="observed"),
+        lambda f: f.pair("material", "age_years", others="observed", scale="odds"),
+        lambda f: f.pair("age_years", "pressure_m", others="observed", shape="map"),
+        lambda f: f.pair("soil", "material", others="observed"),
     ],
 )
 def test_an_answer_by_sketch_is_the_exact_one_to_one_in_a_million(fit, ask):
@@ -76,6 +80,20 @@ def test_an_answer_by_sketch_is_the_exact_one_to_one_in_a_million(fit, ask):
     assert one.to_numpy() == pytest.approx(other.to_numpy(), abs=2e-6, rel=2e-6)
 
 
+def test_all_of_a_pair_by_sketch_is_the_exact_one(fit):
+    exact = fit.pair("age_years", "pressure_m", others="observed", shape="map")
+    quick = answer_by_sketch(fit.model, exact.question, sketch_for(fit.model, exact.question))
+    assert quick.surface == exact.surface
+    assert quick.held == exact.held
+    assert quick.counted == exact.counted
+    assert quick.effect.turns == pytest.approx(exact.effect.turns, abs=0.05)
+    for mine, theirs in zip(quick.effect.stretches, exact.effect.stretches, strict=True):
+        assert mine.sign == theirs.sign
+        assert (mine.start, mine.end) == pytest.approx((theirs.start, theirs.end), abs=0.01)
+    for mine, theirs in zip(quick.lines.lines, exact.lines.lines, strict=True):
+        assert mine.estimate == pytest.approx(theirs.estimate, abs=1e-6)
+
+
 @pytest.mark.parametrize(
     "ask",
     [
@@ -85,6 +103,8 @@ def test_an_answer_by_sketch_is_the_exact_one_to_one_in_a_million(fit, ask):
         lambda f: f.change("age_years", 20, 60, sample="drawn"),
         lambda f: f.change("age_years", 20, 60, others="typical"),
         lambda f: f.change("age_years", 20, 60, where=np.arange(1500) < 700),
+        lambda f: f.pair("age_years", "material"),
+        lambda f: f.pair("age_years", "material", others="observed", number="slope"),
     ],
 )
 def test_other_questions_have_no_sketch(fit, ask):
