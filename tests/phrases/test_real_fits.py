@@ -7,6 +7,7 @@ import statsmodels.formula.api as smf
 
 import plainodds as po
 from plainodds.phrases import alternative, words
+from plainodds.phrases.pair_corners import corners
 from tests.phrases.reading import faults, figures, says
 
 PIPES = po.demo.tessel_bay().iloc[:2500]
@@ -183,6 +184,21 @@ def test_the_four_chances_are_those_of_the_profiles(fit):
         for age in (20, 60):
             profile = fit.profile({"age_years": age, "material": material})
             assert says(told, profile.point.probability.estimate, 100)
+
+
+@pytest.mark.parametrize(
+    "names",
+    [("material", "pressure_m"), ("pressure_m", "material"), ("pressure_m", "past_repairs")],
+)
+@pytest.mark.parametrize("others", ["typical", "observed"])
+@pytest.mark.parametrize("scale", ["probability", "odds"])
+def test_the_four_chances_lie_on_the_lines_and_cross_to_the_interaction(fit, names, others, scale):
+    answer = fit.pair(*names, others=others, scale=scale)
+    first, second = corners(answer).differences
+    found = answer.interaction
+    wanted = found.at_profile if others == "typical" else found.averaged
+    assert second - first == pytest.approx(wanted.estimate, abs=1e-12)
+    assert "intervals of the four chances" in str(words(answer))
 
 
 def test_the_four_averages_are_those_of_the_changes(fit):
