@@ -3,32 +3,37 @@
 from plainodds import demo, display
 from plainodds.answers.moves import Shift
 from plainodds.answers.tables import ledger, table
-from plainodds.drawings import draw, save
+from plainodds.drawings import THEMES, Theme, draw, save
 from plainodds.errors import FitRefused, QuestionRefused
 from plainodds.fitted import FittedLogit, odds_of
 from plainodds.model.predictors import Outcome, Predictor
-from plainodds.phrases import alternative, code, words
+from plainodds.phrases import MethodsNote, alternative, caption, code, methods_note, words
 from plainodds.values import from_json, to_json
 from plainodds.views import ChangeView, CurveView, EffectsView, OddsView, ProfileView
 
 __all__ = [
+    "THEMES",
     "ChangeView",
     "CurveView",
     "EffectsView",
     "FitRefused",
     "FittedLogit",
+    "MethodsNote",
     "OddsView",
     "Outcome",
     "Predictor",
     "ProfileView",
     "QuestionRefused",
     "Shift",
+    "Theme",
     "alternative",
+    "caption",
     "code",
     "demo",
     "draw",
     "from_json",
     "ledger",
+    "methods_note",
     "odds_of",
     "save",
     "table",

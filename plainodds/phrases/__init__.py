@@ -3,7 +3,17 @@
 # each kind of answer registers its own words when it is imported
 from plainodds.phrases import change, curve, effects, odds, profile  # noqa: F401
 from plainodds.phrases.alternative import alternative
+from plainodds.phrases.captions import caption
 from plainodds.phrases.code import code
+from plainodds.phrases.methods import MethodsNote, methods_note
 from plainodds.phrases.saying import Words, words
 
-__all__ = ["Words", "alternative", "code", "words"]
+__all__ = [
+    "MethodsNote",
+    "Words",
+    "alternative",
+    "caption",
+    "code",
+    "methods_note",
+    "words",
+]
