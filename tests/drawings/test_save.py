@@ -213,7 +213,7 @@ def test_nasty_labels_make_a_valid_file(tmp_path):
     root = ET.fromstring(path.read_bytes())
     assert not list(root.iter(f"{SVG}img"))
     texts = ["".join(each.itertext()).strip() for each in root.iter(f"{SVG}text")]
-    assert any("<img src=x onerror=alert(1)>" in text for text in texts)
+    assert "<img src=x onerror=alert(1)>" in " ".join(texts)
 
 
 def test_every_answer_can_be_saved(tmp_path, any_answer):
