@@ -7,7 +7,16 @@ from plainodds.drawings import THEMES, Theme, draw, save
 from plainodds.errors import FitRefused, QuestionRefused
 from plainodds.fitted import FittedLogit, odds_of
 from plainodds.model.predictors import Outcome, Predictor
-from plainodds.phrases import MethodsNote, alternative, caption, code, methods_note, words
+from plainodds.phrases import (
+    MethodsNote,
+    ReportTable,
+    alternative,
+    caption,
+    code,
+    methods_note,
+    report_table,
+    words,
+)
 from plainodds.values import from_json, to_json
 from plainodds.views import ChangeView, CurveView, EffectsView, OddsView, ProfileView
 
@@ -24,6 +33,7 @@ __all__ = [
     "Predictor",
     "ProfileView",
     "QuestionRefused",
+    "ReportTable",
     "Shift",
     "Theme",
     "alternative",
@@ -35,6 +45,7 @@ __all__ = [
     "ledger",
     "methods_note",
     "odds_of",
+    "report_table",
     "save",
     "table",
     "to_json",

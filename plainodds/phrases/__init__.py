@@ -6,14 +6,17 @@ from plainodds.phrases.alternative import alternative
 from plainodds.phrases.captions import caption
 from plainodds.phrases.code import code
 from plainodds.phrases.methods import MethodsNote, methods_note
+from plainodds.phrases.reports import ReportTable, report_table
 from plainodds.phrases.saying import Words, words
 
 __all__ = [
     "MethodsNote",
+    "ReportTable",
     "Words",
     "alternative",
     "caption",
     "code",
     "methods_note",
+    "report_table",
     "words",
 ]
