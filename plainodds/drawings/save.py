@@ -10,6 +10,7 @@ from typing import Literal, TypeAlias
 
 from matplotlib.figure import Figure
 
+from plainodds.answers.disclosure import SMALLEST_CELL, guarded
 from plainodds.answers.questions import Answer
 from plainodds.drawings import writers
 from plainodds.drawings.about import About, about
@@ -42,6 +43,7 @@ def save(
     size: Size = "column",
     *,
     theme: str | Theme | None = None,
+    smallest_cell: int = SMALLEST_CELL,
     overwrite: bool = False,
 ) -> Path:
     """Draw an answer and write it as SVG, PDF, PNG or TIFF, by the path's suffix.
@@ -62,6 +64,8 @@ def save(
         needs; a slide (320 × 180 mm); or width and height in millimetres.
     theme : str or Theme, optional
         Default: "slide" for a slide, else "page".
+    smallest_cell : int
+        Counts of fewer rows are merged or withheld in the file.
     overwrite : bool
         Whether a file of that name is replaced.
 
@@ -99,6 +103,7 @@ def save(
         )
     if target.exists() and not overwrite:
         raise FileExistsError(_exists(target))
+    answer = guarded(answer, smallest_cell)
     figure = _figure(answer, size, _theme(theme, size))
     refuse_missing_letters(figure)
     content = _WRITERS[suffix](figure, about(answer))

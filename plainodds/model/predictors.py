@@ -244,6 +244,9 @@ class Subject:
     sampling : {"cohort", "case-control"}
     prevalence : float or None
         The population's share of events, stated for a case-control sample.
+    smallest_cell : int
+        Counts from 1 to it all stand as it, and are read as "up to"; 0 where every count is
+        as it is.
     """
 
     outcome: OutcomeFacts
@@ -256,6 +259,7 @@ class Subject:
     setting: Setting
     sampling: Sampling = "cohort"
     prevalence: float | None = None
+    smallest_cell: int = 0
 
     def predictor(self, name: str) -> PredictorFacts:
         """The facts of one predictor.

@@ -16,13 +16,13 @@ from plainodds.phrases.reports.cells import (
     points_cell,
     ratio_cell,
 )
-from plainodds.phrases.reports.report import ReportTable, report_table
+from plainodds.phrases.reports.report import ReportTable, report_of
 from plainodds.phrases.reports.rows import entry, heading
 
 __all__: list[str] = []
 
 
-@report_table.register
+@report_of.register
 def _(answer: ChangeAnswer) -> ReportTable:
     subject, question, compared = answer.subject, answer.question, answer.comparison
     moves = settled_moves(answer)

@@ -12,7 +12,7 @@ from plainodds.phrases.labels import axis_title, line_label, scale_title, value_
 from plainodds.phrases.numbers import confidence, quantity
 from plainodds.phrases.parts import model_cautions
 from plainodds.phrases.reports.cells import chance_cell, points_cell, ratio_cell, signed_cell
-from plainodds.phrases.reports.report import ReportTable, report_table
+from plainodds.phrases.reports.report import ReportTable, report_of
 from plainodds.phrases.reports.rows import entry
 from plainodds.phrases.units import tidy
 from plainodds.phrases.ways import estimate_at
@@ -28,7 +28,7 @@ _CELLS: dict[Scale, Callable[[Estimate], str]] = {
 }
 
 
-@report_table.register
+@report_of.register
 def _(answer: CurveAnswer) -> ReportTable:
     subject, question = answer.subject, answer.question
     facts = subject.predictor(question.predictor)

@@ -7,13 +7,13 @@ from plainodds.phrases.captions.parts import fitted_words, joined, rest_words
 from plainodds.phrases.labels import effect_label, effects_title, predictor_label, value_label
 from plainodds.phrases.parts import model_cautions
 from plainodds.phrases.reports.cells import interval_title, p_cell, points_cell
-from plainodds.phrases.reports.report import ReportTable, report_table
+from plainodds.phrases.reports.report import ReportTable, report_of
 from plainodds.phrases.reports.rows import ReportRow, entry, heading
 
 __all__: list[str] = []
 
 
-@report_table.register
+@report_of.register
 def _(answer: EffectsAnswer) -> ReportTable:
     subject, question = answer.subject, answer.question
     with_p = not subject.no_interval

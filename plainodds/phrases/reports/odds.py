@@ -20,7 +20,7 @@ from plainodds.phrases.labels import (
 from plainodds.phrases.numbers import NOT_KNOWN
 from plainodds.phrases.parts import model_cautions
 from plainodds.phrases.reports.cells import interval_title, p_cell, ratio_cell
-from plainodds.phrases.reports.report import ReportTable, report_table
+from plainodds.phrases.reports.report import ReportTable, report_of
 from plainodds.phrases.reports.rows import ReportRow, entry, heading, reference
 from plainodds.phrases.units import tidy
 from plainodds.values import Pairs
@@ -28,7 +28,7 @@ from plainodds.values import Pairs
 __all__: list[str] = []
 
 
-@report_table.register
+@report_of.register
 def _(answer: OddsAnswer) -> ReportTable:
     subject, level = answer.subject, answer.question.level
     models = answer.question.models or ("",)

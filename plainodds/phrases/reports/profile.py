@@ -15,7 +15,7 @@ from plainodds.phrases.reports.cells import (
     ratio_cell,
     signed_cell,
 )
-from plainodds.phrases.reports.report import ReportTable, report_table
+from plainodds.phrases.reports.report import ReportTable, report_of
 from plainodds.phrases.reports.rows import ReportRow, entry, heading
 
 __all__: list[str] = []
@@ -23,7 +23,7 @@ __all__: list[str] = []
 _ALL = 1_000_000
 
 
-@report_table.register
+@report_of.register
 def _(answer: ProfileAnswer) -> ReportTable:
     subject, level = answer.subject, answer.question.level
     return ReportTable(

@@ -6,6 +6,7 @@ from dataclasses import dataclass
 from functools import singledispatch
 from typing import Literal
 
+from plainodds.answers.disclosure import SMALLEST_CELL, guarded
 from plainodds.answers.questions import Answer
 from plainodds.phrases.reports.as_csv import csv_of
 from plainodds.phrases.reports.as_html import html_of
@@ -13,7 +14,7 @@ from plainodds.phrases.reports.as_latex import latex_of
 from plainodds.phrases.reports.as_markdown import markdown_of
 from plainodds.phrases.reports.rows import ReportRow
 
-__all__ = ["ReportTable", "report_table"]
+__all__ = ["ReportTable", "report_of", "report_table"]
 
 
 @dataclass(frozen=True)
@@ -71,7 +72,12 @@ class ReportTable:
 
 
 @singledispatch
-def report_table(answer: Answer) -> ReportTable:
+def report_of(answer: Answer) -> ReportTable:
+    """Format one kind of answer; each kind registers its own."""
+    raise TypeError(f"There is no report table of {type(answer).__name__}.")
+
+
+def report_table(answer: Answer, smallest_cell: int = SMALLEST_CELL) -> ReportTable:
     """Format an answer's figures for a report: estimate (interval), references, footnotes.
 
     `plainodds.table` gives the same figures unrounded, one row per estimate.
@@ -79,6 +85,8 @@ def report_table(answer: Answer) -> ReportTable:
     Parameters
     ----------
     answer : Answer
+    smallest_cell : int
+        Counts of fewer rows are withheld.
 
     Returns
     -------
@@ -99,4 +107,4 @@ def report_table(answer: Answer) -> ReportTable:
     >>> report_table(po.FittedLogit(result).odds()).columns
     ('Predictor', 'Odds ratio (95% interval)', 'p-value')
     """
-    raise TypeError(f"There is no report table of {type(answer).__name__}.")
+    return report_of(guarded(answer, smallest_cell) if isinstance(answer, Answer) else answer)
