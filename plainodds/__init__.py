@@ -3,7 +3,7 @@
 from plainodds import demo, display
 from plainodds.answers.moves import Shift
 from plainodds.answers.tables import ledger, table
-from plainodds.dossier import dossier
+from plainodds.dossiers import dossier
 from plainodds.drawings import THEMES, Theme, draw, save
 from plainodds.errors import FitRefused, QuestionRefused
 from plainodds.fitted import FittedLogit, odds_of
