@@ -62,6 +62,11 @@ class FittedLogit:
         The population's share of events, for a case-control sample. Every chance is then
         corrected by shifting the intercept (King & Zeng 2001, Political Analysis 9:137),
         and averages weigh events and non-events to that share; odds ratios stay.
+    causal : bool
+        Whether the design of the study allows to take differences for effects. Otherwise
+        the words say that they are associations.
+    reason : str
+        What makes it so; told wherever the figures are told. Goes with ``causal=True``.
 
     Notes
     -----
@@ -99,6 +104,8 @@ class FittedLogit:
         offset: float | None = None,
         sampling: Sampling | None = None,
         prevalence: float | None = None,
+        causal: bool = False,
+        reason: str = "",
     ) -> None:
         if isinstance(result, FittedLogit):
             raise FitRefused(
@@ -114,6 +121,8 @@ class FittedLogit:
             offset,
             sampling,
             prevalence,
+            causal,
+            reason,
         )
 
     @property

@@ -12,7 +12,7 @@ from matplotlib.lines import Line2D
 from matplotlib.patches import StepPatch
 from matplotlib.transforms import blended_transform_factory
 
-from plainodds.answers.curve import CurveAnswer, CurveLine, Scale
+from plainodds.answers.curve import CurveAnswer, CurveLine, Scale, Support
 from plainodds.drawings.curve_frame import CurveFrame, Rows
 from plainodds.drawings.curve_scale import shown
 from plainodds.drawings.furniture import marker_line
@@ -21,7 +21,7 @@ from plainodds.drawings.lettering import line_height, tick_style
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import label_ticks, round_ticks
 from plainodds.phrases.labels import scale_title
-from plainodds.phrases.numbers import count, quantity
+from plainodds.phrases.numbers import guarded_count, quantity
 
 __all__ = ["CurveDrawing", "LineArtists", "curve_notes"]
 
@@ -108,7 +108,7 @@ class CurveDrawing:
             artists.update(line, answer.question.scale)
             base = -(place + 1) * rows.step
             edges = np.clip(np.asarray(support.edges, dtype=float), lower, upper)
-            heights = _bar_heights(support.counts, rows.height)
+            heights = _bar_heights(support, rows.height)
             artists.support.set_data(base + heights, edges, base)
         ends = [
             vertical.share(_end(line, answer.question.scale), self.frame.logarithmic)
@@ -207,9 +207,11 @@ def _marked_places(points: int, offset: float) -> list[int]:
     return [int(each) for each in np.unique(np.round(steps * (points - 1)))]
 
 
-def _bar_heights(counts: tuple[int, ...], height: float) -> np.ndarray:
+def _bar_heights(support: Support, height: float) -> np.ndarray:
     """Heights in points: each line by itself; a bin with any rows at all can be seen."""
-    share = np.asarray(counts, dtype=float) / max(1, *counts)
+    # bins that were merged are wider than the others
+    density = np.asarray(support.counts, dtype=float) / np.diff(support.edges)
+    share = density / (density.max() or 1.0)
     return height * np.where(share > 0, np.maximum(share, 0.1), 0.0)
 
 
@@ -229,7 +231,9 @@ def _end(line: CurveLine, scale: Scale) -> float:
 def _rows(answer: CurveAnswer, theme: Theme) -> Rows:
     step = (1.45 if len(answer.lines) <= 3 else 1.05) * theme.font_size
     cases = answer.subject.outcome.cases
-    captions = tuple(f"{count(sum(each.counts))} {cases}" for each in answer.support)
+    smallest = answer.subject.smallest_cell
+    totals = [sum(each.counts) for each in answer.support]
+    captions = tuple(f"{guarded_count(total, smallest)} {cases}" for total in totals)
     return Rows(captions, 0.8 * step, step)
 
 

@@ -19,7 +19,7 @@ from plainodds.drawings.lettering import letter, line_height, text_width, tick_s
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import label_ticks
 from plainodds.phrases.labels import scale_title, value_label
-from plainodds.phrases.numbers import chance, count, percentage_points, ratio, signed
+from plainodds.phrases.numbers import chance, count_mark, percentage_points, ratio, signed
 
 __all__ = ["LevelPoints", "LevelsDrawing", "level_labels", "levels_notes"]
 
@@ -121,7 +121,7 @@ class LevelsDrawing:
         for place, (texts, support) in enumerate(zip(self.counts, answer.support, strict=True)):
             by_level = dict(zip(facts.levels, support.counts, strict=False))
             for x, (text, level) in enumerate(zip(texts, at, strict=True)):
-                text.set_text(count(by_level.get(level, 0)))
+                text.set_text(count_mark(by_level.get(level, 0), answer.subject.smallest_cell))
                 text.set_position((x, -beneath - (place + 0.6) * rows.step))
                 needed = text_width(text.get_text(), theme, small)
                 text.set_fontsize(min(small, 0.95 * rows.step, small * room / needed))

@@ -90,7 +90,7 @@ def draw(answer: Answer, ax: Axes | None = None, theme: str | Theme = "page") ->
         labels included; their data coordinates are the answer's, so that more can be drawn
         on them. Without it the answer gets a figure of its own, as high as it needs.
     theme : str or Theme
-        "page", "screen", "screen dark", or a Theme.
+        "page", "screen", "screen dark", "slide", or a Theme.
 
     Returns
     -------

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Hashable
+from collections.abc import Hashable, Iterator
 from typing import Any, Protocol, TypeVar
 
 from matplotlib.axes import Axes
@@ -10,7 +10,7 @@ from matplotlib.axes import Axes
 from plainodds.answers.questions import Answer
 from plainodds.drawings.theme import Theme
 
-__all__ = ["SMALLEST", "Drawing", "fitting_theme"]
+__all__ = ["SMALLEST", "Drawing", "fitting_theme", "smaller_themes"]
 
 A_contra = TypeVar("A_contra", bound=Answer, contravariant=True)
 
@@ -57,8 +57,21 @@ def fitting_theme(
     Down to `SMALLEST` of the size asked for: what doesn't fit then needs a larger picture.
     """
     scaled = theme
-    for factor in _SCALES:
-        scaled = theme.scaled(factor)
+    for scaled in smaller_themes(theme):
         if drawing.least_height(answer, scaled, width) <= height + 0.5:
             break
     return scaled
+
+
+def smaller_themes(theme: Theme, least_letter: float = 0.0) -> Iterator[Theme]:
+    """The theme, then with smaller and smaller letters.
+
+    Parameters
+    ----------
+    theme : Theme
+    least_letter : float
+        In points: no text gets smaller.
+    """
+    scaled = (theme.scaled(factor) for factor in _SCALES)
+    # a hair of slack, so that a size that was asked for exactly is kept
+    return (each for each in scaled if each.small >= least_letter - 1e-9)

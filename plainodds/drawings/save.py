@@ -2,17 +2,23 @@
 
 from __future__ import annotations
 
+import math
 import os
+from collections.abc import Callable
 from pathlib import Path
 from typing import Literal, TypeAlias
 
+from matplotlib.figure import Figure
+
+from plainodds.answers.disclosure import SMALLEST_CELL, guarded
 from plainodds.answers.questions import Answer
 from plainodds.drawings import writers
+from plainodds.drawings.about import About, about
 from plainodds.drawings.draw import BORDER, drawing_of, figure_for, height_for
-from plainodds.drawings.drawing import SMALLEST
+from plainodds.drawings.drawing import smaller_themes
 from plainodds.drawings.geometry import POINTS_PER_INCH
+from plainodds.drawings.letters import refuse_missing_letters
 from plainodds.drawings.theme import Theme, theme_of
-from plainodds.phrases.alternative import alternative
 
 __all__ = ["Size", "save"]
 
@@ -22,13 +28,13 @@ Size: TypeAlias = Literal["column", "page", "slide"] | tuple[float, float]
 _MM_PER_INCH = 25.4
 # width, height (None: as high as the answer needs), size of the letters in points
 _SIZES: dict[str, tuple[float, float | None, float]] = {
-    "column": (88.0, None, 7.0),
+    "column": (88.0, None, 8.0),
     "page": (178.0, None, 9.0),
     "slide": (320.0, 180.0, 18.0),
 }
+_LEAST_LETTER = 7.0  # points: what journals ask of the smallest text
 _LEAST, _MOST = 20.0, 2000.0
 _MOST_PIXELS = 6000
-_SUFFIXES = (".svg", ".pdf", ".png")
 
 
 def save(
@@ -36,23 +42,30 @@ def save(
     path: str | os.PathLike[str],
     size: Size = "column",
     *,
-    theme: str | Theme = "page",
+    theme: str | Theme | None = None,
+    smallest_cell: int = SMALLEST_CELL,
     overwrite: bool = False,
 ) -> Path:
-    """Draw an answer and write it as SVG, PDF or PNG, by the path's suffix.
+    """Draw an answer and write it as SVG, PDF, PNG or TIFF, by the path's suffix.
 
-    Text stays text in SVG and PDF, and its font is in the file; PNG has 600 pixels per
-    inch, fewer where it would have more than 6,000 along a side.
+    Text stays text in SVG and PDF, and its font is in the file; PNG and TIFF have 600
+    pixels per inch, fewer where they would have more than 6,000 along a side. No text is
+    smaller than 7 points. The file says what it is: title, caption, the code that gives
+    its answer again, and the versions of the packages; no user, path or date. So the same
+    answer gives the same file, byte for byte.
 
     Parameters
     ----------
     answer : Answer
     path : path-like
-        Ends in ``.svg``, ``.pdf`` or ``.png``.
+        Ends in ``.svg``, ``.pdf``, ``.png``, ``.tif`` or ``.tiff``.
     size : {"column", "page", "slide"} or (float, float)
         A journal's column (88 mm wide) or page (178 mm wide), both as high as the answer
         needs; a slide (320 × 180 mm); or width and height in millimetres.
-    theme : str or Theme
+    theme : str or Theme, optional
+        Default: "slide" for a slide, else "page".
+    smallest_cell : int
+        Counts of fewer rows are merged or withheld in the file.
     overwrite : bool
         Whether a file of that name is replaced.
 
@@ -64,7 +77,8 @@ def save(
     Raises
     ------
     ValueError
-        If the suffix is none of the three, or the picture cannot have that size.
+        If the suffix is none of these, the picture cannot have that size, or its font
+        lacks letters.
     FileExistsError
         If the file exists and `overwrite` is False.
     TypeError
@@ -82,38 +96,17 @@ def save(
     """
     target = Path(path)
     suffix = target.suffix.lower()
-    if suffix not in _SUFFIXES:
+    if suffix not in _WRITERS:
         raise ValueError(
             f"{target.name!r} does not say what kind of file it is to be: "
-            f"end its name in .svg, .pdf or .png."
+            f"end its name in .svg, .pdf, .png or .tiff."
         )
     if target.exists() and not overwrite:
         raise FileExistsError(_exists(target))
-    width_mm, height_mm, letter = _asked(size)
-    drawing, chosen = drawing_of(answer), theme_of(theme)
-    chosen = chosen.scaled(letter / chosen.font_size)
-    width = width_mm / _MM_PER_INCH * POINTS_PER_INCH
-    natural = height_for(drawing, answer, chosen, width)
-    height = natural if height_mm is None else height_mm / _MM_PER_INCH * POINTS_PER_INCH
-    border = 2 * BORDER * chosen.font_size
-    smallest = chosen.scaled(SMALLEST)
-    least = drawing.least_height(answer, smallest, width - border) + border
-    if height_mm is not None and least > height + 0.5:
-        needed = least / POINTS_PER_INCH * _MM_PER_INCH
-        raise ValueError(
-            f"This picture does not fit into {width_mm:g} × {height_mm:g} mm: at that width it "
-            f"needs a height of {needed:.0f} mm. Ask for a larger size, or for less in the "
-            f'picture; size="page" is as high as the answer needs.'
-        )
-    figure, _ = figure_for(drawing, answer, chosen, width, height)
-    title, description = drawing.title(answer), alternative(answer)
-    if suffix == ".svg":
-        content = writers.svg(figure, title, description)
-    elif suffix == ".pdf":
-        content = writers.pdf(figure, title, description)
-    else:
-        longest = max(width, height) / POINTS_PER_INCH
-        content = writers.png(figure, title, description, min(600.0, _MOST_PIXELS // longest))
+    answer = guarded(answer, smallest_cell)
+    figure = _figure(answer, size, _theme(theme, size))
+    refuse_missing_letters(figure)
+    content = _WRITERS[suffix](figure, about(answer))
     try:
         # in mode "x" the file system itself sees to it that nothing is overwritten
         with target.open("wb" if overwrite else "xb") as file:
@@ -121,6 +114,58 @@ def save(
     except FileExistsError:
         raise FileExistsError(_exists(target)) from None
     return target
+
+
+def _theme(theme: str | Theme | None, size: Size) -> Theme:
+    if theme is None:
+        theme = "slide" if size == "slide" else "page"
+    return theme_of(theme)
+
+
+def _figure(answer: Answer, size: Size, theme: Theme) -> Figure:
+    """The answer in a figure of exactly the size asked for, its letters large enough."""
+    width_mm, height_mm, letter = _asked(size)
+    drawing = drawing_of(answer)
+    theme = theme.scaled(letter / theme.font_size)
+    width = width_mm / _MM_PER_INCH * POINTS_PER_INCH
+    if height_mm is None:
+        height = height_for(drawing, answer, theme, width)
+        return figure_for(drawing, answer, theme, width, height)[0]
+    height = height_mm / _MM_PER_INCH * POINTS_PER_INCH
+    border = 2 * BORDER * theme.font_size
+    least = math.inf
+    for smaller in smaller_themes(theme, _LEAST_LETTER):
+        least = drawing.least_height(answer, smaller, width - border) + border
+        if least <= height + 0.5:
+            return figure_for(drawing, answer, smaller, width, height)[0]
+    needed = least / POINTS_PER_INCH * _MM_PER_INCH
+    raise ValueError(
+        f"This picture does not fit into {width_mm:g} × {height_mm:g} mm: at that width it "
+        f"needs a height of {needed:.0f} mm, so that no letter is smaller than "
+        f"{_LEAST_LETTER:g} points. Ask for a larger size, or for less in the picture; "
+        'size="page" is as high as the answer needs.'
+    )
+
+
+def _png(figure: Figure, told: About) -> bytes:
+    return writers.png(figure, told, _resolution(figure))
+
+
+def _tiff(figure: Figure, told: About) -> bytes:
+    return writers.tiff(figure, told, _resolution(figure))
+
+
+def _resolution(figure: Figure) -> float:
+    return float(min(600.0, _MOST_PIXELS // max(figure.get_size_inches())))
+
+
+_WRITERS: dict[str, Callable[[Figure, About], bytes]] = {
+    ".svg": writers.svg,
+    ".pdf": writers.pdf,
+    ".png": _png,
+    ".tif": _tiff,
+    ".tiff": _tiff,
+}
 
 
 def _exists(target: Path) -> str:

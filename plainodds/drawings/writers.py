@@ -23,12 +23,16 @@ from typing import Any
 from xml.sax.saxutils import escape
 
 import matplotlib as mpl
+import numpy as np
 from matplotlib.backends.backend_agg import FigureCanvasAgg
 from matplotlib.figure import Figure
 from matplotlib.font_manager import FontProperties, findfont
 from matplotlib.text import Text
+from PIL import Image, TiffImagePlugin
 
-__all__ = ["pdf", "png", "svg"]
+from plainodds.drawings.about import About
+
+__all__ = ["pdf", "png", "svg", "tiff"]
 
 _PDF = {
     "pdf.fonttype": 42,
@@ -71,37 +75,50 @@ def _writer(name: str) -> ModuleType:
         return module
 
 
-def pdf(figure: Figure, title: str, description: str) -> bytes:
+def pdf(figure: Figure, about: About) -> bytes:
     """Write a figure as PDF, fonts embedded as TrueType.
 
     Parameters
     ----------
     figure : Figure
         One that nobody else draws on meanwhile.
-    title, description : str
-        For the file's metadata.
+    about : About
+        For the file's metadata: the caption is its subject, the code among its keywords.
     """
     buffer = io.BytesIO()
     canvas = _writer("pdf").FigureCanvasPdf(figure)
-    # without a date equal pictures are equal files
-    about = {"Title": title, "Subject": description, "Creator": "plainodds", "CreationDate": None}
-    canvas.print_pdf(buffer, metadata=about)
+    metadata = {
+        "Title": about.title,
+        "Subject": f"{about.caption}\n\n{about.description}",
+        "Keywords": about.code,
+        "Creator": about.made_with,
+        # without a date equal pictures are equal files
+        "CreationDate": None,
+    }
+    canvas.print_pdf(buffer, metadata=metadata)
     return buffer.getvalue()
 
 
-def svg(figure: Figure, title: str, description: str) -> bytes:
+def svg(figure: Figure, about: About) -> bytes:
     """Write a figure as SVG: text as text, with just the letters used of its font inside.
 
     Parameters
     ----------
     figure : Figure
         One that nobody else draws on meanwhile.
-    title, description : str
+    about : About
         For the file's metadata, and what is read to those who cannot see it.
     """
     buffer = io.StringIO()
     canvas = _writer("svg").FigureCanvasSVG(figure)
-    canvas.print_svg(buffer, metadata={"Title": title, "Creator": "plainodds", "Date": None})
+    metadata = {
+        "Title": about.title,
+        "Description": about.caption,
+        "Source": about.code,
+        "Creator": about.made_with,
+        "Date": None,
+    }
+    canvas.print_svg(buffer, metadata=metadata)
     texts = [text for text in figure.findobj(Text) if text.get_text() and text.get_visible()]
     faces = {(text.get_fontfamily()[0], text.get_fontweight()) for text in texts}
     letters = "".join(sorted({each for text in texts for each in text.get_text()} - {"\n"}))
@@ -109,7 +126,7 @@ def svg(figure: Figure, title: str, description: str) -> bytes:
     head, tag, rest = buffer.getvalue().partition("<svg ")
     opening, bracket, inside = rest.partition(">")
     told = (
-        f"\n <title>{escape(title)}</title>\n <desc>{escape(description)}</desc>"
+        f"\n <title>{escape(about.title)}</title>\n <desc>{escape(about.description)}</desc>"
         f'\n <style type="text/css">{style}</style>'
     )
     return f'{head}{tag}role="img" {opening}{bracket}{told}{inside}'.encode()
@@ -138,19 +155,73 @@ def _face(family: str, weight: str | int, letters: str) -> str:
     )
 
 
-def png(figure: Figure, title: str, description: str, dpi: float) -> bytes:
+def png(figure: Figure, about: About, dpi: float) -> bytes:
     """Write a figure as PNG of about a resolution in pixels per inch.
 
     The resolution in the file makes its whole pixels exactly the figure's size.
     """
-    figure.set_dpi(dpi)
     buffer = io.BytesIO()
+    canvas, resolution = _pixels(figure, dpi)
+    canvas.print_png(  # type: ignore[no-untyped-call]
+        buffer,
+        metadata={
+            "Title": about.title,
+            "Description": f"{about.caption}\n\n{about.description}",
+            "Source": about.code,
+            "Software": about.made_with,
+        },
+        pil_kwargs={"dpi": resolution},
+    )
+    return buffer.getvalue()
+
+
+def tiff(figure: Figure, about: About, dpi: float) -> bytes:
+    """Write a figure as TIFF, compressed without loss, of about a resolution in pixels per inch.
+
+    What the file says of itself stands in its XMP packet (ISO 16684), which holds any letter.
+    """
+    canvas, resolution = _pixels(figure, dpi)
+    canvas.draw()  # type: ignore[no-untyped-call]
+    pixels = np.asarray(canvas.buffer_rgba())  # type: ignore[no-untyped-call]
+    # journals take no transparent TIFF; a picture without paper keeps its own
+    solid = bool((pixels[..., 3] == 255).all())
+    image = Image.fromarray(np.ascontiguousarray(pixels[..., :3]) if solid else pixels)
+    told = TiffImagePlugin.ImageFileDirectory_v2()
+    told[_XMP] = _packet(about).encode()
+    told[_SOFTWARE] = about.made_with
+    buffer = io.BytesIO()
+    image.save(buffer, format="TIFF", compression="tiff_lzw", dpi=resolution, tiffinfo=told)
+    return buffer.getvalue()
+
+
+_XMP, _SOFTWARE = 700, 305
+
+
+def _pixels(figure: Figure, dpi: float) -> tuple[FigureCanvasAgg, tuple[float, float]]:
+    """A canvas of whole pixels, and the resolution at which they are the figure's size."""
+    figure.set_dpi(dpi)
     canvas = FigureCanvasAgg(figure)
     pixels = canvas.get_width_height()
     width, height = figure.get_size_inches()
-    canvas.print_png(  # type: ignore[no-untyped-call]
-        buffer,
-        metadata={"Title": title, "Description": description},
-        pil_kwargs={"dpi": (pixels[0] / width, pixels[1] / height)},
+    return canvas, (pixels[0] / width, pixels[1] / height)
+
+
+def _packet(about: About) -> str:
+    """An XMP packet of Dublin Core terms."""
+    parts = {
+        "title": f'<rdf:Alt><rdf:li xml:lang="x-default">{escape(about.title)}</rdf:li></rdf:Alt>',
+        "description": (
+            '<rdf:Alt><rdf:li xml:lang="x-default">'
+            f"{escape(about.caption)}\n\n{escape(about.description)}</rdf:li></rdf:Alt>"
+        ),
+        "source": escape(about.code),
+    }
+    told = "".join(f"<dc:{name}>{part}</dc:{name}>" for name, part in parts.items())
+    return (
+        '<?xpacket begin="\ufeff" id="W5M0MpCehiHzreSzNTczkc9d"?>'
+        '<x:xmpmeta xmlns:x="adobe:ns:meta/">'
+        '<rdf:RDF xmlns:rdf="http://www.w3.org/1999/02/22-rdf-syntax-ns#">'
+        '<rdf:Description rdf:about="" xmlns:dc="http://purl.org/dc/elements/1.1/">'
+        f"{told}</rdf:Description></rdf:RDF></x:xmpmeta>"
+        '<?xpacket end="r"?>'
     )
-    return buffer.getvalue()

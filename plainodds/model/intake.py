@@ -48,6 +48,8 @@ def take_in(
     offset: float | None,
     sampling: Sampling | None,
     prevalence: float | None,
+    causal: bool = False,
+    reason: str = "",
 ) -> FittedModel:
     """Take a fitted statsmodels result in.
 
@@ -59,7 +61,9 @@ def take_in(
         With the reason and the way out.
     """
     refuse_other_models(result)
-    stated = read_statements(predictors, outcome, derived, functions, offset, sampling, prevalence)
+    stated = read_statements(
+        predictors, outcome, derived, functions, offset, sampling, prevalence, causal, reason
+    )
     source = source_of(result, data, stated.functions)
     modelled = modelled_outcome(result.model, source.outcome)
     turned = must_turn(modelled, stated.outcome)
@@ -102,6 +106,8 @@ def take_in(
             with_data=data is not None,
             sampling=sampling,
             prevalence=stated.prevalence,
+            causal=stated.causal,
+            reason=stated.reason,
         ),
         sampling=stated.sampling,
         prevalence=stated.prevalence,

@@ -4,13 +4,13 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 from dataclasses import dataclass
-from typing import Any
+from typing import Any, get_args
 
 import numpy as np
 from numpy.typing import NDArray
 
 from plainodds.errors import FitRefused
-from plainodds.model.predictors import Outcome, OutcomeFacts
+from plainodds.model.predictors import Outcome, OutcomeFacts, Stakes
 from plainodds.values import Scalar
 
 __all__ = ["Modelled", "modelled_outcome", "must_turn", "outcome_facts"]
@@ -147,8 +147,17 @@ def outcome_facts(
             f"outcome=Outcome(level={modelled.other!r})."
         )
     cases = stated.cases or (f"{stated.case}s" if stated.case else "cases")
-    facts = OutcomeFacts(modelled.name, event, stated.case or "case", cases, level, share)
+    facts = OutcomeFacts(
+        modelled.name, event, stated.case or "case", cases, level, share, _stakes(stated.stakes)
+    )
     return facts, tuple(notices)
+
+
+def _stakes(stated: Stakes | None) -> Stakes | None:
+    if stated is not None and stated not in get_args(Stakes):
+        known = ", ".join(repr(each) for each in get_args(Stakes))
+        raise FitRefused(f"Outcome(stakes={stated!r}): choose one of {known}, or leave it out.")
+    return stated
 
 
 def must_turn(modelled: Modelled, stated: Outcome | None) -> bool:

@@ -22,6 +22,8 @@ __all__ = ["Kind", "Outcome", "OutcomeFacts", "Predictor", "PredictorFacts", "Se
 Kind: TypeAlias = Literal["number", "whole number", "yes/no", "category"]
 Sampling: TypeAlias = Literal["cohort", "case-control"]
 """How the rows came: as they are, or chosen by their outcome."""
+Stakes: TypeAlias = Literal["health", "safety", "money", "rights"]
+"""What a wrong reading can hurt."""
 
 
 @value
@@ -89,6 +91,9 @@ class Outcome:
     level : scalar, optional
         The outcome's level whose chance is wanted. Where the fit modelled the other
         one, every sign is turned and a notice says so.
+    stakes : {"health", "safety", "money", "rights"}, optional
+        What a wrong reading can hurt. The words then carry the usual cautions: about groups
+        and individuals, and about the rules and people to whom a decision belongs.
 
     Examples
     --------
@@ -100,6 +105,7 @@ class Outcome:
     case: str | None = None
     cases: str | None = None
     level: Scalar | None = None
+    stakes: Stakes | None = None
 
 
 @value
@@ -196,6 +202,7 @@ class OutcomeFacts:
     cases: str
     level: Scalar | None
     share: float
+    stakes: Stakes | None = None
 
 
 @value
@@ -210,6 +217,8 @@ class Setting:
     with_data: bool = False
     sampling: Sampling | None = None
     prevalence: float | None = None
+    causal: bool = False
+    reason: str = ""
 
 
 @value
@@ -235,6 +244,9 @@ class Subject:
     sampling : {"cohort", "case-control"}
     prevalence : float or None
         The population's share of events, stated for a case-control sample.
+    smallest_cell : int
+        Counts from 1 to it all stand as it, and are read as "up to"; 0 where every count is
+        as it is.
     """
 
     outcome: OutcomeFacts
@@ -247,6 +259,7 @@ class Subject:
     setting: Setting
     sampling: Sampling = "cohort"
     prevalence: float | None = None
+    smallest_cell: int = 0
 
     def predictor(self, name: str) -> PredictorFacts:
         """The facts of one predictor.

@@ -24,6 +24,8 @@ class Statements:
     offset: float | None
     sampling: Sampling
     prevalence: float | None
+    causal: bool
+    reason: str
 
 
 def read_statements(
@@ -34,6 +36,8 @@ def read_statements(
     offset: Any,
     sampling: Any,
     prevalence: Any,
+    causal: Any = False,
+    reason: Any = "",
 ) -> Statements:
     """Read the analyst's statements, which need not be of the right kind.
 
@@ -82,7 +86,25 @@ def read_statements(
         None if offset is None else float(offset),
         _sampling(sampling, prevalence),
         None if prevalence is None else float(prevalence),
+        *_causal(causal, reason),
     )
+
+
+def _causal(causal: Any, reason: Any) -> tuple[bool, str]:
+    if not isinstance(causal, bool) or not isinstance(reason, str):
+        raise FitRefused(
+            f"causal={causal!r}, reason={reason!r}: state causal=True and, in words, what makes "
+            "it so."
+        )
+    reason = " ".join(reason.split())
+    if causal and not reason:
+        raise FitRefused(
+            "causal=True needs a reason, which is told wherever the figures are told: for example "
+            "reason='mains were chosen for relining by lot'."
+        )
+    if reason and not causal:
+        raise FitRefused(f"reason={reason!r} goes with causal=True; state both or neither.")
+    return causal, reason
 
 
 def _sampling(sampling: Any, prevalence: Any) -> Sampling:

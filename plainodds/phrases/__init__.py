@@ -3,7 +3,20 @@
 # each kind of answer registers its own words when it is imported
 from plainodds.phrases import change, curve, effects, odds, pair, profile  # noqa: F401
 from plainodds.phrases.alternative import alternative
+from plainodds.phrases.captions import caption
 from plainodds.phrases.code import code
+from plainodds.phrases.methods import MethodsNote, methods_note
+from plainodds.phrases.reports import ReportTable, report_table
 from plainodds.phrases.saying import Words, words
 
-__all__ = ["Words", "alternative", "code", "words"]
+__all__ = [
+    "MethodsNote",
+    "ReportTable",
+    "Words",
+    "alternative",
+    "caption",
+    "code",
+    "methods_note",
+    "report_table",
+    "words",
+]

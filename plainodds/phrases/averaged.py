@@ -10,7 +10,7 @@ from plainodds.answers.estimate import Estimate
 from plainodds.answers.where import Mask, Where
 from plainodds.model.predictors import PredictorFacts, Subject
 from plainodds.phrases.labels import from_to, listed, predictor_name, value_label
-from plainodds.phrases.numbers import count
+from plainodds.phrases.numbers import guarded_count
 from plainodds.phrases.units import tidy
 
 __all__ = ["cases_chosen", "drawn_method", "drawn_words", "rows_chosen"]
@@ -20,7 +20,7 @@ def cases_chosen(subject: Subject, where: Where, counted: int) -> str:
     """Whom an average is about: "pipes like those in the data", "pipes with soil high"."""
     cases = tidy(subject.outcome.cases)
     if isinstance(where, Mask):
-        rows = "1 row" if counted == 1 else f"{count(counted)} rows"
+        rows = _rows(subject, counted)
         return f"the {cases} chosen ({rows})"
     if not where:
         return f"{cases} like those in the data"
@@ -29,10 +29,15 @@ def cases_chosen(subject: Subject, where: Where, counted: int) -> str:
 
 def rows_chosen(subject: Subject, where: Where, counted: int) -> str:
     """The rows averaged over: "1,234 rows with soil high"."""
-    rows = "1 row" if counted == 1 else f"{count(counted)} rows"
+    rows = _rows(subject, counted)
     if isinstance(where, Mask):
         return f"{rows} chosen by a mask"
     return f"{rows} with {_values(subject, where)}" if where else rows
+
+
+def _rows(subject: Subject, counted: int) -> str:
+    told = guarded_count(counted, subject.smallest_cell)
+    return "1 row" if told == "1" else f"{told} rows"
 
 
 def _values(subject: Subject, where: tuple[tuple[str, Any], ...]) -> str:

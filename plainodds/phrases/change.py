@@ -28,7 +28,7 @@ from plainodds.phrases.numbers import (
     span,
 )
 from plainodds.phrases.parts import (
-    ASSOCIATION,
+    association,
     beyond_saying,
     chance_with_interval,
     covariance_words,
@@ -81,7 +81,7 @@ def _words(answer: ChangeAnswer, told: list[str], more: list[str]) -> Words:
         *beyond_cautions(answer),
         *odds_ratio_cautions((answer.start.estimate, answer.end.estimate)),
         *_of_averages(answer),
-        ASSOCIATION,
+        association(answer.subject),
         *more,
         *([beyond_saying("this change")] if is_beyond_saying(odds_ratio) else []),
     ]

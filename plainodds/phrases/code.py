@@ -171,6 +171,9 @@ def _stated(setting: Setting) -> list[_Piece]:
         stated.append(_Text(_atom(setting.sampling), "sampling="))
     if setting.prevalence is not None:
         stated.append(_Text(_atom(setting.prevalence), "prevalence="))
+    if setting.causal:
+        stated.append(_Text("True", "causal="))
+        stated.append(_Text(_atom(setting.reason), "reason="))
     return stated
 
 

@@ -19,7 +19,7 @@ from plainodds.phrases.labels import (
 )
 from plainodds.phrases.numbers import chance, confidence, count, denominator, frequencies
 from plainodds.phrases.parts import (
-    ASSOCIATION,
+    association,
     covariance_words,
     model_cautions,
     rows_words,
@@ -57,7 +57,7 @@ def _plain(answer: CurveAnswer) -> Words:
 
 
 def _words(answer: CurveAnswer, told: Sequence[str]) -> Words:
-    cautions = map(sentence, (*beyond_words(answer), ASSOCIATION))
+    cautions = map(sentence, (*beyond_words(answer), association(answer.subject)))
     return Words(
         tuple(map(sentence, told)),
         (

@@ -27,7 +27,7 @@ from plainodds.phrases.numbers import (
     percentage_points,
 )
 from plainodds.phrases.parts import (
-    ASSOCIATION,
+    association,
     covariance_words,
     difference_with_interval,
     model_cautions,
@@ -67,7 +67,10 @@ def _words(answer: EffectsAnswer, told: list[str], more: list[str]) -> Words:
     held = not _is_averaged(answer)
     return Words(
         tuple(map(sentence, told)),
-        (*map(sentence, (ASSOCIATION, *more)), *model_cautions(answer.subject, offset_held=held)),
+        (
+            *map(sentence, (association(answer.subject), *more)),
+            *model_cautions(answer.subject, offset_held=held),
+        ),
     )
 
 

@@ -6,7 +6,7 @@ import math
 
 from plainodds.answers.profile import ProfileAnswer, ProfilePoint
 from plainodds.phrases.labels import listed, predictor_name, value_label
-from plainodds.phrases.numbers import count, quantity
+from plainodds.phrases.numbers import guarded_count, quantity
 from plainodds.phrases.parts import rows_words
 from plainodds.phrases.units import with_unit
 
@@ -18,7 +18,8 @@ def familiarity_words(answer: ProfileAnswer) -> list[str]:
     found = answer.point.familiarity
     if found.verdict != "familiar" or found.rows_alike == 0:
         return []
-    are = "is 1 row" if found.rows_alike == 1 else f"are {count(found.rows_alike)} rows"
+    alike = guarded_count(found.rows_alike, answer.subject.smallest_cell)
+    are = "is 1 row" if alike == "1" else f"are {alike} rows"
     return [f"There {are} much like this profile among the {rows_words(answer.subject)}"]
 
 
@@ -57,7 +58,8 @@ def _cautions(answer: ProfileAnswer, point: ProfilePoint, which: str) -> list[st
         return [
             f"None of the {rows_words(subject)} is much like {which}, so take its chance with care"
         ]
-    alike = "1 row is" if found.rows_alike == 1 else f"{count(found.rows_alike)} rows are"
+    told = guarded_count(found.rows_alike, subject.smallest_cell)
+    alike = "1 row is" if told == "1" else f"{told} rows are"
     return [
         f"Only {alike} much like {which}, and its values are combined more unusually than in 99% "
         "of rows"

@@ -32,7 +32,7 @@ from plainodds.phrases.numbers import (
     ratio,
 )
 from plainodds.phrases.parts import (
-    ASSOCIATION,
+    association,
     beyond_saying,
     is_beyond_saying,
     model_cautions,
@@ -67,7 +67,7 @@ def _plain(answer: OddsAnswer) -> Words:
         for row, move in zip(answer.rows, moves, strict=True)
     ]
     start = [] if math.isnan(typical) else [_typical(answer, over)]
-    cautions = (*_reading(answer, known), ASSOCIATION, *_cautions(answer))
+    cautions = (*_reading(answer, known), association(answer.subject), *_cautions(answer))
     return Words((*start, *told), (*cautions, *model_cautions(answer.subject)))
 
 
@@ -234,7 +234,7 @@ def _technical(answer: OddsAnswer) -> Words:
     if any(row.odds_ratio.lower is not None for row in answer.rows):
         method += f"; {interval_method(answer)}"
     reading = _reading(answer, [_typical_chance(answer)])
-    cautions = (*reading, ASSOCIATION, *_cautions(answer))
+    cautions = (*reading, association(answer.subject), *_cautions(answer))
     return Words((*told, sentence(method)), (*cautions, *model_cautions(subject)))
 
 

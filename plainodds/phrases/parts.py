@@ -24,12 +24,13 @@ from plainodds.phrases.numbers import (
     span,
     told_apart,
 )
+from plainodds.phrases.stakes import stakes_cautions
 from plainodds.phrases.units import tidy
 from plainodds.values import Pairs
 
 __all__ = [
-    "ASSOCIATION",
     "article",
+    "association",
     "beyond_saying",
     "case_words",
     "chance_with_interval",
@@ -52,11 +53,6 @@ __all__ = [
     "typical_words",
 ]
 
-ASSOCIATION = (
-    "These figures say what goes with what in the data; they do not say what would follow "
-    "if a value were changed on purpose."
-)
-
 _COVARIANCE = {
     "nonrobust": "the model-based covariance matrix",
     "cluster": "a cluster-robust covariance matrix",
@@ -71,6 +67,20 @@ _COVARIANCE = {
 _LISTED_AT_MOST = 8
 _BEYOND_SAYING = 1000.0
 _RARE = 0.10
+
+
+def association(subject: Subject) -> str:
+    """Whether the figures speak of what goes together, or of what follows from what."""
+    if subject.setting.causal:
+        return (
+            "The figures are read as effects on the analyst's word, for this reason: "
+            f"{subject.setting.reason.rstrip('.')}. The model itself cannot tell an effect from "
+            "an association."
+        )
+    return (
+        "These figures say what goes with what in the data; they do not say what would follow "
+        "if a value were changed on purpose."
+    )
 
 
 def sentence(text: str) -> str:
@@ -213,7 +223,8 @@ def model_cautions(subject: Subject, *, offset_held: bool = True) -> tuple[str, 
             held = "here each row keeps its own"
         cautions.append(f"The model has an offset, an amount that is taken as known; {held}.")
     cautions += _sampling_cautions(subject)
-    return (*cautions, *(sentence(notice) for notice in subject.notices))
+    cautions += (sentence(notice) for notice in subject.notices)
+    return (*cautions, *stakes_cautions(subject.outcome))
 
 
 def _sampling_cautions(subject: Subject) -> list[str]:

@@ -18,7 +18,7 @@ from plainodds.phrases.numbers import (
     signed,
 )
 from plainodds.phrases.parts import (
-    ASSOCIATION,
+    association,
     beyond_saying,
     case_words,
     chance_with_interval,
@@ -63,7 +63,7 @@ def _plain(answer: ProfileAnswer) -> Words:
 
 
 def _words(answer: ProfileAnswer, told: list[str]) -> Words:
-    cautions = [*familiarity_cautions(answer), *_reading(answer), ASSOCIATION]
+    cautions = [*familiarity_cautions(answer), *_reading(answer), association(answer.subject)]
     if answer.comparison is not None and is_beyond_saying(answer.comparison.odds_ratio):
         cautions.append(beyond_saying("this comparison"))
     return Words(

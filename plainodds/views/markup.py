@@ -1,8 +1,7 @@
-"""The one place where HTML is made: whatever is text is escaped, always.
+"""What views show, as HTML: they hand text over and get `Markup` back.
 
-Labels, levels, column names and messages may be any text, and a notebook runs the
-HTML that it is given. So nothing else in this package writes a tag: views hand text
-over and get `Markup` back, and only `Markup` passes through unescaped.
+Labels, levels, column names and messages may be any text, and a notebook runs the HTML
+that it is given. So every tag comes from `plainodds.elements`, which escapes text.
 """
 
 from __future__ import annotations
@@ -10,8 +9,8 @@ from __future__ import annotations
 from base64 import b64encode
 from collections.abc import Iterable, Sequence
 from dataclasses import dataclass
-from html import escape
 
+from plainodds.elements import Markup, element, joined
 from plainodds.phrases import Words
 
 __all__ = [
@@ -33,40 +32,6 @@ __all__ = [
     "waiting",
     "words_block",
 ]
-
-_VOID = frozenset({"br", "hr", "img"})
-
-
-class Markup(str):
-    """Text that is HTML already. Only this module makes it."""
-
-    __slots__ = ()
-
-
-def element(tag: str, *children: str, **attributes: str | int | None) -> Markup:
-    """Write one element; children that are not `Markup` are text and escaped.
-
-    Attributes that are None are left out; ``class_`` and ``aria_label`` stand for
-    names that Python cannot spell.
-
-    Examples
-    --------
-    >>> element("p", "1 < 2", class_="note")
-    '<p class="note">1 &lt; 2</p>'
-    """
-    written = "".join(
-        f' {name.rstrip("_").replace("_", "-")}="{escape(str(held), quote=True)}"'
-        for name, held in attributes.items()
-        if held is not None
-    )
-    if tag in _VOID:
-        return Markup(f"<{tag}{written}>")
-    return Markup(f"<{tag}{written}>{joined(children)}</{tag}>")
-
-
-def joined(children: Iterable[str]) -> Markup:
-    """Put pieces one after the other, escaping those that are text."""
-    return Markup("".join(each if isinstance(each, Markup) else escape(each) for each in children))
 
 
 def style_sheet(rules: str, on_load: str | None = None) -> Markup:

@@ -4,12 +4,15 @@ import subprocess
 import threading
 import xml.etree.ElementTree as ET
 import zlib
+from dataclasses import replace
 
 import matplotlib as mpl
 import pytest
+from matplotlib import ft2font
 from PIL import Image
 
 from plainodds.drawings import save
+from plainodds.phrases import caption
 from tests.drawings import made
 
 SVG = "{http://www.w3.org/2000/svg}"
@@ -18,7 +21,7 @@ MM = 72 / 25.4
 
 def size_of(path):
     """Width and height of a file in millimetres, as it says itself."""
-    if path.suffix == ".png":
+    if path.suffix in (".png", ".tiff"):
         image = Image.open(path)
         return tuple(n / dpi * 25.4 for n, dpi in zip(image.size, image.info["dpi"], strict=True))
     text = path.read_bytes().decode("latin-1")
@@ -29,7 +32,7 @@ def size_of(path):
     return tuple(float(root.get(side).removesuffix("pt")) / MM for side in ("width", "height"))
 
 
-@pytest.mark.parametrize("suffix", [".svg", ".pdf", ".png"])
+@pytest.mark.parametrize("suffix", [".svg", ".pdf", ".png", ".tiff"])
 @pytest.mark.parametrize(
     ("size", "expected"),
     [("column", (88, None)), ("page", (178, None)), ("slide", (320, 180)), ((120, 90), (120, 90))],
@@ -91,7 +94,7 @@ def test_text_in_pdf_can_be_read_out(tmp_path):
 
 
 def test_equal_pictures_are_equal_files(tmp_path):
-    for suffix in (".svg", ".pdf", ".png"):
+    for suffix in (".svg", ".pdf", ".png", ".tiff"):
         one = save(made.curve_by_material(), tmp_path / f"one{suffix}").read_bytes()
         other = save(made.curve_by_material(), tmp_path / f"other{suffix}").read_bytes()
         assert one == other
@@ -149,9 +152,9 @@ def test_two_files_can_be_written_at_once(tmp_path):
     assert len({(tmp_path / f"{number}.pdf").read_bytes() for number in range(3)}) == 1
 
 
-@pytest.mark.parametrize("name", ["fig.jpg", "fig", "fig.pdf.bak", "fig.tiff"])
+@pytest.mark.parametrize("name", ["fig.jpg", "fig", "fig.pdf.bak", "fig.eps"])
 def test_an_unknown_suffix_is_refused_with_the_way_out(tmp_path, name):
-    with pytest.raises(ValueError, match=r"\.svg, \.pdf or \.png"):
+    with pytest.raises(ValueError, match=r"\.svg, \.pdf, \.png or \.tiff"):
         save(made.odds_answer(), tmp_path / name)
     assert not list(tmp_path.iterdir())
 
@@ -206,14 +209,96 @@ def test_a_path_may_be_text_and_is_given_back(tmp_path):
 
 
 def test_nasty_labels_make_a_valid_file(tmp_path):
-    path = save(made.odds_nasty(), tmp_path / "fig.svg")
+    path = save(made.odds_nasty(), tmp_path / "fig.svg", "page")
     root = ET.fromstring(path.read_bytes())
     assert not list(root.iter(f"{SVG}img"))
     texts = ["".join(each.itertext()).strip() for each in root.iter(f"{SVG}text")]
-    assert any("<img src=x onerror=alert(1)>" in text for text in texts)
+    assert "<img src=x onerror=alert(1)>" in " ".join(texts)
 
 
 def test_every_answer_can_be_saved(tmp_path, any_answer):
     path = save(any_answer, tmp_path / "fig.pdf", "page")
     streams = re.findall(rb"stream\r?\n(.*?)\r?\nendstream", path.read_bytes(), re.DOTALL)
     assert any(b"TJ" in zlib.decompress(each) for each in streams if each[:1] == b"x")
+
+
+def told_by(path):
+    """All that a file says of itself, as text."""
+    if path.suffix == ".png":
+        return "\n".join(str(each) for each in Image.open(path).text.values())
+    if path.suffix == ".tiff":
+        tags = Image.open(path).tag_v2
+        told = ET.fromstring(re.search(rb"<x:xmpmeta.*</x:xmpmeta>", tags[700], re.DOTALL)[0])
+        return "".join(told.itertext()) + tags[305]
+    if path.suffix == ".svg":
+        root = ET.fromstring(path.read_bytes())
+        return "".join(root.find(f"{SVG}metadata").itertext())
+    read = subprocess.run(["pdfinfo", path], capture_output=True, text=True, check=True)
+    return read.stdout
+
+
+@pytest.mark.parametrize("suffix", [".svg", ".png", ".tiff", ".pdf"])
+def test_a_file_says_what_it_shows_and_how_to_make_it_again(tmp_path, suffix):
+    if suffix == ".pdf" and shutil.which("pdfinfo") is None:
+        pytest.skip("pdfinfo (poppler-utils) is not installed")
+    answer = made.odds_answer()
+    told = told_by(save(answer, tmp_path / f"fig{suffix}"))
+    assert "Odds of burst this winter" in told
+    assert caption(answer)[:60] in told
+    assert "answer = fit.odds(" in told
+    assert re.search(r"plainodds \d.*matplotlib \d", told)
+    assert str(tmp_path) not in told
+
+
+def test_a_tiff_has_the_pictures_pixels_and_no_transparency(tmp_path):
+    png = Image.open(save(made.odds_answer(), tmp_path / "fig.png")).convert("RGB")
+    tiff = Image.open(save(made.odds_answer(), tmp_path / "fig.tiff"))
+    assert tiff.mode == "RGB"
+    assert tiff.info["compression"] == "tiff_lzw"
+    assert tiff.info["dpi"][0] == pytest.approx(600, abs=0.5)
+    assert tiff.tobytes() == png.tobytes()
+
+
+@pytest.mark.parametrize("size", ["column", "page", (60, 90), (100, 100)])
+def test_no_letter_is_smaller_than_seven_points(tmp_path, size):
+    root = ET.fromstring(save(made.curve_by_material(), tmp_path / "f.svg", size).read_bytes())
+    sizes = [
+        float(found[1])
+        for each in root.iter(f"{SVG}text")
+        if (found := re.search(r"font(?:-size)?: ?(?:[a-z0-9]+ )?([\d.]+)px", each.get("style")))
+    ]
+    assert len(sizes) == len(list(root.iter(f"{SVG}text")))
+    assert min(sizes) >= 7.0
+
+
+def test_letters_that_the_font_lacks_are_refused_with_the_way_out(tmp_path):
+    answer = made.odds_answer()
+    event = "破裂"
+    outcome = replace(answer.subject.outcome, event=event)
+    answer = replace(answer, subject=replace(answer.subject, outcome=outcome))
+    with pytest.raises(ValueError, match=r"DejaVu Sans has no letter for.*破.*THEMES") as refused:
+        save(answer, tmp_path / "fig.pdf")
+    assert "font=" in str(refused.value)
+    assert not list(tmp_path.iterdir())
+
+
+@pytest.mark.skipif(not hasattr(ft2font, "__libraqm_version__"), reason="needs matplotlib 3.11")
+def test_labels_from_right_to_left_are_set_in_their_order(tmp_path):
+    facts = replace(made.TOWN[0], label="גיל")
+    about = made.subject((facts, *made.TOWN[1:]))
+    save(made.odds_answer(about=about), tmp_path / "fig.pdf")
+
+
+def test_without_shaping_labels_from_right_to_left_are_refused(tmp_path, monkeypatch):
+    monkeypatch.delattr(ft2font, "__libraqm_version__", raising=False)
+    facts = replace(made.TOWN[0], label="גיל")
+    about = made.subject((facts, *made.TOWN[1:]))
+    with pytest.raises(ValueError, match=r"right to left.*matplotlib 3\.11"):
+        save(made.odds_answer(about=about), tmp_path / "fig.pdf")
+
+
+def test_a_slide_has_the_slides_theme_unless_told_otherwise(tmp_path):
+    answer = made.curve_by_material()
+    default = save(answer, tmp_path / "a.svg", "slide").read_bytes()
+    assert default == save(answer, tmp_path / "b.svg", "slide", theme="slide").read_bytes()
+    assert default != save(answer, tmp_path / "c.svg", "slide", theme="page").read_bytes()

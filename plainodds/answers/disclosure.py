@@ -1,0 +1,127 @@
+"""Counts of few rows merged or withheld, before an answer leaves the notebook.
+
+An answer holds no rows, but a count of one or two can be as telling. In a guarded answer
+neighbouring bins are merged until each holds enough, and a count from 1 to the smallest
+cell stands as the smallest cell itself, to be read as "up to": `Subject.smallest_cell`
+says so. Source: common practice in official statistics; the size is the analyst's to set,
+local rules come first.
+"""
+
+from __future__ import annotations
+
+from dataclasses import replace
+from functools import singledispatch
+
+from plainodds.answers.change import ChangeAnswer
+from plainodds.answers.curve import CurveAnswer
+from plainodds.answers.effects import EffectsAnswer
+from plainodds.answers.familiarity import Familiarity
+from plainodds.answers.profile import ProfileAnswer
+from plainodds.answers.questions import Answer
+from plainodds.answers.support import Support
+from plainodds.errors import QuestionRefused
+from plainodds.model.predictors import PredictorFacts, Subject
+
+__all__ = ["SMALLEST_CELL", "guarded"]
+
+SMALLEST_CELL = 10
+"""Counts of fewer rows do not leave, unless the analyst sets another number."""
+
+
+def guarded(answer: Answer, smallest_cell: int = SMALLEST_CELL) -> Answer:
+    """The same answer without counts from 1 to below the smallest cell.
+
+    Parameters
+    ----------
+    answer : Answer
+    smallest_cell : int
+        At least 1; with 1 nothing is withheld.
+
+    Raises
+    ------
+    QuestionRefused
+        If it is no whole number of at least 1.
+    """
+    if isinstance(smallest_cell, bool) or not isinstance(smallest_cell, int) or smallest_cell < 1:
+        raise QuestionRefused(
+            f"smallest_cell={smallest_cell!r}: state the smallest count that may leave, a whole "
+            "number of at least 1, as 10."
+        )
+    if smallest_cell == 1:
+        return answer
+    return _without_small(_about(answer, smallest_cell), smallest_cell)
+
+
+def _about(answer: Answer, smallest: int) -> Answer:
+    subject: Subject = replace(
+        answer.subject,
+        smallest_cell=smallest,
+        predictors=tuple(_facts(each, smallest) for each in answer.subject.predictors),
+    )
+    return replace(answer, subject=subject)  # type: ignore[type-var]
+
+
+def _facts(facts: PredictorFacts, smallest: int) -> PredictorFacts:
+    return replace(
+        facts, level_counts=tuple(_raised(each, smallest) for each in facts.level_counts)
+    )
+
+
+def _raised(count: int, smallest: int) -> int:
+    return smallest if 0 < count < smallest else count
+
+
+@singledispatch
+def _without_small(answer: Answer, smallest: int) -> Answer:
+    """The answer without small counts of its own; most kinds hold none."""
+    return answer
+
+
+@_without_small.register
+def _(answer: CurveAnswer, smallest: int) -> Answer:
+    return replace(answer, support=tuple(_merged(each, smallest) for each in answer.support))
+
+
+@_without_small.register
+def _(answer: ProfileAnswer, smallest: int) -> Answer:
+    return replace(
+        answer,
+        point=replace(answer.point, familiarity=_familiar(answer.point.familiarity, smallest)),
+        start=replace(answer.start, familiarity=_familiar(answer.start.familiarity, smallest)),
+    )
+
+
+def _familiar(found: Familiarity, smallest: int) -> Familiarity:
+    return replace(found, rows_alike=_raised(found.rows_alike, smallest))
+
+
+@_without_small.register
+def _(answer: EffectsAnswer, smallest: int) -> Answer:
+    return replace(answer, counted=tuple(_raised(each, smallest) for each in answer.counted))
+
+
+@_without_small.register
+def _(answer: ChangeAnswer, smallest: int) -> Answer:
+    return replace(answer, counted=_raised(answer.counted, smallest))
+
+
+def _merged(support: Support, smallest: int) -> Support:
+    """Bins merged with their neighbours until each holds enough; levels by themselves."""
+    if not support.edges:
+        return replace(support, counts=tuple(_raised(each, smallest) for each in support.counts))
+    edges, counts = list(support.edges), list(support.counts)
+    place = 0
+    while place < len(counts):
+        if not 0 < counts[place] < smallest:
+            place += 1
+        elif place + 1 < len(counts):
+            counts[place : place + 2] = [counts[place] + counts[place + 1]]
+            del edges[place + 1]
+        elif place > 0:
+            counts[place - 1 :] = [counts[place - 1] + counts[place]]
+            del edges[place]
+            place -= 1
+        else:
+            counts[place] = smallest
+            place += 1
+    return replace(support, edges=tuple(edges), counts=tuple(counts))

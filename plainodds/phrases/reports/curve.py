@@ -1,0 +1,74 @@
+"""Report tables of curves: the figures at a few points, one column for each line."""
+
+from __future__ import annotations
+
+from collections.abc import Callable
+
+from plainodds.answers.curve import CurveAnswer, CurveLine, Scale
+from plainodds.answers.estimate import Estimate
+from plainodds.phrases.captions.parts import fitted_words, joined
+from plainodds.phrases.held import others_words
+from plainodds.phrases.labels import axis_title, line_label, scale_title, value_label
+from plainodds.phrases.numbers import confidence, quantity
+from plainodds.phrases.parts import model_cautions
+from plainodds.phrases.reports.cells import chance_cell, points_cell, ratio_cell, signed_cell
+from plainodds.phrases.reports.report import ReportTable, report_of
+from plainodds.phrases.reports.rows import entry
+from plainodds.phrases.units import tidy
+from plainodds.phrases.ways import estimate_at
+
+__all__: list[str] = []
+
+_MOST, _ALL = 11, 1_000_000
+_CELLS: dict[Scale, Callable[[Estimate], str]] = {
+    "probability": chance_cell,
+    "slope": points_cell,
+    "odds": ratio_cell,
+    "linear_predictor": signed_cell,
+}
+
+
+@report_of.register
+def _(answer: CurveAnswer) -> ReportTable:
+    subject, question = answer.subject, answer.question
+    facts = subject.predictor(question.predictor)
+    at = answer.lines[0].at
+    places = _spread(len(at))
+    rows = tuple(
+        entry(
+            quantity(float(at[place])) if facts.is_number else value_label(facts, at[place]),
+            *(_cell(line, place, question.scale) for line in answer.lines),
+        )
+        for place in places
+    )
+    open_somewhere = any(not line.supported[place] for line in answer.lines for place in places)
+    cases = tidy(subject.outcome.cases)
+    return ReportTable(
+        scale_title(answer),
+        (axis_title(facts), *(_title(answer, line) for line in answer.lines)),
+        rows,
+        (
+            *([] if subject.no_interval else [f"In brackets {confidence(question.level)} "
+                                              "intervals."]),
+            *([f"* The data have few {cases} there, or none."] if open_somewhere else []),
+            joined(*others_words(answer, at_most=_ALL), fitted_words(subject)),
+            *model_cautions(subject, offset_held=question.others != "observed"),
+        ),
+    )  # fmt: skip
+
+
+def _title(answer: CurveAnswer, line: CurveLine) -> str:
+    if answer.question.by is None or line.by is None:
+        return "Estimate"
+    return line_label(answer.subject.predictor(answer.question.by), line.by)
+
+
+def _cell(line: CurveLine, place: int, scale: Scale) -> str:
+    star = "" if line.supported[place] else " *"
+    return _CELLS[scale](estimate_at(line, place)) + star
+
+
+def _spread(points: int) -> list[int]:
+    if points <= 2 * _MOST:
+        return list(range(points))
+    return [round(each * (points - 1) / (_MOST - 1)) for each in range(_MOST)]

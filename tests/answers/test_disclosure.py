@@ -1,0 +1,73 @@
+"""Counts of few rows do not leave the notebook."""
+
+from dataclasses import replace
+
+import pytest
+from hypothesis import given
+from hypothesis import strategies as st
+
+import plainodds as po
+from plainodds.answers.disclosure import guarded
+from tests.phrases import made, made_changes
+
+
+def curve_with(counts, edges=True):
+    answer = made.curve_answer()
+    ends = tuple(map(float, range(len(counts) + 1))) if edges else ()
+    support = replace(answer.support[0], edges=ends, counts=tuple(counts))
+    return replace(answer, support=(support,) * len(answer.lines))
+
+
+@given(st.lists(st.integers(0, 40), min_size=1, max_size=30), st.integers(2, 15))
+def test_no_bin_holds_a_small_count_and_no_row_is_lost(counts, smallest):
+    found = guarded(curve_with(counts), smallest).support[0]
+    assert all(count == 0 or count >= smallest for count in found.counts)
+    assert len(found.edges) == len(found.counts) + 1
+    assert (found.edges[0], found.edges[-1]) == (0.0, float(len(counts)))
+    total = sum(counts)
+    assert sum(found.counts) == (total if total == 0 or total >= smallest else smallest)
+
+
+def test_neighbours_are_merged_no_further_than_needed():
+    found = guarded(curve_with([50, 3, 4, 60, 0, 0, 70, 2])).support[0]
+    assert found.counts == (50, 67, 0, 0, 72)
+    assert found.edges == (0.0, 1.0, 4.0, 5.0, 6.0, 8.0)
+
+
+def test_levels_are_not_merged_but_said_to_be_few():
+    found = guarded(curve_with([500, 3, 0], edges=False))
+    assert found.support[0].counts == (500, 10, 0)
+    assert found.subject.smallest_cell == 10
+
+
+@pytest.mark.parametrize(("alike", "told"), [(3, "up to 10 rows"), (12, "12 rows")])
+def test_rows_alike_are_told_up_to_the_smallest_cell(alike, told):
+    answer = made.profile_answer()
+    familiarity = replace(answer.point.familiarity, rows_alike=alike, verdict="familiar")
+    answer = replace(answer, point=replace(answer.point, familiarity=familiarity))
+    assert f"{alike} rows" in str(po.words(answer))
+    assert told in str(po.words(guarded(answer)))
+
+
+def test_level_counts_and_rows_averaged_over_are_guarded_too():
+    material = replace(made.MATERIAL, level_counts=(5, 0, 500))
+    answer = made_changes.change_answer()
+    answer = replace(
+        answer, counted=4, subject=replace(answer.subject, predictors=(made.AGE, material))
+    )
+    found = guarded(answer)
+    assert found.counted == 10
+    assert found.subject.predictor("material").level_counts == (10, 0, 500)
+    effects = replace(made_changes.effects_answer(made_changes.effect_row()), counted=(3,))
+    assert guarded(effects).counted == (10,)
+
+
+def test_with_a_smallest_cell_of_one_nothing_changes():
+    answer = curve_with([1, 2, 3])
+    assert guarded(answer, 1) is answer
+
+
+@pytest.mark.parametrize("smallest", [0, -3, 2.5, "10", True])
+def test_an_impossible_smallest_cell_is_refused(smallest):
+    with pytest.raises(po.QuestionRefused, match="whole number of at least 1"):
+        guarded(made.curve_answer(), smallest)
