@@ -30,7 +30,7 @@ from plainodds.phrases.pair_labels import (
 )
 from plainodds.phrases.pair_scales import disagreement_words, odds_words
 from plainodds.phrases.parts import (
-    ASSOCIATION,
+    association,
     beyond_saying,
     chance_with_interval,
     covariance_words,
@@ -90,7 +90,7 @@ def _words(answer: PairAnswer, told: list[str], more: list[str]) -> Words:
         *_reading(answer),
         *_of_averages(answer),
         *_slopes(answer),
-        ASSOCIATION,
+        association(answer.subject),
         *_extremes(answer),
         *more,
     ]

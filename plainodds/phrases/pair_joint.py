@@ -13,7 +13,7 @@ from plainodds.phrases.labels import listed
 from plainodds.phrases.moves import moves_words
 from plainodds.phrases.pair_labels import at_value, combination_label, pair_noun, rows_label
 from plainodds.phrases.parts import (
-    ASSOCIATION,
+    association,
     chance_with_interval,
     difference_with_interval,
     model_cautions,
@@ -63,7 +63,7 @@ def joint_words(answer: PairAnswer) -> Words:
     cautions = [
         *joint_cautions(answer),
         *map(sentence, odds_ratio_cautions(chances)),
-        ASSOCIATION,
+        association(answer.subject),
     ]
     held = answer.question.others != "observed"
     return Words(

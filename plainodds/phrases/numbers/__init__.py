@@ -6,24 +6,20 @@ minus sign (U+2212).
 """
 
 from plainodds.phrases.numbers.chances import (
-    cases,
     chance,
     denominator,
     denominator_of_change,
     frequencies,
     frequency,
     frequency_span,
-    out_of,
     told_apart,
 )
 from plainodds.phrases.numbers.counts import cases_apart, cases_on_sides, needed
-from plainodds.phrases.numbers.marks import Marks, decimal_mark, marking
 from plainodds.phrases.numbers.quantities import (
     confidence,
     count,
     count_mark,
     guarded_count,
-    level_figures,
     quantity,
     signed,
     summing,
@@ -31,32 +27,23 @@ from plainodds.phrases.numbers.quantities import (
 from plainodds.phrases.numbers.ratios import p_value, ratio, ratio_interval, simple_fraction
 from plainodds.phrases.numbers.signs import MINUS, NOT_KNOWN
 from plainodds.phrases.numbers.spans import percentage_points, points_on_sides, points_span, span
-from plainodds.phrases.numbers.wording import ENGLISH_WORDING, Wording, worded, wording
 
 __all__ = [
-    "ENGLISH_WORDING",
     "MINUS",
     "NOT_KNOWN",
-    "Marks",
-    "Wording",
-    "cases",
     "cases_apart",
     "cases_on_sides",
     "chance",
     "confidence",
     "count",
     "count_mark",
-    "decimal_mark",
     "denominator",
     "denominator_of_change",
     "frequencies",
     "frequency",
     "frequency_span",
     "guarded_count",
-    "level_figures",
-    "marking",
     "needed",
-    "out_of",
     "p_value",
     "percentage_points",
     "points_on_sides",
@@ -69,6 +56,4 @@ __all__ = [
     "span",
     "summing",
     "told_apart",
-    "worded",
-    "wording",
 ]
