@@ -2,6 +2,7 @@
 
 from plainodds import demo, display
 from plainodds.answers.moves import Shift
+from plainodds.answers.panels import panels
 from plainodds.answers.tables import joint_table, ledger, table
 from plainodds.dossiers import dossier
 from plainodds.drawings import THEMES, Theme, draw, save
@@ -49,6 +50,7 @@ __all__ = [
     "ledger",
     "methods_note",
     "odds_of",
+    "panels",
     "report_table",
     "save",
     "table",

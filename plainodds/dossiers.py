@@ -13,6 +13,7 @@ from pathlib import Path
 from typing import Any, Literal, TypeAlias
 
 from plainodds.answers.disclosure import SMALLEST_CELL, guarded
+from plainodds.answers.panels import PanelsAnswer, panel_letter
 from plainodds.answers.questions import Answer
 from plainodds.answers.tables import table
 from plainodds.drawings.draw import drawing_of
@@ -205,13 +206,22 @@ def _write(
     for name, answer in answers.items():
         for form in forms:
             save(answer, figures / f"{name}.{form}", size, theme=theme)
-        report = report_of(answer)
-        for form, suffix in _TABLES.items():
-            text = getattr(report, form)()
-            _put(tables / f"{name}.{suffix}", text)
-        _put(tables / f"{name}-unrounded.csv", table(answer).to_csv(index=False))
+        for part, each in _tabled(name, answer):
+            report = report_of(each)
+            for form, suffix in _TABLES.items():
+                _put(tables / f"{part}.{suffix}", getattr(report, form)())
+            _put(tables / f"{part}-unrounded.csv", table(each).to_csv(index=False))
     _put(folder / "account.md", "\n".join(_account(answers, forms)))
     _put(folder / "methods.md", "\n".join(_methods(answers)))
+
+
+def _tabled(name: str, answer: Answer) -> list[tuple[str, Answer]]:
+    """What has tables of its own: an answer, or each panel of several."""
+    if not isinstance(answer, PanelsAnswer):
+        return [(name, answer)]
+    return [
+        (f"{name}-{panel_letter(place).lower()}", each) for place, each in enumerate(answer.answers)
+    ]
 
 
 def _put(path: Path, text: str) -> None:
@@ -238,9 +248,10 @@ def _account(answers: Mapping[str, Answer], forms: tuple[str, ...]) -> Iterator[
             yield ""
         yield f"*Figure {number}.* {_plain(caption(answer))}"
         yield ""
-        yield f"Table {number}."
-        yield ""
-        yield report_of(answer).markdown()
+        for _, each in _tabled(name, answer):
+            yield f"Table {number}."
+            yield ""
+            yield report_of(each).markdown()
 
 
 _AS_PARAGRAPH = 8

@@ -16,6 +16,9 @@ from plainodds.answers.change import ChangeAnswer
 from plainodds.answers.curve import CurveAnswer
 from plainodds.answers.effects import EffectsAnswer
 from plainodds.answers.familiarity import Familiarity
+from plainodds.answers.joint import JointCell
+from plainodds.answers.pair import PairAnswer
+from plainodds.answers.panels import PanelsAnswer
 from plainodds.answers.profile import ProfileAnswer
 from plainodds.answers.questions import Answer
 from plainodds.answers.support import Support
@@ -78,7 +81,7 @@ def _without_small(answer: Answer, smallest: int) -> Answer:
 
 
 @_without_small.register
-def _(answer: CurveAnswer, smallest: int) -> Answer:
+def _curve(answer: CurveAnswer, smallest: int) -> CurveAnswer:
     return replace(answer, support=tuple(_merged(each, smallest) for each in answer.support))
 
 
@@ -103,6 +106,29 @@ def _(answer: EffectsAnswer, smallest: int) -> Answer:
 @_without_small.register
 def _(answer: ChangeAnswer, smallest: int) -> Answer:
     return replace(answer, counted=_raised(answer.counted, smallest))
+
+
+@_without_small.register
+def _(answer: PairAnswer, smallest: int) -> Answer:
+    lines = None if answer.lines is None else _curve(answer.lines, smallest)
+    joint = answer.joint
+    if joint is not None:
+        joint = replace(joint, cells=tuple(_cell(each, smallest) for each in joint.cells))
+    return replace(answer, lines=lines, joint=joint, counted=_raised(answer.counted, smallest))
+
+
+def _cell(cell: JointCell, smallest: int) -> JointCell:
+    """A combination whose events, and whose other cases, are enough or not told."""
+    if cell.rows is None or cell.events is None:
+        return cell
+    few = any(0 < each < smallest for each in (cell.events, cell.rows - cell.events))
+    rows = float(_raised(round(cell.rows), smallest)) if cell.rows < smallest else cell.rows
+    return replace(cell, rows=rows, events=None if few else cell.events)
+
+
+@_without_small.register
+def _(answer: PanelsAnswer, smallest: int) -> Answer:
+    return replace(answer, answers=tuple(guarded(each, smallest) for each in answer.answers))
 
 
 def _merged(support: Support, smallest: int) -> Support:

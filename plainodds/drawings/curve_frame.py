@@ -7,13 +7,13 @@ are, and at the right the lines' own labels.
 from __future__ import annotations
 
 from collections.abc import Callable, Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 from matplotlib.axes import Axes
 from matplotlib.collections import LineCollection
 from matplotlib.transforms import Transform, blended_transform_factory
 
-from plainodds.answers.curve import CurveAnswer
+from plainodds.answers.curve import CurveAnswer, CurveLine
 from plainodds.drawings.curve_scale import VerticalAxis, is_cut, vertical_axis
 from plainodds.drawings.furniture import Notes, Title, marker_line
 from plainodds.drawings.geometry import Margins, Room, apart, corner, slot_size
@@ -65,6 +65,8 @@ class CurveFrame:
     ----------
     least : Margins
         Room to leave around the plot at least, so that it stands in line with another one.
+    beside : tuple of CurveLine
+        Lines of other panels, which the vertical axis has to have room for too.
     """
 
     def __init__(
@@ -73,6 +75,7 @@ class CurveFrame:
         self.axes, self._theme = axes, theme
         self.room = Room(axes, resized)
         self.least = Margins(0.0, 0.0, 0.0, 0.0)
+        self.beside: tuple[CurveLine, ...] = ()
         self.logarithmic = answer.question.scale == "odds"
         if self.logarithmic:
             axes.set_yscale("log")
@@ -172,7 +175,8 @@ class CurveFrame:
         title_top = rows.depth + 0.35 * em + tick_lines + 0.4 * em
         bottom = title_top + x_title + Notes.height(notes, theme, width)
         bottom = max(bottom, self.least.bottom)
-        vertical = vertical_axis(answer, height - top - bottom, small)
+        shared = replace(answer, lines=(*answer.lines, *self.beside))
+        vertical = vertical_axis(shared, height - top - bottom, small)
         left = max((text_width(text, theme, small) for text in vertical.labels), default=0.0)
         left += 0.4 * em
         right = self.label_width(answer, rows, theme, width)

@@ -27,6 +27,8 @@ class Drawing(Protocol[A_contra]):
     axes have in their figure, and changes nothing outside them.
     """
 
+    axes: Axes
+
     def __init__(self, axes: Axes, answer: A_contra, theme: Theme) -> None: ...
 
     @staticmethod

@@ -49,10 +49,16 @@ class OddsDrawing:
         Odds ratios run along its logarithmic x axis; its y axis is in points, downwards.
     answer : OddsAnswer
     theme : Theme
+
+    Attributes
+    ----------
+    beside : tuple of tuples of OddsRow
+        The rows of other panels, which the axis has to have room for too.
     """
 
     def __init__(self, axes: Axes, answer: OddsAnswer, theme: Theme) -> None:
         self.axes, self._theme = axes, theme
+        self.beside: tuple[tuple[OddsRow, ...], ...] = ()
         self._models = _models(answer)
         groups = groups_of(answer)
         self._answer = answer
@@ -189,7 +195,8 @@ class OddsDrawing:
         self, rows: Sequence[OddsRow], layout: Layout, plot_width: float, gap: float
     ) -> tuple[float, float]:
         theme, em = self._theme, self._theme.font_size
-        lower, upper = axis_range(rows)
+        ranges = [axis_range(each) for each in (rows, *self.beside)]
+        lower, upper = min(low for low, _ in ranges), max(high for _, high in ranges)
         pad = (upper / lower) ** 0.05
         lower, upper = lower / pad, upper * pad
         apart = (upper / lower) ** (2.9 * theme.small / plot_width)

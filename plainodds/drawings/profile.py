@@ -27,7 +27,7 @@ class ProfileDrawing:
     """
 
     def __init__(self, axes: Axes, answer: ProfileAnswer, theme: Theme) -> None:
-        self._theme = theme
+        self.axes, self._theme = axes, theme
         width, _ = slot_size(axes)
         self.ruler = RulerDrawing(axes, answer, theme, beneath=_beneath(answer, theme, width))
         self.ledger = Ledger(axes, theme)

@@ -5,6 +5,7 @@ from __future__ import annotations
 import math
 from collections.abc import Iterable
 from dataclasses import MISSING, dataclass, fields, is_dataclass
+from functools import singledispatch
 from keyword import iskeyword
 from typing import Any, get_args, get_type_hints
 
@@ -21,6 +22,7 @@ _WIDTH = 88
 _INDENT = "    "
 
 
+@singledispatch
 def code(answer: Answer) -> str:
     """Write the Python that gives an answer again.
 

@@ -5,6 +5,31 @@ from __future__ import annotations
 __all__ = ["REFERENCES"]
 
 REFERENCES = {
+    "Ai & Norton 2003": (
+        "Ai C, Norton EC (2003). Interaction terms in logit and probit models. Economics Letters "
+        "80:123–129."
+    ),
+    "Bauer & Curran 2005": (
+        "Bauer DJ, Curran PJ (2005). Probing interactions in fixed and multilevel regression: "
+        "inferential and graphical techniques. Multivariate Behavioral Research 40:373–400."
+    ),
+    "Hosmer & Lemeshow 1992": (
+        "Hosmer DW, Lemeshow S (1992). Confidence interval estimation of interaction. Epidemiology "
+        "3:452–456."
+    ),
+    "Johnson & Neyman 1936": (
+        "Johnson PO, Neyman J (1936). Tests of certain linear hypotheses and their application to "
+        "some educational problems. Statistical Research Memoirs 1:57–93."
+    ),
+    "Knol & VanderWeele 2012": (
+        "Knol MJ, VanderWeele TJ (2012). Recommendations for presenting analyses of effect "
+        "modification and interaction. International Journal of Epidemiology 41:514–520."
+    ),
+    "Knol et al. 2011": (
+        "Knol MJ, VanderWeele TJ, Groenwold RHH, Klungel OH, Rovers MM, Grobbee DE (2011). "
+        "Estimating measures of interaction on an additive scale for preventive exposures. "
+        "European Journal of Epidemiology 26:433–438."
+    ),
     "Agresti 2013": "Agresti A (2013). Categorical Data Analysis, 3rd edition. Wiley.",
     "Altman 1998": (
         "Altman DG (1998). Confidence intervals for the number needed to treat. BMJ 317:1309–1312."

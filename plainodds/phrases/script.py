@@ -3,9 +3,10 @@
 from __future__ import annotations
 
 import textwrap
-from collections.abc import Mapping
+from collections.abc import Iterable, Iterator, Mapping
 from keyword import iskeyword
 
+from plainodds.answers.panels import PanelsAnswer
 from plainodds.answers.questions import Answer
 from plainodds.answers.where import Mask
 from plainodds.phrases.code import code
@@ -45,7 +46,8 @@ def script(answers: Mapping[str, Answer], options: Mapping[str, object]) -> str:
     parts, before = [], ""
     for name, answer in answers.items():
         body = code(answer).removeprefix("import plainodds as po\n\n")
-        fit, _, asked = body.partition("answer = ")
+        fit, _, asked = f"\n{body}".rpartition("\nanswer = ")
+        fit = fit.strip("\n") + "\n" if fit.strip("\n") else ""
         # the fit is taken in once where several answers share it
         told = f"{'' if fit == before else fit}answers[{name!r}] = {asked}"
         before = fit
@@ -55,10 +57,15 @@ def script(answers: Mapping[str, Answer], options: Mapping[str, object]) -> str:
     return f"{head}{''.join(parts)}    return po.dossier(answers, folder{given})\n"
 
 
+def _each(answers: Iterable[Answer]) -> Iterator[Answer]:
+    for answer in answers:
+        yield from answer.answers if isinstance(answer, PanelsAnswer) else (answer,)
+
+
 def _needs(answers: Mapping[str, Answer]) -> list[str]:
     """What the answers' code starts from, each once."""
     needs: dict[str, None] = {}
-    for answer in answers.values():
+    for answer in _each(answers.values()):
         question, setting = answer.question, answer.subject.setting
         several = bool(getattr(question, "models", ()))
         needs["results" if several else "result"] = None
