@@ -1,6 +1,7 @@
 """plainodds: from a fitted binary logit model to a checked, explained, exportable account."""
 
 from plainodds import demo, display
+from plainodds.answers.excerpts import excerpt
 from plainodds.answers.moves import Shift
 from plainodds.answers.panels import panels
 from plainodds.answers.tables import joint_table, ledger, table
@@ -45,6 +46,7 @@ __all__ = [
     "demo",
     "dossier",
     "draw",
+    "excerpt",
     "from_json",
     "joint_table",
     "ledger",

@@ -15,6 +15,7 @@ from functools import singledispatch
 from plainodds.answers.change import ChangeAnswer
 from plainodds.answers.curve import CurveAnswer
 from plainodds.answers.effects import EffectsAnswer
+from plainodds.answers.excerpts import ExcerptAnswer
 from plainodds.answers.familiarity import Familiarity
 from plainodds.answers.joint import JointCell
 from plainodds.answers.pair import PairAnswer
@@ -124,6 +125,11 @@ def _cell(cell: JointCell, smallest: int) -> JointCell:
     few = any(0 < each < smallest for each in (cell.events, cell.rows - cell.events))
     rows = float(_raised(round(cell.rows), smallest)) if cell.rows < smallest else cell.rows
     return replace(cell, rows=rows, events=None if few else cell.events)
+
+
+@_without_small.register
+def _(answer: ExcerptAnswer, smallest: int) -> Answer:
+    return replace(answer, whole=guarded(answer.whole, smallest))
 
 
 @_without_small.register

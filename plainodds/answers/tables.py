@@ -11,6 +11,7 @@ from plainodds.answers.change import ChangeAnswer
 from plainodds.answers.columns import numbers, written
 from plainodds.answers.curve import CurveAnswer
 from plainodds.answers.effects import EffectsAnswer
+from plainodds.answers.excerpts import ExcerptAnswer
 from plainodds.answers.odds import OddsAnswer
 from plainodds.answers.pair import PairAnswer
 from plainodds.answers.pair_tables import joint_table, pair_table
@@ -111,6 +112,11 @@ def _(answer: EffectsAnswer) -> pd.DataFrame:
         for row in answer.rows
     ]
     return pd.DataFrame(rows).astype({"p_value": float})
+
+
+@table.register
+def _(answer: ExcerptAnswer) -> pd.DataFrame:
+    return table(answer.whole)
 
 
 @table.register

@@ -19,7 +19,7 @@ from plainodds.drawings.ticks import bare
 from plainodds.phrases.labels import chance_of, in_sentence, sentence_case
 from plainodds.phrases.numbers import confidence
 
-__all__ = ["ChangeDrawing"]
+__all__ = ["ChangeDrawing", "change_notes"]
 
 _MOST_STRETCH = 1.3
 
@@ -81,7 +81,7 @@ class ChangeDrawing:
         layout = bridge_layout(answer, theme, width)
         title = self.title(answer)
         above = Title.height(title, theme, width) + 0.6 * em
-        notes = Notes.height(_notes(answer), theme, width)
+        notes = Notes.height(change_notes(answer), theme, width)
         marks = min(Marks.height(answer, theme, width), height - _around(answer, theme, width))
         below = _ticks_height(theme) + 0.9 * em + marks + notes
         spare = height - above - below - _MOST_STRETCH * layout.height
@@ -91,7 +91,7 @@ class ChangeDrawing:
         self._title.place(title, -layout.left, above, width)
         top = -_ticks_height(theme) - 0.9 * em
         self.marks.place(answer, -layout.left, top, width, marks)
-        self._notes.place(_notes(answer), -layout.left, -below, width)
+        self._notes.place(change_notes(answer), -layout.left, -below, width)
 
 
 def _ticks_height(theme: Theme) -> float:
@@ -102,12 +102,13 @@ def _around(answer: ChangeAnswer, theme: Theme, width: float) -> float:
     """Height in points of everything but the marks."""
     em = theme.font_size
     title = Title.height(ChangeDrawing.title(answer), theme, width) + 0.6 * em
-    notes = Notes.height(_notes(answer), theme, width)
+    notes = Notes.height(change_notes(answer), theme, width)
     layout = bridge_layout(answer, theme, width)
     return title + layout.height + _ticks_height(theme) + 0.9 * em + notes
 
 
-def _notes(answer: ChangeAnswer) -> list[str]:
+def change_notes(answer: ChangeAnswer) -> list[str]:
+    """Say what the marks of uncertainty are, and over whom or where the chances hold."""
     question, subject = answer.question, answer.subject
     if answer.start.lower is None:
         notes = [subject.no_interval or "No intervals can be given."]

@@ -8,9 +8,11 @@ from matplotlib.axes import Axes
 from matplotlib.backends.backend_agg import FigureCanvasAgg
 from matplotlib.figure import Figure
 
+from plainodds.answers.excerpts import ExcerptAnswer, Part
 from plainodds.answers.panels import PanelsAnswer
 from plainodds.answers.questions import Answer
 from plainodds.drawings.drawing import Drawing, fitting_theme
+from plainodds.drawings.excerpts import LedgerExcerpt, MarksExcerpt, RulerExcerpt
 from plainodds.drawings.geometry import POINTS_PER_INCH, slot_size
 from plainodds.drawings.kinds import drawing_of
 from plainodds.drawings.panels import PanelsDrawing
@@ -28,6 +30,16 @@ _WIDTH = 6.3  # inches: the text width of a report
 @drawing_of.register
 def _(answer: PanelsAnswer) -> type[Drawing[Any]]:
     return PanelsDrawing
+
+
+@drawing_of.register
+def _(answer: ExcerptAnswer) -> type[Drawing[Any]]:
+    drawings: dict[Part, type[Drawing[Any]]] = {
+        "ruler": RulerExcerpt,
+        "ledger": LedgerExcerpt,
+        "marks": MarksExcerpt,
+    }
+    return drawings[answer.question.part]
 
 
 def draw(answer: Answer, ax: Axes | None = None, theme: str | Theme = "page") -> Figure:

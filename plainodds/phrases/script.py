@@ -6,6 +6,7 @@ import textwrap
 from collections.abc import Iterable, Iterator, Mapping
 from keyword import iskeyword
 
+from plainodds.answers.excerpts import ExcerptAnswer
 from plainodds.answers.panels import PanelsAnswer
 from plainodds.answers.questions import Answer
 from plainodds.answers.where import Mask
@@ -58,8 +59,14 @@ def script(answers: Mapping[str, Answer], options: Mapping[str, object]) -> str:
 
 
 def _each(answers: Iterable[Answer]) -> Iterator[Answer]:
+    """The answers that were asked, whatever figures were made of them."""
     for answer in answers:
-        yield from answer.answers if isinstance(answer, PanelsAnswer) else (answer,)
+        if isinstance(answer, PanelsAnswer):
+            yield from _each(answer.answers)
+        elif isinstance(answer, ExcerptAnswer):
+            yield answer.whole
+        else:
+            yield answer
 
 
 def _needs(answers: Mapping[str, Answer]) -> list[str]:
