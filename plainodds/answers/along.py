@@ -69,6 +69,7 @@ def effect_along(
             for level, sign, share in zip(
                 values, signs(found), _shares_of_levels(model, pair.b, values), strict=False
             )
+            if sign is not None
         )
         turns = ()
     (support,) = support_of(model, pair.b, None, (None,))
@@ -97,8 +98,9 @@ def _measure(model: FittedModel, pair: Settled, scale: str, averager: Averager |
 
     def measured(b: Codes) -> Intervals:
         found = effects(b)
-        unknown = np.where(model.estimable.determined(found.gradient), 0.0, np.nan)
-        return wald(model, found.value + unknown, found.gradient, pair.level)
+        determined = model.estimable.determined(found.gradient)
+        gradient = np.where(determined[:, None], found.gradient, np.nan)
+        return wald(model, np.where(determined, found.value, np.nan), gradient, pair.level)
 
     return measured
 
@@ -198,9 +200,9 @@ def _stretches(
     pieces = zip(edges[:-1].tolist(), edges[1:].tolist(), signs(measured(middle)), strict=False)
     merged: list[Stretch] = []
     for start, end, sign in pieces:
-        if merged and merged[-1].sign == sign:
+        if merged and (merged[-1].end, merged[-1].sign) == (start, sign):
             merged[-1] = replace(merged[-1], end=end)
-        else:
+        elif sign is not None:
             merged.append(Stretch(start, end, sign, 0.0))
     shares = _shares_between(model, b, merged)
     return tuple(

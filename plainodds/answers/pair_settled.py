@@ -32,7 +32,8 @@ class PairQuestion(Question):
     number : {"change", "slope"}
         How a number's effect is taken: between its two values, or dπ/dx per unit (on the
         odds scale: the odds ratio per step). "slope" goes with numbers whose two values
-        are not stated.
+        are not stated; it is taken at the typical value where a profile is held, and at
+        each row's own value where rows are averaged over.
     others : "typical", "observed" or pairs of (predictor, value)
         What the remaining predictors do, as in a curve.
     scale : {"probability", "odds"}

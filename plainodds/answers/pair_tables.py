@@ -118,8 +118,8 @@ def joint_table(answer: PairAnswer) -> pd.DataFrame:
     >>> mains = po.demo.tessel_bay()
     >>> fit = po.FittedLogit(smf.logit("burst ~ age_years * soil", mains).fit(disp=0))
     >>> table = po.joint_table(fit.pair("soil", "age_years", b_values=(20, 60)))
-    >>> list(table[table.measure == "odds_ratio"].soil)[:4]
-    ['low', 'moderate', 'low', 'moderate']
+    >>> list(table.part.unique())
+    ['combination', 'effect', 'interaction']
     """
     if answer.joint is None:
         raise QuestionRefused(_without_two_values(answer))

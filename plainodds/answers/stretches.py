@@ -58,7 +58,8 @@ class EffectAlong:
     supported : tuple of bool
         Whether rows lie near each value.
     stretches : tuple of Stretch
-        Cover the range of `at`, in order; empty where there is no interval.
+        Cover the range of `at`, in order, but for values at which the rows leave the
+        effect open (its estimate is nan); empty where there is no interval.
     turns : tuple of float
         Values of a numeric `b` at which the effect turns from growing to shrinking or
         back: there the interaction changes its sign.
@@ -74,12 +75,15 @@ class EffectAlong:
     turns: tuple[float, ...]
 
 
-def signs(found: Intervals) -> tuple[Sign, ...]:
-    """On which side of no effect each interval lies; empty where there are none."""
+def signs(found: Intervals) -> tuple[Sign | None, ...]:
+    """On which side of no effect each interval lies; None for what the rows leave open.
+
+    Empty where there are no intervals.
+    """
     if found.lower is None or found.upper is None:
         return ()
     return tuple(
-        "above" if low > 0 else "below" if high < 0 else "open"
+        None if np.isnan(low) else "above" if low > 0 else "below" if high < 0 else "open"
         for low, high in zip(found.lower, found.upper, strict=True)
     )
 

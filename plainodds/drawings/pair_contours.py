@@ -29,6 +29,7 @@ _COARSE = (0.0001, 0.001, 0.01, 0.05, 0.1, 0.25, 0.5, 0.75, 0.9, 0.95, 0.99, 0.9
 _EVEN = 12.0  # a ratio of odds up to which levels are equally far apart
 _NO_SIGN = 1e-7
 _CANDIDATES = 25
+_CLOSE = 4.0  # points
 _BENDING, _OFF_CENTRE = 8.0, 0.6
 
 
@@ -173,12 +174,23 @@ def _meet(one: Box, other: Box) -> bool:
     return one[0] < other[2] and other[0] < one[2] and one[1] < other[3] and other[1] < one[3]
 
 
+def _close(line: Floats) -> Floats:
+    """The same line with points close to each other, so that it can be cut anywhere."""
+    moves = np.diff(line, axis=0)
+    along = np.concatenate([[0.0], np.cumsum(np.hypot(moves[:, 0], moves[:, 1]))])
+    if len(line) < 2 or np.diff(along).max() <= _CLOSE:
+        return line
+    at = np.union1d(along, np.arange(0.0, along[-1], _CLOSE))
+    return np.column_stack([np.interp(at, along, line[:, i]) for i in (0, 1)])
+
+
 def cut(lines: Sequence[Floats], boxes: Sequence[Box]) -> list[Floats]:
     """Leave out of lines what lies within boxes, for labels to stand there.
 
     Parameters
     ----------
     lines : sequence of arrays of shape (points, 2)
+        In points of the picture.
     boxes : sequence of (left, lower, right, upper)
 
     Returns
@@ -188,7 +200,7 @@ def cut(lines: Sequence[Floats], boxes: Sequence[Box]) -> list[Floats]:
     """
     pieces: list[Floats] = []
     edges = np.asarray(boxes, dtype=float).reshape(-1, 4)
-    for line in lines:
+    for line in map(_close, lines) if boxes else lines:
         x, y = line[:, :1], line[:, 1:]
         inside = (x > edges[:, 0]) & (y > edges[:, 1]) & (x < edges[:, 2]) & (y < edges[:, 3])
         hidden = np.asarray(inside.any(axis=1), dtype=bool)

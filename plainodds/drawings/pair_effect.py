@@ -252,8 +252,9 @@ def _parts(answer: PairAnswer) -> Sequence[StripPart]:
     for each in answer.effect.stretches:
         names = stretch_names(answer, each)
         if is_number:
-            parts.append(StripPart(float(each.start), float(each.end), each.sign, names))
+            start, end = float(each.start), float(each.end)
+            parts.append(StripPart(start, end, each.sign, names, end - start))
         elif each.start in places:
             place = places[each.start]
-            parts.append(StripPart(place - 0.42, place + 0.42, each.sign, names))
+            parts.append(StripPart(place - 0.42, place + 0.42, each.sign, names, 1.0))
     return parts

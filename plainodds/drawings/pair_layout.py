@@ -29,7 +29,7 @@ __all__ = [
 
 TITLE_SIZE = 1.15
 """Of the heading, in letters."""
-_SIDE_BY_SIDE, _SIDE_BY_SIDE_LEVELS = 44.0, 54.0  # letters
+_SIDE_BY_SIDE, _SIDE_BY_SIDE_LEVELS = 41.0, 54.0  # letters
 _BETWEEN = 2.2  # letters between parts side by side
 _BENEATH = 1.3  # letters between parts beneath each other
 _MORE_PLOT = 8.0  # letters that a plot would like to be higher than it has to be

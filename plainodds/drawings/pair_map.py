@@ -159,7 +159,7 @@ class MapPanel:
         left = max((text_width(each, theme, small) for each in b_labels), default=0.0) + 0.6 * em
         self.room.margins = Margins(left, 1.2 * em, bottom, top)
         plot, _ = self.room.plot_size()
-        a_ticks = round_ticks(surface.a_at[0], surface.a_at[-1], max(2, int(plot / (4.2 * small))))
+        a_ticks = round_ticks(surface.a_at[0], surface.a_at[-1], max(2, int(plot / (3.4 * small))))
         label_ticks(self.axes, "y", b_ticks, b_labels, tick_style(theme))
         label_ticks(self.axes, "x", a_ticks, [quantity(x) for x in a_ticks], tick_style(theme))
         self.axes.set_xlim(surface.a_at[0], surface.a_at[-1])

@@ -28,13 +28,14 @@ _REACH = 0.5  # height of a block over its line, in letters
 class StripPart:
     """A part of the strip: its ends along the axis, on which side it lies, its names.
 
-    `names` are words for it, the longest first.
+    `names` are words for it, the longest first; `room` is how much of the axis they may take.
     """
 
     start: float
     end: float
     sign: str
     names: tuple[str, ...]
+    room: float
 
 
 class Strip:
@@ -95,7 +96,7 @@ class Strip:
         for text in self.words[len(longest) :]:
             text.set_text("")
         for text, each in zip(self.words, longest, strict=False):
-            text.set_text(self._name(each, (each.end - each.start) * per_unit))
+            text.set_text(self._name(each, each.room * per_unit))
             text.set_position(((each.start + each.end) / 2, y))
 
     def _name(self, part: StripPart, room: float) -> str:

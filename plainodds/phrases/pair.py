@@ -2,13 +2,11 @@
 
 from __future__ import annotations
 
-from plainodds.answers.joined import JoinedTest
 from plainodds.answers.pair import PairAnswer
 from plainodds.phrases.alternative import alternative
-from plainodds.phrases.averaged import drawn_method, rows_chosen
+from plainodds.phrases.averaged import rows_chosen
 from plainodds.phrases.held import held_words, kept_words
-from plainodds.phrases.labels import axis_title, listed, predictor_name, sentence_case
-from plainodds.phrases.numbers import confidence, p_value, percentage_points, signed
+from plainodds.phrases.labels import axis_title, listed, predictor_name
 from plainodds.phrases.pair_chances import (
     averaged_words,
     chances_words,
@@ -19,35 +17,33 @@ from plainodds.phrases.pair_chances import (
 from plainodds.phrases.pair_corners import corners
 from plainodds.phrases.pair_joint import additive_words, joint_cautions, joint_technical
 from plainodds.phrases.pair_labels import (
-    at_value,
     followed_label,
     has_others,
     interaction_label,
     is_averaged,
-    pair_noun,
     pair_title,
-    per_additional,
 )
 from plainodds.phrases.pair_scales import disagreement_words, odds_words
+from plainodds.phrases.pair_technical import (
+    corners_technical,
+    interaction_technical,
+    pair_method,
+    ratio_technical,
+    test_technical,
+)
 from plainodds.phrases.parts import (
     association,
     beyond_saying,
-    chance_with_interval,
-    covariance_words,
     is_beyond_saying,
     model_cautions,
     odds_ratio_cautions,
     points_with_interval,
     ratio_with_interval,
-    rows_words,
     sentence,
-    signed_with_interval,
-    standard_error,
 )
 from plainodds.phrases.reach import beyond_words, line_words
 from plainodds.phrases.saying import Audience, Words, for_audience, words
 from plainodds.phrases.stretches import stretches_words, turns_words, unsupported_words
-from plainodds.phrases.units import tidy
 
 __all__: list[str] = []
 
@@ -175,104 +171,20 @@ def _extremes(answer: PairAnswer) -> list[str]:
 
 def _technical(answer: PairAnswer) -> Words:
     told = [
-        *_corners_told(answer),
-        *_interaction_told(answer),
-        *_ratio_told(answer),
-        *_test_told(answer),
+        *corners_technical(answer),
+        *interaction_technical(answer),
+        *ratio_technical(answer),
+        *test_technical(answer),
         *(f"{followed_label(answer)}: {each}" for each in _stretches(answer)),
         *joint_technical(answer),
         *_others(answer, _EVERYTHING),
-        _method(answer),
+        pair_method(answer),
     ]
     return _words(answer, told, [])
 
 
 def _stretches(answer: PairAnswer) -> list[str]:
     return [*stretches_words(answer, at_most=_EVERYTHING), *turns_words(answer)]
-
-
-def _corners_told(answer: PairAnswer) -> list[str]:
-    four, question = corners(answer), answer.question
-    if four is None:
-        return []
-    places = [(a, b) for b in answer.b_change for a in answer.a_change]
-    told = [
-        f"{chance_with_interval(each, question.level)}{_points_error(each.se)} with "
-        f"{at_value(answer.subject, question.a, a)} and {at_value(answer.subject, question.b, b)}"
-        for (a, b), each in zip(places, four.all, strict=True)
-    ]
-    noun = sentence_case(pair_noun(answer))
-    return [f"{noun} of {tidy(answer.subject.outcome.event)}: {'; '.join(told)}"]
-
-
-def _points_error(se: float | None) -> str:
-    return "" if se is None else f", standard error {percentage_points(se)}"
-
-
-def _interaction_told(answer: PairAnswer) -> list[str]:
-    kind = {0: "Cross difference of the chance", 1: "Difference of slopes dπ/dx"}.get(
-        len(answer.sloped), "Cross partial ∂²π/∂a∂b"
-    )
-    units = [per_additional(answer.subject.predictor(name)) for name in answer.sloped]
-    if units:
-        kind += f", {listed(units)},"
-    found, level = answer.interaction, answer.question.level
-    told = []
-    for where, estimate, p in (
-        ("at the held profile", found.at_profile, found.at_profile_p_value),
-        ("averaged over the rows", found.averaged, found.averaged_p_value),
-    ):
-        if estimate is None:
-            continue
-        text = f"{kind} {where} {points_with_interval(estimate, level)}{_points_error(estimate.se)}"
-        told.append(text if p is None else f"{text}, p-value {p_value(p)} (Wald test of 0)")
-    return told
-
-
-def _ratio_told(answer: PairAnswer) -> list[str]:
-    found, level = answer.interaction, answer.question.level
-    if not found.joined:
-        return ["Ratio of odds ratios exactly 1, since no term joins the two predictors"]
-    return [
-        f"Ratio of odds ratios {ratio_with_interval(found.ratio, level)}"
-        f"{standard_error(found.ratio)}; its logarithm "
-        f"{signed_with_interval(found.log_ratio, level)}{standard_error(found.log_ratio)}"
-    ]
-
-
-def _test_told(answer: PairAnswer) -> list[str]:
-    test, question = answer.interaction.test, answer.question
-    if test is None:
-        return []
-    names = [predictor_name(answer.subject.predictor(each)) for each in (question.a, question.b)]
-    kind = {"wald": "Wald test", "likelihood_ratio": "Likelihood-ratio test"}[test.kind]
-    return [f"{kind} that no term joins {listed(names)}: {_statistic(test)}"]
-
-
-def _statistic(test: JoinedTest) -> str:
-    written = signed(test.statistic).removeprefix("+")
-    freedom = f"{test.degrees_of_freedom:,}"
-    one = test.degrees_of_freedom == 1
-    if test.denominator is None:
-        on = f"χ² = {written} on {freedom} degree{'' if one else 's'} of freedom"
-    else:
-        below = signed(test.denominator, decimals=0).removeprefix("+")
-        on = f"F = {written} on {freedom} and {below} degrees of freedom"
-    return f"{on}, p-value {p_value(test.p_value)}"
-
-
-def _method(answer: PairAnswer) -> str:
-    method = f"From {rows_words(answer.subject)}"
-    if answer.interaction.ratio.lower is None and answer.effect.lower is None:
-        return method
-    level = confidence(answer.question.level)
-    averaged = answer.interaction.averaged is not None
-    rows = f"; rows weighted as fitted{drawn_method('fixed')}" if averaged else ""
-    return (
-        f"{method}; {level} intervals of differences and slopes by the delta method with exact "
-        "gradients (cross difference and cross partial after Ai and Norton), of ratios on the log "
-        f"scale, of chances on the logit scale, with {covariance_words(answer.subject)}{rows}"
-    )
 
 
 @alternative.register

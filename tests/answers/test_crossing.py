@@ -15,7 +15,6 @@ from plainodds.answers.pair_settled import settled
 from plainodds.answers.population import everyone
 
 JOINED = "burst ~ age_years * material + bs(pressure_m, df=4) * age_years + soil + past_repairs"
-PLAIN = "burst ~ age_years + material + pressure_m + past_repairs"
 
 PAIRS = {
     "two changes of numbers": {"a": "age_years", "b": "pressure_m"},
@@ -136,12 +135,20 @@ def test_gradients_are_the_numeric_derivatives_in_the_coefficients(fit, name):
             assert each.gradient[0, j] == pytest.approx(numeric[place], rel=1e-5, abs=1e-6 * size)
 
 
-def test_a_model_without_a_product_has_an_interaction_between_chances_and_none_between_odds(pipes):
-    fit = po.FittedLogit(smf.logit(PLAIN, pipes).fit(disp=0))
-    found = fit.pair("age_years", "material").interaction
-    assert found.averaged.upper < 0
-    assert found.averaged_p_value < 0.05
-    assert found.at_profile.estimate != 0
+@pytest.mark.parametrize(("intercept", "sign"), [(-3.0, 1), (3.0, -1)])
+def test_a_model_without_a_product_has_an_interaction_between_chances_and_none_between_odds(
+    intercept, sign
+):
+    rng = np.random.default_rng(8)
+    x, z = rng.uniform(-1, 1, (2, 3000))
+    eta = intercept + x + z
+    y = (rng.uniform(size=3000) < 1 / (1 + np.exp(-eta))).astype(int)
+    fit = po.FittedLogit(smf.logit("y ~ x + z", pd.DataFrame({"x": x, "z": z, "y": y})).fit(disp=0))
+    found = fit.pair("x", "z").interaction
+    # it grows with the baseline chance, vanishes about one half, and turns beyond it
+    assert sign * found.averaged.estimate > 0
+    assert sign * found.at_profile.estimate > 0
+    assert found.averaged_p_value < 1e-4
     assert (found.ratio.estimate, found.ratio.se, found.ratio.lower) == (1, 0, 1)
     assert found.log_ratio.estimate == 0
     assert not found.joined

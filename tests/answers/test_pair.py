@@ -352,6 +352,8 @@ def test_a_combination_that_nobody_has_is_unknown_and_never_a_silent_number():
     assert math.isnan(found.ratio.estimate)
     assert (found.at_profile_p_value, found.at_profile.se) == (None, None)
     assert [math.isnan(effect) for effect in answer.effect.estimate] == [False, False, True]
+    assert [stretch.start for stretch in answer.effect.stretches] == ["a", "b"]
+    assert [math.isnan(at) for at in po.table(answer).estimate[:3]] == [False, False, True]
     known = fit.pair("soil", "site", a_values=("low", "high"), b_values=("a", "b")).interaction
     assert np.isfinite(known.at_profile.se)
 

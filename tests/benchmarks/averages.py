@@ -6,12 +6,13 @@
 Prints, for a model with a spline, interactions and an 8-level category:
 averaged curves against the bare inverse logit of as many values; all effects against
 statsmodels' get_margeff; memory beyond the model's own arrays against the design matrix;
-what a slider's move costs by sketch and what its set-up costs.
+what a slider's move costs by sketch and what its set-up costs, for two predictors together too.
 """
 
 import sys
 import time
 import tracemalloc
+from dataclasses import replace
 
 import numpy as np
 import pandas as pd
@@ -96,6 +97,16 @@ def measure(rows: int) -> None:
     along = fit.curve("x", others="observed", at=[50.0]).question
     one = seconds(lambda: answer_by_sketch(fit.model, along, sketch), 10)
     print(f"    a curve's point by it    {1000 * one:8.2f} ms")
+    for name, asked in (
+        ("with lines", fit.pair("x", "v", b_values=(0, 1))),
+        ("with a map", fit.pair("x", "t", shape="map")),
+    ):
+        both = replace(asked.question, others="observed")
+        start = time.perf_counter()
+        sketch = sketch_for(fit.model, both)
+        setting_up = time.perf_counter() - start
+        taken = seconds(lambda both=both, sketch=sketch: answer_by_sketch(fit.model, both, sketch))
+        print(f"  a pair {name}, by sketch   {taken:8.3f} s   set up in {setting_up:.3f} s")
 
 
 def main() -> None:
