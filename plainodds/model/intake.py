@@ -83,7 +83,7 @@ def take_in(
         source.frequencies,
     )
     share = _share(sample)
-    known = _facts(design, raw, source.weights, stated.predictors)
+    known = _facts(design, raw, sample, stated.predictors)
     facts, notices = outcome_facts(modelled, stated.outcome, share, turned)
     subject = Subject(
         outcome=facts,
@@ -181,7 +181,7 @@ def _ends(column: RawColumn) -> tuple[float, float]:
 def _facts(
     design: Design,
     raw: Mapping[str, RawColumn],
-    weights: Floats | None,
+    sample: Sample,
     predictors: Mapping[str, Predictor],
 ) -> tuple[PredictorFacts, ...]:
     modifiers = shares_terms_with(design)
@@ -192,12 +192,18 @@ def _facts(
     for name, column in raw.items():
         stated = predictors.get(name, Predictor())
         if column.levels:
-            found.append(level_facts(name, column, weights, stated, modifiers[name]))
+            found.append(level_facts(name, column, sample, stated, modifiers[name]))
             continue
         linear = is_linear(design, name, *_ends(column), at)
         found.append(
             number_facts(
-                name, column, weights, stated, design.allowed[name], linear, modifiers[name]
+                name,
+                column,
+                sample.weights,
+                stated,
+                design.allowed[name],
+                linear,
+                modifiers[name],
             )
         )
     return tuple(found)
