@@ -223,7 +223,7 @@ def _recalibrated(model: FittedModel, rows: FittedRows, level: float) -> tuple[E
 
 def _estimate(refit: Refit, level: float, strangers: bool) -> Estimate:
     """The last coefficient with its interval; η is taken as it is, without its own error."""
-    if not refit.converged:
+    if not refit.converged or refit.rank < len(refit.coefficients):
         return Estimate(math.nan, None, None, None)
     found = float(refit.coefficients[-1])
     if not strangers:

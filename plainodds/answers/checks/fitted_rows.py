@@ -141,15 +141,20 @@ def unknown_rows(model: FittedModel, fewest: float = 0.0) -> Unknown:
 
 
 def rows_are_strangers(model: FittedModel) -> bool:
-    """Whether the fit itself takes rows as independent, with binomial variance."""
+    """Whether rows count as independent cases with binomial variance.
+
+    With a heteroscedasticity-consistent covariance single cases still do: where chances are
+    right, so is a binomial variance. Counts and weights then don't: that covariance may be
+    there because cases of one row belong together, or weights count no cases.
+    """
     kind = model.subject.covariance_kind
-    return not model.no_likelihood or kind == "none" or kind.startswith("HC")
+    single = kind.startswith("HC") and model.sample.weights is None
+    return not model.no_likelihood or kind == "none" or single
 
 
 def has_score_tests(model: FittedModel) -> bool:
     """Whether the score of added columns has its usual distribution.
 
-    With a heteroscedasticity-consistent covariance it still has: a binomial outcome whose
-    chances are right has the right variance, too. A penalised fit is not where the score is 0.
+    A penalised fit is not where the score is 0.
     """
     return rows_are_strangers(model) and model.subject.covariance_kind != "none"

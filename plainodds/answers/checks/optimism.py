@@ -28,6 +28,7 @@ from plainodds.answers.checks.fitted_rows import (
     unknown_rows,
 )
 from plainodds.answers.checks.refitting import refitted
+from plainodds.answers.kept import kept
 from plainodds.answers.progress import Progress, silent
 from plainodds.errors import QuestionRefused
 from plainodds.model.fitted import FittedModel
@@ -107,13 +108,13 @@ def optimism_of(
         raise QuestionRefused(f"optimism={way!r}: {_WHY_NOT[unknown]} Ask with optimism='none'.")
     rng = np.random.default_rng(seed)
     repeated = _bootstrap if way == "bootstrap" else _cross_validation
-    kept: list[tuple[float, float, float]] = []
-    for done, found in enumerate(repeated(model, repeats, rng), start=1):
-        if found is not None:
-            kept.append(found)
+    found: list[tuple[float, float, float]] = []
+    for done, each in enumerate(repeated(model, repeats, rng), start=1):
+        if each is not None:
+            found.append(each)
         progress(done, repeats)
-    mean = np.mean(kept, axis=0).tolist() if kept else [np.nan] * 3
-    return Optimism(way, len(kept), repeats - len(kept), *mean)
+    mean = np.mean(found, axis=0).tolist() if found else [np.nan] * 3
+    return Optimism(way, len(found), repeats - len(found), *mean)
 
 
 def performance_of(linear_predictor: Floats, events: Floats, others: Floats) -> Performance:
@@ -166,8 +167,8 @@ def _judged(
     """All cases together, each judged by the fit that did not see it."""
     eta, events, others = [], [], []
     for left_out in _folds(everyone, rng):
-        kept = _Cases(everyone.events - left_out.events, everyone.others - left_out.others)
-        found = _fitted_to(model, rows, kept)
+        seen = _Cases(everyone.events - left_out.events, everyone.others - left_out.others)
+        found = _fitted_to(model, rows, seen)
         if found is None:
             return None
         of_fold = left_out.count > 0
@@ -199,10 +200,19 @@ def _fitted_to(model: FittedModel, rows: FittedRows, cases: _Cases) -> Floats | 
     ran_away = float(np.abs(rows.linear_predictor).max()) > _FAR
     start = np.zeros_like(model.coefficients) if ran_away else model.coefficients
     found = refitted(sample.matrix, share, count * per_case, start, sample.offset)
-    if not found.converged:
+    # a level that no drawn case has leaves its coefficient open
+    if not found.converged or found.rank < _rank(model):
         return None
     eta = product(sample.matrix, found.coefficients[:, None])[:, 0]
     return eta if sample.offset is None else eta + sample.offset
+
+
+@kept
+def _rank(model: FittedModel) -> int:
+    """Of the fit's own information: a fit with columns too many has refits like itself."""
+    rows = fitted_rows(model)
+    k = len(model.coefficients)
+    return refitted(model.sample.matrix, rows.outcome, rows.weights, np.zeros(k)).rank
 
 
 def _resampled(everyone: _Cases, rng: np.random.Generator) -> _Cases:

@@ -21,6 +21,7 @@ _BLOCK = 65_536
 _STEPS = 15
 _DONE = 1e-9
 _HALVINGS = 12
+_SINGULAR = 1e-13
 
 
 @dataclass(frozen=True, eq=False)
@@ -32,6 +33,8 @@ class Refit:
     coefficients : array (k,)
     covariance : array (k, k)
         Inverse of the information there.
+    rank : int
+        Of the information: below k where columns follow from each other.
     deviance : float
     converged : bool
         False where it did not end, as with separated outcomes.
@@ -39,6 +42,7 @@ class Refit:
 
     coefficients: Floats
     covariance: Floats
+    rank: int
     deviance: float
     converged: bool
 
@@ -60,13 +64,12 @@ def refitted(
     """
     coefficients = start
     deviance, score, information = _parts(X, outcome, weights, coefficients, offset)
-    inverse = _inverted(information)
+    inverse, rank = _inverted(information)
     for _ in range(_STEPS):
         step = inverse @ score
         # the decrement: twice what the deviance has yet to fall
         if not abs(float(score @ step)) > _DONE:
-            rank = np.linalg.matrix_rank(inverse, hermitian=True)
-            return Refit(coefficients + step, inverse, deviance, bool(rank == len(start)))
+            return Refit(coefficients + step, inverse, rank, deviance, True)
         for _ in range(_HALVINGS):
             found = _parts(X, outcome, weights, coefficients + step, offset)
             if found[0] <= deviance * (1 + 1e-12):
@@ -74,8 +77,8 @@ def refitted(
             step = step / 2
         coefficients = coefficients + step
         deviance, score, information = found
-        inverse = _inverted(information)
-    return Refit(coefficients, inverse, deviance, False)
+        inverse, rank = _inverted(information)
+    return Refit(coefficients, inverse, rank, deviance, False)
 
 
 def _parts(
@@ -98,8 +101,11 @@ def _parts(
     return deviance, score, information
 
 
-def _inverted(information: Floats) -> Floats:
+def _inverted(information: Floats) -> tuple[Floats, int]:
     length = np.sqrt(np.diag(information))
     length[length == 0] = 1.0
-    scaled = np.linalg.pinv(information / np.outer(length, length), hermitian=True)
-    return np.asarray(scaled / np.outer(length, length))
+    # scaled, so that the units of the columns are no matter
+    values, vectors = np.linalg.eigh(information / np.outer(length, length))
+    kept = values > _SINGULAR * values[-1]
+    along = vectors[:, kept] / length[:, None]
+    return np.asarray(along / values[kept] @ along.T), int(kept.sum())

@@ -67,11 +67,14 @@ def test_a_fit_says_what_it_takes_rows_for():
     together = smf.gee("y ~ x", groups, DATA, family=binomial()).fit()
     penalised = smf.logit("y ~ x", DATA).fit_regularized(alpha=1.0, disp=0)
     scaled = smf.glm("y ~ x", DATA, family=binomial()).fit(scale="X2")
+    survey = np.random.default_rng(0).uniform(1, 9, len(DATA))
+    weighed = smf.glm("y ~ x", DATA, family=binomial(), freq_weights=survey).fit(cov_type="HC1")
     said = [
         (rows_are_strangers(model_of(each)), has_score_tests(model_of(each)))
-        for each in (robust, clustered, together, penalised, scaled)
+        for each in (robust, clustered, together, penalised, scaled, weighed)
     ]
-    assert said == [(True, True), (False, False), (False, False), (True, False), (False, False)]
+    neither = (False, False)
+    assert said == [(True, True), neither, neither, (True, False), neither, neither]
 
 
 def test_without_an_outcome_that_is_said():

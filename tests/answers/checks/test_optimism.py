@@ -120,6 +120,16 @@ def test_resamples_that_cannot_be_fitted_are_counted():
     assert np.isfinite(found.slope)
 
 
+def test_a_fit_with_a_column_too_many_is_refitted_like_itself():
+    data = invented(300)
+    X = sm.add_constant(data[["x", "w"]])
+    result = sm.GLM(data.y, X.assign(twice=2 * data.x), family=binomial()).fit()
+    one = optimism_of(model_of(result), "bootstrap", 5, 0)
+    other = optimism_of(model_of(sm.Logit(data.y, X).fit(disp=0)), "bootstrap", 5, 0)
+    assert one.failed == 0
+    assert one.slope == pytest.approx(other.slope, rel=1e-4)
+
+
 def test_where_none_can_be_fitted_nothing_is_known():
     x = np.linspace(-1, 1, 60)
     data = invented(60).assign(x=x, y=(x > 0.01).astype(int))

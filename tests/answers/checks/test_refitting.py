@@ -27,10 +27,13 @@ def test_separated_outcomes_do_not_converge():
     assert not refitted(X, (x > 0.01).astype(float), np.ones(40), np.zeros(2)).converged
 
 
-def test_a_column_that_is_empty_is_no_fit():
-    X = np.column_stack([np.ones(40), np.zeros(40)])
-    y = np.arange(40) % 2.0
-    assert not refitted(X, y, np.ones(40), np.zeros(2)).converged
+def test_columns_that_follow_from_each_other_lower_the_rank():
+    y, x = np.arange(40) % 2.0, np.linspace(-1, 1, 40)
+    empty = np.column_stack([np.ones(40), np.zeros(40)])
+    twice = np.column_stack([np.ones(40), x, 3 - 2e6 * x])
+    for X, rank in ((empty, 1), (twice, 2), (twice[:, [0, 2]], 2)):
+        found = refitted(X, y, np.ones(40), np.zeros(X.shape[1]))
+        assert (found.converged, found.rank) == (True, rank)
 
 
 def test_a_start_that_is_far_off_is_brought_back():
