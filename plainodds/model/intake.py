@@ -28,6 +28,7 @@ from plainodds.model.predictors import (
 )
 from plainodds.model.quantiles import weighted_quantiles
 from plainodds.model.raw import RawColumn, coded_column
+from plainodds.model.record import read_record
 from plainodds.model.shapes import allowed_range, is_linear, shares_terms_with
 from plainodds.model.source import Source, source_of
 from plainodds.model.statements import Statements, read_statements
@@ -81,6 +82,7 @@ def take_in(
         None if source.offset is None else sign * source.offset,
         _events(source, turned),
         source.frequencies,
+        source.labels,
     )
     share = _share(sample)
     known = _facts(design, raw, sample, stated.predictors)
@@ -115,6 +117,10 @@ def take_in(
         subject=subject,
         no_likelihood=estimates.no_likelihood,
         intercept_shift=_intercept_shift(share, stated.prevalence),
+        record=read_record(
+            result, source, facts.name, sample.outcome, estimates.without_standard_error
+        ),
+        data=source.data,
     )
 
 
