@@ -2,18 +2,22 @@
 
 from __future__ import annotations
 
+from collections.abc import Iterator
+from dataclasses import fields, is_dataclass
 from functools import singledispatch
 from typing import Any
 
 import pandas as pd
 
 from plainodds.answers.change import ChangeAnswer
+from plainodds.answers.checks.finding import Evidence
 from plainodds.answers.curve import CurveAnswer
 from plainodds.answers.effects import EffectsAnswer
 from plainodds.answers.estimate import Estimate
 from plainodds.answers.odds import OddsAnswer
 from plainodds.answers.profile import ProfileAnswer
 from plainodds.answers.questions import Answer
+from plainodds.answers.soundness import SoundnessAnswer
 from plainodds.values import Pairs
 
 __all__ = ["ledger", "table"]
@@ -25,13 +29,14 @@ def table(answer: Answer) -> pd.DataFrame:
 
     Parameters
     ----------
-    answer : OddsAnswer, CurveAnswer or ProfileAnswer
+    answer : OddsAnswer, CurveAnswer, EffectsAnswer, ChangeAnswer, ProfileAnswer or SoundnessAnswer
 
     Returns
     -------
     DataFrame
         What each estimate is about, then `estimate, se, lower, upper` (and `p_value`
-        where one is due). Where no interval can be had the columns hold NaN.
+        where one is due). Where no interval can be had the columns hold NaN. Of soundness:
+        one row per finding, with its main figures as text.
 
     Examples
     --------
@@ -133,6 +138,37 @@ def _(answer: ChangeAnswer) -> pd.DataFrame:
         | {"estimate": needed.estimate, "se": nothing, "lower": nothing, "upper": nothing}
     )
     return pd.DataFrame(rows)
+
+
+@table.register
+def _(answer: SoundnessAnswer) -> pd.DataFrame:
+    rows = [
+        {
+            "topic": found.topic,
+            "concern": found.concern,
+            "about": ", ".join(found.about),
+            "reasons": ", ".join(found.reasons),
+            "figures": _written(tuple(_figures(found.evidence))),
+            "unknown": found.unknown,
+        }
+        for found in answer.findings
+    ]
+    return pd.DataFrame(rows)
+
+
+def _figures(evidence: Evidence | None) -> Iterator[tuple[str, str]]:
+    """Whatever of the evidence is a single figure; curves, bins and lists are left out."""
+    if not is_dataclass(evidence):
+        return
+    for field in fields(evidence):
+        held = getattr(evidence, field.name)
+        if isinstance(held, Estimate):
+            ends = "" if held.lower is None else f" ({held.lower:.4g} to {held.upper:.4g})"
+            yield field.name, f"{held.estimate:.4g}{ends}"
+        elif isinstance(held, float):
+            yield field.name, f"{held:.4g}"
+        elif isinstance(held, bool | int | str) and held != "":
+            yield field.name, str(held)
 
 
 def ledger(answer: ProfileAnswer) -> pd.DataFrame:

@@ -80,7 +80,7 @@ def level_facts(
         If the stated typical level or a labelled level does not exist.
     """
     levels = column.levels
-    cases = sample.frequencies
+    cases = sample.cases
     events = sample.outcome
     if events is not None and cases is not None:
         events = events * cases

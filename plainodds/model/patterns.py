@@ -85,8 +85,9 @@ def _patterns(sample: Sample) -> Patterns:
             return None
         return summed(sample.outcome if each is None else sample.outcome * each)
 
-    cases, events = summed(sample.frequencies), summed_events(sample.frequencies)
-    if sample.weights is sample.frequencies:
+    counted = sample.cases
+    cases, events = summed(counted), summed_events(counted)
+    if sample.weights is counted:
         return Patterns(first, of_row, cases, events, cases, events)
     weights, weighted_events = summed(sample.weights), summed_events(sample.weights)
     return Patterns(first, of_row, cases, events, weights, weighted_events)
