@@ -130,7 +130,7 @@ def performance_of(linear_predictor: Floats, events: Floats, others: Floats) -> 
     X = np.column_stack([np.ones(len(pi)), linear_predictor])
     share = np.divide(events, cases, out=np.zeros(len(cases)), where=cases > 0)
     refit = refitted(X, share, cases, np.array([0.0, 1.0]))
-    slope = float(refit.coefficients[1]) if refit.converged else np.nan
+    slope = float(refit.coefficients[1]) if refit.converged and refit.rank == 2 else np.nan
     return Performance(slope, brier, concordance(linear_predictor, events, others)[0])
 
 

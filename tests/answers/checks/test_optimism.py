@@ -166,3 +166,10 @@ def test_fits_of_another_kind_are_refused_with_the_reason():
         with pytest.raises(QuestionRefused, match=reason) as refusal:
             optimism_of(model, "bootstrap", 3)
         assert "optimism='none'" in str(refusal.value)
+
+
+def test_chances_that_are_all_the_same_have_no_slope():
+    y = np.arange(20) % 2.0
+    found = performance_of(np.zeros(20), y, 1 - y)
+    assert np.isnan(found.slope)
+    assert (found.brier, found.c) == (0.25, 0.5)
