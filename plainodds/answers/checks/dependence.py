@@ -70,8 +70,8 @@ class DependenceEvidence(Evidence):
     rows : int
     standard_errors : tuple of StandardErrorPair
         By groups: the cluster-robust covariance of Liang & Zeger 1986, with the usual
-        G/(G−1) correction; the fit's own where only the fit knows the groups. Empty where
-        the outcome is not known.
+        G/(G−1) correction; the fit's own where only the fit knows the groups. Empty without
+        outcome, and for fits without a covariance.
     already : bool
         Whether the fit's own covariance takes groups into account.
     """
@@ -102,8 +102,9 @@ def dependence_of(model: FittedModel, groups: Grouping | None) -> Finding:
         own = DependenceEvidence("", 0, 0, model.sample.rows, _pairs(model, model.covariance), True)
         return Finding("dependence", "nothing found", evidence=own)
     repeated = groups.largest > 1
-    why = unknown_rows(model)
-    pairs = () if why else _pairs(model, covariance_by_groups(model, groups))
+    why = unknown_rows(model) or ("no covariance" if model.covariance is None else "")
+    moves = np.zeros((0, 0)) if why else _moves(model, groups)
+    pairs = () if why else _pairs(model, _covariance(moves))
     evidence = DependenceEvidence(
         groups.name, groups.count, groups.largest, model.sample.rows, pairs, already
     )
@@ -111,7 +112,7 @@ def dependence_of(model: FittedModel, groups: Grouping | None) -> Finding:
         return Finding("dependence", "keep in mind", ("repeated rows",), (), evidence, why)
     few = repeated and groups.count < _FEW_GROUPS
     # with as many groups as rows, standard errors differ for other reasons than groups
-    apart = [] if already or why or not repeated else _apart(model, groups, pairs)
+    apart = [] if already or why or not repeated else _apart(moves, pairs)
     concern: Concern = "keep in mind" if apart or few else "nothing found"
     if not few and any(pair.by_groups > _DOUBLE * pair.model_based for pair in apart):
         concern = "don't explain yet"
@@ -136,8 +137,11 @@ def covariance_by_groups(model: FittedModel, groups: Grouping) -> Floats:
     ValueError
         Where the outcome is not known.
     """
-    moves = _moves(model, groups)
-    return moves.T @ moves * (groups.count / (groups.count - 1))
+    return _covariance(_moves(model, groups))
+
+
+def _covariance(moves: Floats) -> Floats:
+    return moves.T @ moves * (len(moves) / (len(moves) - 1))
 
 
 def _moves(model: FittedModel, groups: Grouping) -> Floats:
@@ -150,16 +154,14 @@ def _moves(model: FittedModel, groups: Grouping) -> Floats:
     return product(np.column_stack(scores), model.information_inverse)
 
 
-def _apart(
-    model: FittedModel, groups: Grouping, pairs: tuple[StandardErrorPair, ...]
-) -> list[StandardErrorPair]:
+def _apart(moves: Floats, pairs: tuple[StandardErrorPair, ...]) -> list[StandardErrorPair]:
     """Standard errors that differ by more than matters, and by more than chance does."""
-    squares = _moves(model, groups) ** 2
+    groups, squares = len(moves), moves**2
     total = squares.sum(axis=0)
     with np.errstate(divide="ignore", invalid="ignore"):
         # the sampling variance of a sum of squares, relative to it; half of it on the root's scale
-        relative = (squares**2).sum(axis=0) / total**2 - 1 / groups.count
-        by_chance = _BY_CHANCE * np.sqrt(np.maximum(relative, 2 / (groups.count - 1))) / 2
+        relative = (squares**2).sum(axis=0) / total**2 - 1 / groups
+        by_chance = _BY_CHANCE * np.sqrt(np.maximum(relative, 2 / (groups - 1))) / 2
     differ = np.maximum(math.log(_DIFFER), np.nan_to_num(by_chance, nan=np.inf))
     return [pair for pair, far in zip(pairs, differ, strict=True) if _change(pair) > far]
 

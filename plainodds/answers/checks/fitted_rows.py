@@ -109,19 +109,10 @@ def fitted_rows(model: FittedModel) -> FittedRows:
         eta += sample.offset
     outcome = sample.outcome
     weights = np.ones(sample.rows) if sample.weights is None else sample.weights
-    cases = _cases(model, outcome, weights)
+    cases = np.ones(sample.rows) if sample.cases is None else sample.cases
+    if np.array_equal(cases, weights):
+        cases = weights
     return FittedRows(eta, probability_from_linear_predictor(eta), outcome, cases, weights)
-
-
-def _cases(model: FittedModel, outcome: Floats, weights: Floats) -> Floats:
-    sample = model.sample
-    if sample.frequencies is not None:
-        same = np.array_equal(sample.frequencies, weights)
-        return weights if same else sample.frequencies
-    # a share is a share of some number of cases, and only the variance weights can tell it
-    if sample.weights is None or bool(np.any((outcome > 0) & (outcome < 1))):
-        return weights
-    return np.ones(sample.rows)
 
 
 def unknown_rows(model: FittedModel, fewest: float = 0.0) -> Unknown:

@@ -184,6 +184,13 @@ def test_without_an_outcome_repeated_rows_are_all_that_is_known():
     assert (alone.concern, alone.unknown) == ("nothing found", "no outcome")
 
 
+def test_a_penalised_fit_has_no_standard_errors_to_compare():
+    model = model_of(smf.logit(FORMULA, DATA).fit_regularized(alpha=1.0, disp=0))
+    finding = dependence_of(model, by(model, "clinic"))
+    assert (finding.reasons, finding.unknown) == (("repeated rows",), "no covariance")
+    assert finding.evidence.standard_errors == ()
+
+
 def test_the_finding_goes_to_json_and_back():
     finding = found(DATA)
     assert from_json(to_json(finding)) == finding
