@@ -9,10 +9,12 @@ import numpy as np
 from numpy.typing import NDArray
 from scipy.stats import norm
 
+from plainodds.answers.bounded import limits_of
 from plainodds.answers.changes import OddsQuestion, OddsRow, changes_asked, contrasts_of
 from plainodds.answers.checks.finding import Concern, Evidence, Finding, Topic
 from plainodds.answers.checks.fitted_rows import unknown_rows
 from plainodds.answers.checks.leaving_out import LeavingOut, leaving_out
+from plainodds.answers.optimum import optimum_of
 from plainodds.model.design.design import Floats
 from plainodds.model.fitted import FittedModel
 from plainodds.model.patterns import Patterns, patterns_of
@@ -151,8 +153,11 @@ def influence_of(model: FittedModel) -> Finding:
     why = unknown_rows(model)
     if why:
         return Finding("influence", "not known", unknown=why)
+    if not _at_maximum(model):
+        return Finding("influence", "not known", unknown="no likelihood")
     fit = leaving_out(model)
-    if not fit.remaining_step < _AT_MAXIMUM:
+    if not fit.weights.any():
+        # with every outcome told without fail, nothing has a finite estimate
         return Finding("influence", "not known", unknown="no likelihood")
     patterns = patterns_of(model)
     few = patterns.cases <= max(_FEW_CASES, _FEW_SHARE * float(patterns.cases.sum()))
@@ -179,9 +184,21 @@ def influence_of(model: FittedModel) -> Finding:
     )
 
 
+def _at_maximum(model: FittedModel) -> bool:
+    """Whether the coefficients are where the likelihood is highest, or rises for ever."""
+    optimum = optimum_of(model)
+    if optimum is None or model.record.method == "penalised":
+        return False
+    return not float(np.nanmax(np.abs(optimum.step), initial=0.0)) > _AT_MAXIMUM
+
+
 def _watched(model: FittedModel, fit: LeavingOut) -> _Contrasts:
+    """The changes of a default odds question, but for those without a finite odds ratio."""
     changes = list(changes_asked(model, OddsQuestion()))
     rows = contrasts_of(model, changes)
+    finite = limits_of(model, rows) == 0
+    changes = [change for change, is_finite in zip(changes, finite, strict=True) if is_finite]
+    rows = rows[finite]
     variance = np.einsum("ij,ij->i", rows @ fit.inverse, rows)
     return _Contrasts(changes, rows, np.sqrt(np.maximum(variance, 0.0)))
 
@@ -191,7 +208,7 @@ def _most_moving(
 ) -> NDArray[np.intp]:
     """Patterns of one row or few cases by how far they move some odds ratio, the farthest first."""
     single = np.bincount(patterns.of_row, minlength=patterns.count) == 1
-    eligible = np.nonzero((single | few) & ~fit.measures.alone)[0]
+    eligible = np.nonzero((single | few) & ~fit.measures.alone & (fit.weights > 0))[0]
     far = np.argsort(-fit.measures.delta_beta[eligible], kind="stable")[:_CANDIDATES]
     candidates = eligible[far]
     if not len(candidates) or not len(watched.changes):

@@ -10,6 +10,8 @@ from numpy.typing import NDArray
 from scipy.special import xlogy
 
 from plainodds.answers.checks.fitted_rows import fitted_rows
+from plainodds.answers.optimum import optimum_of
+from plainodds.answers.recession import recession_of
 from plainodds.model.fitted import FittedModel
 from plainodds.model.patterns import patterns_of
 from plainodds.model.products import product, transposed_product
@@ -21,12 +23,17 @@ Floats = NDArray[np.float64]
 
 # 1 − leverage below which a pattern alone carries a coefficient, and cannot be left out.
 _ALONE = 1e-8
+# Eigenvalue of the information, scaled to a diagonal of ones, below which there is nothing.
+_NOTHING = 1e-10
 # Numbers worked on at once, so that they stay in the processor's cache.
 _CACHED = 131_072
-# A refit's steps with the known information, then with its own; and the change of η that ends it.
+# A refit's steps with the known information, then with its own; the change of η that ends it, and
+# that after which it goes nowhere, as where a pattern's outcome kept a coefficient finite.
 _QUICK_STEPS = 6
+_NEWTON_STEPS = 8
 _STEPS = 20
 _SETTLED = 1e-7
+_RUNS_AWAY = 0.5
 
 
 @dataclass(frozen=True, eq=False)
@@ -67,7 +74,8 @@ class LeavingOut:
     ----------
     X : array (p, k)
     weights, events : array (p,)
-        Sums of the fit's weights, and of weights times outcome.
+        Sums of the fit's weights, and of weights times outcome; 0 for patterns whose
+        outcome is told without fail, which have no say in what has a finite estimate.
     offset : array (p,) or float
     probability : array (p,)
     coefficients : array (k,)
@@ -82,14 +90,6 @@ class LeavingOut:
     probability: Floats
     coefficients: Floats
     inverse: Floats
-
-    @property
-    def remaining_step(self) -> float:
-        """The largest step, in standard errors, that Newton's method would still take."""
-        score = np.einsum("i,ij->j", self.measures.residual, self.X)
-        with np.errstate(divide="ignore", invalid="ignore"):
-            step = np.abs(self.inverse @ score) / np.sqrt(np.diag(self.inverse))
-        return float(np.nanmax(step, initial=0.0))
 
     @cached_property
     def variance(self) -> Floats:
@@ -157,13 +157,15 @@ class LeavingOut:
         for done in range(_STEPS):
             pi = probability_from_linear_predictor(eta)
             if done >= _QUICK_STEPS:
-                inverse = self._inverse(weights * probability_slope(pi))
+                inverse = _inverse(self.X, weights * probability_slope(pi))
             coefficients = coefficients + inverse @ np.einsum(
                 "i,ij->j", events - weights * pi, self.X
             )
             before, eta = eta, self._linear_predictor(coefficients)
             moved = float(np.abs(eta - before).max())
-            if not np.isfinite(moved):
+            if not np.isfinite(moved) or (
+                done > _QUICK_STEPS + _NEWTON_STEPS and moved > _RUNS_AWAY
+            ):
                 return None
             if moved < _SETTLED:
                 return coefficients
@@ -174,16 +176,21 @@ class LeavingOut:
         pi = probability_from_linear_predictor(self._linear_predictor(coefficients))
         variance = self.weights * probability_slope(pi)
         variance[pattern] = 0.0
-        return self._inverse(variance)
+        return _inverse(self.X, variance)
 
     def _linear_predictor(self, coefficients: Floats) -> Floats:
         return np.asarray(np.einsum("ij,j->i", self.X, coefficients) + self.offset)
 
-    def _inverse(self, variance: Floats) -> Floats:
-        information = transposed_product(self.X, self.X * variance[:, None])
-        if not np.isfinite(information).all():
-            return np.full_like(information, np.nan)
-        return np.asarray(np.linalg.pinv(information, hermitian=True))
+
+def _inverse(X: Floats, variance: Floats) -> Floats:
+    """(X'WX)⁻¹ of whatever the rows tell."""
+    information = transposed_product(X, X * variance[:, None])
+    if not np.isfinite(information).all():
+        return np.full_like(information, np.nan)
+    scales = np.sqrt(np.diag(information))
+    scales = np.outer(scales, scales)
+    scales[scales == 0] = 1.0
+    return np.asarray(np.linalg.pinv(information / scales, rcond=_NOTHING, hermitian=True) / scales)
 
 
 def leaving_out(model: FittedModel) -> LeavingOut:
@@ -194,17 +201,24 @@ def leaving_out(model: FittedModel) -> LeavingOut:
     ValueError
         Where the outcome is not carried.
     """
-    patterns = patterns_of(model)
-    if patterns.weighted_events is None:
+    patterns, optimum = patterns_of(model), optimum_of(model)
+    if patterns.weighted_events is None or optimum is None:
         raise ValueError("the outcome is not known")
     sample, first = model.sample, patterns.first
+    # where no two rows are alike the rows are the patterns, and need no copy
+    X = sample.matrix if patterns.count == sample.rows else sample.matrix[first]
+    weights, events, inverse = patterns.weights, patterns.weighted_events, optimum.inverse
+    probability = fitted_rows(model).probability[first]
+    if not optimum.overlap or inverse is None:
+        telling = ~recession_of(model).separated
+        weights, events = weights * telling, events * telling
+        inverse = _inverse(X, weights * probability_slope(probability))
     return LeavingOut(
-        # where no two rows are alike the rows are the patterns, and need no copy
-        X=sample.matrix if patterns.count == sample.rows else sample.matrix[first],
-        weights=patterns.weights,
-        events=patterns.weighted_events,
+        X=X,
+        weights=weights,
+        events=events,
         offset=0.0 if sample.offset is None else sample.offset[first],
-        probability=fitted_rows(model).probability[first],
+        probability=probability,
         coefficients=model.coefficients,
-        inverse=model.information_inverse,
+        inverse=inverse,
     )

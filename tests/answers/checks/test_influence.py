@@ -305,10 +305,29 @@ def test_a_gee_that_takes_rows_as_strangers_is_at_the_likelihoods_maximum():
 
 
 @pytest.mark.filterwarnings("ignore")
-def test_separated_outcomes_are_no_trouble():
+def test_where_every_outcome_is_told_without_fail_nothing_is_known():
     frame = SMALL.assign(y=(SMALL.x > SMALL.x.median()).astype(int))
     found = influence_of(model_of(small("y ~ x + w", frame)))
-    assert found.concern in ("nothing found", "keep in mind", "not known")
+    assert (found.concern, found.unknown) == ("not known", "no likelihood")
+
+
+@pytest.mark.filterwarnings("ignore")
+def test_a_level_without_events_leaves_the_other_odds_ratios_to_their_rows():
+    frame = SMALL.assign(y=SMALL.y.where(SMALL.group != "q", 0))
+    with_level = influence_of(model_of(small(frame=frame))).evidence
+    rest = frame[frame.group != "q"]
+    without = influence_of(model_of(small(frame=rest))).evidence
+    assert {moved.end for each in with_level.standing_out for moved in each.moved} >= {"r"}
+    assert "q" not in {moved.end for each in with_level.standing_out for moved in each.moved}
+    by_label = {each.labels: each for each in without.standing_out}
+    for each in with_level.standing_out[:5]:
+        other = by_label[each.labels]
+        assert each.delta_beta == pytest.approx(other.delta_beta, rel=1e-3)
+        told = {(moved.predictor, moved.end): moved for moved in other.moved}
+        for moved in each.moved:
+            if moved.predictor == "group":
+                same = told[moved.predictor, moved.end]
+                assert moved.refitted == pytest.approx(same.refitted, rel=1e-3)
 
 
 def test_the_finding_goes_to_json_and_back():
