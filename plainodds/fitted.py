@@ -8,13 +8,16 @@ from typing import Any, Literal
 import pandas as pd
 
 from plainodds.answers.change import ChangeAnswer, ChangeQuestion, answer_change
+from plainodds.answers.checks.finding import Topic
 from plainodds.answers.curve import CurveAnswer, CurveQuestion, Others, Scale, answer_curve
 from plainodds.answers.effects import EffectsAnswer, EffectsQuestion, answer_effects
+from plainodds.answers.groups import stated_groups
 from plainodds.answers.moves import Shift, stated_moves
 from plainodds.answers.odds import OddsAnswer, OddsQuestion, answer_odds, answer_odds_of
 from plainodds.answers.pair import PairAnswer, PairQuestion, answer_pair
 from plainodds.answers.profile import ProfileAnswer, ProfileQuestion, answer_profile
 from plainodds.answers.questions import Answer, Question
+from plainodds.answers.soundness import SoundnessAnswer, SoundnessQuestion, answer_soundness
 from plainodds.answers.where import stated_rows
 from plainodds.errors import FitRefused, QuestionRefused
 from plainodds.model.fitted import FittedModel
@@ -31,6 +34,7 @@ _ANSWERERS: dict[type[Question], Callable[[FittedModel, Any], Answer]] = {
     ChangeQuestion: answer_change,
     PairQuestion: answer_pair,
     ProfileQuestion: answer_profile,
+    SoundnessQuestion: answer_soundness,
 }
 
 
@@ -145,8 +149,8 @@ class FittedLogit:
         Parameters
         ----------
         question : Question
-            As OddsQuestion, CurveQuestion, EffectsQuestion, ChangeQuestion, PairQuestion or
-            ProfileQuestion.
+            As OddsQuestion, CurveQuestion, EffectsQuestion, ChangeQuestion, PairQuestion,
+            ProfileQuestion or SoundnessQuestion.
 
         Raises
         ------
@@ -535,6 +539,75 @@ class FittedLogit:
             pairs(values), None if against is None else pairs(against), level
         )
         return answer_profile(self.model, question)
+
+    def soundness(
+        self,
+        *,
+        show: Topic | Literal[""] = "",
+        predictor: str = "",
+        groups: str | Any | None = None,
+        optimism: Literal["none", "bootstrap", "cross-validation"] = "none",
+        repeats: int = 200,
+        seed: int = 0,
+        level: float = 0.95,
+    ) -> SoundnessAnswer:
+        """Is this fit fit to be explained?
+
+        Parameters
+        ----------
+        show : str
+            Which finding the picture shows: "convergence", "separation", "collinearity",
+            "standard errors", "amount", "levels", "missing", "shape", "calibration",
+            "influence", "dependence", "discrimination" or "overall"; default: the heaviest.
+        predictor : str
+            Whose shape is shown; default: the heaviest.
+        groups : str, array or Series, optional
+            Which rows belong together: a column of the data, or one value for each row that
+            the fit used.
+        optimism : {"none", "bootstrap", "cross-validation"}
+            How much better the fit looks on its own data than it would on others; takes as
+            many fits as there are repeats.
+        repeats : int
+            Bootstrap samples, or repeats of tenfold cross-validation.
+        seed : int
+            Of the resampling, so that the same question gives the same answer.
+        level : float
+            Confidence level.
+
+        Raises
+        ------
+        QuestionRefused
+            For an unknown topic, predictor or column, groups with missing values, or an
+            optimism that cannot be had.
+
+        Notes
+        -----
+        Separation: Albert & Anderson 1984 (Biometrika 71:1), Konis 2007. Shape: Landwehr,
+        Pregibon & Shoemaker 1984 (JASA 79:61). Influence: Pregibon 1981 (Annals of Statistics
+        9:705). Discrimination: DeLong, DeLong & Clarke-Pearson 1988 (Biometrics 44:837).
+        Dependence: Liang & Zeger 1986 (Biometrika 73:13). Each check's module says where its
+        thresholds come from.
+
+        Examples
+        --------
+        >>> import statsmodels.formula.api as smf
+        >>> import plainodds as po
+        >>> pipes = po.demo.tessel_bay()
+        >>> fit = po.FittedLogit(smf.logit("burst ~ age_years * material", pipes).fit(disp=0))
+        >>> [each.concern for each in fit.soundness().findings if each.topic == "convergence"]
+        ['nothing found']
+        """
+        stated, values = stated_groups(self.model, groups)
+        question = SoundnessQuestion(
+            show=show,
+            predictor=predictor,
+            groups=stated,
+            optimism=optimism,
+            repeats=repeats,
+            seed=seed,
+            level=level,
+        )
+        return answer_soundness(self.model, question, values)
 
 
 def odds_of(

@@ -3,18 +3,19 @@
 from __future__ import annotations
 
 import math
-from collections.abc import Iterator, Mapping
+from collections.abc import Iterator, Mapping, Sequence
 from itertools import product
 from typing import Any, ClassVar, Literal
 
 from plainodds.answers.estimate import Estimate
 from plainodds.answers.questions import Question
 from plainodds.errors import QuestionRefused
+from plainodds.model.design.design import Floats
 from plainodds.model.fitted import FittedModel, checked
 from plainodds.model.predictors import PredictorFacts, Subject
 from plainodds.values import Pairs, Scalar, value
 
-__all__ = ["OddsQuestion", "OddsRow", "changes_asked"]
+__all__ = ["OddsQuestion", "OddsRow", "changes_asked", "contrasts_of"]
 
 
 @value
@@ -71,10 +72,12 @@ class OddsRow:
     given : pairs of (modifier, value)
         The modifiers' values for which the odds ratio holds; empty where there are none.
     odds_ratio : Estimate
-        Its `se` is that of the odds ratio itself (delta method).
+        Its `se` is that of the odds ratio itself (delta method). Infinite or 0, without
+        `se`, where there is no finite estimate; nan where the data leave it undetermined.
     log_odds_ratio : Estimate
     p_value : float or None
-        Wald test of an odds ratio of 1.
+        Wald test of an odds ratio of 1; the likelihood-ratio test where that was asked or
+        the odds ratio has no finite estimate.
     model : str
         The fitted model's name where several are set side by side; else empty.
     """
@@ -116,6 +119,13 @@ def changes_asked(model: FittedModel, question: OddsQuestion) -> Iterator[OddsRo
         for start, end, per_step in compared:
             for held in _combinations(subject, facts, given):
                 yield OddsRow(name, start, end, per_step, held, _UNKNOWN, _UNKNOWN, None)
+
+
+def contrasts_of(model: FittedModel, changes: Sequence[OddsRow]) -> Floats:
+    """x₁ − x₀ of every change, shape (len(changes), k)."""
+    starts = [model.completed((*row.given, (row.predictor, row.start))) for row in changes]
+    ends = [model.completed((*row.given, (row.predictor, row.end))) for row in changes]
+    return model.rows(ends) - model.rows(starts)
 
 
 def _number_change(facts: PredictorFacts, step: Any, between: Any) -> tuple[Scalar, Scalar, bool]:

@@ -74,8 +74,11 @@ class Likelihood:
         contrast : array (k,)
         level : float
         """
-        excess = float(chi2.ppf(level, 1))
-        return self._end(contrast, excess, -1.0), self._end(contrast, excess, 1.0)
+        return self.end(contrast, level, -1.0), self.end(contrast, level, 1.0)
+
+    def end(self, contrast: Floats, level: float, side: float) -> float:
+        """One end of the interval of c'β, the lower (side −1) or the upper (side 1)."""
+        return self._end(contrast, float(chi2.ppf(level, 1)), side)
 
     def p_value(self, contrast: Floats) -> float:
         """Likelihood-ratio test of c'β = 0."""
@@ -115,7 +118,16 @@ class Likelihood:
 
     @cached_property
     def _inverse(self) -> Floats:
-        return np.asarray(np.linalg.pinv(self._parts(self._best.coefficients)[2], hermitian=True))
+        return np.asarray(np.linalg.pinv(self._information, hermitian=True))
+
+    @cached_property
+    def _information(self) -> Floats:
+        return self._parts(self._best.coefficients)[2]
+
+    def _solves(self, along: Floats, contrast: Floats) -> bool:
+        # the inverse leaves out where the information is nought to rounding
+        missed = self._information @ along - contrast
+        return float(np.linalg.norm(missed)) < 0.1 * float(np.linalg.norm(contrast))
 
     def refit(self, contrast: Floats, at: float, start: Floats) -> _Refit:
         """Minimise the deviance under c'β = at."""
@@ -131,7 +143,9 @@ class Likelihood:
         estimate = float(contrast @ self._best.coefficients)
         along = self._inverse @ contrast
         variance = float(contrast @ along)
-        direction = along / variance if variance > 0 else contrast / float(contrast @ contrast)
+        direction = contrast / float(contrast @ contrast)
+        if variance > 0 and self._solves(along, contrast):
+            direction = along / variance
         fastest = float(np.abs(np.einsum("ij,j->i", self.X, direction)).max())
         # where a fit has run away its standard errors are absurd: start with a modest step
         reach = min(math.sqrt(excess * max(variance, 0.0)), _MODEST / fastest)

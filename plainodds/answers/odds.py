@@ -9,7 +9,8 @@ from dataclasses import replace
 import numpy as np
 from numpy.typing import NDArray
 
-from plainodds.answers.changes import OddsQuestion, OddsRow, changes_asked
+from plainodds.answers.bounded import as_ratio, limits_of, unbounded_estimate, unbounded_p_value
+from plainodds.answers.changes import OddsQuestion, OddsRow, changes_asked, contrasts_of
 from plainodds.answers.delta import Intervals, checked_level, mapped, p_values, wald
 from plainodds.answers.likelihood import likelihood_of
 from plainodds.answers.progress import Progress, silent
@@ -60,6 +61,11 @@ def answer_odds(
     With `interval="likelihood"` the interval holds the values that the likelihood allows
     (Venzon & Moolgavkar 1988) and the test is the likelihood-ratio test.
 
+    Where the data are separated along a change its odds ratio has no finite estimate
+    (Albert & Anderson 1984): then it is infinite, or 0, its standard error is None, and one
+    end of its interval and its test come from the likelihood, whatever interval was asked.
+    Where the data leave it undetermined it is nan.
+
     Parameters
     ----------
     model : FittedModel
@@ -75,22 +81,23 @@ def answer_odds(
     """
     level = checked_level(question.level)
     changes = list(changes_asked(model, question))
-    starts = [model.completed((*row.given, (row.predictor, row.start))) for row in changes]
-    ends = [model.completed((*row.given, (row.predictor, row.end))) for row in changes]
-    contrasts = model.rows(ends) - model.rows(starts)
+    contrasts = contrasts_of(model, changes)
     logs = wald(model, contrasts @ model.coefficients, contrasts, level)
     tests = p_values(model, logs)
+    limits = limits_of(model, contrasts)
     if question.interval == "likelihood":
-        logs, tests = _by_likelihood(model, logs, contrasts, level, progress)
+        logs, tests = _by_likelihood(model, logs, contrasts, limits, level, progress)
     elif question.interval != "wald":
         raise QuestionRefused(f"interval={question.interval!r}: choose 'wald' or 'likelihood'.")
     ratios = mapped(logs, odds_from_linear_predictor, odds_from_linear_predictor)
     rows = tuple(
         replace(row, odds_ratio=ratios.at(i), log_odds_ratio=logs.at(i), p_value=p)
+        if limits[i] == 0
+        else _unbounded(model, row, contrasts[i], float(limits[i]), level)
         for i, (row, p) in enumerate(zip(changes, tests, strict=True))
     )
     if question.order == "size":
-        rows = tuple(sorted(rows, key=lambda row: -abs(row.log_odds_ratio.estimate)))
+        rows = tuple(sorted(rows, key=_size))
     return OddsAnswer(question, model.subject, rows, _typical_probability(model))
 
 
@@ -101,14 +108,39 @@ def _typical_probability(model: FittedModel) -> float:
     return float(probability_from_linear_predictor(eta)[0])
 
 
+def _size(row: OddsRow) -> tuple[bool, float]:
+    size = abs(row.log_odds_ratio.estimate)
+    return math.isnan(size), -size
+
+
+def _unbounded(
+    model: FittedModel, row: OddsRow, contrast: Floats, limit: float, level: float
+) -> OddsRow:
+    """A row whose odds ratio has no finite estimate."""
+    log = unbounded_estimate(model, contrast, limit, level)
+    return replace(
+        row,
+        odds_ratio=as_ratio(log),
+        log_odds_ratio=log,
+        p_value=unbounded_p_value(model, contrast, limit),
+    )
+
+
 def _by_likelihood(
-    model: FittedModel, logs: Intervals, contrasts: Floats, level: float, progress: Progress
+    model: FittedModel,
+    logs: Intervals,
+    contrasts: Floats,
+    limits: Floats,
+    level: float,
+    progress: Progress,
 ) -> tuple[Intervals, tuple[float | None, ...]]:
     likelihood = likelihood_of(model)
-    ends, tests = np.empty((2, len(contrasts))), []
+    ends = np.full((2, len(contrasts)), math.nan)
+    tests: list[float | None] = [None] * len(contrasts)
     for i, contrast in enumerate(contrasts):
-        ends[:, i] = likelihood.interval(contrast, level)
-        tests.append(likelihood.p_value(contrast))
+        if limits[i] == 0:
+            ends[:, i] = likelihood.interval(contrast, level)
+            tests[i] = likelihood.p_value(contrast)
         progress(i + 1, len(contrasts))
     return Intervals(logs.estimate, logs.se, ends[0], ends[1]), tuple(tests)
 

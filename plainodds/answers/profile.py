@@ -8,11 +8,13 @@ from typing import ClassVar
 import numpy as np
 from numpy.typing import NDArray
 
+from plainodds.answers.bounded import as_ratio, limits_of, unbounded_estimate
 from plainodds.answers.comparing import Comparison, compared
 from plainodds.answers.delta import Intervals, checked_level, mapped, wald
 from plainodds.answers.estimate import Estimate
 from plainodds.answers.familiarity import Familiarity, familiarity_of
 from plainodds.answers.questions import Answer, Question
+from plainodds.answers.sharing_terms import joined_predictors
 from plainodds.model.fitted import FittedModel
 from plainodds.model.predictors import Subject
 from plainodds.scales import (
@@ -67,6 +69,10 @@ class ProfilePoint:
     linear_predictor, odds, probability : Estimate
         The intervals of odds and probability are that of η, carried over.
     familiarity : Familiarity
+    limit : float
+        Where the maximum of the likelihood takes η: 0 for a finite value, +inf or −inf
+        where the data are separated and η has no finite estimate, nan where they leave it
+        undetermined. Where it is not 0 the figures are where the fit happened to stop.
     """
 
     values: Pairs
@@ -74,6 +80,7 @@ class ProfilePoint:
     odds: Estimate
     probability: Estimate
     familiarity: Familiarity
+    limit: float = 0.0
 
 
 @value
@@ -143,21 +150,30 @@ def answer_profile(model: FittedModel, question: ProfileQuestion) -> ProfileAnsw
     start_values = model.typical if against is None else against
     rows = model.rows([values, start_values])
     eta = wald(model, rows @ model.coefficients + model.offset, rows, level)
+    limits = limits_of(model, np.vstack([rows, rows[:1] - rows[1:]]))
     point, start = (
-        _point(model, each, rows[i], eta, i) for i, each in enumerate((values, start_values))
+        _point(model, each, rows[i], eta, i, float(limits[i]))
+        for i, each in enumerate((values, start_values))
     )
     return ProfileAnswer(
         question=question,
         subject=model.subject,
         point=point,
         start=start,
-        comparison=None if against is None else _comparison(model, rows, eta.estimate, level),
+        comparison=None
+        if against is None
+        else _comparison(model, rows, eta.estimate, float(limits[2]), level),
         ledger=_ledger(model, rows[0] - rows[1], float(eta.estimate[1]), level),
     )
 
 
 def _point(
-    model: FittedModel, values: Pairs, row: Floats, eta: Intervals, position: int
+    model: FittedModel,
+    values: Pairs,
+    row: Floats,
+    eta: Intervals,
+    position: int,
+    limit: float,
 ) -> ProfilePoint:
     odds = mapped(eta, odds_from_linear_predictor, odds_from_linear_predictor)
     probability = mapped(
@@ -171,25 +187,28 @@ def _point(
         odds.at(position),
         probability.at(position),
         familiarity_of(model, values, row),
+        limit,
     )
 
 
-def _comparison(model: FittedModel, rows: Floats, eta: Floats, level: float) -> Comparison:
+def _comparison(
+    model: FittedModel, rows: Floats, eta: Floats, limit: float, level: float
+) -> Comparison:
     pi = probability_from_linear_predictor(eta)
     gradient = probability_slope(pi)[:, None] * rows
     # from η itself, so that an odds ratio survives chances that round to 0 or 1
     log_odds_ratio = wald(model, eta[:1] - eta[1:], rows[:1] - rows[1:], level)
-    return replace(
-        compared(model, pi[::-1], gradient[::-1], level),
-        odds_ratio=mapped(log_odds_ratio, np.exp, np.exp).at(0),
-    )
+    odds_ratio = mapped(log_odds_ratio, np.exp, np.exp).at(0)
+    if limit != 0:
+        odds_ratio = as_ratio(unbounded_estimate(model, rows[0] - rows[1], limit, level))
+    return replace(compared(model, pi[::-1], gradient[::-1], level), odds_ratio=odds_ratio)
 
 
 def _ledger(
     model: FittedModel, contrast: Floats, start: float, level: float
 ) -> tuple[LedgerRow, ...]:
     """One row per group of predictors that share terms: so no order matters."""
-    groups = _groups(model)
+    groups = joined_predictors(model)
     parts = np.zeros((len(groups), len(contrast)))
     for place, group in enumerate(groups):
         touched = model.design.touched(group)
@@ -202,17 +221,3 @@ def _ledger(
         LedgerRow(group, adds.at(i), multiplies.at(i), float(running[i]), float(chances[i]))
         for i, group in enumerate(groups)
     )
-
-
-def _groups(model: FittedModel) -> tuple[tuple[str, ...], ...]:
-    """Predictors joined by shared terms, directly or through others."""
-    subject = model.subject
-    group_of: dict[str, set[str]] = {}
-    for facts in subject.predictors:
-        joined = {facts.name}.union(*(group_of.get(m, {m}) for m in facts.modifiers))
-        joined |= group_of.get(facts.name, set())
-        for name in joined:
-            group_of[name] = joined
-    order = [facts.name for facts in subject.predictors]
-    ordered = (tuple(n for n in order if n in group_of[name]) for name in order)
-    return tuple(dict.fromkeys(ordered))

@@ -17,6 +17,8 @@ from plainodds.answers.pair import PairAnswer
 from plainodds.answers.pair_tables import joint_table, pair_table
 from plainodds.answers.profile import ProfileAnswer
 from plainodds.answers.questions import Answer
+from plainodds.answers.soundness import SoundnessAnswer
+from plainodds.answers.soundness_tables import findings_table
 
 __all__ = ["joint_table", "ledger", "table"]
 
@@ -33,7 +35,8 @@ def table(answer: Answer) -> pd.DataFrame:
     -------
     DataFrame
         What each estimate is about, then `estimate, se, lower, upper` (and `p_value`
-        where one is due). Where no interval can be had the columns hold NaN.
+        where one is due). Where no interval can be had the columns hold NaN. Of soundness:
+        one row per finding, with its main figures as text.
 
     Examples
     --------
@@ -143,6 +146,7 @@ def _(answer: ChangeAnswer) -> pd.DataFrame:
 
 
 table.register(PairAnswer, pair_table)
+table.register(SoundnessAnswer, findings_table)
 
 
 def ledger(answer: ProfileAnswer) -> pd.DataFrame:

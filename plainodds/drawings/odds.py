@@ -28,6 +28,7 @@ from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import bare, fraction_ticks, label_ticks
 from plainodds.phrases.labels import odds_of_event
 from plainodds.phrases.numbers import simple_fraction
+from plainodds.phrases.unbounded import UNBOUNDED_NOTE, has_finite_estimate
 
 __all__ = ["OddsDrawing"]
 
@@ -260,6 +261,8 @@ class _Marks:
         segments, inside, leaving = [], [], ([], [])  # type: ignore[var-annotated]
         for row, y in zip(rows, places, strict=True):
             middle, low, high = shown(row)
+            if math.isnan(middle):
+                continue
             if lower <= middle <= upper:
                 inside.append((middle, y))
             if low < lower or middle < lower:
@@ -281,7 +284,9 @@ def _notes(answer: OddsAnswer) -> list[str]:
     notes = []
     if any(min(shown(row)) < lower or max(shown(row)) > upper for row in answer.rows):
         notes.append(_LEAVES)
-    if any(row.odds_ratio.lower is None for row in answer.rows):
+    if any(math.isinf(row.log_odds_ratio.estimate) for row in answer.rows):
+        notes.append(UNBOUNDED_NOTE)
+    if any(row.odds_ratio.lower is None and has_finite_estimate(row) for row in answer.rows):
         notes.append(answer.subject.no_interval or "No intervals can be given.")
     return notes
 

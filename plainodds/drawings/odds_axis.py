@@ -30,15 +30,25 @@ def axis_range(rows: Sequence[OddsRow]) -> tuple[float, float]:
     tuple of float
         Around 1, both ends finite and above 0.
     """
-    left, right, middles = [], [], []
+    left: list[float] = []
+    right: list[float] = []
+    middles, reaches = [], []
     for row in rows:
         logs = row.log_odds_ratio
+        if math.isnan(logs.estimate):
+            continue
         low = logs.estimate if logs.lower is None else logs.lower
         high = logs.estimate if logs.upper is None else logs.upper
+        if math.isinf(logs.estimate):
+            # where there is no finite estimate, the finite end of its interval is what to see
+            ends, near = (right, low) if logs.estimate > 0 else (left, -high)
+            ends += [math.inf, near]
+            continue
         left.append(-low if math.isfinite(low) else math.inf)
         right.append(high if math.isfinite(high) else math.inf)
         middles.append(logs.estimate)
-    reaches = sorted(max(a, b, 0.0) for a, b in zip(left, right, strict=True))
+        reaches.append(max(left[-1], right[-1], 0.0))
+    reaches.sort()
     typical = reaches[(len(reaches) - 1) // 2] if reaches else 0.0
     typical = min(max(typical, math.log(1.25)), math.log(1000.0))
     lowest = _reach(left, [-each for each in middles], typical)

@@ -11,6 +11,7 @@ from plainodds.drawings.lettering import align_decimals, line_height, text_width
 from plainodds.drawings.theme import Theme
 from plainodds.phrases.labels import change_label, given_clause, given_label, predictor_label
 from plainodds.phrases.numbers import confidence, ratio, ratio_interval
+from plainodds.phrases.unbounded import has_finite_estimate, odds_ratio_figures
 
 __all__ = [
     "GAP",
@@ -271,11 +272,19 @@ def figures_of(answer: OddsAnswer, theme: Theme, width: float) -> Figures:
 def estimate_texts(rows: Sequence[OddsRow]) -> list[str]:
     """Each row's figures, "2.02 (1.08 to 3.78)", the estimates' decimal points in line."""
     middles = [ratio(row.odds_ratio.estimate) for row in rows]
-    written = [text for text in middles if text[:1].isdigit()]
+    written = [
+        text
+        for row, text in zip(rows, middles, strict=True)
+        if text[:1].isdigit() and has_finite_estimate(row)
+    ]
     whole = max((len(text.partition(".")[0]) for text in written), default=0)
     after = dict(zip(written, align_decimals(written), strict=True))
     texts = []
     for row, middle in zip(rows, middles, strict=True):
+        if not has_finite_estimate(row):
+            figure, interval = odds_ratio_figures(row)
+            texts.append(f"{figure} ({interval})" if interval else figure)
+            continue
         text = middle
         if middle in after:
             text = "\u2007" * (whole - len(middle.partition(".")[0])) + after[middle]

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import math
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from typing import Any
 
 import numpy as np
@@ -16,13 +16,19 @@ from statsmodels.genmod.generalized_linear_model import GLM
 
 from plainodds.errors import FitRefused
 
-__all__ = ["Estimates", "estimates_of", "refuse_other_models"]
+__all__ = ["Estimates", "estimates_of", "is_constrained", "is_penalised", "refuse_other_models"]
 
 Floats = NDArray[np.float64]
 
 _PENALISED = (
     "The fit is penalised: its coefficients are shrunk or selected on purpose, and the usual "
     "covariance does not describe them, so there are estimates without intervals."
+)
+
+_NO_COVARIANCE = (
+    "The covariance of {} is not a number, so there are estimates without intervals. Usually a "
+    "column is an exact combination of others (or is constant beside an intercept): leave one of "
+    "them out and fit again."
 )
 
 
@@ -41,6 +47,8 @@ class Estimates:
         Of the t distribution where the result uses it; None for the normal.
     no_likelihood : str
         Why likelihood intervals cannot be had; empty where they can.
+    without_standard_error : tuple of str
+        Columns whose variance is no number of at least 0.
     """
 
     coefficients: Floats
@@ -49,6 +57,7 @@ class Estimates:
     no_interval: str
     degrees_of_freedom: float | None
     no_likelihood: str
+    without_standard_error: tuple[str, ...] = ()
 
 
 def refuse_other_models(result: Any) -> None:
@@ -79,14 +88,16 @@ def estimates_of(result: Any) -> Estimates:
     Raises
     ------
     FitRefused
-        If the estimates are unusable.
+        If a coefficient is not a number. A fit without usable standard errors is taken in,
+        and its estimates go without intervals.
     """
     model = result.model
-    found = _without_covariance(result) if _is_penalised(result) else _with_covariance(result)
+    found = _without_covariance(result) if is_penalised(result) else _with_covariance(result)
     return _checked(found, list(model.exog_names))
 
 
-def _is_penalised(result: Any) -> bool:
+def is_penalised(result: Any) -> bool:
+    """Whether a fit shrank or selected its coefficients."""
     held = getattr(result, "_results", result)
     if isinstance(result.model, Logit):
         return isinstance(held, L1BinaryResults)
@@ -95,6 +106,11 @@ def _is_penalised(result: Any) -> bool:
         return not hasattr(held, "cov_naive")
     # refitted after a selection it has a covariance, which knows nothing of the selection
     return not hasattr(held, "cov_params") or bool(getattr(held, "regularized", False))
+
+
+def is_constrained(result: Any) -> bool:
+    """Whether coefficients were kept under constraints."""
+    return bool(getattr(result, "k_constr", 0)) or getattr(result, "constraints", None) is not None
 
 
 def _not_a_result(result: Any) -> str:
@@ -167,7 +183,7 @@ def _no_likelihood(result: Any) -> str:
             f"the fit's covariance is {kind}, because the likelihood alone is not trusted; an "
             "interval from the likelihood would ignore that. Ask interval='wald'."
         )
-    if getattr(result, "k_constr", 0) or getattr(result, "constraints", None) is not None:
+    if is_constrained(result):
         return (
             "the fit is under constraints, and the refits would not keep them; ask interval='wald'."
         )
@@ -188,14 +204,14 @@ def _checked(found: Estimates, names: list[str]) -> Estimates:
         )
     if found.covariance is None:
         return found
-    variances = np.diag(found.covariance)
-    bad = [
-        name for name, v in zip(names, variances, strict=True) if not (np.isfinite(v) and v >= 0)
-    ]
-    if bad or not np.isfinite(found.covariance).all():
-        raise FitRefused(
-            f"The covariance of {', '.join(bad) or 'the coefficients'} is not a number. Usually a "
-            "column is an exact combination of others (or is constant beside an intercept): "
-            "leave one of them out and fit again."
-        )
-    return found
+    with np.errstate(invalid="ignore"):
+        usable = np.isfinite(found.covariance).all(axis=1) & (np.diag(found.covariance) >= 0)
+    if usable.all():
+        return found
+    without = tuple(name for name, each in zip(names, usable, strict=True) if not each)
+    return replace(
+        found,
+        covariance=None,
+        no_interval=_NO_COVARIANCE.format(", ".join(without)),
+        without_standard_error=without,
+    )

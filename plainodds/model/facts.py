@@ -8,6 +8,7 @@ import numpy as np
 
 from plainodds.errors import FitRefused
 from plainodds.model.design.design import Floats
+from plainodds.model.fitted import Sample
 from plainodds.model.predictors import Kind, Predictor, PredictorFacts
 from plainodds.model.quantiles import weighted_quantiles
 from plainodds.model.raw import RawColumn
@@ -67,7 +68,7 @@ def number_facts(
 def level_facts(
     name: str,
     column: RawColumn,
-    weights: Floats | None,
+    sample: Sample,
     stated: Predictor,
     modifiers: tuple[str, ...],
 ) -> PredictorFacts:
@@ -79,18 +80,21 @@ def level_facts(
         If the stated typical level or a labelled level does not exist.
     """
     levels = column.levels
-    counts = np.bincount(column.values, minlength=len(levels))
-    weighted = (
-        counts
-        if weights is None
-        else np.bincount(column.values, weights=weights, minlength=len(levels))
-    )
+    cases = sample.cases
+    events = sample.outcome
+    if events is not None and cases is not None:
+        events = events * cases
+
+    def by_level(each: Floats | None) -> tuple[float, ...]:
+        summed = np.bincount(column.values, weights=each, minlength=len(levels))
+        return tuple(map(float, summed))
+
     for field in ("range", "step"):
         if getattr(stated, field) is not None:
             raise FitRefused(
                 f"Predictor {name!r} has levels, so {field}= has no meaning for it. Leave it out."
             )
-    typical = levels[int(np.argmax(weighted))]
+    typical = levels[int(np.argmax(by_level(sample.weights)))]
     if stated.typical is not None:
         typical = _level(name, levels, stated.typical)
     labels = {_level(name, levels, level): text for level, text in stated.level_labels or ()}
@@ -101,7 +105,7 @@ def level_facts(
         kind=column.kind,
         levels=levels,
         level_labels=tuple(labels.get(level, _level_label(level, column.kind)) for level in levels),
-        level_counts=tuple(int(count) for count in counts),
+        level_counts=tuple(int(count) for count in by_level(None)),
         minimum=_NAN,
         maximum=_NAN,
         quartiles=(_NAN, _NAN, _NAN),
@@ -111,6 +115,8 @@ def level_facts(
         step=_NAN,
         linear=True,
         modifiers=modifiers,
+        level_cases=by_level(cases),
+        level_events=() if events is None else by_level(events),
     )
 
 

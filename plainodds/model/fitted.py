@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import math
 from collections.abc import Mapping, Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, field
 from functools import cached_property
 from typing import Any
 
@@ -13,10 +13,12 @@ import pandas as pd
 from numpy.typing import NDArray
 
 from plainodds.errors import QuestionRefused
+from plainodds.model.data_columns import DataColumns
 from plainodds.model.design.design import Coded, Design, Floats
 from plainodds.model.estimable import Estimable, estimable
 from plainodds.model.predictors import PredictorFacts, Subject
 from plainodds.model.products import product, transposed_product
+from plainodds.model.record import FitRecord
 from plainodds.scales import probability_from_linear_predictor, probability_slope
 from plainodds.values import Pairs, Scalar
 
@@ -43,6 +45,8 @@ class Sample:
     frequencies : array (n,) or None
         How many cases a row stands for: frequency weights times trials; None where all
         are 1.
+    labels : Index or None
+        What the rows are called in the analyst's data; positions where they have no names.
     """
 
     matrix: Floats
@@ -51,11 +55,24 @@ class Sample:
     offset: Floats | None
     outcome: Floats | None = None
     frequencies: Floats | None = None
+    labels: pd.Index[Any] | None = None
 
     @property
     def rows(self) -> int:
         """How many rows."""
         return len(self.matrix)
+
+    @property
+    def cases(self) -> Floats | None:
+        """How many cases each row stands for; None where each is one.
+
+        A share is a share of some number of cases: where there are no frequencies, the
+        weights tell it.
+        """
+        if self.frequencies is not None or self.weights is None or self.outcome is None:
+            return self.frequencies
+        shares = bool(np.any((self.outcome > 0) & (self.outcome < 1)))
+        return self.weights if shares else None
 
     def blocks(self) -> list[slice]:
         """Slices that cover the rows, each small enough for the processor's cache."""
@@ -81,6 +98,10 @@ class FittedModel:
     intercept_shift : float
         What is added to every η for the population's share of events, in case-control
         samples (King & Zeng 2001, Political Analysis 9:137); else 0.
+    record : FitRecord
+        How the fit went, as far as the result tells.
+    data : DataColumns or None
+        Columns of the analyst's data beside the model's own; None where there is no frame.
     """
 
     coefficients: Floats
@@ -91,6 +112,8 @@ class FittedModel:
     subject: Subject
     no_likelihood: str = ""
     intercept_shift: float = 0.0
+    record: FitRecord = field(default_factory=FitRecord)
+    data: DataColumns | None = None
 
     @property
     def offset(self) -> float:

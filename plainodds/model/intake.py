@@ -28,6 +28,7 @@ from plainodds.model.predictors import (
 )
 from plainodds.model.quantiles import weighted_quantiles
 from plainodds.model.raw import RawColumn, coded_column
+from plainodds.model.record import read_record
 from plainodds.model.shapes import allowed_range, is_linear, shares_terms_with
 from plainodds.model.source import Source, source_of
 from plainodds.model.statements import Statements, read_statements
@@ -85,9 +86,10 @@ def take_in(
         None if source.offset is None else sign * source.offset,
         _events(source, turned),
         source.frequencies,
+        source.labels,
     )
     share = _share(sample)
-    known = _facts(design, raw, source.weights, stated.predictors)
+    known = _facts(design, raw, sample, stated.predictors)
     facts, notices = outcome_facts(modelled, stated.outcome, share, turned)
     subject = Subject(
         outcome=facts,
@@ -121,6 +123,10 @@ def take_in(
         subject=subject,
         no_likelihood=estimates.no_likelihood,
         intercept_shift=_intercept_shift(share, stated.prevalence),
+        record=read_record(
+            result, source, facts.name, sample.outcome, estimates.without_standard_error
+        ),
+        data=source.data,
     )
 
 
@@ -187,7 +193,7 @@ def _ends(column: RawColumn) -> tuple[float, float]:
 def _facts(
     design: Design,
     raw: Mapping[str, RawColumn],
-    weights: Floats | None,
+    sample: Sample,
     predictors: Mapping[str, Predictor],
 ) -> tuple[PredictorFacts, ...]:
     modifiers = shares_terms_with(design)
@@ -198,12 +204,18 @@ def _facts(
     for name, column in raw.items():
         stated = predictors.get(name, Predictor())
         if column.levels:
-            found.append(level_facts(name, column, weights, stated, modifiers[name]))
+            found.append(level_facts(name, column, sample, stated, modifiers[name]))
             continue
         linear = is_linear(design, name, *_ends(column), at)
         found.append(
             number_facts(
-                name, column, weights, stated, design.allowed[name], linear, modifiers[name]
+                name,
+                column,
+                sample.weights,
+                stated,
+                design.allowed[name],
+                linear,
+                modifiers[name],
             )
         )
     return tuple(found)

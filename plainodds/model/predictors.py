@@ -142,6 +142,11 @@ class PredictorFacts:
         Whether the linear predictor changes by the same amount for each step.
     modifiers : tuple of str
         Predictors that share a term with this one.
+    level_cases : tuple of float
+        Cases per level, parallel to `levels`: rows by their frequencies.
+    level_events : tuple of float
+        Cases with the event per level, parallel to `levels`; empty where the result no
+        longer carries its outcome.
     """
 
     name: str
@@ -160,6 +165,8 @@ class PredictorFacts:
     step: float
     linear: bool
     modifiers: tuple[str, ...]
+    level_cases: tuple[float, ...] = ()
+    level_events: tuple[float, ...] = ()
 
     @property
     def is_number(self) -> bool:

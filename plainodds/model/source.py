@@ -16,6 +16,7 @@ from statsmodels.discrete.discrete_model import Logit
 from statsmodels.genmod.generalized_estimating_equations import GEE
 
 from plainodds.errors import FitRefused
+from plainodds.model.data_columns import DataColumns
 from plainodds.model.design.design import Column, Factor, Floats
 from plainodds.model.design.patsy_terms import patsy_terms
 from plainodds.model.design.plain_columns import plain_columns
@@ -42,6 +43,14 @@ class Source:
     frequencies : array (n,) or None
         How many cases a row stands for: frequency weights times trials.
     notices : tuple of str
+    labels : Index or None
+        What the rows used are called.
+    rows_left_out : int or None
+        Rows that the fit left out because something was missing; None where it can't be told.
+    left_out : callable or None
+        One column's values in those rows; None where they can no longer be read.
+    data : DataColumns or None
+        The columns beside the model's own; None where there is no frame.
     """
 
     names: tuple[str, ...]
@@ -54,6 +63,10 @@ class Source:
     frequencies: Floats | None
     offset: Floats | None
     notices: tuple[str, ...]
+    labels: pd.Index[Any] | None = None
+    rows_left_out: int | None = None
+    left_out: Callable[[str], pd.Series[Any]] | None = None
+    data: DataColumns | None = None
 
 
 def source_of(
@@ -108,8 +121,12 @@ def _from_formula(
     if matrix is None:
         rows = len(frame) if kept is None else int(kept.sum())
         offset = _offset(model, rows)
-        return Source(names, column, factors, columns, None, None, None, None, offset, (_REMOVED,))
-    return Source(names, column, factors, columns, matrix, *_outcome_parts(model))
+        return Source(
+            names, column, factors, columns, None, None, None, None, offset, (_REMOVED,),
+            *_used_and_left_out(frame, kept),
+        )  # fmt: skip
+    parts = _outcome_parts(model)
+    return Source(names, column, factors, columns, matrix, *parts, *_used_and_left_out(frame, kept))
 
 
 def _reader(frame: pd.DataFrame, kept: NDArray[np.bool_] | None) -> Callable[[str], pd.Series[Any]]:
@@ -139,14 +156,44 @@ def _from_arrays(result: Any, data: pd.DataFrame | None) -> Source:
     places = {name: place for place, name in enumerate(exog_names)}
     names = exog_names
     read: Callable[[str], Any] | None = None
+    rest = _used_without_data(model)
     if data is not None:
-        read = _reader(data, _rows_used(result, data, matrix))
+        kept = _rows_used(result, data, matrix)
+        read = _reader(data, kept)
+        rest = _used_and_left_out(data, kept)
         names += tuple(name for name in map(str, data.columns) if name not in places)
 
     def column(name: str) -> Any:
         return matrix[:, places[name]] if name in places or read is None else read(name)
 
-    return Source(names, column, factors, columns, matrix, *_outcome_parts(model))
+    return Source(names, column, factors, columns, matrix, *_outcome_parts(model), *rest)
+
+
+_Rest = tuple[
+    "pd.Index[Any]", int | None, Callable[[str], "pd.Series[Any]"] | None, DataColumns | None
+]
+
+
+def _used_and_left_out(frame: pd.DataFrame, kept: NDArray[np.bool_] | None) -> _Rest:
+    """Labels of the rows used, how many were left out, how to read those, and the other columns."""
+    data = DataColumns(frame, kept)
+    if kept is None:
+        return frame.index, 0, None, data
+    # only the few rows left out are held, not the analyst's frame
+    others = frame[~kept]
+    places = {str(name): place for place, name in enumerate(frame.columns)}
+    return frame.index[kept], len(others), lambda name: others.iloc[:, places[name]], data
+
+
+def _used_without_data(model: Any) -> _Rest:
+    dropped = getattr(model.data, "missing_row_idx", None)
+    left_out = 0 if dropped is None else len(dropped)
+    labels = getattr(model.data, "row_labels", None)
+    rows = len(model.exog)
+    if labels is None or len(labels) != rows:
+        places = np.delete(np.arange(rows + left_out), [] if dropped is None else dropped)
+        labels = pd.Index(places) if left_out else pd.RangeIndex(rows)
+    return pd.Index(labels), left_out, None, None
 
 
 _REMOVED = (

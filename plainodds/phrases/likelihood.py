@@ -8,6 +8,7 @@ from plainodds.answers.odds import OddsAnswer, OddsRow
 from plainodds.phrases.labels import listed, predictor_name
 from plainodds.phrases.numbers import confidence, ratio
 from plainodds.phrases.parts import covariance_words, ratio_with_interval
+from plainodds.phrases.unbounded import has_finite_estimate, odds_ratio_figures
 
 __all__ = ["interval_method", "likelihood_cautions", "odds_ratio_words"]
 
@@ -22,6 +23,8 @@ def odds_ratio_words(row: OddsRow, level: float) -> str:
     """
     open_below, open_above = _open_ends(row)
     odds = row.odds_ratio
+    if not has_finite_estimate(row) and odds.lower is None:
+        return odds_ratio_figures(row)[0]
     if not (open_below or open_above) or odds.lower is None or odds.upper is None:
         return ratio_with_interval(odds, level)
     told = "without an end on either side"
@@ -29,7 +32,8 @@ def odds_ratio_words(row: OddsRow, level: float) -> str:
         told = f"from {ratio(odds.lower)}, no upper end"
     elif not open_above:
         told = f"up to {ratio(odds.upper)}, no lower end"
-    return f"{ratio(odds.estimate)} ({confidence(level)} interval {told})"
+    figure = odds_ratio_figures(row)[0]
+    return f"{figure} ({confidence(level)} interval {told})"
 
 
 def _open_ends(row: OddsRow) -> tuple[bool, bool]:

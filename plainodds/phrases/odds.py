@@ -45,6 +45,11 @@ from plainodds.phrases.parts import (
     typical_words,
 )
 from plainodds.phrases.saying import Audience, Words, for_audience, words
+from plainodds.phrases.unbounded import (
+    has_finite_estimate,
+    unbounded_cautions,
+    unbounded_told,
+)
 from plainodds.phrases.units import tidy
 
 __all__: list[str] = []
@@ -80,7 +85,12 @@ def _typical_chance(answer: OddsAnswer) -> float:
 
 
 def _cautions(answer: OddsAnswer) -> tuple[str, ...]:
-    return (*_changes(answer), *_extremes(answer), *likelihood_cautions(answer))
+    return (
+        *unbounded_cautions(answer),
+        *_changes(answer),
+        *_extremes(answer),
+        *likelihood_cautions(answer),
+    )
 
 
 def _typical(answer: OddsAnswer, over: int) -> str:
@@ -98,6 +108,8 @@ def _plain_row(
 ) -> str:
     subject = answer.subject
     opening = _opening(answer, row)
+    if not has_finite_estimate(row):
+        return f"{opening}, {unbounded_told(answer, row)}"
     odds = _odds_words(row, answer.question.level)
     if move is None:
         return f"{opening}, the odds of {tidy(subject.outcome.event)} are {odds}"
@@ -219,7 +231,7 @@ def _extremes(answer: OddsAnswer) -> tuple[str, ...]:
     found = {
         predictor_name(answer.subject.predictor(row.predictor)): None
         for row in answer.rows
-        if is_beyond_saying(row.odds_ratio)
+        if has_finite_estimate(row) and is_beyond_saying(row.odds_ratio)
     }
     return (beyond_saying(listed(list(found))),) if found else ()
 

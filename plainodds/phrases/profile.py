@@ -36,6 +36,7 @@ from plainodds.phrases.parts import (
     typical_case,
 )
 from plainodds.phrases.saying import Audience, Words, for_audience, words
+from plainodds.phrases.unbounded import profile_unbounded_cautions, ratio_or_none
 from plainodds.phrases.units import tidy
 from plainodds.values import Pairs
 
@@ -63,7 +64,8 @@ def _plain(answer: ProfileAnswer) -> Words:
 
 
 def _words(answer: ProfileAnswer, told: list[str]) -> Words:
-    cautions = [*familiarity_cautions(answer), *_reading(answer), association(answer.subject)]
+    cautions = [*profile_unbounded_cautions(answer), *familiarity_cautions(answer)]
+    cautions += [*_reading(answer), association(answer.subject)]
     if answer.comparison is not None and is_beyond_saying(answer.comparison.odds_ratio):
         cautions.append(beyond_saying("this comparison"))
     return Words(
@@ -118,7 +120,7 @@ def _comparison(answer: ProfileAnswer, comparison: Comparison, over: int) -> lis
         f"The chance that this does not happen is {rather(1 - here, 1 - there, over)}",
         f"Put as ratios, the chance is multiplied by "
         f"{ratio_with_interval(comparison.risk_ratio, level)} and the odds by "
-        f"{ratio_with_interval(comparison.odds_ratio, level)}",
+        f"{ratio_or_none(comparison.odds_ratio, level)}",
     ]
 
 
@@ -178,7 +180,7 @@ def _technical(answer: ProfileAnswer) -> Words:
         compared = answer.comparison
         told.append(_on_scales(answer, answer.start, answer.question.against or ()))
         told.append(
-            f"Odds ratio {ratio_with_interval(compared.odds_ratio, level)}, risk ratio "
+            f"Odds ratio {ratio_or_none(compared.odds_ratio, level)}, risk ratio "
             f"{ratio_with_interval(compared.risk_ratio, level)}; the risk is "
             f"{difference_with_interval(compared.risk_difference, level)}"
         )

@@ -20,6 +20,7 @@ from plainodds.phrases.labels import (
     value_label,
 )
 from plainodds.phrases.numbers import NOT_KNOWN, confidence, p_value, ratio, ratio_interval
+from plainodds.phrases.unbounded import has_finite_estimate, odds_ratio_figures
 from plainodds.values import Pairs
 from plainodds.views import markup
 from plainodds.views.controls import BoxControl, ChoiceControl, Control, slug
@@ -256,7 +257,10 @@ def odds_table(answer: OddsAnswer) -> Markup:
     rows = []
     for heading, run in _runs(answer):
         for place, row in enumerate(run):
-            cells = [_label(answer, heading, row), ratio(row.odds_ratio.estimate)]
+            figure = ratio(row.odds_ratio.estimate)
+            if not has_finite_estimate(row):
+                figure = odds_ratio_figures(row)[0]
+            cells = [_label(answer, heading, row), figure]
             if answer.question.models:
                 cells.insert(1, row.model)
             if has_interval:
@@ -296,6 +300,8 @@ def _label(answer: OddsAnswer, heading: str, row: OddsRow) -> str:
 def _interval_and_p(row: OddsRow) -> list[str]:
     lower, upper = row.odds_ratio.lower, row.odds_ratio.upper
     interval = NOT_KNOWN
-    if lower is not None and upper is not None:
+    if not has_finite_estimate(row):
+        interval = odds_ratio_figures(row)[1] or NOT_KNOWN
+    elif lower is not None and upper is not None:
         interval = ratio_interval(lower, upper)
     return [interval, NOT_KNOWN if row.p_value is None else p_value(row.p_value)]

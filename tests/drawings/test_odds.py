@@ -5,12 +5,15 @@ import numpy as np
 import pytest
 from matplotlib.figure import Figure
 
+from plainodds.answers.bounded import UNDETERMINED, as_ratio
+from plainodds.answers.estimate import Estimate
 from plainodds.drawings.odds import OddsDrawing
 from plainodds.drawings.odds_axis import axis_range
 from plainodds.drawings.odds_rows import estimate_texts, groups_of
 from plainodds.drawings.theme import theme_of
 from tests.drawings import made
 from tests.drawings.conftest import words_on
+from tests.drawings.seen import assert_readable
 
 THEME = theme_of("page")
 
@@ -194,3 +197,79 @@ def test_other_predictors_are_another_structure():
 
 def test_the_event_is_named():
     assert "Odds of burst this winter" in words_on(drawn(made.odds_answer()).axes.figure)
+
+
+def without_finite_estimates(*logs):
+    """The usual rows, some of them with another log odds ratio: (estimate, lower, upper)."""
+    answer = made.odds_answer()
+    rows = list(answer.rows)
+    for place, (estimate, lower, upper) in enumerate(logs):
+        log = Estimate(estimate, None, lower, upper)
+        rows[place] = replace(rows[place], log_odds_ratio=log, odds_ratio=as_ratio(log))
+    return replace(answer, rows=tuple(rows))
+
+
+def test_an_odds_ratio_without_a_finite_estimate_runs_open_ended_to_the_edge():
+    answer = without_finite_estimates((math.inf, 0.3, math.inf), (-math.inf, -math.inf, -0.2))
+    drawing = drawn(answer)
+    x, _ = marks_of(drawing)
+    assert len(x) == len(answer.rows) - 2, "there is no point to mark"
+    assert np.isfinite(x).all()
+    lower, upper = drawing.axes.get_xlim()
+    up, down = drawing.marks[0].intervals.get_segments()[:2]
+    assert sorted(up[:, 0]) == pytest.approx([math.exp(0.3), upper])
+    assert sorted(down[:, 0]) == pytest.approx([lower, math.exp(-0.2)])
+    left, right = (arrow.get_data() for arrow in drawing.marks[0].arrows)
+    assert (list(left[0]), list(right[0])) == ([lower], [upper])
+    assert (left[1][0], right[1][0]) == (down[0, 1], up[0, 1])
+    words = words_on(drawing.axes.get_figure())
+    assert "no finite value (1.35 or more)" in words
+    assert "no value above 0 (0.82 or less)" in words
+    assert any("told without exception" in text.replace("\n", " ") for text in words)
+    assert not any("1,000" in text for text in words)
+
+
+def test_without_an_end_only_the_arrow_is_left():
+    drawing = drawn(without_finite_estimates((math.inf, None, None)))
+    upper = drawing.axes.get_xlim()[1]
+    assert list(drawing.marks[0].arrows[1].get_xdata()) == [upper]
+    assert np.ptp(drawing.marks[0].intervals.get_segments()[0][:, 0]) == 0
+    words = words_on(drawing.axes.get_figure())
+    assert "no finite value" in words
+    assert not any("No intervals can be given" in text for text in words)
+
+
+def test_what_the_data_leave_open_is_not_drawn_and_said_to_be_not_known():
+    answer = without_finite_estimates((math.nan, None, None))
+    drawing = drawn(answer)
+    assert len(drawing.marks[0].intervals.get_segments()) == len(answer.rows) - 1
+    assert len(marks_of(drawing)[0]) == len(answer.rows) - 1
+    assert "not known" in words_on(drawing.axes.get_figure())
+
+
+@pytest.mark.parametrize(
+    "log", [(math.inf, 0.3, math.inf), (-math.inf, -math.inf, -0.2), (math.nan, None, None)]
+)
+def test_it_does_not_squash_the_rest(log):
+    usual = axis_range(made.odds_answer().rows)
+    open_ended = axis_range(without_finite_estimates(log).rows)
+    assert math.log(open_ended[1] / open_ended[0]) < 1.6 * math.log(usual[1] / usual[0])
+
+
+def test_the_finite_end_is_in_view_where_it_is_not_far_off():
+    low, high = axis_range(without_finite_estimates((math.inf, 2.0, math.inf)).rows)
+    assert high > math.exp(2.0)
+    assert low < 1
+
+
+def test_nothing_but_open_ends_still_has_an_axis():
+    (row, *_) = without_finite_estimates((math.inf, None, None)).rows
+    low, high = axis_range([row])
+    assert 0 < low < 1 < high < math.inf
+    assert math.isfinite(axis_range([replace(row, log_odds_ratio=UNDETERMINED)])[1])
+
+
+@pytest.mark.parametrize("width", [300, 500])
+def test_open_ends_fit_into_the_slot(width):
+    answer = without_finite_estimates((math.inf, 0.3, math.inf), (-math.inf, -math.inf, -0.2))
+    assert_readable(drawn(answer, width).axes.get_figure())

@@ -7,6 +7,7 @@ import pytest
 import statsmodels.api as sm
 
 from plainodds import FittedLogit
+from plainodds.errors import FitRefused
 from tests.model import made
 
 FRAME = made.cases()
@@ -158,3 +159,24 @@ def test_a_penalised_fit_gives_estimates_and_says_why_there_are_no_intervals(kin
     place = list(result.model.exog_names).index("age")
     assert row.odds_ratio.estimate == pytest.approx(np.exp(np.asarray(result.params)[place]))
     assert (row.odds_ratio.se, row.odds_ratio.lower, row.odds_ratio.upper) == (None,) * 3
+
+
+@pytest.mark.parametrize(
+    ("column", "method"), [("total", "newton"), ("nothing", "lbfgs")], ids=["sum", "zeros"]
+)
+def test_a_fit_without_usable_standard_errors_is_taken_in_without_intervals(column, method):
+    frame = FRAME.assign(total=FRAME["age"] + FRAME["depth"], nothing=0.0)
+    model = made.logit(f"left ~ age + depth + {column}", frame)
+    fit = FittedLogit(model.fit(disp=0, method=method))
+    assert fit.model.covariance is None
+    assert column in fit.model.record.without_standard_error
+    assert f"{column} is not a number" in fit.subject.no_interval
+    assert "leave one of them out" in fit.subject.no_interval
+    assert np.isfinite(fit.model.coefficients).all()
+
+
+def test_coefficients_that_are_no_numbers_are_refused():
+    result = made.logit("left ~ age", FRAME).fit(disp=0)
+    result._results.params = np.array([np.nan, 1.0])
+    with pytest.raises(FitRefused, match="coefficient of Intercept is not a number"):
+        FittedLogit(result)

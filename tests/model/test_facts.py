@@ -75,6 +75,31 @@ def test_levels_are_counted_and_the_most_frequent_is_typical(name, engine):
     assert math.isnan(facts.minimum)
 
 
+def test_every_levels_cases_and_events_are_counted():
+    facts = FittedLogit(made.logit("left ~ soil", FRAME).fit(disp=0)).subject.predictor("soil")
+    assert facts.levels == ("low", "middle", "high")
+    counted = FRAME.groupby("soil", observed=True).left.agg(["size", "sum"])
+    assert list(facts.level_cases) == list(counted["size"])
+    assert list(facts.level_events) == list(counted["sum"])
+
+
+def test_grouped_counts_are_counted_as_cases():
+    frame = pd.DataFrame({"dead": [3, 9, 7], "alive": [7, 1, 3], "dose": ["low", "high", "low"]})
+    facts = FittedLogit(made.glm("dead + alive ~ dose", frame).fit()).subject.predictor("dose")
+    assert facts.levels == ("high", "low")
+    assert facts.level_counts == (1, 2)
+    assert facts.level_cases == (10, 20)
+    assert facts.level_events == pytest.approx((9, 10))
+
+
+def test_without_an_outcome_a_levels_events_are_not_known():
+    result = made.glm("left ~ soil", FRAME).fit()
+    result.remove_data()
+    facts = FittedLogit(result, data=FRAME).subject.predictor("soil")
+    assert facts.level_events == ()
+    assert sum(facts.level_cases) == len(FRAME)
+
+
 def test_a_number_has_its_range_quartiles_and_median():
     facts = facts_of("age")
     age = FRAME["age"]

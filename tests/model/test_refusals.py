@@ -118,11 +118,6 @@ def test_outcomes_that_are_not_two_valued_are_refused(what):
         FittedLogit(result)
 
 
-def collinear_logit(column, method):
-    frame = FRAME.assign(total=FRAME["age"] + FRAME["depth"], nothing=0.0)
-    return made.logit(f"left ~ age + depth + {column}", frame).fit(disp=0, method=method)
-
-
 def swapped(frame):
     return frame.iloc[::-1].reset_index(drop=True)
 
@@ -174,14 +169,6 @@ def test_data_that_are_not_the_fits_are_refused(what):
 
 
 FITS = {
-    "collinear columns": (
-        lambda: collinear_logit("total", "newton"),
-        "covariance of .*total is not a number.*exact combination.*leave one",
-    ),
-    "no covariance": (
-        lambda: collinear_logit("nothing", "lbfgs"),
-        "covariance of .*nothing is not a number.*leave one",
-    ),
     "dates": (lambda: glm_with("left ~ I(when.dt.year) + age"), "dates.*years since"),
     "numbers of few digits": (
         lambda: made.glm("left ~ np.log(year)", FRAME.astype({"year": "float16"})).fit(),

@@ -265,3 +265,48 @@ def test_the_picture_is_described_on_its_three_scales():
     assert "in 1 step from the profile compared with" in alternative(
         profile_answer(against=AGAINST[1])
     )
+
+
+@pytest.mark.parametrize(
+    ("limit", "share"), [(math.inf, "certainty"), (-math.inf, "no chance at all")]
+)
+def test_a_chance_without_an_estimate_short_of_certainty_is_cautioned_against(limit, share):
+    answer = profile_answer(eta=22.0 if limit > 0 else -22.0)
+    answer = replace(answer, point=replace(answer.point, limit=limit))
+    for audience in ("plain", "technical"):
+        first = words(answer, audience).cautions[0]
+        assert f"so that {share} would explain them best" in first
+        assert faults(first) == []
+
+
+def test_a_chance_that_the_data_leave_open_is_cautioned_against():
+    answer = profile_answer(against=AGAINST[1])
+    answer = replace(answer, start=replace(answer.start, limit=math.nan))
+    first = words(answer).cautions[0]
+    assert "leave the chance" in first
+    assert "the profile compared with open" in first
+    assert faults(first) == []
+
+
+def test_of_finite_estimates_nothing_of_the_kind_is_said():
+    for caution in words(profile_answer(against=AGAINST[1])).cautions:
+        assert "happened to stop" not in caution
+
+
+@pytest.mark.parametrize(
+    ("odds_ratio", "told"),
+    [
+        (Estimate(math.inf, None, 2.28, math.inf), "no finite value (95% interval from 2.28, no"),
+        (Estimate(0.0, None, 0.0, 0.42), "no value above 0 (95% interval up to 0.42, from 0)"),
+        (Estimate(math.inf, None, None, None), "no finite value"),
+        (Estimate(0.0, None, None, None), "no value above 0"),
+    ],
+)
+def test_a_comparison_without_a_finite_odds_ratio_says_so(odds_ratio, told):
+    answer = profile_answer(against=AGAINST[1])
+    compared = replace(answer.comparison, odds_ratio=odds_ratio)
+    for audience in ("plain", "technical"):
+        said = words(replace(answer, comparison=compared), audience)
+        assert any(told in sentence for sentence in said.sentences)
+        for sentence in (*said.sentences, *said.cautions):
+            assert faults(sentence) == []

@@ -260,10 +260,48 @@ def test_a_case_control_sample_tells_no_chances_unless_the_populations_share_is_
 def test_an_open_end_of_a_likelihood_interval_is_said_to_be_open():
     separated = PIPES.assign(bad=(PIPES["burst"] == 1) & (PIPES["age_years"] > 60))
     result = smf.glm("burst ~ bad + past_repairs", separated, family=sm.families.Binomial()).fit()
-    said = words(po.FittedLogit(result).odds("bad", interval="likelihood"))
-    assert "no upper end)" in said.sentences[-1]
+    answer = po.FittedLogit(result).odds("bad", interval="likelihood")
+    said = words(answer)
+    assert "no upper end)" in words(answer, "technical").sentences[0]
     assert "There is no upper end for bad: the data do not rule out any larger value." in (
         said.cautions
     )
+    for sentence in (*said.sentences, *said.cautions):
+        assert faults(sentence) == []
+
+
+@pytest.mark.parametrize("interval", ["wald", "likelihood"])
+def test_an_odds_ratio_without_a_finite_estimate_says_whose_outcome_never_varies(interval):
+    separated = PIPES.assign(bad=(PIPES["burst"] == 1) & (PIPES["age_years"] > 60))
+    result = smf.glm("burst ~ bad + past_repairs", separated, family=sm.families.Binomial()).fit()
+    answer = po.FittedLogit(result).odds(interval=interval)
+    said = words(answer)
+    told = f"has no finite estimate: all {separated['bad'].sum()} cases with bad yes had the event"
+    (about_bad,) = [sentence for sentence in said.sentences if told in sentence]
+    assert "95% interval goes from " in about_bad
+    assert about_bad.endswith(" upwards without an end.")
+    assert any("no finite odds ratio for bad: " in caution for caution in said.cautions)
+    technical = words(answer, "technical")
+    assert any("no finite value (95% interval from " in each for each in technical.sentences)
+    for sentence in (*said.sentences, *said.cautions, *technical.sentences, *technical.cautions):
+        assert faults(sentence) == []
+    assert faults(alternative(answer)) == []
+
+
+def test_an_odds_ratio_of_nought_is_said_to_have_no_end_below():
+    spared = PIPES.assign(spared=(PIPES["burst"] == 0) & (PIPES["age_years"] > 60))
+    result = smf.glm("burst ~ spared", spared, family=sm.families.Binomial()).fit()
+    said = words(po.FittedLogit(result).odds())
+    told = f"none of the {spared['spared'].sum()} cases with spared yes had the event"
+    assert told in said.sentences[-1]
+    assert said.sentences[-1].endswith(" downwards to 0.")
+
+
+def test_a_change_that_the_data_leave_open_is_said_to_be_not_known():
+    doubled = PIPES.assign(months=12 * PIPES["age_years"])
+    result = smf.glm("burst ~ age_years + months", doubled, family=sm.families.Binomial()).fit()
+    said = words(po.FittedLogit(result).odds())
+    assert all("not known" in sentence for sentence in said.sentences[1:])
+    assert any("left open by the data" in caution for caution in said.cautions)
     for sentence in (*said.sentences, *said.cautions):
         assert faults(sentence) == []

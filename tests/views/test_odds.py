@@ -1,6 +1,8 @@
 """OddsView: which predictors, which changes, given what, in which order."""
 
 import pytest
+import statsmodels.api as sm
+import statsmodels.formula.api as smf
 
 import plainodds as po
 from plainodds.answers.odds import OddsQuestion
@@ -227,10 +229,19 @@ def test_each_row_has_ratio_interval_and_p_value(fit):
 
 
 def test_without_intervals_there_are_no_columns_for_them(mains):
-    import statsmodels.formula.api as smf
-
     formula = "burst ~ I(age_years / 100) + past_repairs"
     result = smf.logit(formula, mains).fit_regularized(disp=0, alpha=0.1)
     table = odds_table(po.FittedLogit(result).odds())
     assert "interval" not in text_of(table)
     assert all(len(row) == 2 for row in cells(table))
+
+
+def test_an_odds_ratio_without_a_finite_estimate_has_no_figure_in_the_table(mains):
+    separated = mains.assign(bad=(mains["burst"] == 1) & (mains["age_years"] > 60))
+    result = smf.glm("burst ~ bad", separated, family=sm.families.Binomial()).fit()
+    ((_, figure, interval, _),) = cells(odds_table(po.FittedLogit(result).odds()))
+    assert figure == "no finite value"
+    assert interval.endswith(" or more")
+    robust = smf.glm("burst ~ bad", separated, family=sm.families.Binomial()).fit(cov_type="HC1")
+    ((_, figure, interval, _),) = cells(odds_table(po.FittedLogit(robust).odds()))
+    assert (figure, interval) == ("no finite value", "not known")

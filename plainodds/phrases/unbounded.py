@@ -1,0 +1,180 @@
+"""Odds ratios without a finite estimate, in words: why there is none, and what is known."""
+
+from __future__ import annotations
+
+import math
+
+from plainodds.answers.estimate import Estimate
+from plainodds.answers.odds import OddsAnswer, OddsRow
+from plainodds.answers.profile import ProfileAnswer
+from plainodds.model.predictors import Subject
+from plainodds.phrases.labels import listed, predictor_name, value_label
+from plainodds.phrases.numbers import confidence, count, ratio
+from plainodds.phrases.parts import ratio_with_interval
+from plainodds.phrases.units import tidy
+from plainodds.values import Scalar
+
+__all__ = [
+    "UNBOUNDED_NOTE",
+    "has_finite_estimate",
+    "odds_ratio_figures",
+    "profile_unbounded_cautions",
+    "ratio_or_none",
+    "unbounded_cautions",
+    "unbounded_told",
+    "why_unbounded",
+]
+
+UNBOUNDED_NOTE = (
+    "No finite value: in these data the outcome of some cases is told without exception, so the "
+    "best odds ratio lies farther off than any number."
+)
+
+
+def has_finite_estimate(row: OddsRow) -> bool:
+    """Whether an odds ratio is a number above 0."""
+    return math.isfinite(row.log_odds_ratio.estimate)
+
+
+def odds_ratio_figures(row: OddsRow) -> tuple[str, str]:
+    """Figures of an odds ratio without a finite estimate, and of its interval.
+
+    Returns
+    -------
+    tuple of str
+        ("no finite value", "2.28 or more"), ("no value above 0", "0.42 or less"); the second
+        is empty where there is no interval.
+    """
+    side, odds = row.log_odds_ratio.estimate, row.odds_ratio
+    if side == math.inf:
+        return "no finite value", "" if odds.lower is None else f"{ratio(odds.lower)} or more"
+    if side == -math.inf:
+        return "no value above 0", "" if odds.upper is None else f"{ratio(odds.upper)} or less"
+    return ratio(odds.estimate), ""
+
+
+def ratio_or_none(odds: Estimate, level: float) -> str:
+    """An odds ratio with its interval, or that it has no finite value.
+
+    Returns
+    -------
+    str
+        "2.02 (95% interval 1.08 to 3.78)", "no finite value (95% interval from 2.28, no upper
+        end)".
+    """
+    if odds.se is not None or odds.estimate not in (0.0, math.inf):
+        return ratio_with_interval(odds, level)
+    between = f"{confidence(level)} interval"
+    if odds.estimate == 0.0:
+        told = "" if odds.upper is None else f" ({between} up to {ratio(odds.upper)}, from 0)"
+        return f"no value above 0{told}"
+    told = "" if odds.lower is None else f" ({between} from {ratio(odds.lower)}, no upper end)"
+    return f"no finite value{told}"
+
+
+def profile_unbounded_cautions(answer: ProfileAnswer) -> tuple[str, ...]:
+    """That a profile's chance has no estimate short of certainty; empty where it has one."""
+    points = [("this profile", answer.point)]
+    if answer.comparison is not None:
+        points.append(("the profile compared with", answer.start))
+    outcome = answer.subject.outcome
+    told = []
+    for which, point in points:
+        if math.isnan(point.limit):
+            told.append(
+                f"The data leave the chance of {tidy(outcome.event)} for {which} open: any chance "
+                "would explain them as well, and the one given is where the fit happened to stop."
+            )
+        elif point.limit != 0:
+            had, best = "had the event", "certainty"
+            if point.limit < 0:
+                had, best = "did not have the event", "no chance at all"
+            told.append(
+                f"In these data all {tidy(outcome.cases)} that the model tells apart as being like "
+                f"{which} {had}, so that {best} would explain them best; the chance given is where "
+                "the fit happened to stop, and its interval means little."
+            )
+    return tuple(told)
+
+
+def unbounded_told(answer: OddsAnswer, row: OddsRow) -> str:
+    """What is said of such an odds ratio, to follow what changes."""
+    event = tidy(answer.subject.outcome.event)
+    side, odds = row.log_odds_ratio.estimate, row.odds_ratio
+    if math.isnan(side):
+        return (
+            f"the odds ratio for {event} is not known: the data leave it open, since any value "
+            "would explain them as well"
+        )
+    told = f"the odds ratio for {event} has no finite estimate: {why_unbounded(answer, row)}"
+    interval = f"{confidence(answer.question.level)} interval"
+    if side > 0 and odds.lower is not None:
+        told += f"; its {interval} goes from {ratio(odds.lower)} upwards without an end"
+    if side < 0 and odds.upper is not None:
+        told += f"; its {interval} goes from {ratio(odds.upper)} downwards to 0"
+    return told
+
+
+def why_unbounded(answer: OddsAnswer, row: OddsRow) -> str:
+    """Which cases all have the same outcome; else that the predictors together tell it."""
+    subject = answer.subject
+    facts = subject.predictor(row.predictor)
+    told = [
+        words
+        for level in (row.end, row.start)
+        if not facts.is_number and (words := _one_outcome(subject, row.predictor, level))
+    ]
+    if told:
+        return listed(told)
+    return (
+        f"in these data {predictor_name(facts)}, alone or with other predictors, tells the outcome "
+        f"of some {tidy(subject.outcome.cases)} without exception"
+    )
+
+
+def _one_outcome(subject: Subject, name: str, level: Scalar) -> str:
+    """Said of a level all of whose cases had the same outcome; else empty."""
+    facts = subject.predictor(name)
+    if level not in facts.levels or not facts.level_events:
+        return ""
+    place = facts.levels.index(level)
+    cases, share = facts.level_cases[place], facts.level_events[place]
+    number, share = round(cases), share / cases if cases else 0.5
+    if number < 1 or 1e-9 < share < 1 - 1e-9:
+        return ""
+    whom = f"with {predictor_name(facts)} {value_label(facts, level)}"
+    if number == 1:
+        had = "had" if share > 0.5 else "did not have"
+        return f"the only {tidy(subject.outcome.case)} {whom} {had} the event"
+    many = f"{count(number)} {tidy(subject.outcome.cases)} {whom} had the event"
+    return f"all {many}" if share > 0.5 else f"none of the {many}"
+
+
+def unbounded_cautions(answer: OddsAnswer) -> tuple[str, ...]:
+    """What an odds ratio without a finite estimate means; empty where all have one."""
+    without = [row for row in answer.rows if math.isinf(row.log_odds_ratio.estimate)]
+    left_open = [row for row in answer.rows if math.isnan(row.log_odds_ratio.estimate)]
+    told = []
+    if without:
+        told.append(
+            f"There is no finite odds ratio for {_named(answer, without)}: the more extreme the "
+            "value, the better it explains these data. More data, fewer levels or a penalised fit "
+            "may give one."
+        )
+        with_interval = any(row.odds_ratio.lower is not None for row in without)
+        if with_interval and answer.question.interval == "wald":
+            told.append(
+                "What is known of it comes from the likelihood: the values under which the data "
+                "are still about as well explained."
+            )
+    if left_open:
+        told.append(
+            f"The odds ratio for {_named(answer, left_open)} is left open by the data: some "
+            "predictors follow from others, or too many cases' outcome is told without exception."
+        )
+    return tuple(told)
+
+
+def _named(answer: OddsAnswer, rows: list[OddsRow]) -> str:
+    names = (predictor_name(answer.subject.predictor(row.predictor)) for row in rows)
+    return listed(list(dict.fromkeys(names)))
