@@ -34,6 +34,9 @@ __all__ = ["effect_along"]
 
 Codes = NDArray[Any]
 
+# an average over many rows is dear, and smoother than what a single profile gives
+_AVERAGED_POINTS = 61
+
 
 def effect_along(
     model: FittedModel, pair: Settled, scale: str, averager: Averager | None
@@ -54,7 +57,7 @@ def effect_along(
     """
     measured = _measure(model, pair, scale, averager)
     if pair.b.is_number:
-        at = grid_along(pair.b, POINTS)
+        at = grid_along(pair.b, POINTS if averager is None else _AVERAGED_POINTS)
         found = measured(at)
         exact = _exact_bounds(model, pair, at) if scale == "odds" and averager is None else None
         bounds = bounds_along(measured, at, found) if exact is None else exact

@@ -102,21 +102,32 @@ def bounds_along(measured: Measured, at: Floats, found: Intervals) -> Floats:
     found : Intervals
         What `measured` gives there.
     """
-    roots = [np.empty(0)]
-    for end in ("lower", "upper"):
-        ends = getattr(found, end)
-        if ends is None or len(at) < 2:
-            continue
+    if found.lower is None or found.upper is None or len(at) < 2:
+        return np.empty(0)
 
-        def along(x: Floats, end: str = end) -> Floats:
-            return np.asarray(getattr(measured(x), end))
+    def lower(x: Floats) -> Floats:
+        return np.asarray(measured(x).lower)
 
-        nodes, values = _with_dips(along, at, ends)
-        cells = np.nonzero((values[:-1] > 0) != (values[1:] > 0))[0]
-        roots.append(
-            roots_between(along, nodes[cells], nodes[cells + 1], values[cells], values[cells + 1])
-        )
-    return np.unique(np.concatenate(roots))
+    def upper(x: Floats) -> Floats:
+        return np.asarray(measured(x).upper)
+
+    low_brackets = _brackets(*_with_dips(lower, at, found.lower))
+    high_brackets = _brackets(*_with_dips(upper, at, found.upper))
+    of_lower = np.arange(low_brackets.shape[1] + high_brackets.shape[1]) < low_brackets.shape[1]
+
+    def ends(x: Floats) -> Floats:
+        both = measured(x)
+        return np.where(of_lower, np.asarray(both.lower), np.asarray(both.upper))
+
+    # one search for all, as a look at many rows costs the same for one value as for a few
+    return np.unique(roots_between(ends, *np.hstack([low_brackets, high_brackets])))
+
+
+def _brackets(nodes: Floats, values: Floats) -> Floats:
+    """Between which nodes the sign changes: low, high, and the values there, (4, m)."""
+    known = np.isfinite(values[:-1]) & np.isfinite(values[1:])
+    cells = np.nonzero(((values[:-1] > 0) != (values[1:] > 0)) & known)[0]
+    return np.array([nodes[cells], nodes[cells + 1], values[cells], values[cells + 1]])
 
 
 def _with_dips(
@@ -126,7 +137,11 @@ def _with_dips(
     last = len(at) - 1
     dips = _may_dip(ends)
     low, high = at[np.maximum(dips - 1, 0)], at[np.minimum(dips + 1, last)]
-    where, value = turning_points(along, low, high, -np.sign(ends[dips]))
+    if not len(dips):
+        return at, ends
+    where, _ = turning_points(along, low, high, -np.sign(ends[dips]))
+    # the parabola's own value may be off where the function has a kink
+    value = along(where)
     through = np.sign(value) == -np.sign(ends[dips])
     nodes = np.append(at, where[through])
     order = np.argsort(nodes, kind="stable")
@@ -134,7 +149,11 @@ def _with_dips(
 
 
 def _may_dip(ends: Floats) -> NDArray[np.intp]:
-    """Points nearest to 0 among their neighbours, where a parabola comes much nearer still."""
+    """Points nearest to 0 among their neighbours, from where it may well go on to 0.
+
+    A parabola comes much nearer still, or, as a kink may lie between two points, the
+    function changes by as much from one point to the next.
+    """
     size = np.abs(ends)
     before, after = np.append(np.inf, size[:-1]), np.append(size[1:], np.inf)
     candidates = np.nonzero((size > 0) & (size <= before) & (size <= after))[0]
@@ -148,7 +167,8 @@ def _may_dip(ends: Floats) -> NDArray[np.intp]:
         beside = (left - right) / (2 * bend)
         lowest = centre - bend * beside**2 / 2
     much_nearer = (bend > 0) & (np.abs(beside) <= 1) & (lowest < size[candidates] / 2)
-    return np.asarray(candidates[much_nearer])
+    change = np.maximum(np.abs(left - centre), np.abs(right - centre))
+    return np.asarray(candidates[much_nearer | (size[candidates] <= change)])
 
 
 def turns_along(measured: Measured, at: Floats, estimate: Floats) -> tuple[float, ...]:

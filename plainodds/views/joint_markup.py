@@ -156,6 +156,9 @@ def _measures(answer: PairAnswer, joint: JointTable) -> Markup:
     if has_interval:
         columns.append(Column(f"{confidence(answer.question.level)} interval", is_number=True))
     rows = [_measure("Ratio of odds ratios (1: none)", joint.multiplicative, has_interval)]
+    if not answer.interaction.joined:
+        by_assumption = ("Ratio of odds ratios (1: none)", "1", "by the model")
+        rows = [Row(by_assumption[: 2 + has_interval])]
     rows += _additive("odds ratios", joint.additive_by_odds, has_interval)
     if joint.additive_by_chances is not None:
         rows += _additive("chances", joint.additive_by_chances, has_interval)

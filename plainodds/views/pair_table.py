@@ -96,8 +96,10 @@ def interaction_table(answer: PairAnswer) -> Markup:
             rows.append(Row(tuple(cells), opens, "plainodds-within"))
             opens = ""
     cells = [interaction_label(answer, "odds"), ratio(found.ratio.estimate)]
+    if not found.joined:
+        cells[1] = "1"
     if has_interval:
-        cells += [_ratio_interval(found.ratio) if found.joined else "no shared term", ""]
+        cells += [_ratio_interval(found.ratio) if found.joined else "by the model", ""]
     rows.append(Row(tuple(cells), "In odds", "plainodds-within"))
     return markup.table(_interaction_title(answer), columns, rows, _tested(answer))
 

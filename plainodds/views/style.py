@@ -242,6 +242,7 @@ body.vscode-dark .plainodds-picture img { filter: invert(1) hue-rotate(180deg); 
   .plainodds-view :is(th, td) { padding-right: 9px; font-size: 0.94em; }
   .plainodds-view .plainodds-within > th { padding-left: 7px; }
   .plainodds-view .plainodds-joint :is(th, td) { padding-right: 6px; font-size: 0.88em; }
+  .plainodds-view .plainodds-joint tr > :last-child { padding-right: 0; }
   .plainodds-view .plainodds-joint .plainodds-within > th { padding-left: 0; }
   .plainodds-view td > span:not(:only-child),
   .plainodds-view td:not(.plainodds-number) > span { white-space: normal; }

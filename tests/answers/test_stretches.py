@@ -219,6 +219,16 @@ def test_a_dip_that_stays_above_is_no_bound():
     assert len(bounds_along(measured, grid, measured(grid))) == 0
 
 
+@pytest.mark.parametrize("where", [0.5, 0.5035, 0.5071])
+def test_a_kink_that_stays_above_is_no_bound_and_one_that_goes_below_is_two(where):
+    grid = np.linspace(0, 1, 101)
+    above = measured_by(lambda x: np.abs(x - where) + 1e-5)
+    assert len(bounds_along(above, grid, above(grid))) == 0
+    through = measured_by(lambda x: np.abs(x - where) - 1e-3)
+    found = bounds_along(through, grid, through(grid))
+    np.testing.assert_allclose(found, [where - 1e-3, where + 1e-3], atol=1e-13)
+
+
 def test_an_interval_that_jumps_from_above_to_below_within_a_cell_has_two_bounds():
     grid = np.linspace(0, 1, 11)
     measured = measured_by(lambda x: 1 - 2 * x, reach=0.02)

@@ -412,8 +412,16 @@ def test_the_interaction_is_told_on_both_scales(fit):
 def test_without_a_shared_term_there_is_no_ratio_to_test(additive):
     answer = additive.pair("age_years", "material")
     found = {first: rest for first, *rest in cells(interaction_table(answer)) if rest}
-    assert found["Ratio of odds ratios"][1] == "no shared term"
+    assert found["Ratio of odds ratios"][:2] == ["1", "by the model"]
     assert found["At typical values"][1].count(" to ") == 1
+
+
+def test_without_a_shared_term_the_joint_table_measures_no_ratio_either(additive):
+    found = cells(pair_table(additive.pair("lined", "material")))
+    (ratio_row,) = [row for row in found if row[0] == "Ratio of odds ratios (1: none)"]
+    assert ratio_row[1:] == ["1", "by the model"]
+    excess = [row for row in found if row[0] == "Relative excess risk (0: none)"]
+    assert all(" to " in row[2] for row in excess)
 
 
 def test_the_joint_table_has_each_combination_with_its_cases_and_chance(of_levels):
