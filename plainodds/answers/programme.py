@@ -15,7 +15,9 @@ Flags = NDArray[np.bool_]
 _FEASIBLE = 1e-9
 _STRICT = 1e-7
 _ROUNDS = 200
-_BLOCK = 8_192
+# of a decomposition: for more numbers LAPACK starts threads, which on a busy machine cost more
+# than they give
+_UNTHREADED = 8_000
 _FIRST_ROWS_PER_COLUMN = 20
 _MORE_ROWS_PER_COLUMN = 5
 
@@ -143,8 +145,9 @@ def spanned(matrix: Floats) -> tuple[Floats, Floats]:
 
 def _triangle(matrix: Floats) -> Floats:
     """R of a QR decomposition, block by block so that a long matrix is not copied."""
-    done = np.empty((0, matrix.shape[1]))
-    for start in range(0, len(matrix), _BLOCK):
-        below = matrix[start : start + _BLOCK]
+    k = max(matrix.shape[1], 1)
+    done, size = np.empty((0, matrix.shape[1])), max(2 * k, _UNTHREADED // k - k)
+    for start in range(0, len(matrix), size):
+        below = matrix[start : start + size]
         done = np.asarray(np.linalg.qr(np.vstack([done, below]), mode="r"))
     return done

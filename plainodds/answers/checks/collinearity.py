@@ -12,6 +12,7 @@ from scipy.sparse.csgraph import connected_components
 
 from plainodds.answers.checks.columns import owners_of
 from plainodds.answers.checks.finding import Concern, Evidence, Finding, Topic
+from plainodds.answers.optimum import optimum_of
 from plainodds.answers.programme import spanned
 from plainodds.answers.sharing_terms import joined_predictors
 from plainodds.model.fitted import FittedModel
@@ -126,7 +127,10 @@ def _names(model: FittedModel, places: tuple[int, ...]) -> tuple[str, ...]:
 
 def _exact_ties(model: FittedModel) -> tuple[int, list[tuple[int, ...]]]:
     """The design's rank, and groups of columns that follow from each other."""
-    matrix = model.sample.matrix
+    matrix, optimum = model.sample.matrix, optimum_of(model)
+    if optimum is not None and optimum.inverse is not None:
+        # an information that can be inverted has no columns to spare
+        return matrix.shape[1], []
     scales = np.abs(matrix).max(axis=0)
     scales[scales == 0] = 1.0
     basis, _ = spanned(matrix / scales)
