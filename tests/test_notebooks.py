@@ -15,11 +15,17 @@ def names(path):
 
 
 VIEWS = {
+    "figures_for_print": set(),
     "own_model": {"OddsView", "CurveView", "ProfileView"},
     "tessel_bay": {"OddsView", "CurveView", "ProfileView", "ChangeView", "EffectsView"},
     "two_together": {"PairView"},
 }
-ANSWERS = {"own_model": "smoking", "tessel_bay": "ageing", "two_together": "together"}
+ANSWERS = {
+    "figures_for_print": "two_panels",
+    "own_model": "smoking",
+    "tessel_bay": "ageing",
+    "two_together": "together",
+}
 
 
 def test_the_notebooks_are_there():
