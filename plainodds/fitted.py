@@ -181,6 +181,7 @@ class FittedLogit:
         order: Literal["model", "size"] = "model",
         interval: Literal["wald", "likelihood"] = "wald",
         level: float = 0.95,
+        layout: Literal["changes", "table"] = "changes",
     ) -> OddsAnswer:
         """By what are the odds multiplied when a predictor changes?
 
@@ -208,11 +209,14 @@ class FittedLogit:
             infinite.
         level : float
             Confidence level.
+        layout : {"changes", "table"}
+            How it is drawn: a row for each change; or as journals print it, with reference
+            levels, events and cases, and tests of interaction as rows of their own.
 
         Raises
         ------
         QuestionRefused
-            For an unknown predictor, level or value.
+            For an unknown predictor, level, value or layout.
 
         Notes
         -----
@@ -230,7 +234,7 @@ class FittedLogit:
         True
         """
         question = _odds_question(
-            predictors, steps, between, references, given, order, interval, level
+            predictors, steps, between, references, given, order, interval, level, layout
         )
         return answer_odds(self.model, question)
 
@@ -621,6 +625,7 @@ def odds_of(
     order: Literal["model", "size"] = "model",
     interval: Literal["wald", "likelihood"] = "wald",
     level: float = 0.95,
+    layout: Literal["changes", "table"] = "changes",
 ) -> OddsAnswer:
     """The same odds ratios in several fitted models, side by side.
 
@@ -628,7 +633,7 @@ def odds_of(
     ----------
     results : mapping of name to result or FittedLogit
         As ``{"crude": r1, "adjusted": r2}``.
-    predictors, steps, between, references, given, order, interval, level
+    predictors, steps, between, references, given, order, interval, level, layout
         As in `FittedLogit.odds`. Changes that are not stated are those of the first
         model that has the predictor.
 
@@ -651,7 +656,9 @@ def odds_of(
         str(name): result if isinstance(result, FittedLogit) else FittedLogit(result)
         for name, result in results.items()
     }
-    question = _odds_question(predictors, steps, between, references, given, order, interval, level)
+    question = _odds_question(
+        predictors, steps, between, references, given, order, interval, level, layout
+    )
     return answer_odds_of({name: fit.model for name, fit in fits.items()}, question)
 
 
@@ -664,9 +671,12 @@ def _odds_question(
     order: Literal["model", "size"],
     interval: Literal["wald", "likelihood"],
     level: float,
+    layout: Literal["changes", "table"],
 ) -> OddsQuestion:
     if order not in ("model", "size"):
         raise QuestionRefused(f"order={order!r}: choose 'model' or 'size'.")
+    if layout not in ("changes", "table"):
+        raise QuestionRefused(f"layout={layout!r}: choose 'changes' or 'table'.")
     listed = {
         name: (held,) if isinstance(held, str | bytes) or not hasattr(held, "__iter__") else held
         for name, held in (given or {}).items()
@@ -680,6 +690,7 @@ def _odds_question(
         order=order,
         interval=interval,
         level=level,
+        layout=layout,
     )
 
 

@@ -42,6 +42,9 @@ class OddsQuestion(Question):
         Confidence level of the intervals.
     models : tuple of str
         Names of the fitted models where several are set side by side; else empty.
+    layout : {"changes", "table"}
+        How it is drawn: a row for each change, or as journals print it, with reference
+        levels, counts, and tests of interaction as rows of their own.
     """
 
     predictors: tuple[str, ...] = ()
@@ -53,6 +56,7 @@ class OddsQuestion(Question):
     interval: Literal["wald", "likelihood"] = "wald"
     level: float = 0.95
     models: tuple[str, ...] = ()
+    layout: Literal["changes", "table"] = "changes"
 
     method: ClassVar[str] = "odds"
 

@@ -3,12 +3,14 @@
 An answer holds no rows, but a count of one or two can be as telling. In a guarded answer
 neighbouring bins are merged until each holds enough, and a count from 1 to the smallest
 cell stands as the smallest cell itself, to be read as "up to": `Subject.smallest_cell`
-says so. Source: common practice in official statistics; the size is the analyst's to set,
-local rules come first.
+says so. A level's events are withheld where they, or its cases without the event, are too
+few. Source: common practice in official statistics; the size is the analyst's to set, local
+rules come first.
 """
 
 from __future__ import annotations
 
+import math
 from dataclasses import replace
 from functools import singledispatch
 
@@ -66,13 +68,35 @@ def _about(answer: Answer, smallest: int) -> Answer:
 
 
 def _facts(facts: PredictorFacts, smallest: int) -> PredictorFacts:
+    events = facts.level_events
+    if events and facts.level_cases:
+        events = tuple(
+            _told_events(each, cases, smallest)
+            for each, cases in zip(events, facts.level_cases, strict=True)
+        )
     return replace(
-        facts, level_counts=tuple(_raised(each, smallest) for each in facts.level_counts)
+        facts,
+        level_counts=tuple(_raised(each, smallest) for each in facts.level_counts),
+        level_cases=tuple(_raised_cases(each, smallest) for each in facts.level_cases),
+        level_events=events,
     )
+
+
+def _told_events(events: float, cases: float, smallest: int) -> float:
+    """A level's events; nan, which is withheld, where they or the others are too few."""
+    return math.nan if _few(events, cases, smallest) else events
+
+
+def _few(events: float, cases: float, smallest: int) -> bool:
+    return any(0 < each < smallest for each in (events, cases - events))
 
 
 def _raised(count: int, smallest: int) -> int:
     return smallest if 0 < count < smallest else count
+
+
+def _raised_cases(cases: float, smallest: int) -> float:
+    return float(smallest) if 0 < cases < smallest else cases
 
 
 @singledispatch
@@ -122,7 +146,7 @@ def _cell(cell: JointCell, smallest: int) -> JointCell:
     """A combination whose events, and whose other cases, are enough or not told."""
     if cell.rows is None or cell.events is None:
         return cell
-    few = any(0 < each < smallest for each in (cell.events, cell.rows - cell.events))
+    few = _few(cell.events, cell.rows, smallest)
     rows = float(_raised(round(cell.rows), smallest)) if cell.rows < smallest else cell.rows
     return replace(cell, rows=rows, events=None if few else cell.events)
 

@@ -13,6 +13,7 @@ from plainodds.answers.bounded import as_ratio, limits_of, unbounded_estimate, u
 from plainodds.answers.changes import OddsQuestion, OddsRow, changes_asked, contrasts_of
 from plainodds.answers.delta import Intervals, checked_level, mapped, p_values, wald
 from plainodds.answers.likelihood import likelihood_of
+from plainodds.answers.odds_interactions import InteractionTest, interaction_tests
 from plainodds.answers.progress import Progress, silent
 from plainodds.answers.questions import Answer
 from plainodds.errors import QuestionRefused
@@ -40,12 +41,16 @@ class OddsAnswer(Answer):
         The chance at the typical profile: tells whether an odds ratio may be taken
         for a risk ratio (it may not above about 10 %); nan where the sample is
         case-control and no prevalence is stated.
+    interactions : tuple of InteractionTest
+        One for each pair of predictors of which one's rows are stated at values of the
+        other; empty where there are none, or no test.
     """
 
     question: OddsQuestion
     subject: Subject
     rows: tuple[OddsRow, ...]
     typical_probability: float
+    interactions: tuple[InteractionTest, ...] = ()
 
 
 def answer_odds(
@@ -96,9 +101,10 @@ def answer_odds(
         else _unbounded(model, row, contrasts[i], float(limits[i]), level)
         for i, (row, p) in enumerate(zip(changes, tests, strict=True))
     )
+    interactions = interaction_tests(model, rows, question.interval)
     if question.order == "size":
         rows = tuple(sorted(rows, key=_size))
-    return OddsAnswer(question, model.subject, rows, _typical_probability(model))
+    return OddsAnswer(question, model.subject, rows, _typical_probability(model), interactions)
 
 
 def _typical_probability(model: FittedModel) -> float:
@@ -163,11 +169,12 @@ def answer_odds_of(models: Mapping[str, FittedModel], question: OddsQuestion) ->
         if name not in known:
             raise QuestionRefused(f"None of the models has a predictor {name!r}.")
     shared = question
-    answers = []
+    answers, interactions = [], []
     for name, model in models.items():
         own = {facts.name for facts in model.subject.predictors}
         answer = answer_odds(model, _limited_to(shared, own))
         answers.append(tuple(replace(row, model=name) for row in answer.rows))
+        interactions += [replace(each, model=name) for each in answer.interactions]
         shared = _with_the_same_changes(shared, answer)
     order = dict.fromkeys((r.predictor, r.end, r.given) for rows in answers for r in rows)
     positions = {key: place for place, key in enumerate(order)}
@@ -180,7 +187,8 @@ def answer_odds_of(models: Mapping[str, FittedModel], question: OddsQuestion) ->
     )
     first = next(iter(models.values()))
     question = replace(question, models=tuple(models))
-    return OddsAnswer(question, _joined(models), tuple(rows), _typical_probability(first))
+    chance = _typical_probability(first)
+    return OddsAnswer(question, _joined(models), tuple(rows), chance, tuple(interactions))
 
 
 def _joined(models: Mapping[str, FittedModel]) -> Subject:

@@ -140,7 +140,7 @@ def _one_outcome(subject: Subject, name: str, level: Scalar) -> str:
     place = facts.levels.index(level)
     cases, share = facts.level_cases[place], facts.level_events[place]
     number, share = round(cases), share / cases if cases else 0.5
-    if number < 1 or 1e-9 < share < 1 - 1e-9:
+    if number < 1 or math.isnan(share) or 1e-9 < share < 1 - 1e-9:
         return ""
     whom = f"with {predictor_name(facts)} {value_label(facts, level)}"
     if number == 1:
