@@ -22,7 +22,7 @@ _SPECIAL = {
     "<": r"\textless{}",
     ">": r"\textgreater{}",
     "|": r"\textbar{}",
-    '"': r"\textquotedbl{}",
+    '"': r"{\char34}",
     "'": r"\textquotesingle{}",
     "`": r"\textasciigrave{}",
     "[": "{[}",
