@@ -105,7 +105,9 @@ def _on_both_scales(answer: PairAnswer) -> tuple[PairAnswer, ...]:
 def _height(answer: PairAnswer, theme: Theme, width: float, best: bool) -> float:
     em = theme.font_size
     more = _MORE_PLOT * em if best else 0.0
-    around = _heading(answer, theme, width) + notes_height(answer, theme, width)
+    # on one scale an interval may be cut off and on the other not: room for saying so is kept
+    notes = pair_notes(answer, True, interaction_leaves(answer))
+    around = _heading(answer, theme, width) + Notes.height(notes, theme, width)
     around += InteractionPanel.height(answer, theme, width) + _BENEATH * em
     if answer.lines is None and answer.surface is None:
         return around + effect_least(answer, theme, width) + more

@@ -78,7 +78,8 @@ class MapPanel:
         )
         self._y_title = letter(axes, theme, corner(axes, 0, 1), size=small, down="bottom")
         self._points = corner(axes, 0, 0)
-        self.hatch = self._lines(theme.grid, 1.2 * theme.hairline, 0.5, self._points)
+        self.hatch = self._lines(theme.rule, 1.2 * theme.hairline, 0.5, self._points)
+        self.hatch.set_alpha(0.35)
         self.areas = PathCollection([], linewidths=0, zorder=1)
         self.outline = PathCollection(
             [], facecolor="none", edgecolor=theme.rule, linewidths=1.4 * theme.hairline, zorder=1.6

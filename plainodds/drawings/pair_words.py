@@ -76,7 +76,9 @@ def pair_notes(answer: PairAnswer, cut: bool, leaves: bool) -> list[str]:
             notes.append(f"Beneath the lines: where the {cases} are.")
     if loose:
         what = "Broken line" if is_line else "Hollow point"
-        notes.append(f"{what}: few {cases} or none there.")
+        # a map has a broken line of its own, which is named
+        of = " of the effect" if answer.surface is not None else ""
+        notes.append(f"{what}{of}: few {cases} or none there.")
     if leaves:
         notes.append("Arrow: it goes on beyond the axis.")
     notes.append(_profile_note(answer))

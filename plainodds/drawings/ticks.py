@@ -116,7 +116,7 @@ def bare(axes: Axes) -> None:
         spine.set_visible(False)
     axes.tick_params(
         which="both", left=False, right=False, top=False, bottom=False, labelleft=False,
-        labelright=False, labeltop=False, labelbottom=False,
+        labelright=False, labeltop=False, labelbottom=False, length=0,
     )  # fmt: skip
     for axis in (axes.xaxis, axes.yaxis):
         axis.set_major_locator(NullLocator())

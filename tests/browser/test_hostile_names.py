@@ -37,6 +37,7 @@ VIEWS = {
     "profile": "po.ProfileView(fit)",
     "effects": "po.EffectsView(fit)",
     "change": "po.ChangeView(fit, fit.change('group', BAD, 'a').question)",
+    "pair": "po.PairView(fit, fit.pair(BAD, 'group', a_values=(40.0, 60.0)).question)",
 }
 
 

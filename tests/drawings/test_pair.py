@@ -19,7 +19,7 @@ from plainodds.phrases.pair_labels import followed_label, pair_title
 from tests.drawings import made, made_effects
 from tests.drawings import made_pairs as pairs
 from tests.drawings.made import AGE, LINED, MATERIAL, PRESSURE, SOIL
-from tests.drawings.seen import words_on
+from tests.drawings.seen import boxes_on, words_on
 
 THEME = theme_of("page")
 
@@ -285,12 +285,13 @@ def test_the_scale_that_is_shown_is_set_off_by_the_weight_of_its_name(scale):
     assert weights == {scale: "bold", other: "normal"}
 
 
-def test_a_switch_of_scale_leaves_the_parts_where_they_are():
+@pytest.mark.parametrize("number", ["change", "slope"])
+def test_a_switch_of_scale_leaves_the_parts_where_they_are(number):
     sizes = {
         (picture.height_px, *(placed(part).bounds for part in parts))
         for scale in ("probability", "odds")
-        for picture in [Picture("screen", 700)]
-        for _ in [picture.show(pairs.pair_answer(scale=scale))]
+        for picture in [Picture("screen", 590)]
+        for _ in [picture.show(pairs.pair_answer(scale=scale, number=number, wide=0.5))]
         for drawing in [picture._drawing]
         for parts in [(drawing.together, drawing.effect, drawing.interaction)]
     }
@@ -366,3 +367,19 @@ def test_a_pair_is_drawn_and_saved_like_any_answer(tmp_path):
         made_effects.fit().pair("age_years", "diameter_mm", shape="map"), tmp_path / "pair.pdf"
     )
     assert path.stat().st_size > 10_000
+
+
+@pytest.mark.parametrize("shape", ["lines", "map"])
+def test_a_picture_keeps_to_the_place_of_the_users_axes(shape):
+    figure = Figure(figsize=(9, 13), dpi=72)
+    above, below = figure.subplots(2, 1)
+    draw(pairs.pair_answer(shape=shape), ax=below)
+    left, low, right, high = (
+        below.get_position(original=True).transformed(figure.transFigure).extents
+    )
+    above.set_axis_off()
+    inside = [box for text, box in boxes_on(figure) if text]
+    assert len(inside) > 25
+    for box in inside:
+        assert left - 1 <= box.x0 <= box.x1 <= right + 1
+        assert low - 1 <= box.y0 <= box.y1 <= high + 1

@@ -12,6 +12,7 @@ from plainodds.answers.pair import PairQuestion
 from plainodds.phrases.numbers import chance, percentage_points, ratio
 from plainodds.views import pair, sketched
 from plainodds.views.pair_table import effect_table, interaction_table, pair_table
+from plainodds.views.stage import Shot, Stage
 from tests.views.frontend import control_of, text_of
 from tests.views.test_curve import choose
 from tests.views.test_profile import cells
@@ -33,6 +34,13 @@ def of_levels(mains):
 def case_control(mains):
     result = smf.logit("burst ~ age_years * material + lined", mains).fit(disp=0)
     return po.FittedLogit(result, sampling="case-control")
+
+
+@pytest.fixture
+def undrawn(monkeypatch):
+    """Where a test is about questions there is no need to draw, which takes most of the time."""
+    shot = Shot(b"", "a picture", 590, 400)
+    monkeypatch.setattr(Stage, "taken", lambda stage, answer: shot)
 
 
 def turn(page, view, field, value):
@@ -70,15 +78,18 @@ def test_it_starts_with_a_number_and_a_category_that_share_a_term(fit, page):
     assert view.answer == fit.pair("age_years", "material")
 
 
+@pytest.mark.usefixtures("undrawn")
 def test_without_a_category_two_numbers_that_share_a_term_come_first(two_numbers, page):
     question = po.PairView(two_numbers).question
     assert {question.a, question.b} == {"age_years", "pressure_m"}
 
 
+@pytest.mark.usefixtures("undrawn")
 def test_two_categories_that_share_a_term_come_before_numbers_that_do_not(of_levels, page):
     assert po.PairView(of_levels).question == PairQuestion("material", "lined")
 
 
+@pytest.mark.usefixtures("undrawn")
 def test_without_shared_terms_it_starts_with_the_first_number(additive, page):
     assert po.PairView(additive).question == PairQuestion("past_repairs", "material")
 
@@ -88,6 +99,7 @@ def test_a_single_predictor_is_refused_with_the_way_out(mains, page):
         po.PairView(smf.logit("burst ~ age_years", mains).fit(disp=0))
 
 
+@pytest.mark.usefixtures("undrawn")
 def test_a_question_of_another_kind_is_refused(fit, page):
     with pytest.raises(po.QuestionRefused, match="edits a PairQuestion"):
         po.PairView(fit, fit.odds().question)
@@ -96,6 +108,7 @@ def test_a_question_of_another_kind_is_refused(fit, page):
 # the two predictors
 
 
+@pytest.mark.usefixtures("undrawn")
 def test_the_button_exchanges_the_two_with_their_values(fit, page):
     asked = fit.pair("age_years", "material", a_values=(20, 70), b_values=("PVC", "ductile iron"))
     view = po.PairView(fit, asked.question)
@@ -109,6 +122,7 @@ def test_the_button_exchanges_the_two_with_their_values(fit, page):
     assert view.question == asked.question
 
 
+@pytest.mark.usefixtures("undrawn")
 @pytest.mark.parametrize(("field", "name"), [("a", "material"), ("b", "age_years")])
 def test_choosing_the_other_one_exchanges_them_too(fit, page, field, name):
     view = po.PairView(fit)
@@ -118,6 +132,7 @@ def test_choosing_the_other_one_exchanges_them_too(fit, page, field, name):
     assert view.problem is None
 
 
+@pytest.mark.usefixtures("undrawn")
 def test_another_predictor_lets_go_of_values_map_and_what_held_it(fit, page):
     question = fit.pair(
         "age_years", "pressure_m", a_values=(20, 70), b_values=(40.0, 60.0), shape="map",
@@ -133,6 +148,7 @@ def test_another_predictor_lets_go_of_values_map_and_what_held_it(fit, page):
     assert view.question.a_values == ()
 
 
+@pytest.mark.usefixtures("undrawn")
 def test_without_a_number_there_is_no_slope(fit, page):
     view = po.PairView(fit, fit.pair("age_years", "material", number="slope").question)
     choose(page, control_of(view, "a"), "past_repairs")
@@ -145,6 +161,7 @@ def test_without_a_number_there_is_no_slope(fit, page):
 # their two values
 
 
+@pytest.mark.usefixtures("undrawn")
 def test_each_has_its_two_values(fit, page):
     view = po.PairView(fit)
     shown = changes_shown(view)
@@ -157,12 +174,14 @@ def test_each_has_its_two_values(fit, page):
     )
 
 
+@pytest.mark.usefixtures("undrawn")
 def test_a_number_goes_from_quartile_to_quartile_as_the_answer_does(fit, page):
     view = po.PairView(fit, fit.pair("pressure_m", "past_repairs").question)
     assert changes_shown(view)["a"].value == view.answer.a_change
     assert changes_shown(view)["b"].value == view.answer.b_change
 
 
+@pytest.mark.usefixtures("undrawn")
 def test_a_slider_that_finds_its_round_place_states_no_values(fit, page):
     view = po.PairView(fit, fit.pair("pressure_m", "material").question)
     shown = changes_shown(view)["a"]
@@ -189,6 +208,7 @@ def test_from_a_value_to_itself_is_refused_and_the_picture_stays(fit, page):
     assert view.answer.a_change == (start, end + 1)
 
 
+@pytest.mark.filterwarnings("ignore:The design matrix is rank-deficient")
 def test_a_level_that_nobody_has_is_refused_and_the_picture_stays(mains, page):
     marsh = mains.assign(soil=mains["soil"].cat.add_categories("marsh"))
     family = sm.families.Binomial()
@@ -202,6 +222,7 @@ def test_a_level_that_nobody_has_is_refused_and_the_picture_stays(mains, page):
     assert shown.value == view.answer.b_change
 
 
+@pytest.mark.usefixtures("undrawn")
 def test_numbers_by_their_slope_let_go_of_their_values(fit, page):
     asked = fit.pair("age_years", "material", a_values=(20, 70), b_values=("PVC", "cast iron"))
     view = po.PairView(fit, asked.question)
@@ -215,6 +236,7 @@ def test_numbers_by_their_slope_let_go_of_their_values(fit, page):
     assert set(changes_shown(view)) == {"a", "b"}
 
 
+@pytest.mark.usefixtures("undrawn")
 def test_a_number_whose_values_are_stated_is_shown_as_a_change(fit, page):
     question = fit.pair("age_years", "material", a_values=(20, 70), number="slope").question
     view = po.PairView(fit, question)
@@ -297,6 +319,7 @@ def test_others_as_observed_are_refused_of_a_case_control_sample(case_control, p
     assert control_of(view, "others").value == "typical"
 
 
+@pytest.mark.usefixtures("undrawn")
 def test_with_the_populations_share_chances_are_told_again(mains, page):
     result = smf.logit("burst ~ age_years * material", mains).fit(disp=0)
     fit = po.FittedLogit(result, sampling="case-control", prevalence=0.02)
@@ -321,12 +344,14 @@ def test_a_slider_of_another_predictor_moves_the_interaction_although_no_term_jo
     assert after.ratio == before.ratio
 
 
+@pytest.mark.usefixtures("undrawn")
 def test_others_can_be_as_observed(fit, page):
     view = po.PairView(fit)
     choose(page, control_of(view, "others"), "observed")
     assert view.answer == fit.pair("age_years", "material", others="observed")
 
 
+@pytest.mark.usefixtures("undrawn")
 def test_the_test_can_be_chosen_where_a_term_joins_the_two(fit, page):
     view = po.PairView(fit)
     choose(page, control_of(view, "test"), "likelihood_ratio")
@@ -337,6 +362,7 @@ def test_the_test_can_be_chosen_where_a_term_joins_the_two(fit, page):
     assert "No term of the model joins the two" in text_of(view._table.value)
 
 
+@pytest.mark.usefixtures("undrawn")
 def test_a_fit_without_a_likelihood_offers_no_test_by_it(mains, page):
     result = smf.logit("burst ~ age_years * lined", mains).fit(disp=0, cov_type="HC0")
     fit = po.FittedLogit(result)
@@ -344,6 +370,7 @@ def test_a_fit_without_a_likelihood_offers_no_test_by_it(mains, page):
     assert not is_shown(po.PairView(fit), "test")
 
 
+@pytest.mark.usefixtures("undrawn")
 @pytest.mark.parametrize(
     "asked",
     [
@@ -510,6 +537,7 @@ def many(monkeypatch):
         monkeypatch.setattr(module, "MANY_ROWS", 100)
 
 
+@pytest.mark.usefixtures("undrawn")
 def test_many_rows_are_answered_by_a_sketch(fit, page, many):
     view = po.PairView(fit)
     choose(page, control_of(view, "others"), "observed")
@@ -526,6 +554,7 @@ def test_many_rows_are_answered_by_a_sketch(fit, page, many):
     assert "<table" in view._table.value
 
 
+@pytest.mark.usefixtures("undrawn")
 def test_what_cannot_be_sketched_is_averaged_beside_the_page(mains, page, many):
     # pressure, which age depends on, has more values than a sketch tells apart
     formula = "burst ~ age_years * pressure_m + age_years * material"
@@ -539,6 +568,7 @@ def test_what_cannot_be_sketched_is_averaged_beside_the_page(mains, page, many):
     assert asked != [threading.current_thread()]
 
 
+@pytest.mark.usefixtures("undrawn")
 def test_a_model_is_fitted_again_beside_the_page_and_once(fit, page, many):
     view = po.PairView(fit)
     asked = []
@@ -551,6 +581,7 @@ def test_a_model_is_fitted_again_beside_the_page_and_once(fit, page, many):
     assert [each is here for each in asked] == [False, True]
 
 
+@pytest.mark.usefixtures("undrawn")
 def test_files_are_named_after_the_two(fit, page):
     assert po.PairView(fit)._stem() == "pair-age_years-material"
     view = po.PairView(fit, fit.pair("age_years", "pressure_m", shape="map").question)
