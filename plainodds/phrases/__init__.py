@@ -1,7 +1,17 @@
 """An answer in words, in Python, and for those who cannot see its picture."""
 
 # each kind of answer registers its own words when it is imported
-from plainodds.phrases import change, curve, effects, excerpts, odds, pair, panels, profile  # noqa: F401
+from plainodds.phrases import (  # noqa: F401
+    change,
+    curve,
+    effects,
+    excerpts,
+    odds,
+    pair,
+    panels,
+    profile,
+    soundness,
+)
 from plainodds.phrases.alternative import alternative
 from plainodds.phrases.captions import caption
 from plainodds.phrases.code import code

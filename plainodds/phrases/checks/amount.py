@@ -1,0 +1,44 @@
+"""How much data there is, in words."""
+
+from __future__ import annotations
+
+from plainodds.answers.checks.amount import AmountEvidence
+from plainodds.answers.checks.finding import Finding
+from plainodds.model.predictors import Subject
+from plainodds.phrases.checks.finding_words import (
+    Figure,
+    FindingWords,
+    evidence_figures,
+    evidence_words,
+    made,
+)
+from plainodds.phrases.checks.parts import amount, cases, coefficients
+from plainodds.phrases.numbers import ratio
+
+__all__: list[str] = []
+
+
+@evidence_words.register
+def _(evidence: AmountEvidence, finding: Finding, subject: Subject, level: float) -> FindingWords:
+    rarer = "events" if evidence.events <= evidence.others else "cases without the event"
+    what = (
+        f"{cases(subject, evidence.events)} had the event and {amount(evidence.others)} did not, "
+        f"which is {ratio(evidence.events_per_parameter)} {rarer} for each of "
+        f"{coefficients(evidence.parameters)} beside the intercept"
+    )
+    if finding.concern == "nothing found":
+        return made(finding, subject, what, "Nothing needs doing about this")
+    step = "Use a smaller model that was chosen beforehand, gather more data or fit with a penalty"
+    if finding.concern == "keep in mind":
+        step = "Call odds ratios rough, and do not add predictors to this model"
+    return made(finding, subject, what, step)
+
+
+@evidence_figures.register
+def _(evidence: AmountEvidence, finding: Finding, subject: Subject, level: float) -> list[Figure]:
+    return [
+        ("With the event", amount(evidence.events)),
+        ("Without the event", amount(evidence.others)),
+        ("Coefficients beside the intercept", amount(evidence.parameters)),
+        ("Of the rarer outcome for each coefficient", ratio(evidence.events_per_parameter)),
+    ]

@@ -1,0 +1,45 @@
+"""How far model and data are apart, and whether chance alone may explain it, in words."""
+
+from __future__ import annotations
+
+import math
+
+from plainodds.answers.checks.finding import Finding
+from plainodds.answers.checks.shape import gap_that_matters
+from plainodds.model.predictors import Subject
+from plainodds.phrases.checks.parts import because, gap
+from plainodds.phrases.numbers import p_value
+
+__all__ = ["IN_SAMPLE", "apart", "judged"]
+
+IN_SAMPLE = "shares here are those of the sample, whose rows were chosen by their outcome"
+
+
+def apart(size: float) -> str:
+    """Up to how far model and data are apart: "by up to 3.4 percentage points …"."""
+    return f"by up to {gap(size)} in the middle 90% of rows"
+
+
+def judged(size: float, p: float, finding: Finding, subject: Subject, bends: bool) -> str:
+    """Whether a gap is more than chance explains, as far as a test can tell; follows `apart`.
+
+    Parameters
+    ----------
+    size : float
+    p : float
+        nan where there is no test.
+    finding : Finding
+    subject : Subject
+    bends : bool
+        Whether the gap raised a concern.
+    """
+    test = "" if math.isnan(p) else f" (p-value {p_value(p)})"
+    if bends:
+        return f", more than chance would explain{test}"
+    if size <= gap_that_matters(subject.outcome.share):
+        return f", too little to change an explanation{test}"
+    if test:
+        return f", which chance alone may explain{test}"
+    if finding.unknown == "no likelihood":
+        return f"; whether that is more than chance is not known{because(finding.unknown)}"
+    return "; the model leaves no other shape to test against"

@@ -1,0 +1,149 @@
+"""Rows that carry the result, in words."""
+
+from __future__ import annotations
+
+import math
+
+from plainodds.answers.checks.finding import Finding
+from plainodds.answers.checks.influence import InfluenceEvidence, InfluentialPattern, Moved
+from plainodds.model.predictors import Subject
+from plainodds.phrases.checks.finding_words import (
+    Figure,
+    FindingWords,
+    evidence_figures,
+    evidence_words,
+    made,
+)
+from plainodds.phrases.checks.parts import amount, cases, counted, short_list
+from plainodds.phrases.labels import (
+    from_to,
+    given_clause,
+    predictor_name,
+    sentence_case,
+    value_label,
+)
+from plainodds.phrases.numbers import chance, ratio
+from plainodds.phrases.units import tidy
+
+__all__ = ["moved_words", "pattern_words"]
+
+_LABELS_AT_MOST = 3
+# who raises a concern has few cases: so many, or so large a share of all
+_FEW_CASES, _FEW_SHARE = 2.0, 0.01
+
+
+@evidence_words.register
+def _(
+    evidence: InfluenceEvidence, finding: Finding, subject: Subject, level: float
+) -> FindingWords:
+    example = _example(evidence, finding, subject)
+    told = "" if example is None else _without(*example, subject)
+    patterns = counted(evidence.patterns, "kind of row", "different rows")
+    if finding.concern == "nothing found":
+        what = (
+            f"of {patterns}, no single one of few cases moves an odds ratio by more than its "
+            "standard error"
+        )
+        if told:
+            what += f"; the farthest that one was moved: {told}"
+        return made(finding, subject, what, "Nothing needs doing about this")
+    turns = "turns an odds ratio" in finding.reasons
+    what = (
+        f"among {patterns}, a single one "
+        f"{'turns an odds ratio to the other side of 1' if turns else 'moves an odds ratio far'}"
+    )
+    if told:
+        what += f": {told}"
+    step = "See whether these rows are right; if they are, keep them and tell both figures"
+    if turns:
+        step = (
+            "See whether these rows are right and belong to those the model is meant for; until "
+            "then do not say which way that odds ratio points"
+        )
+    return made(finding, subject, what, step)
+
+
+def _example(
+    evidence: InfluenceEvidence, finding: Finding, subject: Subject
+) -> tuple[InfluentialPattern, Moved] | None:
+    """The pattern that moves an odds ratio farthest, in the way that the finding speaks of."""
+    most = max(_FEW_CASES, _FEW_SHARE * subject.rows)
+    moves = [
+        (pattern, moved)
+        for pattern in evidence.standing_out
+        for moved in pattern.moved
+        if _far(moved) > 0 and (moved.predictor in finding.about or not finding.about)
+    ]
+    moves = [each for each in moves if each[0].cases <= most] or moves
+    if "turns an odds ratio" in finding.reasons:
+        moves = [each for each in moves if _turns(each[1])] or moves
+    return max(moves, key=lambda each: _far(each[1]), default=None)
+
+
+def _after(moved: Moved) -> float:
+    """The odds ratio without the pattern: refitted, or else by one step."""
+    return moved.one_step if math.isnan(moved.refitted) else moved.refitted
+
+
+def _far(moved: Moved) -> float:
+    before, after = moved.odds_ratio, _after(moved)
+    if not (before > 0 and after > 0) or math.isinf(before):
+        return 0.0
+    return abs(math.log(after / before))
+
+
+def _turns(moved: Moved) -> bool:
+    return (moved.odds_ratio - 1) * (_after(moved) - 1) < 0
+
+
+def _without(pattern: InfluentialPattern, moved: Moved, subject: Subject) -> str:
+    return f"without {pattern_words(pattern, subject)}, {moved_words(moved, subject)}"
+
+
+def pattern_words(pattern: InfluentialPattern, subject: Subject) -> str:
+    """Which rows a pattern stands for: "row 12 (1 pipe, with the event)"."""
+    who = cases(subject, pattern.cases)
+    share = pattern.events / pattern.cases if pattern.cases else math.nan
+    if share >= 1 - 1e-9:
+        told = f"{who}, with the event"
+    elif share <= 1e-9:
+        told = f"{who}, without the event"
+    else:
+        told = f"{who}, {amount(pattern.events)} with the event"
+    labels = [f"“{tidy(label)}”" for label in pattern.labels]
+    if not labels:
+        return f"one kind of row ({told})"
+    rows = "row" if len(labels) == 1 else "rows"
+    return f"{rows} {short_list(labels, _LABELS_AT_MOST)} ({told})"
+
+
+def moved_words(moved: Moved, subject: Subject) -> str:
+    """As in "the odds ratio for pipe age from 20 to 30 years is 0.80 rather than 1.40"."""
+    facts = subject.predictor(moved.predictor)
+    if facts.is_number:
+        change = f"{predictor_name(facts)} {from_to(facts, moved.start, moved.end)}"
+    else:
+        end, start = value_label(facts, moved.end), value_label(facts, moved.start)
+        change = f"{predictor_name(facts)} {end} against {start}"
+    given = f", {given_clause(subject, moved.given)}," if moved.given else ""
+    before, after = ratio(moved.odds_ratio), ratio(_after(moved))
+    how = "about " if math.isnan(moved.refitted) else ""
+    sizes = f"{after} either way" if before == after else f"{after} rather than {before}"
+    return f"the odds ratio for {change}{given} is {how}{sizes}"
+
+
+@evidence_figures.register
+def _(
+    evidence: InfluenceEvidence, finding: Finding, subject: Subject, level: float
+) -> list[Figure]:
+    found: list[Figure] = [("Different rows", amount(evidence.patterns))]
+    for pattern in evidence.standing_out:
+        measures = (
+            f"chance {chance(pattern.probability)}, leverage {ratio(pattern.leverage)}, "
+            f"ΔX² {ratio(pattern.delta_chi2)}, ΔD {ratio(pattern.delta_deviance)}, "
+            f"Δβ {ratio(pattern.delta_beta)}"
+        )
+        moves = [moved_words(moved, subject) for moved in pattern.moved]
+        label = sentence_case(pattern_words(pattern, subject))
+        found.append((label, "; ".join([measures, *moves])))
+    return found

@@ -1,0 +1,103 @@
+"""Parts of sentences that several checks need: counts, lists of names, gaps."""
+
+from __future__ import annotations
+
+import math
+
+from plainodds.answers.checks.finding import Unknown
+from plainodds.model.predictors import Subject
+from plainodds.phrases.labels import listed, predictor_name, value_label
+from plainodds.phrases.numbers import NOT_KNOWN, count, percentage_points, quantity
+from plainodds.phrases.units import tidy
+from plainodds.values import Scalar
+
+__all__ = [
+    "WHY_NOT_KNOWN",
+    "amount",
+    "because",
+    "cases",
+    "coefficients",
+    "columns_named",
+    "counted",
+    "gap",
+    "level_name",
+    "named",
+    "rows",
+    "short_list",
+]
+
+_LISTED_AT_MOST = 4
+
+WHY_NOT_KNOWN: dict[Unknown, str] = {
+    "no rows": "the result carries its rows no longer",
+    "no outcome": "the result carries its outcome no longer",
+    "no covariance": "the fit has no covariance matrix, and so no standard errors",
+    "no likelihood": "this needs a fit that stands where the likelihood of rows drawn one by one "
+    "is highest, with finite coefficients, and this fit does not",
+    "no groups named": "nobody has said which rows belong together",
+    "not said by the fit": "the result does not say",
+    "rows chosen by outcome": "the rows were chosen by their outcome",
+    "too few rows": "there are too few cases with the event, or too few without it",
+}
+"""Why something cannot be known, to follow "because"."""
+
+
+def because(unknown: Unknown) -> str:
+    """As in ", because the result carries its rows no longer"; empty where all is known."""
+    return f", because {WHY_NOT_KNOWN[unknown]}" if unknown else ""
+
+
+def amount(number: float) -> str:
+    """Write a number of cases, which weights can make a broken one."""
+    if math.isnan(number):
+        return NOT_KNOWN
+    whole = round(number)
+    return count(whole) if math.isclose(whole, number, abs_tol=1e-6) else quantity(number)
+
+
+def counted(number: float, one: str, many: str) -> str:
+    """As in "1 event", "14 events"."""
+    written = amount(number)
+    return f"{written} {one if written == '1' else many}"
+
+
+def cases(subject: Subject, number: float) -> str:
+    """As in "1 pipe", "14 pipes"."""
+    return counted(number, tidy(subject.outcome.case), tidy(subject.outcome.cases))
+
+
+def rows(number: float) -> str:
+    """As in "1 row", "6,000 rows"."""
+    return counted(number, "row", "rows")
+
+
+def coefficients(number: int) -> str:
+    """As in "1 coefficient", "6 coefficients"."""
+    return counted(number, "coefficient", "coefficients")
+
+
+def short_list(items: list[str], at_most: int = _LISTED_AT_MOST) -> str:
+    """Join as in speech; of many only the first, and how many more there are."""
+    left = len(items) - at_most
+    return listed([*items[:at_most], f"{left} more"]) if left > 1 else listed(items)
+
+
+def named(subject: Subject, names: tuple[str, ...], at_most: int = _LISTED_AT_MOST) -> str:
+    """Predictors as within a sentence: "pipe age and material"."""
+    return short_list([predictor_name(subject.predictor(name)) for name in names], at_most)
+
+
+def columns_named(names: tuple[str, ...], at_most: int = _LISTED_AT_MOST) -> str:
+    """Columns of the design, as the fit's own table of coefficients calls them."""
+    return short_list([f"“{tidy(name)}”" for name in names], at_most)
+
+
+def level_name(subject: Subject, predictor: str, level: Scalar) -> str:
+    """As in "material PVC"."""
+    facts = subject.predictor(predictor)
+    return f"{predictor_name(facts)} {value_label(facts, level)}"
+
+
+def gap(size: float) -> str:
+    """A largest gap between chances: "3.4 percentage points"."""
+    return percentage_points(abs(size))

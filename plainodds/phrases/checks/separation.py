@@ -1,0 +1,99 @@
+"""Separation in words: who tells the outcome of which rows without exception."""
+
+from __future__ import annotations
+
+import math
+
+from plainodds.answers.checks.finding import Finding
+from plainodds.answers.checks.separation import SeparationEvidence
+from plainodds.model.predictors import Subject
+from plainodds.phrases.checks.finding_words import (
+    Figure,
+    FindingWords,
+    evidence_figures,
+    evidence_words,
+    made,
+)
+from plainodds.phrases.checks.parts import amount, coefficients, level_name, named, rows, short_list
+from plainodds.phrases.units import tidy
+
+__all__: list[str] = []
+
+
+@evidence_words.register
+def _(
+    evidence: SeparationEvidence, finding: Finding, subject: Subject, level: float
+) -> FindingWords:
+    if evidence.kind == "none":
+        what = (
+            "no combination of predictors tells events from non-events without exception among "
+            f"the {rows(evidence.all_rows)}"
+        )
+        return made(finding, subject, what, "Nothing needs doing about this")
+    restrained = finding.concern == "keep in mind"
+    # a penalty or constraint makes them finite
+    have = "would have" if restrained else "have" if len(evidence.unbounded) > 1 else "has"
+    otherwise = " without the penalty or constraints" if restrained else ""
+    what = (
+        f"{_who(evidence, subject)} the outcome of {_whose(evidence)} without exception"
+        f"{_levels(evidence, subject)}; {coefficients(len(evidence.unbounded))} {have} no finite "
+        f"estimate{otherwise}"
+    )
+    if restrained:
+        return made(
+            finding,
+            subject,
+            what,
+            "Say that these figures rest on the penalty or the constraints as much as on the data",
+            "That there are finite odds ratios here is the doing of the penalty or constraints "
+            "alone",
+        )
+    step = (
+        "See whether a predictor repeats the outcome in other words and leave it out; else merge "
+        "levels, gather more data or fit with a penalty"
+    )
+    return made(finding, subject, what, step)
+
+
+def _who(evidence: SeparationEvidence, subject: Subject) -> str:
+    if not evidence.predictors:
+        return "the model tells"
+    who = named(subject, evidence.predictors)
+    return f"{who} {'together tell' if len(evidence.predictors) > 1 else 'tells'}"
+
+
+def _whose(evidence: SeparationEvidence) -> str:
+    if evidence.rows == evidence.all_rows:
+        return "the only row" if evidence.rows == 1 else f"all {rows(evidence.rows)}"
+    return f"{amount(evidence.rows)} of {rows(evidence.all_rows)}"
+
+
+def _levels(evidence: SeparationEvidence, subject: Subject) -> str:
+    if not evidence.levels:
+        return ""
+    told = short_list([level_name(subject, name, held) for name, held in evidence.levels])
+    cases = tidy(subject.outcome.cases)
+    each = "" if len(evidence.levels) == 1 else "at each of these levels "
+    return f": {each}all {cases} with {told} had the same outcome"
+
+
+@evidence_figures.register
+def _(
+    evidence: SeparationEvidence, finding: Finding, subject: Subject, level: float
+) -> list[Figure]:
+    kinds = {"none": "no", "quasi-complete": "some rows", "complete": "all rows"}
+    return [
+        ("Outcome told without exception", kinds[evidence.kind]),
+        ("Rows so told", f"{amount(evidence.rows)} of {amount(evidence.all_rows)}"),
+        (
+            "Different rows so told",
+            f"{amount(evidence.patterns)} of {amount(evidence.all_patterns)}",
+        ),
+        *((f"Coefficient “{tidy(name)}”", _side(float(side))) for name, side in evidence.unbounded),
+    ]
+
+
+def _side(limit: float) -> str:
+    if math.isnan(limit):
+        return "left open by the data"
+    return "no upper end" if limit > 0 else "no lower end"
