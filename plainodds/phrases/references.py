@@ -5,6 +5,66 @@ from __future__ import annotations
 __all__ = ["REFERENCES"]
 
 REFERENCES = {
+    "Albert & Anderson 1984": (
+        "Albert A, Anderson JA (1984). On the existence of maximum likelihood estimates in "
+        "logistic regression models. Biometrika 71:1–10."
+    ),
+    "Belsley et al. 1980": ("Belsley DA, Kuh E, Welsch RE (1980). Regression Diagnostics. Wiley."),
+    "DeLong et al. 1988": (
+        "DeLong ER, DeLong DM, Clarke-Pearson DL (1988). Comparing the areas under two or more "
+        "correlated receiver operating characteristic curves: a nonparametric approach. Biometrics "
+        "44:837–845."
+    ),
+    "Fox & Monette 1992": (
+        "Fox J, Monette G (1992). Generalized collinearity diagnostics. Journal of the American "
+        "Statistical Association 87:178–183."
+    ),
+    "Harrell et al. 1996": (
+        "Harrell FE, Lee KL, Mark DB (1996). Multivariable prognostic models: issues in developing "
+        "models, evaluating assumptions and adequacy, and measuring and reducing errors. "
+        "Statistics in Medicine 15:361–387."
+    ),
+    "Konis 2007": (
+        "Konis K (2007). Linear programming algorithms for detecting separated data in binary "
+        "logistic regression models. DPhil thesis, University of Oxford."
+    ),
+    "Landwehr et al. 1984": (
+        "Landwehr JM, Pregibon D, Shoemaker AC (1984). Graphical methods for assessing logistic "
+        "regression models. Journal of the American Statistical Association 79:61–71."
+    ),
+    "McFadden 1974": (
+        "McFadden D (1974). Conditional logit analysis of qualitative choice behavior. In Zarembka "
+        "P (ed), Frontiers in Econometrics. Academic Press."
+    ),
+    "Newcombe 1998": (
+        "Newcombe RG (1998). Interval estimation for the difference between independent "
+        "proportions: comparison of eleven methods. Statistics in Medicine 17:873–890."
+    ),
+    "Peduzzi et al. 1996": (
+        "Peduzzi P, Concato J, Kemper E, Holford TR, Feinstein AR (1996). A simulation study of "
+        "the number of events per variable in logistic regression analysis. Journal of Clinical "
+        "Epidemiology 49:1373–1379."
+    ),
+    "Pregibon 1980": (
+        "Pregibon D (1980). Goodness of link tests for generalized linear models. Applied "
+        "Statistics 29:15–24."
+    ),
+    "Pregibon 1981": (
+        "Pregibon D (1981). Logistic regression diagnostics. Annals of Statistics 9:705–724."
+    ),
+    "Tjur 2009": (
+        "Tjur T (2009). Coefficients of determination in logistic regression models: a new "
+        "proposal. The American Statistician 63:366–372."
+    ),
+    "Van Calster et al. 2016": (
+        "Van Calster B, Nieboer D, Vergouwe Y, De Cock B, Pencina MJ, Steyerberg EW (2016). A "
+        "calibration hierarchy for risk models was defined: from utopia to empirical data. Journal "
+        "of Clinical Epidemiology 74:167–176."
+    ),
+    "Vittinghoff & McCulloch 2007": (
+        "Vittinghoff E, McCulloch CE (2007). Relaxing the rule of ten events per variable in "
+        "logistic and Cox regression. American Journal of Epidemiology 165:710–718."
+    ),
     "Ai & Norton 2003": (
         "Ai C, Norton EC (2003). Interaction terms in logit and probit models. Economics Letters "
         "80:123–129."

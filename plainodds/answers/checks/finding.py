@@ -57,6 +57,7 @@ Unknown: TypeAlias = Literal[
     "not said by the fit",
     "rows chosen by outcome",
     "too few rows",
+    "single rows",
 ]
 """Why nothing can be known; empty where something is."""
 

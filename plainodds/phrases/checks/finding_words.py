@@ -62,6 +62,7 @@ _WAY_OUT: dict[Unknown, str] = {
     "column with `groups=`; if no rows do, nothing needs doing.",
     "not said by the fit": "Look at the log of the fit, or fit again from a table with a formula.",
     "rows chosen by outcome": "Compare with shares known from elsewhere.",
+    "single rows": "Look at it where the data are.",
     "too few rows": "Gather more data, or explain no more than counts.",
 }
 

@@ -37,6 +37,7 @@ WHY_NOT_KNOWN: dict[Unknown, str] = {
     "no groups named": "nobody has said which rows belong together",
     "not said by the fit": "the result does not say",
     "rows chosen by outcome": "the rows were chosen by their outcome",
+    "single rows": "it is about single rows, and these do not leave the notebook",
     "too few rows": "there are too few cases with the event, or too few without it",
 }
 """Why something cannot be known, to follow "because"."""

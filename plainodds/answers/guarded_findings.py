@@ -1,0 +1,94 @@
+"""What a check of a fit found, without counts of few rows and without single rows."""
+
+from __future__ import annotations
+
+import math
+from dataclasses import replace
+from functools import singledispatch
+
+from plainodds.answers.checks.amount import LevelsEvidence, MissingEvidence
+from plainodds.answers.checks.calibration import CalibrationEvidence
+from plainodds.answers.checks.discrimination import DiscriminationEvidence
+from plainodds.answers.checks.finding import Evidence, Finding
+from plainodds.answers.checks.influence import InfluenceEvidence
+from plainodds.answers.checks.separation import SeparationEvidence
+from plainodds.answers.checks.shape import Bin, ShapeEvidence
+
+__all__ = ["guarded_finding"]
+
+
+def guarded_finding(finding: Finding, smallest: int) -> Finding:
+    """A finding whose evidence holds no single rows and no counts below the smallest cell."""
+    if isinstance(finding.evidence, InfluenceEvidence):
+        # it is about single rows by its nature, so nothing of it but the verdict leaves
+        return replace(finding, evidence=None, unknown="single rows")
+    if finding.evidence is None:
+        return finding
+    return replace(finding, evidence=_without_small(finding.evidence, smallest))
+
+
+@singledispatch
+def _without_small(evidence: Evidence, smallest: int) -> Evidence:
+    return evidence
+
+
+@_without_small.register
+def _(evidence: LevelsEvidence, smallest: int) -> Evidence:
+    counts = []
+    for each in evidence.counts:
+        others = each.cases - each.events
+        few = any(0 < number < smallest for number in (each.events, others))
+        cases = float(smallest) if 0 < each.cases < smallest else each.cases
+        counts.append(replace(each, cases=cases, events=math.nan if few else each.events))
+    return replace(evidence, counts=tuple(counts))
+
+
+@_without_small.register
+def _(evidence: MissingEvidence, smallest: int) -> Evidence:
+    return replace(
+        evidence,
+        dropped=_raised(evidence.dropped, smallest),
+        known=_raised(evidence.known, smallest),
+        columns=tuple((name, _raised(number, smallest)) for name, number in evidence.columns),
+    )
+
+
+@_without_small.register
+def _(evidence: SeparationEvidence, smallest: int) -> Evidence:
+    return replace(
+        evidence,
+        rows=_raised(evidence.rows, smallest),
+        patterns=_raised(evidence.patterns, smallest),
+    )
+
+
+@_without_small.register
+def _(evidence: ShapeEvidence, smallest: int) -> Evidence:
+    return replace(evidence, bins=_large(evidence.bins, smallest))
+
+
+@_without_small.register
+def _(evidence: CalibrationEvidence, smallest: int) -> Evidence:
+    return replace(evidence, bins=_large(evidence.bins, smallest))
+
+
+@_without_small.register
+def _(evidence: DiscriminationEvidence, smallest: int) -> Evidence:
+    return replace(
+        evidence,
+        events=tuple(_raised_float(each, smallest) for each in evidence.events),
+        others=tuple(_raised_float(each, smallest) for each in evidence.others),
+    )
+
+
+def _raised(number: int, smallest: int) -> int:
+    return smallest if 0 < number < smallest else number
+
+
+def _raised_float(number: float, smallest: int) -> float:
+    return float(smallest) if 0 < number < smallest else number
+
+
+def _large(bins: tuple[Bin, ...], smallest: int) -> tuple[Bin, ...]:
+    """Bins of too few cases are left out of the picture; the smoothed curve speaks for them."""
+    return tuple(each for each in bins if each.cases >= smallest)
