@@ -19,11 +19,13 @@ from plainodds.answers.curve import CurveAnswer
 from plainodds.answers.effects import EffectsAnswer
 from plainodds.answers.excerpts import ExcerptAnswer
 from plainodds.answers.familiarity import Familiarity
+from plainodds.answers.guarded_findings import guarded_finding
 from plainodds.answers.joint import JointCell
 from plainodds.answers.pair import PairAnswer
 from plainodds.answers.panels import PanelsAnswer
 from plainodds.answers.profile import ProfileAnswer
 from plainodds.answers.questions import Answer
+from plainodds.answers.soundness import SoundnessAnswer
 from plainodds.answers.support import Support
 from plainodds.errors import QuestionRefused
 from plainodds.model.predictors import PredictorFacts, Subject
@@ -149,6 +151,13 @@ def _cell(cell: JointCell, smallest: int) -> JointCell:
     few = _few(cell.events, cell.rows, smallest)
     rows = float(_raised(round(cell.rows), smallest)) if cell.rows < smallest else cell.rows
     return replace(cell, rows=rows, events=None if few else cell.events)
+
+
+@_without_small.register
+def _(answer: SoundnessAnswer, smallest: int) -> Answer:
+    return replace(
+        answer, findings=tuple(guarded_finding(each, smallest) for each in answer.findings)
+    )
 
 
 @_without_small.register
