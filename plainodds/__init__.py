@@ -17,6 +17,7 @@ from plainodds.phrases import (
     methods_note,
     report_table,
     words,
+    writing,
 )
 from plainodds.values import from_json, to_json
 from plainodds.views import ChangeView, CurveView, EffectsView, OddsView, ProfileView
@@ -52,6 +53,7 @@ __all__ = [
     "table",
     "to_json",
     "words",
+    "writing",
 ]
 
 display.register()

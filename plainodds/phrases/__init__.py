@@ -2,12 +2,14 @@
 
 # each kind of answer registers its own words when it is imported
 from plainodds.phrases import change, curve, effects, odds, profile  # noqa: F401
+from plainodds.phrases import german as _german  # noqa: F401
 from plainodds.phrases.alternative import alternative
 from plainodds.phrases.captions import caption
 from plainodds.phrases.code import code
 from plainodds.phrases.methods import MethodsNote, methods_note
 from plainodds.phrases.reports import ReportTable, report_table
 from plainodds.phrases.saying import Words, words
+from plainodds.phrases.writing import writing
 
 __all__ = [
     "MethodsNote",
@@ -19,4 +21,5 @@ __all__ = [
     "methods_note",
     "report_table",
     "words",
+    "writing",
 ]

@@ -13,11 +13,10 @@ from plainodds.phrases.numbers.chances import (
     frequencies,
     frequency,
     frequency_span,
-    out_of,
     told_apart,
 )
-from plainodds.phrases.numbers.counts import cases_apart, cases_on_sides, needed
-from plainodds.phrases.numbers.marks import Marks, decimal_mark, marking
+from plainodds.phrases.numbers.counts import cases_apart, cases_apart_in, cases_on_sides, needed
+from plainodds.phrases.numbers.marks import Marks, marking, marks_now
 from plainodds.phrases.numbers.quantities import (
     confidence,
     count,
@@ -41,12 +40,12 @@ __all__ = [
     "Wording",
     "cases",
     "cases_apart",
+    "cases_apart_in",
     "cases_on_sides",
     "chance",
     "confidence",
     "count",
     "count_mark",
-    "decimal_mark",
     "denominator",
     "denominator_of_change",
     "frequencies",
@@ -55,8 +54,8 @@ __all__ = [
     "guarded_count",
     "level_figures",
     "marking",
+    "marks_now",
     "needed",
-    "out_of",
     "p_value",
     "percentage_points",
     "points_on_sides",
