@@ -28,7 +28,7 @@ from plainodds.phrases.german.parts import (
 from plainodds.phrases.german.texts import (
     joined,
 )
-from plainodds.phrases.labels import from_to, listed, predictor_name, value_label
+from plainodds.phrases.labels import from_to, listed, predictor_name, value_label, values_range
 from plainodds.phrases.lexicon import lexicon
 from plainodds.phrases.numbers import count, denominator, frequencies
 from plainodds.phrases.parts import (
@@ -164,7 +164,7 @@ def _line_told(answer: CurveAnswer, line: CurveLine, places: Sequence[int], scal
     path = f"von {told[0]} auf {told[1]}"
     if goes == "level":
         path = f"am Anfang bei {told[0]} und am Ende bei {told[1]}"
-    along = f"{name} {from_to(facts, line.at[start], line.at[end])}"
+    along = f"{name} ({values_range(facts, line.at[start], line.at[end])})"
     opening = f"{lead}{verb} {noun} entlang {along}" if lead else f"entlang {along} {verb} {noun}"
     text = f"{opening} {path}"
     for place, at, turn in zip(turns, values[2:], told[2:], strict=True):

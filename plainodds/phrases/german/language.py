@@ -85,7 +85,7 @@ _LEXICON = Lexicon(
     no_higher="nicht über {}",
     as_it_is="wie jetzt",
     unseen="{} (in keiner Zeile)",
-    once_shifted="{name} mancher Fälle ({cases}) nach der Verschiebung {known}",
+    once_shifted="{name} mancher Zeilen nach der Verschiebung {known}",
 )
 
 GERMAN = Language("de", "German", Marks(",", "."), _WORDING, _LEXICON)

@@ -93,6 +93,16 @@ def test_beyond_the_data_is_said():
     )
 
 
+def test_rows_that_a_shift_takes_beyond_the_data_are_said():
+    moves = (("age_years", Shift(by=100)),)
+    answer = with_german_labels(change_answer(moves=moves, beyond=("age_years",)))
+    caution = words(answer).cautions[0]
+    assert (
+        "Rohralter mancher Zeilen nach der Verschiebung (in den Daten 0 bis 110 Jahre)" in caution
+    )
+    assert faults(caution) == []
+
+
 @pytest.mark.parametrize("where", [(("age_years", (60.0, math.inf)),), Mask("a" * 64, 120)])
 @pytest.mark.parametrize("sample", ["fixed", "drawn"])
 def test_rows_chosen_and_drawn_are_said(where, sample):

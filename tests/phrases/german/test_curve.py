@@ -22,7 +22,7 @@ def test_every_figure_is_the_answers_own_and_sentences_are_german(name, audience
 def test_a_rising_curve_is_told_by_its_ends():
     told = words(with_german_labels(curve_answer())).sentences
     assert [each.replace("\u00a0", " ") for each in told] == [
-        "Entlang Rohralter von 0 bis 110 Jahre steigt die Wahrscheinlichkeit für „Rohrbruch in "
+        "Entlang Rohralter (0 bis 110 Jahre) steigt die Wahrscheinlichkeit für „Rohrbruch in "
         "diesem Winter“ von 4,7 % (95-%-Intervall 3,3 % bis 6,9 %) auf 57 % (48 % bis 67 %), das "
         "sind 47 und 574 von 1.000.",
         "Die übrigen Merkmale stehen auf ihren typischen Werten: frühere Reparaturen = 0 und "

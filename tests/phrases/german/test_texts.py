@@ -197,7 +197,8 @@ def test_every_small_phrase_takes_what_the_english_one_takes(german, english):
             continue
         told = vars(german)[name]
         assert told.count("{}") == phrase.count("{}")
-        assert all(("{" + each + "}" in told) == ("{" + each + "}" in phrase) for each in fills)
+        assert all("{" + each + "}" in phrase for each in fills if "{" + each + "}" in told)
+        assert ("{known}" in told) == ("{known}" in phrase)
         told.format("1", "2", **fills)
 
 
