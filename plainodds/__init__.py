@@ -19,6 +19,7 @@ from plainodds.phrases import (
     methods_note,
     report_table,
     words,
+    writing,
 )
 from plainodds.values import from_json, to_json
 from plainodds.views import ChangeView, CurveView, EffectsView, OddsView, PairView, ProfileView
@@ -58,6 +59,7 @@ __all__ = [
     "table",
     "to_json",
     "words",
+    "writing",
 ]
 
 display.register()

@@ -23,7 +23,7 @@ from plainodds.drawings.lettering import letter, line_height, text_width, wrappe
 from plainodds.drawings.theme import Theme
 from plainodds.phrases.labels import value_label
 from plainodds.phrases.moves import settled_moves
-from plainodds.phrases.numbers import count, denominator_of_change, frequency
+from plainodds.phrases.numbers import cases, count, denominator_of_change
 from plainodds.phrases.units import tidy
 
 __all__ = ["Counts", "Marks", "counts_of", "legend_of"]
@@ -84,10 +84,7 @@ def legend_of(answer: ChangeAnswer) -> tuple[str, tuple[tuple[str, int, str], ..
     start, end, after = _ends(answer)
     if counts.more or counts.fewer:
         kind = "more" if counts.more else "fewer"
-        now, instead = (
-            frequency(each.estimate, counts.over).removesuffix(f" in {counts.over:,}")
-            for each in (answer.end, answer.start)
-        )
+        now, instead = (cases(each.estimate, counts.over) for each in (answer.end, answer.start))
         words = f"{kind} {end}: {now} instead of {instead}"
         change = (kind, counts.more or counts.fewer, words)
     else:

@@ -16,7 +16,7 @@ from plainodds.drawings.odds_rows import Figures, Group, Slot, is_narrow
 from plainodds.drawings.theme import Theme
 from plainodds.model.predictors import PredictorFacts
 from plainodds.phrases.labels import effect_label, predictor_label
-from plainodds.phrases.numbers import NOT_KNOWN, confidence, signed
+from plainodds.phrases.numbers import NOT_KNOWN, confidence, marks_now, signed
 
 __all__ = ["Panel", "effect_texts", "figures_of", "panels_of"]
 
@@ -96,10 +96,10 @@ def effect_texts(rows: Sequence[EffectRow]) -> list[str]:
     """
     places = _decimals(rows)
     middles = [_points(row.effect.estimate, places) for row in rows]
-    whole = max((len(text.partition(".")[0]) for text in middles if text != NOT_KNOWN), default=0)
+    whole = max((_before_point(text) for text in middles if text != NOT_KNOWN), default=0)
     texts = []
     for row, middle, aligned in zip(rows, middles, align_decimals(middles), strict=True):
-        lead = FIGURE_SPACE * (whole - len(middle.partition(".")[0]))
+        lead = FIGURE_SPACE * (whole - _before_point(middle))
         low, high = row.effect.lower, row.effect.upper
         if low is None or high is None:
             texts.append(lead + middle)
@@ -136,3 +136,7 @@ def _decimals(rows: Sequence[EffectRow]) -> int:
     places = (1 if middle / 10.0**power < 3.0 else 0) - power
     least = 0 if min((each for each in sizes if each > 0), default=0.0) >= 10 else 1
     return min(_MOST_DECIMALS, max(places, least))
+
+
+def _before_point(text: str) -> int:
+    return len(text.partition(marks_now().decimal)[0])

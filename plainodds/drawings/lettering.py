@@ -18,6 +18,7 @@ from matplotlib.transforms import Transform
 
 from plainodds.drawings.stamps import StampedText
 from plainodds.drawings.theme import Theme
+from plainodds.phrases.numbers import marks_now
 
 __all__ = [
     "FIGURE_SPACE",
@@ -155,7 +156,9 @@ def align_decimals(numbers: Sequence[str]) -> list[str]:
     >>> [len(text) for text in align_decimals(["2.02", "12.3", "105"])]
     [4, 5, 6]
     """
-    after = [len(text.partition(".")[2]) if _is_number(text) else 0 for text in numbers]
+    after = [
+        len(text.partition(marks_now().decimal)[2]) if _is_number(text) else 0 for text in numbers
+    ]
     most = max(after, default=0)
     padded = []
     for text, places in zip(numbers, after, strict=True):
@@ -166,4 +169,5 @@ def align_decimals(numbers: Sequence[str]) -> list[str]:
 
 
 def _is_number(text: str) -> bool:
-    return text.replace(",", "").replace(".", "").lstrip("+−").isdigit()
+    marks, bare = marks_now(), text.lstrip("+−")
+    return bare.replace(marks.thousands, "").replace(marks.decimal, "").isdigit()

@@ -10,7 +10,7 @@ from plainodds.answers.odds import OddsAnswer, OddsRow
 from plainodds.drawings.lettering import align_decimals, line_height, text_width, wrapped
 from plainodds.drawings.theme import Theme
 from plainodds.phrases.labels import change_label, given_clause, given_label, predictor_label
-from plainodds.phrases.numbers import confidence, ratio, ratio_interval
+from plainodds.phrases.numbers import confidence, marks_now, ratio, ratio_interval
 from plainodds.phrases.unbounded import has_finite_estimate, odds_ratio_figures
 
 __all__ = [
@@ -277,7 +277,7 @@ def estimate_texts(rows: Sequence[OddsRow]) -> list[str]:
         for row, text in zip(rows, middles, strict=True)
         if text[:1].isdigit() and has_finite_estimate(row)
     ]
-    whole = max((len(text.partition(".")[0]) for text in written), default=0)
+    whole = max((_before_point(text) for text in written), default=0)
     after = dict(zip(written, align_decimals(written), strict=True))
     texts = []
     for row, middle in zip(rows, middles, strict=True):
@@ -287,9 +287,13 @@ def estimate_texts(rows: Sequence[OddsRow]) -> list[str]:
             continue
         text = middle
         if middle in after:
-            text = "\u2007" * (whole - len(middle.partition(".")[0])) + after[middle]
+            text = "\u2007" * (whole - _before_point(middle)) + after[middle]
         lower, upper = row.odds_ratio.lower, row.odds_ratio.upper
         if lower is not None and upper is not None:
             text = f"{text} ({ratio_interval(lower, upper)})"
         texts.append(text if lower is not None else text.rstrip("\u2007\u2008"))
     return texts
+
+
+def _before_point(text: str) -> int:
+    return len(text.partition(marks_now().decimal)[0])

@@ -12,12 +12,14 @@ from plainodds.phrases import (  # noqa: F401
     profile,
     soundness,
 )
+from plainodds.phrases import german as _german  # noqa: F401
 from plainodds.phrases.alternative import alternative
 from plainodds.phrases.captions import caption
 from plainodds.phrases.code import code
 from plainodds.phrases.methods import MethodsNote, methods_note
 from plainodds.phrases.reports import ReportTable, report_table
 from plainodds.phrases.saying import Words, words
+from plainodds.phrases.writing import writing
 
 __all__ = [
     "MethodsNote",
@@ -29,4 +31,5 @@ __all__ = [
     "methods_note",
     "report_table",
     "words",
+    "writing",
 ]

@@ -2,14 +2,13 @@
 
 from __future__ import annotations
 
-from functools import singledispatch
-
 from plainodds.answers.questions import Answer
+from plainodds.phrases.languages import by_language
 
 __all__ = ["alternative"]
 
 
-@singledispatch
+@by_language
 def alternative(answer: Answer) -> str:
     """Say in one or two sentences what the picture of an answer shows.
 

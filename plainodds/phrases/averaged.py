@@ -9,11 +9,13 @@ from plainodds.answers.drawn import Sampling
 from plainodds.answers.estimate import Estimate
 from plainodds.answers.where import Mask, Where
 from plainodds.model.predictors import PredictorFacts, Subject
-from plainodds.phrases.labels import from_to, listed, predictor_name, value_label
+from plainodds.phrases.labels import listed, predictor_name, value_label, values_range
+from plainodds.phrases.lexicon import lexicon
 from plainodds.phrases.numbers import guarded_count
+from plainodds.phrases.parts import counted_rows
 from plainodds.phrases.units import tidy
 
-__all__ = ["cases_chosen", "drawn_method", "drawn_words", "rows_chosen"]
+__all__ = ["cases_chosen", "drawn_method", "drawn_words", "rows_chosen", "values_chosen"]
 
 
 def cases_chosen(subject: Subject, where: Where, counted: int) -> str:
@@ -24,38 +26,39 @@ def cases_chosen(subject: Subject, where: Where, counted: int) -> str:
         return f"the {cases} chosen ({rows})"
     if not where:
         return f"{cases} like those in the data"
-    return f"{cases} with {_values(subject, where)}"
+    return lexicon().rows_with.format(cases, values_chosen(subject, where))
 
 
 def rows_chosen(subject: Subject, where: Where, counted: int) -> str:
     """The rows averaged over: "1,234 rows with soil high"."""
     rows = _rows(subject, counted)
     if isinstance(where, Mask):
-        return f"{rows} chosen by a mask"
-    return f"{rows} with {_values(subject, where)}" if where else rows
+        return lexicon().rows_masked.format(rows)
+    return lexicon().rows_with.format(rows, values_chosen(subject, where)) if where else rows
 
 
 def _rows(subject: Subject, counted: int) -> str:
-    told = guarded_count(counted, subject.smallest_cell)
-    return "1 row" if told == "1" else f"{told} rows"
+    return counted_rows(counted, guarded_count(counted, subject.smallest_cell))
 
 
-def _values(subject: Subject, where: tuple[tuple[str, Any], ...]) -> str:
+def values_chosen(subject: Subject, where: tuple[tuple[str, Any], ...]) -> str:
+    """Which values rows are chosen by: "soil high and pipe age 20 to 60 years"."""
     told = [(subject.predictor(name), held) for name, held in where]
-    return listed([f"{predictor_name(facts)} {_held(facts, held)}" for facts, held in told])
+    value = lexicon().value
+    return listed([value.format(predictor_name(facts), _held(facts, held)) for facts, held in told])
 
 
 def _held(facts: PredictorFacts, held: Any) -> str:
     if not isinstance(held, tuple):
         return value_label(facts, held)
     if not facts.is_number:
-        return " or ".join(value_label(facts, level) for level in held)
+        return lexicon().either_or.join(value_label(facts, level) for level in held)
     low, high = held
     if math.isinf(high):
-        return f"{value_label(facts, low)} or more"
+        return lexicon().or_more.format(value_label(facts, low))
     if math.isinf(low):
-        return f"{value_label(facts, high)} or less"
-    return from_to(facts, low, high).removeprefix("from ")
+        return lexicon().or_less.format(value_label(facts, high))
+    return values_range(facts, low, high)
 
 
 def drawn_words(subject: Subject, sample: Sampling, estimate: Estimate) -> list[str]:

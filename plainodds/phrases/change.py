@@ -4,9 +4,16 @@ from __future__ import annotations
 
 from plainodds.answers.change import ChangeAnswer
 from plainodds.answers.estimate import Estimate
-from plainodds.answers.moves import Shift
 from plainodds.phrases.alternative import alternative
 from plainodds.phrases.averaged import cases_chosen, drawn_method, drawn_words, rows_chosen
+from plainodds.phrases.choices.change import (
+    both_intervals,
+    change_averaged,
+    has_others,
+    is_open,
+    marks_told,
+    misses_one,
+)
 from plainodds.phrases.held import held_case, held_words, kept_words
 from plainodds.phrases.labels import sentence_case
 from plainodds.phrases.moves import (
@@ -19,13 +26,11 @@ from plainodds.phrases.moves import (
 )
 from plainodds.phrases.needed import needed_technical, needed_words
 from plainodds.phrases.numbers import (
-    cases_apart,
+    cases_apart_in,
     cases_on_sides,
     confidence,
     denominator_of_change,
-    frequencies,
     percentage_points,
-    span,
 )
 from plainodds.phrases.parts import (
     association,
@@ -51,7 +56,6 @@ from plainodds.phrases.units import tidy
 __all__: list[str] = []
 
 _EVERYTHING = 1_000_000
-_MOST_MARKS = 1_000
 
 
 @words.register
@@ -92,29 +96,16 @@ def _words(answer: ChangeAnswer, told: list[str], more: list[str]) -> Words:
     )
 
 
-def _is_averaged(answer: ChangeAnswer) -> bool:
-    """Whether anything is left in which the rows differ."""
-    if answer.question.others != "observed":
-        return False
-    shifts = any(isinstance(move, Shift) for _, move in answer.question.moves)
-    return shifts or _has_others(answer) or answer.subject.offset is not None
-
-
-def _has_others(answer: ChangeAnswer) -> bool:
-    moved = {name for name, _ in answer.question.moves}
-    return any(facts.name not in moved for facts in answer.subject.predictors)
-
-
 def _noun(answer: ChangeAnswer) -> str:
-    return "average chance" if _is_averaged(answer) else "chance"
+    return "average chance" if change_averaged(answer) else "chance"
 
 
 def _chances(answer: ChangeAnswer, over: int) -> str:
     subject, question = answer.subject, answer.question
     change = f"with {moves_words(subject, settled_moves(answer))}"
     noun = f"the {_noun(answer)} of {tidy(subject.outcome.event)}"
-    if _is_averaged(answer):
-        if _has_others(answer):
+    if change_averaged(answer):
+        if has_others(answer):
             comma = "," if len(question.moves) > 1 else ""
             change += f"{comma} and everything else as it is"
         noun += f" among {cases_chosen(subject, question.where, answer.counted)}"
@@ -126,12 +117,8 @@ def _chances(answer: ChangeAnswer, over: int) -> str:
 def _intervals(answer: ChangeAnswer) -> list[str]:
     """The intervals of both chances, in the order in which the chances are told."""
     level = confidence(answer.question.level)
-    ends = [
-        span(each.lower, each.upper)
-        for each in (answer.end, answer.start)
-        if each.lower is not None and each.upper is not None
-    ]
-    if len(ends) < 2:
+    ends = both_intervals(answer)
+    if not ends:
         return []
     return [f"The {level} intervals of the two are {ends[0]} and {ends[1]}"]
 
@@ -142,11 +129,7 @@ def _difference(answer: ChangeAnswer, over: int) -> str:
         [_cases_with_interval(answer, over), difference_with_interval(difference, level)], level
     )
     told = f"That is {cases}, or {points}"
-    if difference.lower is None or difference.upper is None:
-        return told
-    if difference.lower < 0 < difference.upper:
-        return f"{told}, which leaves open whether there are more or fewer"
-    return told
+    return f"{told}, which leaves open whether there are more or fewer" if is_open(answer) else told
 
 
 def _cases_with_interval(answer: ChangeAnswer, over: int) -> str:
@@ -155,7 +138,7 @@ def _cases_with_interval(answer: ChangeAnswer, over: int) -> str:
     def ends(lower: float, upper: float) -> str:
         return cases_on_sides(lower, upper, over)
 
-    told = f"{cases_apart(difference.estimate, over)} in {over:,}"
+    told = cases_apart_in(difference.estimate, over)
     return told + interval(difference, ends, answer.question.level)
 
 
@@ -178,16 +161,16 @@ def _others(answer: ChangeAnswer, at_most: int = 8) -> list[str]:
     question, subject = answer.question, answer.subject
     if question.others != "observed":
         return held_words(subject, answer.held, question.others, at_most=at_most)
-    if not _is_averaged(answer):
+    if not change_averaged(answer):
         return []
     rows = rows_chosen(subject, question.where, answer.counted)
-    if not _has_others(answer):
+    if not has_others(answer):
         return [f"The chances are averaged over the {rows}"]
     return [kept_words(subject, "chances", rows)]
 
 
 def _of_averages(answer: ChangeAnswer) -> list[str]:
-    if not _is_averaged(answer):
+    if not change_averaged(answer):
         return []
     return [
         "The odds ratio compares the odds of two averages; the odds ratio at given values of the "
@@ -196,11 +179,7 @@ def _of_averages(answer: ChangeAnswer) -> list[str]:
 
 
 def _rounding(answer: ChangeAnswer, over: int) -> list[str]:
-    start, end = answer.start.estimate, answer.end.estimate
-    if not (0 <= start <= 1 and 0 <= end <= 1):
-        return []
-    apart = round(abs(end - start) * over)
-    if apart == abs(round(end * over) - round(start * over)):
+    if not misses_one(answer, over):
         return []
     return ["Each figure is rounded on its own, so counts may differ by one from their difference"]
 
@@ -208,7 +187,7 @@ def _rounding(answer: ChangeAnswer, over: int) -> list[str]:
 def _technical(answer: ChangeAnswer) -> Words:
     subject, question, level = answer.subject, answer.question, answer.question.level
     compared, moves = answer.comparison, settled_moves(answer)
-    kind = "marginal odds ratio (of the averages)" if _is_averaged(answer) else "odds ratio"
+    kind = "marginal odds ratio (of the averages)" if change_averaged(answer) else "odds ratio"
     told = [
         f"{moves_label(subject, moves)}: {_noun(answer)} of {tidy(subject.outcome.event)} "
         f"at the start {_with_error(answer.start, level)}; at the end "
@@ -251,15 +230,14 @@ def _(answer: ChangeAnswer) -> str:
         [chance_with_interval(each, level) for each in (answer.start, answer.end)], level
     )
     opening = f"{sentence_case(_noun(answer))} of {tidy(subject.outcome.event)}"
-    if _is_averaged(answer):
+    if change_averaged(answer):
         opening += f" among {cases_chosen(subject, answer.question.where, answer.counted)}"
     elif answer.held:
         opening += f" for {held_case(answer.subject, answer.held, answer.question.others)}"
-    chances = answer.start.estimate, answer.end.estimate
-    marks = frequencies(chances, min(denominator_of_change(*chances), _MOST_MARKS))
     told = (
         f"{opening}: {start} with {start_label(subject, moves)} and {end} with "
         f"{end_label(subject, moves)}",
-        f"Beneath, the same as marks, {marks}, those that differ set apart by their shape",
+        f"Beneath, the same as marks, {marks_told(answer)}, those that differ set apart by their "
+        "shape",
     )
     return " ".join(map(sentence, told))

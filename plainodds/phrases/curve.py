@@ -3,11 +3,16 @@
 from __future__ import annotations
 
 from collections.abc import Sequence
-from dataclasses import replace
 
-from plainodds import scales
-from plainodds.answers.curve import CurveAnswer, CurveLine, Scale
+from plainodds.answers.curve import CurveAnswer, CurveLine
 from plainodds.phrases.alternative import alternative
+from plainodds.phrases.choices.curve import (
+    LISTED_AT_MOST,
+    as_chances,
+    extreme_points,
+    going,
+    spoken_places,
+)
 from plainodds.phrases.held import others_words
 from plainodds.phrases.labels import (
     from_to,
@@ -17,7 +22,7 @@ from plainodds.phrases.labels import (
     sentence_case,
     value_label,
 )
-from plainodds.phrases.numbers import chance, confidence, count, denominator, frequencies
+from plainodds.phrases.numbers import confidence, count, denominator, frequencies
 from plainodds.phrases.parts import (
     association,
     covariance_words,
@@ -26,15 +31,14 @@ from plainodds.phrases.parts import (
     say_level_once,
     sentence,
 )
-from plainodds.phrases.reach import beyond_words, line_words, supported_places
+from plainodds.phrases.reach import beyond_words, line_words
 from plainodds.phrases.saying import Audience, Words, for_audience, words
-from plainodds.phrases.slope import slope_line, slope_places
+from plainodds.phrases.slope import slope_line
 from plainodds.phrases.units import tidy
 from plainodds.phrases.ways import Way, estimate_at, way_of
 
 __all__: list[str] = []
 
-_LISTED_AT_MOST = 6
 _EVERYTHING = 1_000_000
 
 
@@ -51,7 +55,8 @@ def _plain(answer: CurveAnswer) -> Words:
         told = _chances_told(answer)
     if scale in ("odds", "linear_predictor"):
         told += [
-            _line_told(answer, line, _places(answer, line), way_of(scale)) for line in answer.lines
+            _line_told(answer, line, spoken_places(answer, line), way_of(scale))
+            for line in answer.lines
         ]
     return _words(answer, [*told, *others_words(answer)])
 
@@ -69,8 +74,8 @@ def _words(answer: CurveAnswer, told: Sequence[str]) -> Words:
 
 def _chances_told(answer: CurveAnswer) -> list[str]:
     """One sentence per line in chances, with frequencies over one denominator for all."""
-    lines = [_as_chances(line, answer.question.scale) for line in answer.lines]
-    places = [_places(answer, line) for line in answer.lines]
+    lines = [as_chances(line, answer.question.scale) for line in answer.lines]
+    places = [spoken_places(answer, line) for line in answer.lines]
     spoken = [
         [line.estimate[place] for place in here] for line, here in zip(lines, places, strict=True)
     ]
@@ -80,46 +85,6 @@ def _chances_told(answer: CurveAnswer) -> list[str]:
         f"that is {frequencies(chances, over)}"
         for line, here, chances in zip(lines, places, spoken, strict=True)
     ]
-
-
-def _as_chances(line: CurveLine, scale: Scale) -> CurveLine:
-    """A line of odds or of the linear predictor as chances, its interval carried over."""
-    if scale not in ("odds", "linear_predictor"):
-        return line
-
-    def carried(numbers: tuple[float, ...]) -> tuple[float, ...]:
-        # by way of η, since odds too large to be held are a chance of 1 all the same
-        eta = scales.linear_predictor_from_odds(numbers) if scale == "odds" else numbers
-        return tuple(scales.probability_from_linear_predictor(eta).tolist())
-
-    return replace(
-        line,
-        estimate=carried(line.estimate),
-        se=None,
-        lower=None if line.lower is None else carried(line.lower),
-        upper=None if line.upper is None else carried(line.upper),
-    )
-
-
-def _places(answer: CurveAnswer, line: CurveLine) -> list[int]:
-    """The points that a sentence speaks of, in the order in which it does.
-
-    All of a few; of many, the ends of the part with data, and where the curve turns.
-    """
-    if len(line.at) <= _LISTED_AT_MOST:
-        return list(range(len(line.at)))
-    places = supported_places(line)
-    if answer.question.scale == "slope":
-        return slope_places(answer, line)
-    chances = _as_chances(line, answer.question.scale).estimate
-    low = min(places, key=lambda place: chances[place])
-    high = max(places, key=lambda place: chances[place])
-    if not answer.subject.predictor(answer.question.predictor).is_number:
-        return [low, high]
-    ends = [places[0], places[-1]]
-    at_ends = {chance(chances[place]) for place in ends}
-    turns = [place for place in (low, high) if chance(chances[place]) not in at_ends]
-    return [*ends, *turns]
 
 
 def _line_told(answer: CurveAnswer, line: CurveLine, places: Sequence[int], way: Way) -> str:
@@ -137,7 +102,7 @@ def _line_told(answer: CurveAnswer, line: CurveLine, places: Sequence[int], way:
     )
     values = [value_label(facts, line.at[place]) for place in places]
     verb = "are" if way.plural else "is"
-    if len(line.at) <= _LISTED_AT_MOST:
+    if len(line.at) <= LISTED_AT_MOST:
         joint = "at" if facts.is_number else "for"
         items = [f"{text} {joint} {at}" for text, at in zip(told, values, strict=True)]
         return f"{lead}by {name}, {noun} {verb} {listed(items)}"
@@ -161,10 +126,10 @@ def _line_told(answer: CurveAnswer, line: CurveLine, places: Sequence[int], way:
 
 def _moves(line: CurveLine, start: int, end: int, way: Way) -> tuple[str, str]:
     s = "" if way.plural else "s"
-    first, last = line.estimate[start], line.estimate[end]
-    if way.bare(first) == way.bare(last):
+    goes = going(line, start, end, way)
+    if goes == "level":
         return f"start{s} at", f"and end{s} at"
-    return (f"rise{s} from" if last > first else f"fall{s} from"), "to"
+    return (f"rise{s} from" if goes == "rising" else f"fall{s} from"), "to"
 
 
 def _technical(answer: CurveAnswer) -> Words:
@@ -191,7 +156,7 @@ def _technical_line(answer: CurveAnswer, line: CurveLine) -> str:
     facts, way = answer.subject.predictor(question.predictor), way_of(question.scale)
     joint = "at" if facts.is_number else "for"
     items = []
-    for place in sorted(_places(answer, line)):
+    for place in sorted(spoken_places(answer, line)):
         point = estimate_at(line, place)
         se = "" if point.se is None else f", standard error {way.se(point.se)}"
         at = value_label(facts, line.at[place])
@@ -231,15 +196,10 @@ def _(answer: CurveAnswer) -> str:
         by = f", one for {lines}"
     start = f"{scale_title(answer)}, along {predictor_name(facts)}, {shape}{by}"
     way = way_of(question.scale)
-    ends = [
-        (line, place, line.estimate[place])
-        for line in answer.lines
-        for place in supported_places(line)
-    ]
     joint = "at" if facts.is_number else "for"
     told = []
-    for choose in (min, max):
-        line, place, number = choose(ends, key=lambda each: each[2])
+    for line, place in extreme_points(answer):
+        number = line.estimate[place]
         of = f", {line_words(answer, line)}" if line_words(answer, line) else ""
         told.append(f"{way.bare(number)} {joint} {value_label(facts, line.at[place])}{of}")
     return f"{sentence(start)} {sentence(f'The lowest is {told[0]}; the highest is {told[1]}')}"

@@ -2,13 +2,21 @@
 
 from __future__ import annotations
 
-import math
-from collections.abc import Iterable
-
 from plainodds.answers.effects import EffectRow, EffectsAnswer
 from plainodds.model.predictors import PredictorFacts
 from plainodds.phrases.alternative import alternative
 from plainodds.phrases.averaged import cases_chosen, drawn_method, drawn_words, rows_chosen
+from plainodds.phrases.choices.effects import (
+    effects_averaged,
+    groups_counted,
+    has_slopes,
+    has_tiny_slopes,
+    highest_and_lowest,
+    is_slope,
+    open_names,
+    rows_together,
+    share_is_known,
+)
 from plainodds.phrases.held import held_case
 from plainodds.phrases.labels import (
     effect_label,
@@ -39,12 +47,10 @@ from plainodds.phrases.parts import (
 )
 from plainodds.phrases.saying import Audience, Words, for_audience, words
 from plainodds.phrases.units import per_unit, tidy
-from plainodds.values import Scalar
 
 __all__: list[str] = []
 
 _EVERYTHING = 1_000_000
-_TOO_SMALL = 1e-5
 
 
 @words.register
@@ -55,7 +61,7 @@ def _(answer: EffectsAnswer, audience: Audience = "plain") -> Words:
 def _plain(answer: EffectsAnswer) -> Words:
     others = _others(answer)
     told = [*_share(answer), *_rows(answer), *others]
-    if not _is_averaged(answer):
+    if not effects_averaged(answer):
         # whose chance it is comes before how it changes
         told = [*_share(answer), *others, *_rows(answer)]
     for row in answer.rows[:1]:
@@ -64,7 +70,7 @@ def _plain(answer: EffectsAnswer) -> Words:
 
 
 def _words(answer: EffectsAnswer, told: list[str], more: list[str]) -> Words:
-    held = not _is_averaged(answer)
+    held = not effects_averaged(answer)
     return Words(
         tuple(map(sentence, told)),
         (
@@ -74,15 +80,11 @@ def _words(answer: EffectsAnswer, told: list[str], more: list[str]) -> Words:
     )
 
 
-def _is_averaged(answer: EffectsAnswer) -> bool:
-    return answer.question.others == "observed"
-
-
 def _share(answer: EffectsAnswer) -> list[str]:
     """How common the event is, since percentage points alone say nothing of that."""
-    share, subject = answer.subject.outcome.share, answer.subject
-    if subject.sampling == "case-control" or math.isnan(share):
+    if not share_is_known(answer):
         return []
+    share, subject = answer.subject.outcome.share, answer.subject
     return [
         f"In the data as a whole, the share of {tidy(subject.outcome.event)} is {chance(share)}, "
         f"that is {frequency(share)}"
@@ -91,7 +93,7 @@ def _share(answer: EffectsAnswer) -> list[str]:
 
 def _rows(answer: EffectsAnswer) -> list[str]:
     told = []
-    for place, rows in enumerate(_together(answer)):
+    for place, rows in enumerate(rows_together(answer)):
         facts = answer.subject.predictor(rows[0].predictor)
         noun = _noun(answer, in_full=place == 0)
         items = [_difference(row, answer.question.level) for row in rows]
@@ -102,17 +104,7 @@ def _rows(answer: EffectsAnswer) -> list[str]:
 
 def _difference(row: EffectRow, level: float) -> str:
     told = difference_with_interval(row.effect, level)
-    is_rate = row.start is None and row.step is None
-    return f"about {told}" if is_rate and told[0].isdigit() else told
-
-
-def _together(answer: EffectsAnswer) -> Iterable[list[EffectRow]]:
-    """Rows of one sentence: a predictor's levels, or one change in each of the groups."""
-    sentences: dict[tuple[str, Scalar | None], list[EffectRow]] = {}
-    for row in answer.rows:
-        change = None if answer.question.by is None else row.end
-        sentences.setdefault((row.predictor, change), []).append(row)
-    return sentences.values()
+    return f"about {told}" if is_slope(row) and told[0].isdigit() else told
 
 
 def _opening(facts: PredictorFacts, rows: list[EffectRow]) -> str:
@@ -147,7 +139,7 @@ def _group(answer: EffectsAnswer, row: EffectRow, *, first: bool) -> str:
     facts = answer.subject.predictor(answer.question.by or "")
     if row.by is None:
         return ""
-    if not _is_averaged(answer):
+    if not effects_averaged(answer):
         return f"given {predictor_name(facts)} {value_label(facts, row.by)}"
     if first:
         among = "those" if answer.question.where else tidy(answer.subject.outcome.cases)
@@ -160,7 +152,7 @@ def _group(answer: EffectsAnswer, row: EffectRow, *, first: bool) -> str:
 def _noun(answer: EffectsAnswer, *, in_full: bool) -> str:
     """Which chance differs, in full in the first sentence."""
     event = f" of {tidy(answer.subject.outcome.event)}" if in_full else ""
-    if not _is_averaged(answer):
+    if not effects_averaged(answer):
         whom = f"that {tidy(answer.subject.outcome.case)}"
         if in_full:
             whom = held_case(answer.subject, answer.held, answer.question.others)
@@ -174,7 +166,7 @@ def _noun(answer: EffectsAnswer, *, in_full: bool) -> str:
 
 def _others(answer: EffectsAnswer, at_most: int = 8) -> list[str]:
     subject = answer.subject
-    if not _is_averaged(answer):
+    if not effects_averaged(answer):
         if not answer.held:
             return []
         held = profile_words(subject, answer.held, at_most=at_most)
@@ -189,11 +181,10 @@ def _counted(answer: EffectsAnswer) -> str:
     if question.by is None:
         return f"the {rows_chosen(subject, question.where, sum(answer.counted))}"
     facts = subject.predictor(question.by)
-    groups = dict.fromkeys(row.by for row in answer.rows if row.by is not None)
     told = [
         f"{rows_chosen(subject, None, counted)} with {predictor_name(facts)} "
         f"{value_label(facts, level)}"
-        for level, counted in zip(groups, answer.counted, strict=True)
+        for level, counted in groups_counted(answer)
     ]
     of = rows_chosen(subject, question.where, sum(answer.counted))
     return f"the {of}: {listed(told)}"
@@ -201,32 +192,25 @@ def _counted(answer: EffectsAnswer) -> str:
 
 def _open(answer: EffectsAnswer) -> list[str]:
     """For which predictors an interval holds changes in both directions."""
-    found = {
-        predictor_name(answer.subject.predictor(row.predictor)): None
-        for row in answer.rows
-        if row.effect.lower is not None
-        and row.effect.upper is not None
-        and row.effect.lower < 0 < row.effect.upper
-    }
+    found = open_names(answer)
     if not found:
         return []
     return [
-        f"Where an interval goes from lower to higher, as for {listed(list(found))}, the data "
+        f"Where an interval goes from lower to higher, as for {listed(found)}, the data "
         "leave open which way the chance differs"
     ]
 
 
 def _slopes(answer: EffectsAnswer) -> list[str]:
     """What a figure per unit is, and what to ask where it is too small to be written."""
-    slopes = [row for row in answer.rows if row.start is None and row.step is None]
-    if not slopes:
+    if not has_slopes(answer):
         return []
     case = tidy(answer.subject.outcome.case)
-    own = f"at each {case}'s own value" if _is_averaged(answer) else f"at that {case}'s value"
+    own = f"at each {case}'s own value" if effects_averaged(answer) else f"at that {case}'s value"
     told = [
         f"A figure per unit is the rate {own}; over a larger change the chance need not keep to it"
     ]
-    if any(0 < abs(row.effect.estimate) < _TOO_SMALL for row in slopes):
+    if has_tiny_slopes(answer):
         told.append("Where a figure per unit is too small to be written out, ask for a whole step")
     return told
 
@@ -237,7 +221,7 @@ def _technical(answer: EffectsAnswer) -> Words:
     kind = "Average marginal effects (AME)"
     if question.others == "typical":
         kind = "Marginal effects at the typical profile (medians and most frequent levels)"
-    elif not _is_averaged(answer):
+    elif not effects_averaged(answer):
         kind = "Marginal effects at a stated profile (MER), what is not stated being typical"
     method = (
         f"{kind}: dπ/dx of numbers through every column that they move, and discrete changes of "
@@ -248,7 +232,7 @@ def _technical(answer: EffectsAnswer) -> Words:
             f"; {confidence(question.level)} intervals and p-values (Wald tests of no change) by "
             f"the delta method with exact gradients, with {covariance_words(subject)}"
         )
-        if _is_averaged(answer):
+        if effects_averaged(answer):
             method += f"; rows weighted as fitted{drawn_method(question.sample)}"
     return _words(answer, [*told, *_others(answer, _EVERYTHING), method], [])
 
@@ -260,9 +244,8 @@ def _technical_row(answer: EffectsAnswer, row: EffectRow) -> str:
     if question.by is not None and row.by is not None:
         by = subject.predictor(question.by)
         label += f"; {predictor_name(by)} {value_label(by, row.by)}"
-    slope = row.start is None and row.step is None
-    kind = "marginal effect dπ/dx" if slope else "discrete change"
-    average = "average " if _is_averaged(answer) else ""
+    kind = "marginal effect dπ/dx" if is_slope(row) else "discrete change"
+    average = "average " if effects_averaged(answer) else ""
     text = f"{label}: {average}{kind} {points_with_interval(row.effect, question.level)}"
     if row.effect.se is not None:
         text += f", standard error {percentage_points(row.effect.se)}"
@@ -273,18 +256,16 @@ def _technical_row(answer: EffectsAnswer, row: EffectRow) -> str:
 def _(answer: EffectsAnswer) -> str:
     rows, level = answer.rows, answer.question.level
     event = tidy(answer.subject.outcome.event)
-    average = "average " if _is_averaged(answer) else ""
+    average = "average " if effects_averaged(answer) else ""
     changes = "1 change" if len(rows) == 1 else f"{len(rows)} changes"
     start = f"{changes} of the {average}chance of {event} as points on an axis of percentage points"
     if any(row.effect.lower is not None for row in rows):
         start += f", with lines for their {confidence(level)} intervals"
-    known = [row for row in rows if not math.isnan(row.effect.estimate)]
+    known = highest_and_lowest(answer)
     if not known:
         return sentence(start)
-    highest = max(known, key=lambda row: row.effect.estimate)
-    lowest = min(known, key=lambda row: row.effect.estimate)
-    told = f"{'It' if len(rows) == 1 else 'The highest'} is {_short(answer, highest)}"
-    if lowest is not highest:
+    told = f"{'It' if len(rows) == 1 else 'The highest'} is {_short(answer, known[0])}"
+    for lowest in known[1:]:
         told += f"; the lowest is {_short(answer, lowest)}"
     return f"{sentence(start)} {sentence(told)}"
 

@@ -5,12 +5,11 @@ from __future__ import annotations
 import math
 
 from plainodds.answers.profile import ProfileAnswer, ProfilePoint
-from plainodds.phrases.labels import listed, predictor_name, value_label
-from plainodds.phrases.numbers import guarded_count, quantity
+from plainodds.phrases.labels import data_range, listed, named_value
+from plainodds.phrases.numbers import guarded_count
 from plainodds.phrases.parts import rows_words
-from plainodds.phrases.units import with_unit
 
-__all__ = ["familiarity_cautions", "familiarity_words"]
+__all__ = ["familiarity_cautions", "familiarity_words", "values_outside"]
 
 
 def familiarity_words(answer: ProfileAnswer) -> list[str]:
@@ -37,14 +36,7 @@ def _cautions(answer: ProfileAnswer, point: ProfilePoint, which: str) -> list[st
         return []
     if math.isnan(found.largest_leverage):
         return ["The model carries no rows any more, so nobody can tell how familiar it is"]
-    values = dict(point.values)
-    outside = []
-    for facts in map(subject.predictor, found.beyond):
-        told = f"{predictor_name(facts)} {value_label(facts, values[facts.name])}"
-        if facts.is_number:
-            low, high = quantity(facts.minimum), with_unit(facts.maximum, facts.unit)
-            told += f" (the data have {low} to {high})"
-        outside.append(told)
+    outside = values_outside(answer, point)
     if outside:
         return [
             f"{which} lies beyond the data: {listed(outside)}; there the model speaks on its own"
@@ -64,3 +56,13 @@ def _cautions(answer: ProfileAnswer, point: ProfilePoint, which: str) -> list[st
         f"Only {alike} much like {which}, and its values are combined more unusually than in 99% "
         "of rows"
     ]
+
+
+def values_outside(answer: ProfileAnswer, point: ProfilePoint) -> list[str]:
+    """Values of a profile that lie outside the data's range, each with that range."""
+    values = dict(point.values)
+    outside = []
+    for facts in map(answer.subject.predictor, point.familiarity.beyond):
+        told = named_value(facts, values[facts.name])
+        outside.append(f"{told} {data_range(facts)}" if facts.is_number else told)
+    return outside

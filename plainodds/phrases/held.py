@@ -8,7 +8,7 @@ from plainodds.phrases.parts import case_words, profile_words, rows_words
 from plainodds.phrases.units import tidy
 from plainodds.values import Pairs
 
-__all__ = ["held_case", "held_words", "kept_words", "others_words"]
+__all__ = ["held_case", "held_words", "kept_words", "others_words", "stated_and_typical"]
 
 
 def others_words(answer: CurveAnswer, *, at_most: int = 8) -> list[str]:
@@ -25,9 +25,7 @@ def others_words(answer: CurveAnswer, *, at_most: int = 8) -> list[str]:
 
 def held_words(subject: Subject, held: Pairs, others: Others, *, at_most: int = 8) -> list[str]:
     """Say at which values predictors are held, those stated before those typical."""
-    chosen = set() if isinstance(others, str) else {name for name, _ in others}
-    stated = tuple(pair for pair in held if pair[0] in chosen)
-    typical = tuple(pair for pair in held if pair[0] not in chosen)
+    stated, typical = stated_and_typical(held, others)
     told = []
     if stated:
         told.append(f"Held as stated: {profile_words(subject, stated, at_most=at_most)}")
@@ -42,10 +40,16 @@ def held_words(subject: Subject, held: Pairs, others: Others, *, at_most: int = 
     return told
 
 
+def stated_and_typical(held: Pairs, others: Others) -> tuple[Pairs, Pairs]:
+    """Which of the held values were stated, and which are typical ones."""
+    chosen = set() if isinstance(others, str) else {name for name, _ in others}
+    stated = tuple(pair for pair in held if pair[0] in chosen)
+    return stated, tuple(pair for pair in held if pair[0] not in chosen)
+
+
 def held_case(subject: Subject, held: Pairs, others: Others) -> str:
     """Whom a held profile describes: "a pipe with lined yes, otherwise typical"."""
-    names = set() if isinstance(others, str) else {name for name, _ in others}
-    stated = tuple(pair for pair in held if pair[0] in names)
+    stated, _ = stated_and_typical(held, others)
     return case_words(subject, stated, whole=len(stated) == len(held))
 
 

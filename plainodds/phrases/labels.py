@@ -11,14 +11,16 @@ from plainodds.answers.curve import CurveAnswer, Scale
 from plainodds.answers.effects import EffectRow, EffectsAnswer
 from plainodds.answers.odds import OddsRow
 from plainodds.model.predictors import OutcomeFacts, PredictorFacts, Subject
-from plainodds.phrases.numbers import quantity
-from plainodds.phrases.units import per_unit, step, tidy, with_unit
+from plainodds.phrases.lexicon import lexicon
+from plainodds.phrases.numbers import quantity, wording
+from plainodds.phrases.units import one_line, per_unit, step, tidy, with_unit
 from plainodds.values import Pairs, Scalar
 
 __all__ = [
     "axis_title",
     "chance_of",
     "change_label",
+    "data_range",
     "effect_label",
     "effects_title",
     "from_to",
@@ -27,6 +29,7 @@ __all__ = [
     "in_sentence",
     "line_label",
     "listed",
+    "named_value",
     "odds_of_event",
     "predictor_label",
     "predictor_name",
@@ -35,9 +38,11 @@ __all__ = [
     "sentence_case",
     "step_label",
     "value_label",
+    "values_range",
 ]
 
-_BLANK = "(blank)"
+# what a yes/no is called whose levels have no labels of their own
+_YES_NO = ("no", "yes")
 _STARTS: dict[Scale, str] = {
     "probability": "Chance of",
     "odds": "Odds of",
@@ -54,7 +59,7 @@ def sentence_case(text: str) -> str:
     >>> sentence_case("pipe age"), sentence_case("pH of soil")
     ('Pipe age', 'pH of soil')
     """
-    text = tidy(text)
+    text = one_line(text)
     first = text.split(" ", 1)[0]
     return text[:1].upper() + text[1:] if first == first.lower() else text
 
@@ -70,6 +75,8 @@ def in_sentence(text: str) -> str:
     ('pipe age', 'BMI at entry', 'pH')
     """
     text = tidy(text)
+    if lexicon().nouns_keep_capitals:
+        return text
     first = text.split(" ", 1)[0]
     plain_word = len(first) > 2 and first.isalpha() and first == first.capitalize()
     return text[:1].lower() + text[1:] if plain_word else text
@@ -77,7 +84,7 @@ def in_sentence(text: str) -> str:
 
 def predictor_label(facts: PredictorFacts) -> str:
     """What a predictor is called, as a heading."""
-    return sentence_case(facts.label) or tidy(facts.name)
+    return sentence_case(tidy(facts.label)) or tidy(facts.name)
 
 
 def predictor_name(facts: PredictorFacts) -> str:
@@ -106,10 +113,12 @@ def value_label(facts: PredictorFacts, value: Scalar) -> str:
         For example "40 years", "1 year" or "cast iron".
     """
     if not facts.is_number:
+        if facts.kind == "yes/no" and facts.level_labels == _YES_NO and value in facts.levels:
+            return lexicon().yes if value else lexicon().no
         label = facts.level_label(value) if value in facts.levels else str(value)
-        return tidy(label) or tidy(str(value)) or _BLANK
+        return tidy(label) or tidy(str(value)) or lexicon().blank
     if isinstance(value, str):
-        return tidy(value) or _BLANK
+        return tidy(value) or lexicon().blank
     return with_unit(float(value), facts.unit)
 
 
@@ -129,8 +138,8 @@ def line_label(facts: PredictorFacts, value: Scalar) -> str:
 
 def step_label(facts: PredictorFacts, size: float) -> str:
     """A change by a step: "per year more", "per 10 years more", "per 5 units less"."""
-    direction = "less" if size < 0 else "more"
-    return f"per {step(abs(size), facts.unit)} {direction}"
+    phrase = lexicon().per_less if size < 0 else lexicon().per_more
+    return phrase.format(step(abs(size), facts.unit))
 
 
 def change_label(facts: PredictorFacts, row: OddsRow) -> str:
@@ -143,7 +152,7 @@ def change_label(facts: PredictorFacts, row: OddsRow) -> str:
         where it does not, "PVC against cast iron" for levels.
     """
     if not facts.is_number or isinstance(row.start, str) or isinstance(row.end, str):
-        return f"{value_label(facts, row.end)} against {value_label(facts, row.start)}"
+        return lexicon().against.format(value_label(facts, row.end), value_label(facts, row.start))
     if row.per_step:
         return step_label(facts, float(row.end) - float(row.start))
     return from_to(facts, row.start, row.end)
@@ -151,10 +160,15 @@ def change_label(facts: PredictorFacts, row: OddsRow) -> str:
 
 def from_to(facts: PredictorFacts, start: Scalar, end: Scalar) -> str:
     """A change between two values, the unit said once: "from 20 to 60 years"."""
+    return lexicon().from_to.format(values_range(facts, start, end))
+
+
+def values_range(facts: PredictorFacts, start: Scalar, end: Scalar) -> str:
+    """Two values as a range, the unit said once: "20 to 60 years"."""
     low, high = value_label(facts, start), value_label(facts, end)
     if facts.is_number and high.startswith(f"{quantity(float(end))} "):
         low = quantity(float(start))
-    return f"from {low} to {high}"
+    return wording().to.format(low, high)
 
 
 def effect_label(facts: PredictorFacts, row: EffectRow) -> str:
@@ -167,10 +181,10 @@ def effect_label(facts: PredictorFacts, row: EffectRow) -> str:
         cast iron" for levels.
     """
     if row.start is not None and row.end is not None:
-        return f"{value_label(facts, row.end)} against {value_label(facts, row.start)}"
+        return lexicon().against.format(value_label(facts, row.end), value_label(facts, row.start))
     if row.step is not None:
         return step_label(facts, row.step)
-    return f"per additional {per_unit(facts.unit)}"
+    return lexicon().per_additional.format(per_unit(facts.unit))
 
 
 def row_label(subject: Subject, row: OddsRow) -> str:
@@ -186,21 +200,31 @@ def given_label(subject: Subject, given: Pairs) -> str:
 
 
 def _held_words(subject: Subject, name: str, value: Scalar) -> str:
-    facts = subject.predictor(name)
-    return f"{predictor_name(facts)} {value_label(facts, value)}"
+    return named_value(subject.predictor(name), value)
+
+
+def named_value(facts: PredictorFacts, value: Scalar) -> str:
+    """A predictor's name with a value: "pipe age 40 years"."""
+    return lexicon().value.format(predictor_name(facts), value_label(facts, value))
+
+
+def data_range(facts: PredictorFacts) -> str:
+    """The range of a number in the data: "(the data have 0 to 110 years)"."""
+    low, high = quantity(facts.minimum), with_unit(facts.maximum, facts.unit)
+    return lexicon().data_range.format(low, high)
 
 
 def given_clause(subject: Subject, given: Pairs) -> str:
     """Stated values, as part of a sentence: "given soil high and pipe age 40 years"."""
     told = [_held_words(subject, name, value) for name, value in given]
-    return f"given {listed(told)}" if told else ""
+    return lexicon().given.format(listed(told)) if told else ""
 
 
 def listed(items: list[str]) -> str:
     """Join as in speech: "a", "a and b", "a, b and c"."""
     if len(items) < 2:
         return "".join(items)
-    return f"{', '.join(items[:-1])} and {items[-1]}"
+    return wording().both.format(", ".join(items[:-1]), items[-1])
 
 
 def chance_of(outcome: OutcomeFacts) -> str:

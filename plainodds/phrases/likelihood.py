@@ -10,7 +10,7 @@ from plainodds.phrases.numbers import confidence, ratio
 from plainodds.phrases.parts import covariance_words, ratio_with_interval
 from plainodds.phrases.unbounded import has_finite_estimate, odds_ratio_figures
 
-__all__ = ["interval_method", "likelihood_cautions", "odds_ratio_words"]
+__all__ = ["interval_method", "likelihood_cautions", "names_open", "odds_ratio_words", "open_ends"]
 
 
 def odds_ratio_words(row: OddsRow, level: float) -> str:
@@ -21,7 +21,7 @@ def odds_ratio_words(row: OddsRow, level: float) -> str:
     str
         "12.3 (95% interval from 1.42, no upper end)" where there is none.
     """
-    open_below, open_above = _open_ends(row)
+    open_below, open_above = open_ends(row)
     odds = row.odds_ratio
     if not has_finite_estimate(row) and odds.lower is None:
         return odds_ratio_figures(row)[0]
@@ -36,10 +36,17 @@ def odds_ratio_words(row: OddsRow, level: float) -> str:
     return f"{figure} ({confidence(level)} interval {told})"
 
 
-def _open_ends(row: OddsRow) -> tuple[bool, bool]:
+def open_ends(row: OddsRow) -> tuple[bool, bool]:
     """Whether an end does not exist; on the log scale, since exp of a large number overflows."""
     logs = row.log_odds_ratio
     return logs.lower == -math.inf, logs.upper == math.inf
+
+
+def names_open(answer: OddsAnswer, place: int) -> list[str]:
+    """The predictors of which an interval has no lower end (place 0), or no upper one (1)."""
+    found = (row for row in answer.rows if open_ends(row)[place])
+    names = (predictor_name(answer.subject.predictor(row.predictor)) for row in found)
+    return list(dict.fromkeys(names))
 
 
 def likelihood_cautions(answer: OddsAnswer) -> tuple[str, ...]:
@@ -51,14 +58,10 @@ def likelihood_cautions(answer: OddsAnswer) -> tuple[str, ...]:
         "still about as well explained as under the best one."
     ]
     for place, end, further in ((1, "upper", "larger"), (0, "lower", "smaller")):
-        names = {
-            predictor_name(answer.subject.predictor(row.predictor)): None
-            for row in answer.rows
-            if _open_ends(row)[place]
-        }
+        names = names_open(answer, place)
         if names:
             told.append(
-                f"There is no {end} end for {listed(list(names))}: the data do not rule out any "
+                f"There is no {end} end for {listed(names)}: the data do not rule out any "
                 f"{further} value."
             )
     return tuple(told)

@@ -11,12 +11,15 @@ from plainodds.answers.change import ChangeAnswer
 from plainodds.answers.moves import Move, Shift, shifted
 from plainodds.model.predictors import PredictorFacts, Subject
 from plainodds.phrases.labels import (
+    data_range,
     from_to,
     listed,
+    named_value,
     predictor_label,
     predictor_name,
     value_label,
 )
+from plainodds.phrases.lexicon import lexicon
 from plainodds.phrases.numbers import quantity
 from plainodds.phrases.units import tidy, with_unit
 from plainodds.values import Scalar
@@ -25,6 +28,8 @@ __all__ = [
     "Moves",
     "beyond_cautions",
     "end_label",
+    "end_rather_than_start",
+    "ends_beyond",
     "moves_label",
     "moves_words",
     "settled_moves",
@@ -58,15 +63,15 @@ def moves_words(subject: Subject, moves: Moves) -> str:
 
 
 def _move_words(facts: PredictorFacts, move: Move | Shift) -> str:
-    name = predictor_name(facts)
+    say, name = lexicon(), predictor_name(facts)
     if isinstance(move, Shift):
         return f"{name} {shift_label(facts, move)}"
     if move.start == move.end:
-        return f"{name} {value_label(facts, move.end)} either way"
-    return f"{name} {_end_rather_than_start(facts, move.start, move.end)}"
+        return say.either_way.format(say.value.format(name, value_label(facts, move.end)))
+    return say.value.format(name, end_rather_than_start(facts, move.start, move.end))
 
 
-def _end_rather_than_start(facts: PredictorFacts, start: Scalar, end: Scalar) -> str:
+def end_rather_than_start(facts: PredictorFacts, start: Scalar, end: Scalar) -> str:
     """Two values, the unit said once: "60 rather than 20 years"."""
     after, before = value_label(facts, end), value_label(facts, start)
     if facts.is_number and quantity(float(start)) != "1":
@@ -74,7 +79,7 @@ def _end_rather_than_start(facts: PredictorFacts, start: Scalar, end: Scalar) ->
         written = quantity(float(start))
         if before.startswith(f"{written} "):
             after = quantity(float(end))
-    return f"{after} rather than {before}"
+    return lexicon().rather.format(after, before)
 
 
 def shift_label(facts: PredictorFacts, shift: Shift) -> str:
@@ -82,33 +87,40 @@ def shift_label(facts: PredictorFacts, shift: Shift) -> str:
 
     A cap is put in brackets: "10 years less than it is (moved no lower than 0 years)".
     """
-    steps = []
+    say, steps = lexicon(), []
     if shift.times != 1:
         steps.append(_times_words(facts, shift.times))
     if shift.by != 0:
-        steps.append(f"{_amount(facts, abs(shift.by))} {'less' if shift.by < 0 else 'more'}")
-    told = f"{' and then '.join(steps)} than it is"
-    if shift.by == 0 and told.startswith("multiplied"):
-        told = steps[0]
+        side = say.shifted_less if shift.by < 0 else say.shifted_more
+        steps.append(side.format(_amount(facts, abs(shift.by))))
+    told = say.and_then.join(steps)
+    # what is multiplied is so, not "than it is"
+    if shift.by != 0 or not _is_multiplied(facts, shift.times):
+        told = say.than_it_is.format(told)
     caps = []
     if shift.lowest is not None:
-        caps.append(f"no lower than {value_label(facts, shift.lowest)}")
+        caps.append(say.no_lower.format(value_label(facts, shift.lowest)))
     if shift.highest is not None:
-        caps.append(f"no higher than {value_label(facts, shift.highest)}")
-    return f"{told} (moved {' and '.join(caps)})" if caps else told
+        caps.append(say.no_higher.format(value_label(facts, shift.highest)))
+    return say.moved.format(told, listed(caps)) if caps else told
+
+
+def _is_multiplied(facts: PredictorFacts, times: float) -> bool:
+    # of a predictor in percent, "10% more" could be read as ten points more
+    return tidy(facts.unit) == "%" or not 0 < times <= 2
 
 
 def _times_words(facts: PredictorFacts, times: float) -> str:
-    # of a predictor in percent, "10% more" could be read as ten points more
-    if tidy(facts.unit) == "%" or not 0 < times <= 2:
-        return f"multiplied by {quantity(times)}"
-    return f"{quantity(100 * abs(times - 1), '%')} {'less' if times < 1 else 'more'}"
+    if _is_multiplied(facts, times):
+        return lexicon().times.format(quantity(times))
+    side = lexicon().shifted_less if times < 1 else lexicon().shifted_more
+    return side.format(quantity(100 * abs(times - 1), "%"))
 
 
 def _amount(facts: PredictorFacts, size: float) -> str:
     if tidy(facts.unit) == "%":
-        one = quantity(size) == "1"
-        return f"{quantity(size)} percentage point{'' if one else 's'}"
+        point = lexicon().point if quantity(size) == "1" else lexicon().points
+        return f"{quantity(size)} {point}"
     return with_unit(size, facts.unit)
 
 
@@ -122,7 +134,8 @@ def moves_label(subject: Subject, moves: Moves) -> str:
         elif facts.is_number:
             text = from_to(facts, move.start, move.end)
         else:
-            text = f"{value_label(facts, move.end)} against {value_label(facts, move.start)}"
+            ends = value_label(facts, move.end), value_label(facts, move.start)
+            text = lexicon().against.format(*ends)
         told.append(f"{predictor_label(facts) if not told else predictor_name(facts)} {text}")
     return "; ".join(told)
 
@@ -142,21 +155,16 @@ def _ends(subject: Subject, moves: Moves, place: str) -> str:
     for name, move in moves:
         facts = subject.predictor(name)
         if isinstance(move, Move):
-            text = value_label(facts, getattr(move, place))
+            told.append(named_value(facts, getattr(move, place)))
         else:
-            text = shift_label(facts, move) if place == "end" else "as it is"
-        told.append(f"{predictor_name(facts)} {text}")
+            text = shift_label(facts, move) if place == "end" else lexicon().as_it_is
+            told.append(f"{predictor_name(facts)} {text}")
     return listed(told)
 
 
 def beyond_cautions(answer: ChangeAnswer) -> list[str]:
     """Where a change leaves the data's range; empty where it does not."""
-    moves, subject = dict(settled_moves(answer)), answer.subject
-    outside = [
-        told
-        for name in answer.beyond
-        if (told := _outside(subject, subject.predictor(name), moves[name]))
-    ]
+    outside = ends_beyond(answer)
     if not outside:
         return []
     return [
@@ -164,23 +172,33 @@ def beyond_cautions(answer: ChangeAnswer) -> list[str]:
     ]
 
 
+def ends_beyond(answer: ChangeAnswer) -> list[str]:
+    """For each predictor that leaves the data's range, which of its values do."""
+    moves, subject = dict(settled_moves(answer)), answer.subject
+    return [
+        told
+        for name in answer.beyond
+        if (told := _outside(subject, subject.predictor(name), moves[name]))
+    ]
+
+
 def _outside(subject: Subject, facts: PredictorFacts, move: Move | Shift) -> str:
-    name = predictor_name(facts)
+    say, name = lexicon(), predictor_name(facts)
     if not facts.is_number and isinstance(move, Move):
         unseen = [
             value_label(facts, level)
             for level in dict.fromkeys((move.start, move.end))
             if facts.level_counts[facts.levels.index(level)] == 0
         ]
-        return f"{name} {listed(unseen)}, which no row has"
-    low, high = quantity(facts.minimum), with_unit(facts.maximum, facts.unit)
-    known = f"(the data have {low} to {high})"
+        return say.unseen.format(say.value.format(name, listed(unseen)))
+    known = data_range(facts)
     if isinstance(move, Shift):
-        return f"{name} of some {tidy(subject.outcome.cases)} once shifted {known}"
+        cases = tidy(subject.outcome.cases)
+        return say.once_shifted.format(name=name, cases=cases, known=known)
     ends = [
         value_label(facts, end)
         for end in dict.fromkeys((move.start, move.end))
         if not facts.minimum <= float(end) <= facts.maximum
     ]
     # a shift that takes some rows beyond the data may leave the profile within them
-    return f"{name} {listed(ends)} {known}" if ends else ""
+    return f"{say.value.format(name, listed(ends))} {known}" if ends else ""

@@ -4,10 +4,18 @@ from __future__ import annotations
 
 import math
 
-from plainodds import scales
 from plainodds.answers.odds import OddsAnswer, OddsRow
 from plainodds.model.predictors import PredictorFacts
 from plainodds.phrases.alternative import alternative
+from plainodds.phrases.choices.odds import (
+    curved_names,
+    extreme_names,
+    highest_and_lowest,
+    modified_names,
+    moved_chances,
+    side_of,
+    typical_chance,
+)
 from plainodds.phrases.concerns import sparse_cautions
 from plainodds.phrases.labels import (
     change_label,
@@ -30,12 +38,10 @@ from plainodds.phrases.numbers import (
     denominator,
     frequency,
     p_value,
-    ratio,
 )
 from plainodds.phrases.parts import (
     association,
     beyond_saying,
-    is_beyond_saying,
     model_cautions,
     rather,
     rows_words,
@@ -64,8 +70,8 @@ def _(answer: OddsAnswer, audience: Audience = "plain") -> Words:
 
 
 def _plain(answer: OddsAnswer) -> Words:
-    moves = [_chances(answer, row) for row in answer.rows]
-    typical = _typical_chance(answer)
+    moves = [moved_chances(answer, row) for row in answer.rows]
+    typical = typical_chance(answer)
     known = [typical, *(each for move in moves if move for each in move)]
     over = denominator(known)
     told = [
@@ -75,14 +81,6 @@ def _plain(answer: OddsAnswer) -> Words:
     start = [] if math.isnan(typical) else [_typical(answer, over)]
     cautions = (*_reading(answer, known), association(answer.subject), *_cautions(answer))
     return Words((*start, *told), (*cautions, *model_cautions(answer.subject)))
-
-
-def _typical_chance(answer: OddsAnswer) -> float:
-    """The chance at the typical profile; not known where the sample tells no chances."""
-    subject = answer.subject
-    if subject.sampling == "case-control" and subject.prevalence is None:
-        return math.nan
-    return answer.typical_probability
 
 
 def _cautions(answer: OddsAnswer) -> tuple[str, ...]:
@@ -143,50 +141,17 @@ def _change(facts: PredictorFacts, row: OddsRow) -> str:
 
 def _odds_words(row: OddsRow, level: float) -> str:
     """What happens to the odds, to follow "the odds are"."""
-    estimate = row.odds_ratio
-    number = estimate.estimate
-    if math.isnan(number):
+    side = side_of(row)
+    if side == "not known":
         return "multiplied by a number that is not known"
     multiplied = f"multiplied by {odds_ratio_words(row, level)}"
-    if estimate.lower is None or estimate.upper is None:
-        both_sides = False
-    else:
-        both_sides = estimate.lower <= 1 <= estimate.upper
-    if both_sides:
+    if side == "open":
         return f"{multiplied}, which leaves open whether they are higher or lower"
-    if ratio(number) == "1.00":
-        return multiplied
-    return f"{'higher' if number > 1 else 'lower'}, {multiplied}"
-
-
-def _chances(answer: OddsAnswer, row: OddsRow) -> tuple[float, float] | None:
-    """The chance at the typical profile before and after this row's change.
-
-    Only where the answer's numbers give them exactly: where the change starts from the
-    typical profile, or where another row leads from this one's start to it.
-    """
-    subject = answer.subject
-    typical = subject.predictor(row.predictor).typical
-    given_typical = all(subject.predictor(name).typical == held for name, held in row.given)
-    if row.model or not given_typical or not 0 < _typical_chance(answer) < 1:
-        return None
-    start = float(scales.linear_predictor_from_probability(answer.typical_probability))
-    if not row.per_step and row.start != typical:
-        leading = [each for each in answer.rows if _alike(each, row) and each.end == typical]
-        start -= leading[0].log_odds_ratio.estimate if leading else math.nan
-    end = start + row.log_odds_ratio.estimate
-    if not (math.isfinite(start) and math.isfinite(end)):
-        return None
-    before, after = scales.probability_from_linear_predictor([start, end])
-    return float(before), float(after)
-
-
-def _alike(one: OddsRow, other: OddsRow) -> bool:
-    return (one.predictor, one.start, one.given) == (other.predictor, other.start, other.given)
+    return multiplied if side == "same" else f"{side}, {multiplied}"
 
 
 def _reading(answer: OddsAnswer, chances: list[float]) -> tuple[str, ...]:
-    typical = _typical_chance(answer)
+    typical = typical_chance(answer)
     plain = "An odds ratio is not a ratio of chances"
     if math.isnan(typical):
         return (f"{plain}; the two are close only where the chances are under about 10%.",)
@@ -205,21 +170,11 @@ def _reading(answer: OddsAnswer, chances: list[float]) -> tuple[str, ...]:
 
 def _changes(answer: OddsAnswer) -> tuple[str, ...]:
     """Why some rows are stated at values of another predictor, or between two values."""
-    subject = answer.subject
-    modified: dict[str, tuple[str, ...]] = {}
-    curved: list[str] = []
-    for row in answer.rows:
-        name = predictor_name(subject.predictor(row.predictor))
-        if row.given:
-            modifiers = (predictor_name(subject.predictor(each)) for each, _ in row.given)
-            modified.setdefault(name, tuple(modifiers))
-        facts = subject.predictor(row.predictor)
-        if facts.is_number and not facts.linear and name not in curved:
-            curved.append(name)
+    curved = curved_names(answer)
     told = [
         f"The odds ratio for {name} depends on {listed(list(others))}, so it is stated at values "
         f"of {'these' if len(others) > 1 else 'that predictor'}."
-        for name, others in modified.items()
+        for name, others in modified_names(answer).items()
     ]
     if curved:
         told.append(
@@ -230,12 +185,8 @@ def _changes(answer: OddsAnswer) -> tuple[str, ...]:
 
 
 def _extremes(answer: OddsAnswer) -> tuple[str, ...]:
-    found = {
-        predictor_name(answer.subject.predictor(row.predictor)): None
-        for row in answer.rows
-        if has_finite_estimate(row) and is_beyond_saying(row.odds_ratio)
-    }
-    return (beyond_saying(listed(list(found))),) if found else ()
+    found = extreme_names(answer)
+    return (beyond_saying(listed(found)),) if found else ()
 
 
 def _technical(answer: OddsAnswer) -> Words:
@@ -247,7 +198,7 @@ def _technical(answer: OddsAnswer) -> Words:
     )
     if any(row.odds_ratio.lower is not None for row in answer.rows):
         method += f"; {interval_method(answer)}"
-    reading = _reading(answer, [_typical_chance(answer)])
+    reading = _reading(answer, [typical_chance(answer)])
     cautions = (*reading, association(answer.subject), *_cautions(answer))
     return Words((*told, sentence(method)), (*cautions, *model_cautions(subject)))
 
@@ -275,13 +226,11 @@ def _(answer: OddsAnswer) -> str:
         f"{len(rows)} {kind} for {tidy(answer.subject.outcome.event)} as points on a logarithmic "
         f"axis{f', with lines for their {confidence(level)} intervals' if with_intervals else ''}"
     )
-    known = [row for row in rows if not math.isnan(row.odds_ratio.estimate)]
+    known = highest_and_lowest(answer)
     if not known:
         return sentence(start)
-    highest = max(known, key=lambda row: row.odds_ratio.estimate)
-    lowest = min(known, key=lambda row: row.odds_ratio.estimate)
-    told = f"{'It' if len(rows) == 1 else 'The largest'} is {_short(answer, highest)}"
-    if lowest is not highest:
+    told = f"{'It' if len(rows) == 1 else 'The largest'} is {_short(answer, known[0])}"
+    for lowest in known[1:]:
         told += f"; the smallest is {_short(answer, lowest)}"
     return f"{sentence(start)} {sentence(told)}"
 

@@ -7,13 +7,14 @@ from collections.abc import Callable, Iterable
 
 from plainodds.answers.estimate import Estimate
 from plainodds.model.predictors import OutcomeFacts, Subject
-from plainodds.phrases.labels import listed, predictor_name, sentence_case, value_label
+from plainodds.phrases.labels import listed, named_value, sentence_case
+from plainodds.phrases.lexicon import lexicon
 from plainodds.phrases.numbers import (
-    NOT_KNOWN,
+    cases,
     chance,
-    confidence,
     count,
     frequency,
+    level_figures,
     percentage_points,
     points_on_sides,
     points_span,
@@ -23,17 +24,21 @@ from plainodds.phrases.numbers import (
     signed,
     span,
     told_apart,
+    wording,
 )
 from plainodds.phrases.stakes import stakes_cautions
 from plainodds.phrases.units import tidy
 from plainodds.values import Pairs
 
 __all__ = [
+    "BEYOND_SAYING",
+    "RARE",
     "article",
     "association",
     "beyond_saying",
     "case_words",
     "chance_with_interval",
+    "counted_rows",
     "covariance_words",
     "difference_with_interval",
     "interval",
@@ -65,8 +70,8 @@ _COVARIANCE = {
     "HAC": "a covariance matrix robust to heteroscedasticity and autocorrelation (HAC)",
 }
 _LISTED_AT_MOST = 8
-_BEYOND_SAYING = 1000.0
-_RARE = 0.10
+BEYOND_SAYING = 1000
+RARE = 0.10
 
 
 def association(subject: Subject) -> str:
@@ -111,8 +116,8 @@ def interval(estimate: Estimate, say: Callable[[float, float], str], level: floa
     if estimate.lower is None or estimate.upper is None:
         return ""
     if math.isnan(estimate.lower) or math.isnan(estimate.upper):
-        return f" ({confidence(level)} interval {NOT_KNOWN})"
-    return f" ({confidence(level)} interval {say(estimate.lower, estimate.upper)})"
+        return lexicon().interval.format(level_figures(level), wording().not_known)
+    return lexicon().interval.format(level_figures(level), say(estimate.lower, estimate.upper))
 
 
 def chance_with_interval(estimate: Estimate, level: float) -> str:
@@ -131,25 +136,26 @@ def signed_with_interval(estimate: Estimate, level: float) -> str:
 
 
 def _signed_range(lower: float, upper: float) -> str:
-    return f"{signed(lower)} to {signed(upper)}"
+    return wording().to.format(signed(lower), signed(upper))
 
 
 def standard_error(estimate: Estimate) -> str:
     """The standard error, to be listed after an estimate; empty where there is none."""
     if estimate.se is None:
         return ""
-    return f", standard error {signed(estimate.se).lstrip('+')}"
+    return lexicon().standard_error.format(signed(estimate.se).lstrip("+"))
 
 
 def difference_with_interval(estimate: Estimate, level: float) -> str:
     """As in "3.4 percentage points higher (95% interval 1.2 to 5.6 higher)"."""
     difference = estimate.estimate
     if math.isnan(difference):
-        told = f"{NOT_KNOWN} in percentage points"
+        told = lexicon().points_not_known
     elif difference == 0:
-        told = "neither higher nor lower"
+        told = lexicon().no_difference
     else:
-        told = f"{percentage_points(abs(difference))} {_side(difference)}"
+        side = wording().higher if difference > 0 else wording().lower
+        told = side.format(percentage_points(abs(difference)))
     return told + interval(estimate, points_on_sides, level)
 
 
@@ -159,20 +165,22 @@ def points_with_interval(estimate: Estimate, level: float) -> str:
     return told + interval(estimate, points_span, level)
 
 
-def _side(difference: float) -> str:
-    return "higher" if difference > 0 else "lower"
-
-
 def say_level_once(told: list[str], level: float) -> list[str]:
     """Name the confidence level only in the first of several texts that has an interval."""
-    opening = f"({confidence(level)} interval "
+    opening = lexicon().interval.format(level_figures(level), "\0").partition("\0")[0].lstrip()
     first = next((place for place, text in enumerate(told) if opening in text), len(told))
     return [*told[: first + 1], *(text.replace(opening, "(") for text in told[first + 1 :])]
 
 
 def rows_words(subject: Subject) -> str:
     """How many rows the fit used: "6,000 rows"."""
-    return "1 row" if subject.rows == 1 else f"{count(subject.rows)} rows"
+    return counted_rows(subject.rows)
+
+
+def counted_rows(rows: int, told: str = "") -> str:
+    """So many rows, in the number that grammar asks for; `told` where the count is guarded."""
+    told = told or count(rows)
+    return lexicon().row if told == "1" else lexicon().rows.format(told)
 
 
 def covariance_words(subject: Subject) -> str:
@@ -186,13 +194,14 @@ def covariance_words(subject: Subject) -> str:
 def is_beyond_saying(odds_ratio: Estimate) -> bool:
     """Whether an odds ratio is so far from 1 that only its limit is written."""
     number = odds_ratio.estimate
-    return number > _BEYOND_SAYING or number < 1 / _BEYOND_SAYING
+    return number > BEYOND_SAYING or number < 1 / BEYOND_SAYING
 
 
 def beyond_saying(found: str) -> str:
     """What an odds ratio that is so far from 1 mostly means; `found` says whose it is."""
     return (
-        f"An odds ratio beyond {1 / _BEYOND_SAYING:g} or {_BEYOND_SAYING:,.0f}, as for {found}, "
+        f"An odds ratio beyond {quantity(1 / BEYOND_SAYING)} or {count(BEYOND_SAYING)}, as for "
+        f"{found}, "
         "mostly means that in these data the predictors settle the outcome without exception, or "
         "that the change it speaks of is far too large."
     )
@@ -200,7 +209,7 @@ def beyond_saying(found: str) -> str:
 
 def odds_ratio_cautions(chances: Iterable[float]) -> tuple[str, ...]:
     """That an odds ratio is no ratio of chances, where these chances are common."""
-    if not any(each > _RARE for each in chances):
+    if not any(each > RARE for each in chances):
         return ()
     return (
         "An odds ratio is not a ratio of chances: where chances are above about 10%, as here, it "
@@ -248,26 +257,24 @@ def profile_words(subject: Subject, values: Pairs, *, at_most: int = _LISTED_AT_
 
     More than `at_most` are cut short, and the text says how many are left out.
     """
-    told = [
-        f"{predictor_name(facts)} {value_label(facts, held)}"
-        for facts, held in ((subject.predictor(name), held) for name, held in values)
-    ]
+    told = [named_value(subject.predictor(name), held) for name, held in values]
     left = len(told) - at_most
     if left > 1:
-        told = [*told[:at_most], f"{left} more"]
+        told = [*told[:at_most], lexicon().further.format(left)]
     return listed(told)
 
 
 def rather(here: float, there: float, over: int) -> str:
     """As in "12% rather than 7%, that is 12 rather than 7 in 100"."""
     after, before = told_apart(here, there)
+    say = lexicon()
     if after == before:
-        return f"{after} either way"
-    often, seldom = frequency(here, over), frequency(there, over)
+        return say.either_way.format(after)
+    told = say.rather.format(after, before)
+    often, seldom = cases(here, over), cases(there, over)
     if often == seldom:
-        return f"{after} rather than {before}"
-    bare = often.removesuffix(f" in {over:,}")
-    return f"{after} rather than {before}, that is {bare} rather than {seldom}"
+        return told
+    return say.that_is.format(told, say.rather.format(often, frequency(there, over)))
 
 
 def typical_case(outcome: OutcomeFacts) -> str:

@@ -2,16 +2,20 @@
 
 from __future__ import annotations
 
-import math
-
 from plainodds.answers.profile import Comparison, LedgerRow, ProfileAnswer, ProfilePoint
 from plainodds.phrases.alternative import alternative
+from plainodds.phrases.choices.profile import (
+    chosen_values,
+    largest_adds,
+    moved_predictors,
+    profile_denominator,
+    sorted_adds,
+)
 from plainodds.phrases.familiarity import familiarity_cautions, familiarity_words
 from plainodds.phrases.labels import chance_of, listed, predictor_name, value_label
 from plainodds.phrases.numbers import (
     chance,
     confidence,
-    denominator,
     frequency,
     frequency_span,
     ratio,
@@ -42,7 +46,6 @@ from plainodds.values import Pairs
 
 __all__: list[str] = []
 
-_NOTHING = 1e-9
 _EVERYTHING = 1_000_000
 
 
@@ -52,7 +55,7 @@ def _(answer: ProfileAnswer, audience: Audience = "plain") -> Words:
 
 
 def _plain(answer: ProfileAnswer) -> Words:
-    over = _denominator(answer)
+    over = profile_denominator(answer)
     told = [_chance_told(answer, over)]
     if answer.comparison is None:
         told.append(_framed(answer, over))
@@ -74,18 +77,9 @@ def _words(answer: ProfileAnswer, told: list[str]) -> Words:
     )
 
 
-def _denominator(answer: ProfileAnswer) -> int:
-    spoken = [answer.point.probability.estimate]
-    if answer.comparison is not None:
-        spoken.append(answer.start.probability.estimate)
-    return denominator(spoken)
-
-
 def _who(answer: ProfileAnswer, point: ProfilePoint, stated: Pairs, at_most: int = 8) -> str:
     """Whom a profile describes: "a pipe with pipe age 40 years and otherwise typical"."""
-    names = {name for name, _ in stated}
-    chosen = tuple(pair for pair in point.values if pair[0] in names)
-    whole = len(chosen) == len(point.values)
+    chosen, whole = chosen_values(point, stated)
     return case_words(answer.subject, chosen, whole=whole, at_most=at_most)
 
 
@@ -124,15 +118,9 @@ def _comparison(answer: ProfileAnswer, comparison: Comparison, over: int) -> lis
     ]
 
 
-def _adds(answer: ProfileAnswer) -> list[LedgerRow]:
-    rows = [row for row in answer.ledger if not abs(row.adds.estimate) <= _NOTHING]
-    known = [row for row in rows if not math.isnan(row.adds.estimate)]
-    return sorted(known, key=lambda row: -abs(row.adds.estimate))
-
-
 def _ledger(answer: ProfileAnswer) -> list[str]:
     """With what the odds differ most between the start and the profile, each way."""
-    rows, level = _adds(answer), answer.question.level
+    rows, level = sorted_adds(answer), answer.question.level
     if not rows:
         return []
     start = typical_case(answer.subject.outcome)
@@ -141,26 +129,20 @@ def _ledger(answer: ProfileAnswer) -> list[str]:
             return [f"The whole difference goes with {_group(answer, rows[0])}"]
         start = "that profile"
     opening = f"Starting from {start}, with a chance of {chance(answer.start.probability.estimate)}"
-    moves = [(row, "rise" if row.adds.estimate > 0 else "fall") for row in rows]
-    # sorted by size, so the first of each way is the largest
-    largest = {way: row for row, way in reversed(moves)}
-    in_order = sorted(largest.items(), key=lambda item: -abs(item[1].adds.estimate))
     size = "" if len(rows) == 1 else "largest "
     told = [
-        f"the {size}{way} in the odds goes with {_group(answer, row)}, multiplied by "
-        f"{ratio_with_interval(row.multiplies, level)}"
-        for way, row in in_order
+        f"the {size}{'rise' if row.adds.estimate > 0 else 'fall'} in the odds goes with "
+        f"{_group(answer, row)}, multiplied by {ratio_with_interval(row.multiplies, level)}"
+        for row in largest_adds(answer)
     ]
     return [f"{opening}, {'; '.join(told)}"]
 
 
 def _group(answer: ProfileAnswer, row: LedgerRow) -> str:
-    subject, values = answer.subject, dict(answer.point.values)
-    before = dict(answer.start.values)
+    values = dict(answer.point.values)
     together = [
         f"{predictor_name(facts)} ({value_label(facts, values[facts.name])})"
-        for facts in map(subject.predictor, row.predictors)
-        if values[facts.name] != before[facts.name]
+        for facts in moved_predictors(answer, row)
     ]
     return f"{listed(together)} together" if len(together) > 1 else listed(together)
 
@@ -187,7 +169,7 @@ def _technical(answer: ProfileAnswer) -> Words:
     rows = [
         f"{listed([predictor_name(subject.predictor(name)) for name in row.predictors])} "
         f"{signed_with_interval(row.adds, level)}"
-        for row in _adds(answer)
+        for row in sorted_adds(answer)
     ]
     if rows:
         eta = signed(answer.start.linear_predictor.estimate)
@@ -224,7 +206,7 @@ def _(answer: ProfileAnswer) -> str:
         f"predictor {signed(point.linear_predictor.estimate)}, odds "
         f"{ratio(point.odds.estimate)}, chance {chance_with_interval(point.probability, level)}"
     )
-    rows = _adds(answer)
+    rows = sorted_adds(answer)
     other = chance(answer.start.probability.estimate)
     if not rows:
         return sentence(start)

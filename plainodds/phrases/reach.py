@@ -5,9 +5,10 @@ from __future__ import annotations
 from itertools import pairwise
 
 from plainodds.answers.curve import CurveAnswer, CurveLine
-from plainodds.phrases.labels import listed, predictor_name, value_label
+from plainodds.phrases.labels import listed, named_value, predictor_name, value_label
+from plainodds.phrases.lexicon import lexicon
 
-__all__ = ["beyond_words", "line_words", "supported_places"]
+__all__ = ["beyond_words", "line_words", "parts_without_data", "supported_places"]
 
 
 def supported_places(line: CurveLine) -> list[int]:
@@ -21,30 +22,34 @@ def line_words(answer: CurveAnswer, line: CurveLine) -> str:
     by = answer.question.by
     if by is None or line.by is None:
         return ""
-    facts = answer.subject.predictor(by)
-    return f"{predictor_name(facts)} {value_label(facts, line.by)}"
+    return named_value(answer.subject.predictor(by), line.by)
 
 
 def beyond_words(answer: CurveAnswer) -> list[str]:
     """Where the curve leaves the data; empty where it does not."""
-    parts: dict[str, list[str]] = {}
-    for line in answer.lines:
-        where = _unsupported(answer, line)
-        if where:
-            parts.setdefault(where, []).append(line_words(answer, line))
-    if not parts:
+    told = parts_without_data(answer)
+    if not told:
         return []
-    facts = answer.subject.predictor(answer.question.predictor)
-    told = "; ".join(
-        where if len(lines) == len(answer.lines) else f"for {listed(lines)}, {where}"
-        for where, lines in parts.items()
-    )
-    if facts.is_number:
+    if answer.subject.predictor(answer.question.predictor).is_number:
         return [
             "Where a line is dashed the data have no rows near by and the model speaks on its "
             f"own: {told}"
         ]
     return [f"The data have no rows here and the model speaks on its own: {told}"]
+
+
+def parts_without_data(answer: CurveAnswer) -> str:
+    """The parts of the lines that leave the data, each with its lines; empty without any."""
+    parts: dict[str, list[str]] = {}
+    for line in answer.lines:
+        where = _unsupported(answer, line)
+        if where:
+            parts.setdefault(where, []).append(line_words(answer, line))
+    for_lines = lexicon().for_lines
+    return "; ".join(
+        where if len(lines) == len(answer.lines) else for_lines.format(listed(lines), where)
+        for where, lines in parts.items()
+    )
 
 
 def _unsupported(answer: CurveAnswer, line: CurveLine) -> str:
@@ -58,23 +63,23 @@ def _unsupported(answer: CurveAnswer, line: CurveLine) -> str:
             for at, supported in zip(line.at, line.supported, strict=True)
             if not supported
         ]
-        return f"{name} {listed(missing)}"
+        return lexicon().value.format(name, listed(missing))
     if not any(line.supported):
-        return f"along all values of {name}"
+        return lexicon().along_all.format(name)
     return f"{name} {listed(_gaps(answer, line))}"
 
 
 def _gaps(answer: CurveAnswer, line: CurveLine) -> list[str]:
     facts = answer.subject.predictor(answer.question.predictor)
-    places = supported_places(line)
+    places, say = supported_places(line), lexicon()
     gaps = []
     if places[0] > 0:
-        gaps.append(f"below {value_label(facts, line.at[places[0]])}")
+        gaps.append(say.below.format(value_label(facts, line.at[places[0]])))
     gaps += [
-        f"between {value_label(facts, line.at[low])} and {value_label(facts, line.at[high])}"
+        say.between.format(value_label(facts, line.at[low]), value_label(facts, line.at[high]))
         for low, high in pairwise(places)
         if high > low + 1
     ]
     if places[-1] < len(line.at) - 1:
-        gaps.append(f"above {value_label(facts, line.at[places[-1]])}")
+        gaps.append(say.above.format(value_label(facts, line.at[places[-1]])))
     return gaps

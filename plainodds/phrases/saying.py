@@ -3,11 +3,11 @@
 from __future__ import annotations
 
 from collections.abc import Callable
-from functools import singledispatch
 from typing import Any, Literal, TypeAlias
 
 from plainodds.answers.questions import Answer
 from plainodds.errors import QuestionRefused
+from plainodds.phrases.languages import by_language
 from plainodds.values import value
 
 __all__ = ["Audience", "Words", "for_audience", "words"]
@@ -36,7 +36,7 @@ class Words:
         return "\n\n".join(paragraph for paragraph in paragraphs if paragraph)
 
 
-@singledispatch
+@by_language
 def words(answer: Answer, audience: Audience = "plain") -> Words:
     """Say an answer in words.
 
@@ -56,7 +56,7 @@ def words(answer: Answer, audience: Audience = "plain") -> Words:
     TypeError
         If there are no words for this kind of answer.
     QuestionRefused
-        If the audience is neither of the two.
+        If the audience is neither of the two, or the language has no words for it.
 
     Examples
     --------

@@ -4,9 +4,10 @@ from __future__ import annotations
 
 import re
 
+from plainodds.phrases.lexicon import lexicon
 from plainodds.phrases.numbers import quantity
 
-__all__ = ["per_unit", "single", "step", "tidy", "with_unit"]
+__all__ = ["one_line", "per_unit", "single", "step", "tidy", "with_unit"]
 
 _IRREGULAR = {
     "analyses": "analysis",
@@ -18,16 +19,33 @@ _IRREGULAR = {
     "people": "person",
     "teeth": "tooth",
     "women": "woman",
+    # German units, which may stand beside words of any language
+    "jahre": "Jahr",
+    "minuten": "Minute",
+    "monate": "Monat",
+    "personen": "Person",
+    "punkte": "Punkt",
+    "sekunden": "Sekunde",
+    "stunden": "Stunde",
+    "tage": "Tag",
+    "wochen": "Woche",
 }
 _NOT_PLURAL = {"celsius", "gas", "hertz", "lens", "series", "siemens", "species"}
 _NUMERALS = {"dozen", "hundred", "thousand", "million", "billion"}
 _CLOSED_UP = ("%", "‰", "°", "$", "£", "€", "¥", "₹")
+# a space that doesn't break within a number is part of it
+_SPACES = re.compile(r"(?:(?!(?<=\d)[\u00a0\u2009\u202f]\S)\s)+")
 _BEFORE_THE_REST = re.compile(r"\s+(?:of|per|in|since|at|on|from|for|to|with|before|after)\s|\s*/")
 
 
 def tidy(text: str) -> str:
     """Put a label on one line, without leading, trailing or doubled spaces."""
     return " ".join(text.split())
+
+
+def one_line(text: str) -> str:
+    """Put a sentence on one line; a space within a number that doesn't break stays as it is."""
+    return _SPACES.sub(" ", text).strip()
 
 
 def single(unit: str) -> str:
@@ -93,8 +111,9 @@ def step(size: float, unit: str) -> str:
     unit = tidy(unit)
     if unit == "%":
         # "10% more" would read as a tenth more
-        unit = "percentage points"
-    unit = unit or "units"
+        return lexicon().point if quantity(size) == "1" else with_unit(size, lexicon().points)
+    if not unit:
+        return lexicon().unit if quantity(size) == "1" else with_unit(size, lexicon().units)
     countable = single(unit) != unit
     if quantity(size) == "1" and countable:
         return single(unit)

@@ -2,14 +2,13 @@
 
 from __future__ import annotations
 
-from functools import singledispatch
-
 from plainodds.answers.questions import Answer
+from plainodds.phrases.languages import by_language
 
 __all__ = ["caption"]
 
 
-@singledispatch
+@by_language
 def caption(answer: Answer) -> str:
     """Write what stands beneath the answer's figure: what is shown, of whom, and how marked.
 

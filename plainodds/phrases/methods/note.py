@@ -2,9 +2,8 @@
 
 from __future__ import annotations
 
-from functools import singledispatch
-
 from plainodds.answers.questions import Answer
+from plainodds.phrases.languages import by_language
 from plainodds.values import value
 
 __all__ = ["MethodsNote", "methods_note"]
@@ -32,7 +31,7 @@ class MethodsNote:
         )
 
 
-@singledispatch
+@by_language
 def methods_note(answer: Answer) -> MethodsNote:
     """Say what was computed and how, citable, with the references.
 

@@ -6,6 +6,7 @@ minus sign (U+2212).
 """
 
 from plainodds.phrases.numbers.chances import (
+    cases,
     chance,
     denominator,
     denominator_of_change,
@@ -14,12 +15,14 @@ from plainodds.phrases.numbers.chances import (
     frequency_span,
     told_apart,
 )
-from plainodds.phrases.numbers.counts import cases_apart, cases_on_sides, needed
+from plainodds.phrases.numbers.counts import cases_apart, cases_apart_in, cases_on_sides, needed
+from plainodds.phrases.numbers.marks import Marks, marking, marks_now
 from plainodds.phrases.numbers.quantities import (
     confidence,
     count,
     count_mark,
     guarded_count,
+    level_figures,
     quantity,
     signed,
     summing,
@@ -27,11 +30,17 @@ from plainodds.phrases.numbers.quantities import (
 from plainodds.phrases.numbers.ratios import p_value, ratio, ratio_interval, simple_fraction
 from plainodds.phrases.numbers.signs import MINUS, NOT_KNOWN
 from plainodds.phrases.numbers.spans import percentage_points, points_on_sides, points_span, span
+from plainodds.phrases.numbers.wording import ENGLISH_WORDING, Wording, worded, wording
 
 __all__ = [
+    "ENGLISH_WORDING",
     "MINUS",
     "NOT_KNOWN",
+    "Marks",
+    "Wording",
+    "cases",
     "cases_apart",
+    "cases_apart_in",
     "cases_on_sides",
     "chance",
     "confidence",
@@ -43,6 +52,9 @@ __all__ = [
     "frequency",
     "frequency_span",
     "guarded_count",
+    "level_figures",
+    "marking",
+    "marks_now",
     "needed",
     "p_value",
     "percentage_points",
@@ -56,4 +68,6 @@ __all__ = [
     "span",
     "summing",
     "told_apart",
+    "worded",
+    "wording",
 ]

@@ -5,9 +5,11 @@ from __future__ import annotations
 import math
 from collections.abc import Iterable
 
-from plainodds.phrases.numbers.signs import NOT_KNOWN
+from plainodds.phrases.numbers.marks import marked
+from plainodds.phrases.numbers.wording import wording
 
 __all__ = [
+    "cases",
     "chance",
     "chance_decimals",
     "denominator",
@@ -46,11 +48,11 @@ def chance(probability: float, *, decimals: int | None = None) -> str:
     ('23%', '4.2%', '94.2%', 'under 0.1%', 'over 99.9%')
     """
     if math.isnan(probability):
-        return NOT_KNOWN
+        return wording().not_known
     if probability < _LEAST_CHANCE:
-        return "under 0.1%"
+        return wording().under.format(_percent("0.1"))
     if probability > 1 - _LEAST_CHANCE:
-        return "over 99.9%"
+        return wording().over.format(_percent("99.9"))
     percent = 100 * probability
     places = chance_decimals(percent) if decimals is None else decimals
     text = f"{percent:.{places}f}"
@@ -59,7 +61,11 @@ def chance(probability: float, *, decimals: int | None = None) -> str:
         text = f"{percent:.{places}f}"
     if decimals is None and chance_decimals(float(text)) < places:
         text = f"{percent:.{chance_decimals(float(text))}f}"
-    return f"{text}%"
+    return _percent(text)
+
+
+def _percent(figures: str) -> str:
+    return wording().percent.format(marked(figures), "%")
 
 
 def told_apart(first: float, second: float) -> tuple[str, str]:
@@ -146,9 +152,13 @@ def frequency(probability: float, over: int | None = None) -> str:
     ('23 in 100', '4 in 1,000', 'under 1 in 100')
     """
     if math.isnan(probability):
-        return NOT_KNOWN
+        return wording().not_known
     over = denominator([probability]) if over is None else over
-    return f"{_cases(probability, over)} in {over:,}"
+    return _out_of(cases(probability, over), over)
+
+
+def _out_of(told: str, over: int) -> str:
+    return wording().out_of.format(told, marked(f"{over:,}"))
 
 
 def frequency_span(lower: float, upper: float, over: int) -> str:
@@ -160,9 +170,9 @@ def frequency_span(lower: float, upper: float, over: int) -> str:
     ('18 to 29 in 100', 'under 1 to 2 in 100')
     """
     if math.isnan(lower) or math.isnan(upper):
-        return NOT_KNOWN
-    low, high = _cases(lower, over), _cases(upper, over)
-    return f"{low} in {over:,}" if low == high else f"{low} to {high} in {over:,}"
+        return wording().not_known
+    low, high = cases(lower, over), cases(upper, over)
+    return _out_of(low if low == high else wording().to.format(low, high), over)
 
 
 def frequencies(chances: Iterable[float], over: int) -> str:
@@ -173,17 +183,24 @@ def frequencies(chances: Iterable[float], over: int) -> str:
     >>> frequencies([0.12, 0.07, 0.03], 100), frequencies([0.12], 100)
     ('12, 7 and 3 in 100', '12 in 100')
     """
-    *first, last = (_cases(each, over) for each in chances)
-    start = f"{', '.join(first)} and " if first else ""
-    return f"{start}{last} in {over:,}"
+    *first, last = (cases(each, over) for each in chances)
+    told = wording().both.format(", ".join(first), last) if first else last
+    return _out_of(told, over)
 
 
-def _cases(probability: float, over: int) -> str:
+def cases(probability: float, over: int) -> str:
+    """Write a chance as cases, their denominator being said elsewhere.
+
+    Examples
+    --------
+    >>> cases(0.23, 100), cases(0.001, 100), cases(0.9999, 1000)
+    ('23', 'under 1', 'over 999')
+    """
     if math.isnan(probability):
-        return NOT_KNOWN
-    cases = round(probability * over)
-    if cases == 0:
-        return "under 1"
-    if cases == over:
-        return f"over {over - 1:,}"
-    return f"{cases:,}"
+        return wording().not_known
+    counted = round(probability * over)
+    if counted == 0:
+        return wording().under.format("1")
+    if counted == over:
+        return wording().over.format(marked(f"{over - 1:,}"))
+    return marked(f"{counted:,}")

@@ -4,9 +4,10 @@ from __future__ import annotations
 
 import math
 
-from plainodds.phrases.numbers.signs import NOT_KNOWN
+from plainodds.phrases.numbers.marks import marked
+from plainodds.phrases.numbers.wording import wording
 
-__all__ = ["cases_apart", "cases_on_sides", "needed"]
+__all__ = ["cases_apart", "cases_apart_in", "cases_on_sides", "needed"]
 
 _MOST_NEEDED = 1_000_000
 
@@ -25,12 +26,13 @@ def needed(number: float) -> str:
     ('8.3', '24', '1,234', 'infinity', 'over 1,000,000')
     """
     if math.isnan(number):
-        return NOT_KNOWN
+        return wording().not_known
     if math.isinf(number):
-        return "infinity"
+        return wording().infinity
     if number > _MOST_NEEDED:
-        return f"over {_MOST_NEEDED:,}"
-    return f"{number:.1f}".removesuffix(".0") if number < 9.95 else f"{number:,.0f}"
+        return wording().over.format(marked(f"{_MOST_NEEDED:,}"))
+    text = f"{number:.1f}".removesuffix(".0") if number < 9.95 else f"{number:,.0f}"
+    return marked(text)
 
 
 def cases_apart(difference: float, over: int) -> str:
@@ -49,10 +51,22 @@ def cases_apart(difference: float, over: int) -> str:
     ('50 more', '5 fewer', 'under 1 more')
     """
     if math.isnan(difference):
-        return f"{NOT_KNOWN} how many more or fewer"
+        return wording().more_or_fewer_not_known
     if difference == 0:
-        return "no more and no fewer"
-    return f"{_cases(difference, over)} {_side(difference)}"
+        return wording().no_more_no_fewer
+    side = wording().more if difference > 0 else wording().fewer
+    return side.format(_cases(difference, over))
+
+
+def cases_apart_in(difference: float, over: int) -> str:
+    """Write the same with its denominator.
+
+    Examples
+    --------
+    >>> cases_apart_in(0.05, 1000)
+    '50 more in 1,000'
+    """
+    return wording().apart_in.format(cases_apart(difference, over), marked(f"{over:,}"))
 
 
 def cases_on_sides(lower: float, upper: float, over: int) -> str:
@@ -65,18 +79,14 @@ def cases_on_sides(lower: float, upper: float, over: int) -> str:
     >>> cases_on_sides(-0.066, -0.034, 1000), cases_on_sides(0.0, 0.016, 1000)
     ('34 to 66 fewer', '0 to 16 more')
     """
+    say = wording()
     low, high = _cases(lower, over), _cases(upper, over)
     if lower < 0 < upper:
-        return f"{low} fewer to {high} more"
-    side = "fewer" if lower < 0 else "more"
-    nearer, further = (high, low) if side == "fewer" else (low, high)
-    return f"{nearer} {side}" if nearer == further else f"{nearer} to {further} {side}"
+        return say.to.format(say.fewer.format(low), say.more.format(high))
+    side, nearer, further = (say.fewer, high, low) if lower < 0 else (say.more, low, high)
+    return side.format(nearer if nearer == further else say.to.format(nearer, further))
 
 
 def _cases(difference: float, over: int) -> str:
     cases = round(abs(difference) * over)
-    return "under 1" if cases == 0 and difference != 0 else f"{cases:,}"
-
-
-def _side(difference: float) -> str:
-    return "more" if difference > 0 else "fewer"
+    return wording().under.format("1") if cases == 0 and difference != 0 else marked(f"{cases:,}")

@@ -5,13 +5,16 @@ from __future__ import annotations
 import math
 from collections.abc import Sequence
 
-from plainodds.phrases.numbers.signs import MINUS, NOT_KNOWN, with_sign
+from plainodds.phrases.numbers.marks import marked
+from plainodds.phrases.numbers.signs import MINUS, with_sign
+from plainodds.phrases.numbers.wording import wording
 
 __all__ = [
     "confidence",
     "count",
     "count_mark",
     "guarded_count",
+    "level_figures",
     "quantity",
     "signed",
     "summing",
@@ -26,7 +29,7 @@ def count(number: int) -> str:
     >>> count(6000), count(1000000)
     ('6,000', '1,000,000')
     """
-    return f"{number:,}".replace("-", MINUS)
+    return marked(f"{number:,}".replace("-", MINUS))
 
 
 def guarded_count(number: int, smallest: int) -> str:
@@ -37,7 +40,9 @@ def guarded_count(number: int, smallest: int) -> str:
     >>> guarded_count(10, 10), guarded_count(0, 10), guarded_count(6000, 10), guarded_count(3, 0)
     ('up to 10', '0', '6,000', '3')
     """
-    return f"up to {count(smallest)}" if 0 < number <= smallest else count(number)
+    if 0 < number <= smallest:
+        return wording().up_to.format(count(smallest))
+    return count(number)
 
 
 def count_mark(number: int, smallest: int) -> str:
@@ -53,7 +58,18 @@ def confidence(level: float) -> str:
     >>> confidence(0.95), confidence(0.999)
     ('95%', '99.9%')
     """
-    return f"{100 * level:.10g}%"
+    return wording().percent.format(level_figures(level), "%")
+
+
+def level_figures(level: float) -> str:
+    """Write a confidence level in percent, for words of which the sign is a part.
+
+    Examples
+    --------
+    >>> level_figures(0.95)
+    '95'
+    """
+    return marked(f"{100 * level:.10g}")
 
 
 def quantity(number: float, unit: str = "") -> str:
@@ -79,31 +95,34 @@ def quantity(number: float, unit: str = "") -> str:
     text = _figures(float(number))
     if not unit:
         return text
-    if unit in ("%", "‰", "°", "′", "″"):
+    if unit in ("%", "‰"):
+        return wording().percent.format(text, unit)
+    if unit in ("°", "′", "″"):
         return f"{text}{unit}"
     if unit in ("$", "£", "€", "¥", "₹"):
         bare = text.removeprefix(MINUS)
-        return f"{MINUS if bare != text else ''}{unit}{bare}"
+        sign = MINUS if bare != text else ""
+        return wording().money.format(sign=sign, unit=unit, figures=bare)
     return f"{text} {unit}"
 
 
 def _figures(number: float) -> str:
     if math.isnan(number):
-        return NOT_KNOWN
+        return wording().not_known
     if math.isinf(number):
         return "∞" if number > 0 else f"{MINUS}∞"
     if number == 0:
         return "0"
     whole = math.floor(math.log10(abs(number))) + 1
     if not -6 < whole <= 15:
-        return f"{number:.4g}".replace("-", MINUS)
+        return marked(f"{number:.4g}".replace("-", MINUS))
     short = float(f"{number:.6g}")
     exact = math.isclose(short, number, rel_tol=1e-9, abs_tol=0.0)
     places = max(0, (6 if exact else 4) - whole)
     text = f"{number:,.{places}f}" if abs(number) >= 9999.5 else f"{number:.{places}f}"
     if "." in text:
         text = text.rstrip("0").rstrip(".")
-    return with_sign(text, False)
+    return marked(with_sign(text, False))
 
 
 def signed(number: float, *, decimals: int | None = None) -> str:
@@ -121,14 +140,14 @@ def signed(number: float, *, decimals: int | None = None) -> str:
     ('+0.42', '−0.42', '+0.0034', '0.00')
     """
     if math.isnan(number):
-        return NOT_KNOWN
+        return wording().not_known
     if math.isinf(number):
         return "+∞" if number > 0 else f"{MINUS}∞"
     places = decimals
     if places is None:
         small = 0 < abs(number) < 0.0995
         places = min(8, 1 - math.floor(math.log10(abs(number)))) if small else 2
-    return with_sign(f"{number:,.{places}f}", True)
+    return marked(with_sign(f"{number:,.{places}f}", True))
 
 
 def summing(values: Sequence[float], total: float, decimals: int = 2) -> tuple[float, ...]:

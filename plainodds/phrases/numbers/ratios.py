@@ -5,7 +5,8 @@ from __future__ import annotations
 import math
 from fractions import Fraction
 
-from plainodds.phrases.numbers.signs import NOT_KNOWN
+from plainodds.phrases.numbers.marks import marked
+from plainodds.phrases.numbers.wording import wording
 
 __all__ = ["p_value", "ratio", "ratio_interval", "simple_fraction"]
 
@@ -33,17 +34,17 @@ def ratio(number: float, *, decimals: int | None = None) -> str:
     ('2.02', '12.3', '1.003', 'over 1,000', 'under 0.001')
     """
     if math.isnan(number):
-        return NOT_KNOWN
+        return wording().not_known
     if number > _RATIO_LIMIT:
-        return f"over {_RATIO_LIMIT:,.0f}"
+        return wording().over.format(marked(f"{_RATIO_LIMIT:,.0f}"))
     if number < 1 / _RATIO_LIMIT:
-        return f"under {1 / _RATIO_LIMIT:g}"
+        return wording().under.format(marked(f"{1 / _RATIO_LIMIT:g}"))
     places = _ratio_decimals(number) if decimals is None else decimals
     text = f"{number:,.{places}f}"
     while float(text.replace(",", "")) == 0:
         places += 1
         text = f"{number:,.{places}f}"
-    return text
+    return marked(text)
 
 
 def ratio_interval(lower: float, upper: float) -> str:
@@ -58,7 +59,7 @@ def ratio_interval(lower: float, upper: float) -> str:
     if 0.0995 <= lower <= upper < 9.995:
         places = max(_ratio_decimals(lower), _ratio_decimals(upper))
     low, high = ratio(lower, decimals=places), ratio(upper, decimals=places)
-    return low if low == high else f"{low} to {high}"
+    return low if low == high else wording().to.format(low, high)
 
 
 def _ratio_decimals(number: float) -> int:
@@ -89,8 +90,8 @@ def simple_fraction(number: float) -> str:
     if not math.isclose(float(near), number, rel_tol=1e-6):
         return ratio(number)
     if near.denominator == 1:
-        return f"{near.numerator:,}"
-    return f"{near.numerator:,}/{near.denominator:,}"
+        return marked(f"{near.numerator:,}")
+    return marked(f"{near.numerator:,}/{near.denominator:,}")
 
 
 def p_value(p: float) -> str:
@@ -102,9 +103,9 @@ def p_value(p: float) -> str:
     ('0.23', '0.032', 'under 0.001', 'over 0.99')
     """
     if math.isnan(p):
-        return NOT_KNOWN
+        return wording().not_known
     if p < 0.001:
-        return "under 0.001"
+        return wording().under.format(marked("0.001"))
     if p > 0.99:
-        return "over 0.99"
-    return f"{p:.3f}" if p < 0.0995 else f"{p:.2f}"
+        return wording().over.format(marked("0.99"))
+    return marked(f"{p:.3f}" if p < 0.0995 else f"{p:.2f}")

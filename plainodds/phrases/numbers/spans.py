@@ -7,9 +7,11 @@ from collections.abc import Callable
 from typing import TypeAlias
 
 from plainodds.phrases.numbers.chances import chance, chance_decimals
+from plainodds.phrases.numbers.marks import marked
 from plainodds.phrases.numbers.quantities import quantity
 from plainodds.phrases.numbers.ratios import ratio, ratio_interval
-from plainodds.phrases.numbers.signs import MINUS, NOT_KNOWN, with_sign
+from plainodds.phrases.numbers.signs import MINUS, with_sign
+from plainodds.phrases.numbers.wording import wording
 
 __all__ = ["Say", "percentage_points", "points_on_sides", "points_span", "span"]
 
@@ -48,7 +50,7 @@ def span(lower: float, upper: float, say: Say = chance) -> str:
         return ratio_interval(lower, upper)
     if say is quantity:
         low, high = quantity(lower), quantity(upper)
-        return low if low == high else f"{low} to {high}"
+        return low if low == high else wording().to.format(low, high)
     return _span(lower, upper, say, 1.0, lambda _: 2)
 
 
@@ -56,7 +58,7 @@ def _span(
     lower: float, upper: float, say: Say, unit: float, decimals: Callable[[float], int]
 ) -> str:
     low, high = _ends(lower, upper, say, unit, decimals)
-    return low if low == high else f"{low} to {high}"
+    return low if low == high else wording().to.format(low, high)
 
 
 def _ends(
@@ -105,7 +107,7 @@ def percentage_points(difference: float, *, decimals: int | None = None, sign: b
     >>> percentage_points(0.034), percentage_points(-0.12), percentage_points(0.00042)
     ('3.4 percentage points', '−12 percentage points', '0.042 percentage points')
     """
-    return f"{_points(difference, decimals=decimals, sign=sign)} percentage points"
+    return wording().points.format(_points(difference, decimals=decimals, sign=sign))
 
 
 def points_span(lower: float, upper: float) -> str:
@@ -121,7 +123,7 @@ def points_span(lower: float, upper: float) -> str:
     def say(difference: float, decimals: int | None = None) -> str:
         return _points(difference, decimals=decimals, sign=sign)
 
-    return f"{_span(lower, upper, say, 0.01, _points_decimals)} percentage points"
+    return wording().points.format(_span(lower, upper, say, 0.01, _points_decimals))
 
 
 def points_on_sides(lower: float, upper: float) -> str:
@@ -132,12 +134,13 @@ def points_on_sides(lower: float, upper: float) -> str:
     >>> points_on_sides(-0.021, 0.016), points_on_sides(-0.056, -0.021)
     ('2.1 lower to 1.6 higher', '2.1 to 5.6 lower')
     """
+    words = wording()
     low, high = _ends(lower, upper, _unsigned_points, 0.01, _points_decimals)
     if lower < 0 < upper:
-        return f"{low} lower to {high} higher"
-    side = "lower" if upper <= 0 and lower < 0 else "higher"
-    nearer, further = (high, low) if side == "lower" else (low, high)
-    return f"{nearer} {side}" if nearer == further else f"{nearer} to {further} {side}"
+        return words.to.format(words.lower.format(low), words.higher.format(high))
+    is_lower = upper <= 0 and lower < 0
+    side, nearer, further = (words.lower, high, low) if is_lower else (words.higher, low, high)
+    return side.format(nearer if nearer == further else words.to.format(nearer, further))
 
 
 def _unsigned_points(difference: float, decimals: int | None = None) -> str:
@@ -146,19 +149,21 @@ def _unsigned_points(difference: float, decimals: int | None = None) -> str:
 
 def _points(difference: float, decimals: int | None = None, sign: bool = False) -> str:
     if math.isnan(difference):
-        return NOT_KNOWN
+        return wording().not_known
     if difference == 0:
         return "0"
     points = 100 * difference
     if decimals is not None and abs(points) < _LEAST_END:
-        return "just above 0" if points > 0 else "just below 0"
+        return wording().just_above if points > 0 else wording().just_below
     if decimals is None and abs(points) < _LEAST_POINTS:
-        within = f"{_LEAST_POINTS:g}"
-        return f"under {within}" if points > 0 else f"between {MINUS}{within} and 0"
+        within = marked(f"{_LEAST_POINTS:g}")
+        if points > 0:
+            return wording().under.format(within)
+        return wording().between_and_nought.format(f"{MINUS}{within}")
     places = _points_decimals(difference) if decimals is None else decimals
     while float(f"{points:.{places}f}") == 0:
         places += 1
-    return with_sign(f"{points:,.{places}f}", sign)
+    return marked(with_sign(f"{points:,.{places}f}", sign))
 
 
 def _points_decimals(difference: float) -> int:
