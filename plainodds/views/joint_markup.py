@@ -141,7 +141,7 @@ def _remarks(answer: PairAnswer, joint: JointTable) -> str:
             f"The levels of {listed(names)} are exchanged here: the reference has the lowest "
             "odds, since only then do the additive measures say what they are read as."
         )
-    if len(joint.recoded) == 1:
+    if len(joint.recoded) == 1 and answer.interaction.joined:
         told.append("That turns the ratio of odds ratios into its inverse.")
     if any(cell.rows == 0 for cell in joint.cells):
         cases = tidy(subject.outcome.cases)

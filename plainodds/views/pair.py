@@ -29,7 +29,7 @@ __all__ = ["PairView"]
 
 _SCALES = (("chances", "probability"), ("odds", "odds"))
 _SHAPES = (("lines", "lines"), ("a map", "map"))
-_NUMBERS = (("between two values", "change"), ("its slope, per unit", "slope"))
+_NUMBERS = (("between two values", "change"), ("its slope", "slope"))
 _TESTS = (("Wald", "wald"), ("likelihood ratio", "likelihood_ratio"))
 _MOST_LEVELS = 6
 _ODDS_ONLY = (

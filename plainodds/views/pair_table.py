@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+from collections.abc import Callable
+
 from plainodds.answers.estimate import Estimate
 from plainodds.answers.pair import PairAnswer
 from plainodds.model.predictors import PredictorFacts
@@ -16,6 +18,8 @@ from plainodds.phrases.numbers import (
     quantity,
     ratio,
     ratio_interval,
+    signed,
+    span,
 )
 from plainodds.phrases.pair_labels import (
     effect_axis_title,
@@ -90,16 +94,19 @@ def interaction_table(answer: PairAnswer) -> Markup:
         (averaged, found.averaged, found.averaged_p_value),
     ):
         if estimate is not None:
-            cells = [sentence_case(where), _points(estimate.estimate)]
+            # by slopes it is far smaller than what points are made for
+            say, span_of = (_fine, _fine_between) if answer.sloped else (_points, _points_between)
+            cells = [sentence_case(where), say(estimate.estimate)]
             if has_interval:
-                cells += [_interval(estimate), NOT_KNOWN if p is None else p_value(p)]
+                cells += [_interval(estimate, span_of), NOT_KNOWN if p is None else p_value(p)]
             rows.append(Row(tuple(cells), opens, "plainodds-within"))
             opens = ""
     cells = [interaction_label(answer, "odds"), ratio(found.ratio.estimate)]
     if not found.joined:
         cells[1] = "1"
     if has_interval:
-        cells += [_ratio_interval(found.ratio) if found.joined else "by the model", ""]
+        told = _interval(found.ratio, ratio_interval) if found.joined else "by the model"
+        cells += [told, ""]
     rows.append(Row(tuple(cells), "In odds", "plainodds-within"))
     return markup.table(_interaction_title(answer), columns, rows, _tested(answer))
 
@@ -150,16 +157,10 @@ def _p(p: float) -> str:
     return written if written[:1] in "<>" else f"= {written}"
 
 
-def _interval(estimate: Estimate) -> str:
+def _interval(estimate: Estimate, span_of: Callable[[float, float], str]) -> str:
     if estimate.lower is None or estimate.upper is None:
         return NOT_KNOWN
-    return _points_between(estimate.lower, estimate.upper)
-
-
-def _ratio_interval(estimate: Estimate) -> str:
-    if estimate.lower is None or estimate.upper is None:
-        return NOT_KNOWN
-    return ratio_interval(estimate.lower, estimate.upper)
+    return span_of(estimate.lower, estimate.upper)
 
 
 def _at(facts: PredictorFacts, value: Scalar) -> str:
@@ -178,6 +179,14 @@ def _points(difference: float) -> str:
 
 def _points_between(lower: float, upper: float) -> str:
     return points_span(lower, upper).removesuffix(_POINTS)
+
+
+def _fine(slope: float) -> str:
+    return signed(100 * slope)
+
+
+def _fine_between(lower: float, upper: float) -> str:
+    return span(100 * lower, 100 * upper, signed)
 
 
 def _lowered(title: str) -> str:

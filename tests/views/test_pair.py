@@ -436,6 +436,14 @@ def test_the_interaction_is_told_on_both_scales(fit):
     assert "Wald test of all 2 coefficients that join the two" in text_of(interaction_table(answer))
 
 
+def test_an_interaction_of_slopes_is_told_however_small_it_is(fit):
+    answer = fit.pair("age_years", "pressure_m", number="slope")
+    found = {first: rest for first, *rest in cells(interaction_table(answer)) if rest}
+    assert 0 < abs(100 * answer.interaction.at_profile.estimate) < 0.01
+    shown = float(found["At typical values"][0].replace("−", "-"))
+    assert shown == pytest.approx(100 * answer.interaction.at_profile.estimate, rel=0.06)
+
+
 def test_without_a_shared_term_there_is_no_ratio_to_test(additive):
     answer = additive.pair("age_years", "material")
     found = {first: rest for first, *rest in cells(interaction_table(answer)) if rest}
@@ -499,6 +507,8 @@ def test_exchanged_levels_are_told_of(of_levels):
     told = replace(answer, joint=replace(answer.joint, recoded=("lined",)))
     assert "levels of lined are exchanged" in text_of(pair_table(told))
     assert "into its inverse" in text_of(pair_table(told))
+    apart = replace(told, interaction=replace(told.interaction, joined=False))
+    assert "into its inverse" not in text_of(pair_table(apart))
     kept = replace(answer, joint=replace(answer.joint, recoded=()))
     assert "exchanged" not in text_of(pair_table(kept))
 
