@@ -15,6 +15,7 @@ from plainodds.answers.effects import EffectsAnswer
 from plainodds.answers.odds import OddsAnswer
 from plainodds.answers.profile import ProfileAnswer
 from plainodds.answers.questions import Answer
+from plainodds.answers.soundness import SoundnessAnswer
 from plainodds.drawings.change import ChangeDrawing
 from plainodds.drawings.curve import CurveDrawing
 from plainodds.drawings.curve_levels import LevelsDrawing
@@ -23,6 +24,7 @@ from plainodds.drawings.effects import EffectsDrawing
 from plainodds.drawings.geometry import POINTS_PER_INCH, slot_size
 from plainodds.drawings.odds import OddsDrawing
 from plainodds.drawings.profile import ProfileDrawing
+from plainodds.drawings.soundness import SoundnessDrawing
 from plainodds.drawings.stamps import root_figure
 from plainodds.drawings.theme import Theme, theme_of
 
@@ -70,6 +72,11 @@ def _(answer: EffectsAnswer) -> type[Drawing[Any]]:
 @drawing_of.register
 def _(answer: ChangeAnswer) -> type[Drawing[Any]]:
     return ChangeDrawing
+
+
+@drawing_of.register
+def _(answer: SoundnessAnswer) -> type[Drawing[Any]]:
+    return SoundnessDrawing
 
 
 def draw(answer: Answer, ax: Axes | None = None, theme: str | Theme = "page") -> Figure:
