@@ -12,6 +12,7 @@ from plainodds.answers.odds import OddsAnswer
 from plainodds.answers.pair import PairAnswer
 from plainodds.answers.profile import ProfileAnswer
 from plainodds.answers.questions import Answer
+from plainodds.answers.soundness import SoundnessAnswer
 from plainodds.drawings.change import ChangeDrawing
 from plainodds.drawings.curve import CurveDrawing
 from plainodds.drawings.curve_levels import LevelsDrawing
@@ -20,6 +21,7 @@ from plainodds.drawings.effects import EffectsDrawing
 from plainodds.drawings.odds import OddsDrawing
 from plainodds.drawings.pair import PairDrawing
 from plainodds.drawings.profile import ProfileDrawing
+from plainodds.drawings.soundness import SoundnessDrawing
 
 __all__ = ["drawing_of"]
 
@@ -65,3 +67,8 @@ def _(answer: ChangeAnswer) -> type[Drawing[Any]]:
 @drawing_of.register
 def _(answer: PairAnswer) -> type[Drawing[Any]]:
     return PairDrawing
+
+
+@drawing_of.register
+def _(answer: SoundnessAnswer) -> type[Drawing[Any]]:
+    return SoundnessDrawing

@@ -82,6 +82,9 @@ class OddsDrawing:
             letter(axes, theme, beside, size=small, colour=faint, down="top") for _ in groups
         ]
         self._labels = [letter(axes, theme, beside) for group in groups for _ in group.slots]
+        self._sparse = [
+            letter(axes, theme, beside, size=small, colour=faint, down="top") for _ in self._labels
+        ]
         self._figures = [letter(axes, theme, figures) for _ in answer.rows]
         self._heading = letter(axes, theme, over_figures, size=small, colour=faint, down="bottom")
         self._sides = [
@@ -191,6 +194,9 @@ class OddsDrawing:
         for text, (words, y) in zip(self._labels, layout.slots, strict=True):
             text.set_text(words)
             text.set_position((-left + 0.9 * em, y))
+        for text, (words, y, beneath) in zip(self._sparse, layout.marks, strict=True):
+            text.set_text(words)
+            text.set_position((-left + 0.9 * em, y + beneath * stretch))
 
     def _place_axis(
         self, rows: Sequence[OddsRow], layout: Layout, plot_width: float, gap: float

@@ -9,6 +9,7 @@ from typing import Any
 from plainodds.answers.odds import OddsAnswer, OddsRow
 from plainodds.drawings.lettering import align_decimals, line_height, text_width, wrapped
 from plainodds.drawings.theme import Theme
+from plainodds.phrases.concerns import counted_rows, sparse_row
 from plainodds.phrases.labels import change_label, given_clause, given_label, predictor_label
 from plainodds.phrases.numbers import confidence, marks_now, ratio, ratio_interval
 from plainodds.phrases.unbounded import has_finite_estimate, odds_ratio_figures
@@ -40,10 +41,14 @@ _LEAST_PLOT = 0.24
 
 @dataclass(frozen=True)
 class Slot:
-    """One change, with one row of the answer for each series that has it."""
+    """One change, with one row of the answer for each series that has it.
+
+    `mark` is a caution under the label: few cases are behind it.
+    """
 
     label: str
     rows: tuple[Any, ...]
+    mark: str = ""
 
 
 @dataclass(frozen=True)
@@ -70,7 +75,9 @@ class Layout:
 
     `heads`, `slots` and `rules` run over groups, slots of all groups and gaps between
     groups; `rows` holds a height for each slot's rows, `spans` the heights between which
-    the plot is free of labels; `left` is how much room the labels take beside it.
+    the plot is free of labels; `left` is how much room the labels take beside it. `marks`
+    stand under the slots' labels: each with the height of what it stands under, and how far
+    beneath that.
     """
 
     left: float
@@ -80,6 +87,7 @@ class Layout:
     rules: tuple[float, ...]
     spans: tuple[tuple[float, float], ...]
     height: float
+    marks: tuple[tuple[str, float, float], ...]
 
 
 def groups_of(answer: OddsAnswer) -> tuple[Group, ...]:
@@ -123,8 +131,16 @@ def _group(answer: OddsAnswer, run: list[list[OddsRow]]) -> Group:
         if given:
             parts.append(given_label(subject, given))
         labels.append(", ".join(parts))
-    slots = tuple(Slot(label, tuple(slot)) for label, slot in zip(labels, run, strict=True))
+    slots = tuple(
+        Slot(label, tuple(slot), _mark(answer, slot))
+        for label, slot in zip(labels, run, strict=True)
+    )
     return Group(predictor_label(facts), ", ".join(rest), slots)
+
+
+def _mark(answer: OddsAnswer, slot: list[OddsRow]) -> str:
+    counted = counted_rows(answer)
+    return next((sparse_row(answer.subject, row) for row in slot if row in counted), "")
 
 
 def laid_out(groups: Sequence[Group], figures: Figures, theme: Theme, width: float) -> Layout:
@@ -155,9 +171,15 @@ def _side_by_side(groups: Sequence[Group], figures: Figures, theme: Theme, width
         for slot in group.slots
         if not (inline and _is_single(group))
     ]
+    wanted += [
+        indent + text_width(slot.mark, theme, theme.small)
+        for group in groups
+        for slot in group.slots
+        if slot.mark
+    ]
     room = min(max(wanted, default=0.0), most)
     y = 0.35 * em
-    heads, slots, rows, rules = [], [], [], []
+    heads, slots, rows, rules, marks = [], [], [], [], []
     texts = iter(figures.texts)
     for place, group in enumerate(groups):
         if place:
@@ -170,23 +192,27 @@ def _side_by_side(groups: Sequence[Group], figures: Figures, theme: Theme, width
         for slot in group.slots:
             label = "" if inline else wrapped(slot.label, room - indent, theme, em, _LABEL_LINES)
             needs = [line * (next(texts).count("\n") + 1) for _ in slot.rows]
-            height = max(line_height(em, label.count("\n") + 1), sum(needs))
-            slots.append((label, y + height / 2))
+            mark, under = _under(slot, room - indent, theme)
+            lines = line_height(em, label.count("\n") + 1)
+            height = max(lines + under, sum(needs))
+            middle = y + (height - under) / 2
+            slots.append((label, middle))
+            marks.append((mark, middle, lines / 2))
             rows.append(_middles(y + (height - sum(needs)) / 2, needs))
-            top = y + height / 2 - line / 2 if inline else top
+            top = middle - line / 2 if inline else top
             y += height + 0.12 * em
         heads.append((*head, top))
     height = y + 0.35 * em
     return Layout(
         room + GAP * em, tuple(heads), tuple(slots), tuple(rows), tuple(rules),
-        ((0.0, height),), height,
+        ((0.0, height),), height, tuple(marks),
     )  # fmt: skip
 
 
 def _stacked(groups: Sequence[Group], figures: Figures, theme: Theme, width: float) -> Layout:
     em, indent = theme.font_size, _INDENT * theme.font_size
     y = 0.0
-    heads, slots, rows, rules, spans = [], [], [], [], []
+    heads, slots, rows, rules, spans, marks = [], [], [], [], [], []
     texts = iter(figures.texts)
     for place, group in enumerate(groups):
         if place:
@@ -203,13 +229,26 @@ def _stacked(groups: Sequence[Group], figures: Figures, theme: Theme, width: flo
                 else wrapped(slot.label, width - indent, theme, em, _LABEL_LINES)
             )
             lines = line_height(em, label.count("\n") + 1) if label else 0.0
+            mark, under = _under(slot, width - indent, theme)
             slots.append((label, y + lines / 2))
-            y += lines
+            marks.append((mark, y + lines / 2, lines / 2))
+            y += lines + under
             needs = [1.1 * line_height(em, next(texts).count("\n") + 1) for _ in slot.rows]
             rows.append(_middles(y, needs))
             spans.append((y, y + sum(needs)))
             y += sum(needs) + 0.15 * em
-    return Layout(0.5 * em, tuple(heads), tuple(slots), tuple(rows), tuple(rules), tuple(spans), y)
+    return Layout(
+        0.5 * em, tuple(heads), tuple(slots), tuple(rows), tuple(rules), tuple(spans), y,
+        tuple(marks),
+    )  # fmt: skip
+
+
+def _under(slot: Slot, room: float, theme: Theme) -> tuple[str, float]:
+    """A slot's mark in lines, and the height that it needs."""
+    if not slot.mark:
+        return "", 0.0
+    mark = wrapped(slot.mark, room, theme, theme.small, 2)
+    return mark, line_height(theme.small, mark.count("\n") + 1)
 
 
 def _middles(top: float, heights: Sequence[float]) -> tuple[float, ...]:

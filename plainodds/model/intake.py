@@ -91,6 +91,9 @@ def take_in(
     share = _share(sample)
     known = _facts(design, raw, sample, stated.predictors)
     facts, notices = outcome_facts(modelled, stated.outcome, share, turned)
+    record = read_record(
+        result, source, facts.name, sample.outcome, estimates.without_standard_error
+    )
     subject = Subject(
         outcome=facts,
         predictors=known,
@@ -98,7 +101,13 @@ def take_in(
         covariance_kind=estimates.covariance_kind,
         no_interval=estimates.no_interval,
         offset=_held_offset(sample, stated.offset, sign),
-        notices=notices + source.notices + _empty_levels(known) + _suggestions(raw, declared),
+        notices=(
+            *record.notices,
+            *notices,
+            *source.notices,
+            *_empty_levels(known),
+            *_suggestions(raw, declared),
+        ),
         setting=Setting(
             predictors=tuple(stated.predictors.items()),
             outcome=stated.outcome,
@@ -123,9 +132,7 @@ def take_in(
         subject=subject,
         no_likelihood=estimates.no_likelihood,
         intercept_shift=_intercept_shift(share, stated.prevalence),
-        record=read_record(
-            result, source, facts.name, sample.outcome, estimates.without_standard_error
-        ),
+        record=record,
         data=source.data,
     )
 

@@ -66,6 +66,16 @@ class FitRecord:
     without_standard_error: tuple[str, ...] = ()
     dropped: Dropped | None = None
 
+    @property
+    def notices(self) -> tuple[str, ...]:
+        """What every answer of this fit has to say of how it went."""
+        if self.converged is not False:
+            return ()
+        return (
+            "The fit says that it did not converge, so its figures may not be those that the data "
+            "support best.",
+        )
+
 
 def read_record(
     result: Any,

@@ -9,7 +9,7 @@ from plainodds.phrases.labels import value_label
 from plainodds.phrases.unbounded import has_finite_estimate
 from plainodds.values import Scalar
 
-__all__ = ["sparse_cautions", "sparse_row"]
+__all__ = ["counted_rows", "sparse_cautions", "sparse_row"]
 
 # as where levels are checked: cases of the rarer outcome; common practice, no source
 _SPARSE = 5.0
@@ -39,17 +39,20 @@ def sparse_row(subject: Subject, row: OddsRow) -> str:
     return ", ".join(found)
 
 
+def counted_rows(answer: OddsAnswer) -> tuple[OddsRow, ...]:
+    """The rows of the model in whose rows the answer's subject counts levels: the first one."""
+    return tuple(row for row in answer.rows if row.model in ("", *answer.question.models[:1]))
+
+
 def sparse_cautions(answer: OddsAnswer) -> tuple[str, ...]:
     """That odds ratios hang on few cases, by level; empty where none does.
 
     Left out are rows without a finite odds ratio, of which this is said already, and rows of
-    other models, whose cases may be others.
+    further models, whose cases may be others.
     """
-    subject, models = answer.subject, answer.question.models
+    subject = answer.subject
     found: dict[tuple[str, Scalar], str] = {}
-    for row in answer.rows:
-        if not has_finite_estimate(row) or (models and row.model != models[0]):
-            continue
+    for row in filter(has_finite_estimate, counted_rows(answer)):
         held = [(row.predictor, level) for level in _levels(subject, row)]
         held += [(name, level) for name, level in row.given if level in _counted(subject, name)]
         for name, level in held:

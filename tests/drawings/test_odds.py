@@ -273,3 +273,64 @@ def test_nothing_but_open_ends_still_has_an_axis():
 def test_open_ends_fit_into_the_slot(width):
     answer = without_finite_estimates((math.inf, 0.3, math.inf), (-math.inf, -math.inf, -0.2))
     assert_readable(drawn(answer, width).axes.get_figure())
+
+
+def sparse_answer(**more):
+    """PVC has 3 events in 14 pipes; the lined pipes never burst but have an interval."""
+    material = replace(
+        made.MATERIAL, level_cases=(2714.0, 1806.0, 14.0), level_events=(301.0, 170.0, 3.0)
+    )
+    lined = replace(made.LINED, level_cases=(5100.0, 900.0), level_events=(400.0, 4.0))
+    rows = (
+        made.odds_row("age_years", 41.0, 51.0, 0.34, 0.04, per_step=True),
+        made.odds_row("material", "cast iron", "ductile iron", -0.62, 0.17),
+        made.odds_row("material", "cast iron", "PVC", -1.3, 0.3),
+        made.odds_row("lined", False, True, -1.1, 0.5),
+    )
+    return replace(
+        made.odds_answer(rows), subject=made.subject(predictors=(made.AGE, material, lined)), **more
+    )
+
+
+def text_on(drawing, words):
+    (found,) = (
+        text for text in drawing.axes.texts if text.get_visible() and text.get_text() == words
+    )
+    return found
+
+
+@pytest.mark.parametrize("width", [240, 330, 500, 800])
+def test_a_row_of_few_cases_says_so_in_small_type_under_its_label(width):
+    drawing = drawn(sparse_answer(), width)
+    words = [text for text in words_on(drawing.axes.get_figure()) if "events in" in text]
+    assert words == ["PVC: 3 events in 14", "yes: 4 events in 900"]
+    label, mark = (
+        text_on(drawing, each) for each in ("PVC against cast iron", "PVC: 3 events in 14")
+    )
+    assert mark.get_fontsize() < label.get_fontsize()
+    renderer = drawing.axes.get_figure().canvas.get_renderer()
+    above, below = (each.get_window_extent(renderer) for each in (label, mark))
+    assert below.y1 <= above.y0 + 1.0
+    assert above.y0 - below.y1 < above.height
+    assert below.x0 == pytest.approx(above.x0, abs=1.0)
+    assert_readable(drawing.axes.get_figure())
+
+
+def test_rows_of_few_cases_stay_readable_in_a_picture_taller_than_it_needs_to_be():
+    height = 1.4 * OddsDrawing.natural_height(sparse_answer(), THEME, 500)
+    assert_readable(drawn(sparse_answer(), 500, height).axes.get_figure())
+
+
+def test_a_picture_without_rows_of_few_cases_has_no_mark_and_no_room_for_one():
+    many = replace(sparse_answer(), subject=made.subject())
+    without = OddsDrawing.natural_height(many, THEME, 240)
+    assert OddsDrawing.natural_height(sparse_answer(), THEME, 240) > without
+    assert not any("events in" in text for text in words_on(drawn(many).axes.get_figure()))
+
+
+def test_marks_come_and_go_with_the_answer():
+    drawing = drawn(sparse_answer())
+    drawing.update(replace(sparse_answer(), subject=made.subject()))
+    assert not any("events in" in text for text in words_on(drawing.axes.get_figure()))
+    drawing.update(sparse_answer())
+    assert "PVC: 3 events in 14" in words_on(drawing.axes.get_figure())

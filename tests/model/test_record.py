@@ -7,10 +7,12 @@ import statsmodels.api as sm
 
 from plainodds import FittedLogit
 from plainodds.model.record import Dropped, FitRecord
+from plainodds.phrases import words
 from tests.model import made
 from tests.model.made import ENGINES, formula_engine
 
 BINOMIAL = sm.families.Binomial
+QUIET = {made.logit: {"disp": 0}}
 
 
 def holed():
@@ -147,6 +149,21 @@ def test_a_fit_that_was_stopped_says_so():
         record = FittedLogit(result).model.record
         assert record.converged is False
         assert record.iterations == 2
+
+
+@pytest.mark.parametrize("kind", KINDS)
+def test_a_fit_that_converged_is_not_remarked_upon(kind):
+    notices = FittedLogit(KINDS[kind]("left ~ age")).subject.notices
+    assert not any("converge" in notice for notice in notices)
+
+
+@pytest.mark.parametrize("fit", [made.logit, made.glm])
+@pytest.mark.parametrize("audience", ["plain", "technical"])
+def test_every_answer_of_a_fit_that_did_not_converge_says_so(fit, audience):
+    result = fit("left ~ age + depth", made.cases()).fit(maxiter=2, **QUIET.get(fit, {}))
+    stopped = FittedLogit(result)
+    for answer in (stopped.odds(), stopped.curve("age"), stopped.profile()):
+        assert any("did not converge" in each for each in words(answer, audience).cautions)
 
 
 def test_a_penalised_fit_is_known_as_such():

@@ -20,11 +20,13 @@ __all__: list[str] = []
 
 @evidence_words.register
 def _(evidence: AmountEvidence, finding: Finding, subject: Subject, level: float) -> FindingWords:
-    rarer = "events" if evidence.events <= evidence.others else "cases without the event"
+    rarer = "with the event" if evidence.events <= evidence.others else "without it"
+    each = f"each of {coefficients(evidence.parameters)}"
+    if evidence.parameters == 1:
+        each = "the only coefficient"
     what = (
         f"{cases(subject, evidence.events)} had the event and {amount(evidence.others)} did not, "
-        f"which is {ratio(evidence.events_per_parameter)} {rarer} for each of "
-        f"{coefficients(evidence.parameters)} beside the intercept"
+        f"which makes {_each(evidence)} {rarer} for {each} beside the intercept"
     )
     if finding.concern == "nothing found":
         return made(finding, subject, what, "Nothing needs doing about this")
@@ -34,11 +36,16 @@ def _(evidence: AmountEvidence, finding: Finding, subject: Subject, level: float
     return made(finding, subject, what, step)
 
 
+def _each(evidence: AmountEvidence) -> str:
+    number = evidence.events_per_parameter
+    return amount(number) if number.is_integer() else ratio(number)
+
+
 @evidence_figures.register
 def _(evidence: AmountEvidence, finding: Finding, subject: Subject, level: float) -> list[Figure]:
     return [
         ("With the event", amount(evidence.events)),
         ("Without the event", amount(evidence.others)),
         ("Coefficients beside the intercept", amount(evidence.parameters)),
-        ("Of the rarer outcome for each coefficient", ratio(evidence.events_per_parameter)),
+        ("Of the rarer outcome for each coefficient", _each(evidence)),
     ]

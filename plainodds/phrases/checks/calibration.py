@@ -54,6 +54,10 @@ def _optimism(found: Optimism | None) -> str:
 def _next(evidence: CalibrationEvidence, finding: Finding) -> str:
     if "curve" in finding.reasons:
         return "See along which number the model bends wrongly, and mend that before giving chances"
+    if finding.unknown == "no likelihood":
+        return "Look at the picture, and keep to chances where the two lines are close"
+    if "optimism" in finding.reasons and evidence.optimism and not evidence.optimism.repeats:
+        return "Gather more data: no resample could be fitted, so the fit hangs on a few rows"
     if "optimism" in finding.reasons:
         return "Call chances far from the average too extreme, or fit a smaller or a shrunk model"
     if evidence.optimism is None:

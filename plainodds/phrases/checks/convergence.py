@@ -42,7 +42,8 @@ def _what(evidence: ConvergenceEvidence, finding: Finding) -> str:
     if "gradient" in finding.reasons:
         whose = columns_named((evidence.coefficient,))
         joined = ", but" if evidence.converged else ", and"
-        moves = "without an end" if math.isinf(step) else f"by {ratio(step)} of its standard error"
+        moves = f"by {ratio(step)} of its standard error{'s' if step >= 1 else ''}"
+        moves = "without an end" if math.isinf(step) else moves
         return f"{said}{joined} one more step would move the coefficient {whose} {moves}"
     joined = ", and yet" if evidence.converged is False else ", and"
     no_more = f"more than {ratio(step)}" if step >= _VISIBLE else f"as much as {_VISIBLE:g}"

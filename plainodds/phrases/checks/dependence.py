@@ -67,6 +67,8 @@ def _farthest(evidence: DependenceEvidence) -> StandardErrorPair | None:
     known = [
         pair for pair in evidence.standard_errors if pair.model_based > 0 and pair.by_groups > 0
     ]
+    # nobody asks for the intercept's
+    known = [pair for pair in known if pair.predictors] or known
     return max(
         known, key=lambda pair: abs(math.log(pair.by_groups / pair.model_based)), default=None
     )

@@ -22,8 +22,9 @@ from plainodds.phrases.units import tidy
 __all__ = ["C_LIMITS"]
 
 C_LIMITS = (
-    "c says how often a case with the event is ranked above one without it; it says nothing of "
-    "whether the chances come true, and a right model of what is hard to foretell has a low one."
+    "The measure c says how often a case with the event is ranked above one without it; it says "
+    "nothing of whether the chances come true, and a right model of what is hard to foretell has a "
+    "low one."
 )
 
 

@@ -45,7 +45,7 @@ def _(
             "standard error"
         )
         if told:
-            what += f"; the farthest that one was moved: {told}"
+            what += f"; for example, {told}"
         return made(finding, subject, what, "Nothing needs doing about this")
     turns = "turns an odds ratio" in finding.reasons
     what = (
@@ -74,7 +74,8 @@ def _example(
         for moved in pattern.moved
         if _far(moved) > 0 and (moved.predictor in finding.about or not finding.about)
     ]
-    moves = [each for each in moves if each[0].cases <= most] or moves
+    few = [each for each in moves if each[0].cases <= most]
+    moves = few or (moves if finding.reasons else [])
     if "turns an odds ratio" in finding.reasons:
         moves = [each for each in moves if _turns(each[1])] or moves
     return max(moves, key=lambda each: _far(each[1]), default=None)

@@ -3,51 +3,44 @@
 from __future__ import annotations
 
 import math
+from functools import singledispatch
 
+from plainodds.answers.checks.amount import AmountEvidence
 from plainodds.answers.checks.collinearity import CollinearityEvidence
 from plainodds.answers.checks.convergence import ConvergenceEvidence
+from plainodds.answers.checks.dependence import DependenceEvidence
 from plainodds.answers.checks.finding import Finding
 from plainodds.answers.checks.overall import OverallEvidence
+from plainodds.answers.checks.shape import ShapeEvidence
 from plainodds.answers.checks.standard_errors import StandardErrorsEvidence
 from plainodds.model.predictors import Subject
+from plainodds.phrases.checks.bending import apart
 from plainodds.phrases.checks.finding_words import finding_words
-from plainodds.phrases.checks.parts import named
+from plainodds.phrases.checks.parts import amount, cases, named
+from plainodds.phrases.labels import predictor_name
 from plainodds.phrases.parts import sentence
+from plainodds.phrases.units import tidy
 
 __all__ = ["plain_sentences"]
 
 
 def plain_sentences(finding: Finding, subject: Subject, level: float) -> tuple[str, ...]:
-    """What a finding of some weight means for whoever hears the explanation."""
-    other_words = _in_other_words(finding, subject)
+    """What a finding means for whoever hears the explanation, in at most two sentences."""
+    other_words = _in_other_words(finding.evidence, finding, subject) if finding.reasons else ""
     if other_words:
         return (sentence(other_words),)
     said = finding_words(finding, subject, level)
     return said.what, said.why
 
 
-def _in_other_words(finding: Finding, subject: Subject) -> str:
+@singledispatch
+def _in_other_words(evidence: object, finding: Finding, subject: Subject) -> str:
     """Where a finding's own sentence speaks of the inside of a model; empty where it does not."""
-    evidence, who = finding.evidence, named(subject, finding.about)
-    if isinstance(evidence, ConvergenceEvidence):
-        return _convergence(evidence, finding)
-    if isinstance(evidence, StandardErrorsEvidence):
-        of = f" that have to do with {who}" if who else ""
-        return f"some figures{of} are hardly known at all, and their intervals mean little"
-    if isinstance(evidence, CollinearityEvidence) and "rank" in finding.reasons:
-        told = f": it has to do with {who}" if who else ""
-        return (
-            "some of what the model uses follows exactly from the rest, so no data can tell them "
-            f"apart{told}"
-        )
-    if isinstance(evidence, OverallEvidence):
-        return (
-            "the model's chances bend in another way than what happened does, by enough to matter"
-        )
     return ""
 
 
-def _convergence(evidence: ConvergenceEvidence, finding: Finding) -> str:
+@_in_other_words.register
+def _(evidence: ConvergenceEvidence, finding: Finding, subject: Subject) -> str:
     if "gradient" in finding.reasons:
         return (
             "the fit stopped before it came to the figures that the data support best, so all of "
@@ -56,3 +49,59 @@ def _convergence(evidence: ConvergenceEvidence, finding: Finding) -> str:
     if math.isnan(evidence.remaining_step):
         return "the fit says that it did not finish; how far its figures would move is not known"
     return "the fit says that it did not finish, though its figures would hardly move any more"
+
+
+@_in_other_words.register
+def _(evidence: StandardErrorsEvidence, finding: Finding, subject: Subject) -> str:
+    of = f" that have to do with {named(subject, finding.about)}" if finding.about else ""
+    return f"some figures{of} are hardly known at all, and their intervals mean little"
+
+
+@_in_other_words.register
+def _(evidence: CollinearityEvidence, finding: Finding, subject: Subject) -> str:
+    who = named(subject, finding.about)
+    if "rank" in finding.reasons:
+        told = f": it has to do with {who}" if who else ""
+        return (
+            "some of what the model uses follows exactly from the rest, so no data can tell them "
+            f"apart{told}"
+        )
+    if len(finding.about) == 1:
+        return (
+            f"{who} hardly varies by itself in the data, so what goes with it can hardly be told "
+            "from what goes with the others"
+        )
+    return (
+        f"{who} move together closely, so what goes with one of them can hardly be told from what "
+        "goes with another"
+    )
+
+
+@_in_other_words.register
+def _(evidence: AmountEvidence, finding: Finding, subject: Subject) -> str:
+    return (
+        f"{cases(subject, evidence.events)} had the event and {amount(evidence.others)} did not, "
+        "which is little for a model of this size: its figures are rough"
+    )
+
+
+@_in_other_words.register
+def _(evidence: DependenceEvidence, finding: Finding, subject: Subject) -> str:
+    return (
+        f"rows that belong together by “{tidy(evidence.name)}” tell less than as many strangers, "
+        "so the model's figures may be less sure than they look"
+    )
+
+
+@_in_other_words.register
+def _(evidence: ShapeEvidence, finding: Finding, subject: Subject) -> str:
+    name = predictor_name(subject.predictor(evidence.predictor))
+    return (
+        f"along {name}, the model's chances and what happened differ "
+        f"{apart(evidence.largest_gap)}, more than chance would explain"
+    )
+
+
+@_in_other_words.register
+def _(evidence: OverallEvidence, finding: Finding, subject: Subject) -> str:
+    return "the model's chances bend in another way than what happened does, by enough to matter"

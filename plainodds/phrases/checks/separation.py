@@ -71,10 +71,12 @@ def _whose(evidence: SeparationEvidence) -> str:
 def _levels(evidence: SeparationEvidence, subject: Subject) -> str:
     if not evidence.levels:
         return ""
-    told = short_list([level_name(subject, name, held) for name, held in evidence.levels])
+    levels = [level_name(subject, name, held) for name, held in evidence.levels]
     cases = tidy(subject.outcome.cases)
-    each = "" if len(evidence.levels) == 1 else "at each of these levels "
-    return f": {each}all {cases} with {told} had the same outcome"
+    if len(levels) == 1:
+        return f": all {cases} with {levels[0]} had the same outcome"
+    told = short_list([f"within {level}" for level in levels])
+    return f": {told}, all {cases} had the same outcome"
 
 
 @evidence_figures.register

@@ -1,0 +1,193 @@
+"""Fitted chances against what happened."""
+
+from __future__ import annotations
+
+import math
+
+from plainodds.answers.checks.calibration import CalibrationEvidence
+from plainodds.answers.checks.discrimination import DiscriminationEvidence
+from plainodds.drawings.checks.along import (
+    Axis,
+    band,
+    chances_axis,
+    density,
+    dot_areas,
+    draw_strip,
+    draw_x_axis,
+    draw_y_axis,
+    title_lines,
+    x_axis_height,
+    y_axis_width,
+)
+from plainodds.drawings.checks.board import Board
+from plainodds.drawings.checks.ends import EndLabel, draw_ends, ends_width
+from plainodds.drawings.checks.plate import Found, Plate
+from plainodds.drawings.checks.shape import cases_each, intervals_of
+from plainodds.drawings.checks.tables import draw_table, table_height
+from plainodds.drawings.geometry import Margins
+from plainodds.drawings.lettering import line_height, wrapped
+from plainodds.drawings.theme import Theme
+from plainodds.phrases.checks.headings import picture_axes, picture_legend
+from plainodds.phrases.numbers import NOT_KNOWN, confidence, count, quantity
+from plainodds.phrases.units import tidy
+
+__all__ = ["CALIBRATION"]
+
+_STRIP = 1.6
+_SIDE = 25.0
+_WAYS = {"bootstrap": "bootstrap samples", "cross-validation": "repeats of cross-validation"}
+
+
+def _below(found: Found, theme: Theme, width: float) -> float:
+    em, (title, _) = theme.font_size, picture_axes(found.finding, found.subject)
+    axis = (1.25 * _STRIP + 0.1) * em + x_axis_height(title, theme, width)
+    table = table_height(_optimism(found), theme, width)
+    return axis + (table + 0.8 * em if table else 0.0)
+
+
+def _above(theme: Theme) -> float:
+    return line_height(theme.small) + 0.6 * theme.font_size
+
+
+def _names(found: Found) -> tuple[str, str]:
+    return picture_legend(found.finding, found.subject)
+
+
+def _natural(found: Found, theme: Theme, width: float) -> float:
+    beside = ends_width(_names(found), theme, width) + 3 * theme.font_size
+    side = min(max(width - beside, 12 * theme.font_size), _SIDE * theme.font_size)
+    return _above(theme) + side + _below(found, theme, width)
+
+
+def _least(found: Found, theme: Theme, width: float) -> float:
+    return _above(theme) + 10 * theme.font_size + _below(found, theme, width)
+
+
+def _notes(found: Found) -> list[str]:
+    evidence = found.evidence(CalibrationEvidence)
+    return [
+        f"Band and bars: {confidence(found.level)} intervals.",
+        cases_each(evidence.bins, found),
+        f"Beneath: how many {tidy(found.subject.outcome.cases)} have each chance.",
+    ]
+
+
+def _optimism(found: Found) -> list[tuple[str, ...]]:
+    """The rows of the table that says how much is the fit's own optimism; empty without it."""
+    evidence = found.evidence(CalibrationEvidence)
+    held, ranks = evidence.optimism, found.also(DiscriminationEvidence)
+    if held is None:
+        return []
+    c = math.nan if ranks is None else ranks.c.estimate
+    return [
+        (f"{count(held.repeats)} {_WAYS[held.way]}", "on its own data", "corrected"),
+        ("Slope (1 is right)", _figure(evidence.slope.estimate), _figure(held.slope)),
+        ("Brier score (0 is best)", _figure(evidence.brier, 3), _figure(held.brier, 3)),
+        ("c (1 is best)", _figure(c), _figure(held.c)),
+    ]
+
+
+def _figure(number: float, decimals: int = 2) -> str:
+    return (
+        NOT_KNOWN
+        if math.isnan(number)
+        else quantity(round(number, 9))
+        if number == round(number)
+        else f"{number:.{decimals}f}".replace("-", "−")
+    )
+
+
+def _paint(board: Board, found: Found, width: float, height: float) -> Margins:
+    theme, em = board.theme, board.theme.font_size
+    evidence = found.evidence(CalibrationEvidence)
+    names = _names(found)
+    bottom, top = _below(found, theme, width), _above(theme)
+    labels = ends_width(names, theme, width)
+    plot_height = height - bottom - top
+    bins = evidence.bins
+    axis = chances_axis(
+        (*evidence.at, *evidence.smoothed, *(each.observed for each in bins),
+         *(each.centre for each in bins)),
+        (*evidence.lower, *evidence.upper, *(each.lower for each in bins),
+         *(each.upper for each in bins)),
+        int(plot_height / (2.8 * theme.small)),
+    )  # fmt: skip
+    left = y_axis_width(axis, theme)
+    plot_width = min(width - left - labels, plot_height)
+    right = width - left - plot_width
+    most = int(plot_width / (4.4 * theme.small))
+    across = Axis(axis.lower, axis.upper, *_thinned(axis, most))
+    chance, share = picture_axes(found.finding, found.subject)
+    draw_y_axis(board, axis)
+    lines = title_lines(chance, theme, width)
+    draw_x_axis(board, across, chance, plot_width, (1.25 * _STRIP + 0.35) * em, lines)
+    board.write(
+        wrapped(share, width, theme, theme.small, 1), -left, 0.45 * em, board.at(0, 1),
+        down="bottom",
+    )  # fmt: skip
+    _draw_curves(board, evidence, axis)
+    draw_strip(board, "support", _chances(found), across, plot_width, _STRIP * em)
+    before = (1 - axis.share(evidence.at[-1])) * plot_width
+    draw_ends(
+        board,
+        [
+            EndLabel(names[0], axis.share(evidence.smoothed[-1]), 0, before),
+            EndLabel(names[1], 1.0, -1),
+        ],
+        right, plot_height,
+    )  # fmt: skip
+    rows = _optimism(found)
+    if rows:
+        draw_table(board, rows, -left, -bottom + table_height(rows, theme, width), width, (0, 0))
+    return Margins(left, right, bottom, top)
+
+
+def _thinned(axis: Axis, most: int) -> tuple[tuple[float, ...], tuple[str, ...]]:
+    """Ticks of the other axis, no more of them than there is room for."""
+    step = max(1, math.ceil(len(axis.ticks) / max(2, most)))
+    return axis.ticks[::step], axis.labels[::step]
+
+
+def _chances(found: Found) -> list[tuple[float, float, float]]:
+    """Where cases are along the fitted chance: finely where discrimination was looked at."""
+    fine = found.also(DiscriminationEvidence)
+    if fine is not None:
+        totals = [sum(pair) for pair in zip(fine.events, fine.others, strict=True)]
+        highest = max(totals) or 1.0
+        edges = fine.edges
+        return [
+            (a, b, total / highest)
+            for a, b, total in zip(edges[:-1], edges[1:], totals, strict=True)
+        ]
+    bins = found.evidence(CalibrationEvidence).bins
+    lows, highs = [each.low for each in bins], [each.high for each in bins]
+    return density(lows, highs, [each.cases for each in bins], highs[-1] - lows[0])
+
+
+def _draw_curves(board: Board, evidence: CalibrationEvidence, axis: Axis) -> None:
+    theme = board.theme
+    data = theme.series(0)
+    board.line(
+        "equality", [axis.lower, axis.upper], [axis.lower, axis.upper], color=theme.rule,
+        linewidth=1.6 * theme.hairline, linestyle=(0, (4.0, 2.4)), zorder=2,
+    )  # fmt: skip
+    board.area(
+        "band", band(evidence.at, evidence.lower, evidence.upper), facecolor=data.colour,
+        alpha=theme.band_opacity, zorder=1.5, clip=True,
+    )  # fmt: skip
+    board.strokes(
+        "intervals", intervals_of(evidence.bins, axis), colors=data.colour,
+        linewidths=1.6 * theme.hairline, zorder=2.5, alpha=0.7,
+    )  # fmt: skip
+    board.circles(
+        "bins", [(each.centre, each.observed) for each in evidence.bins],
+        dot_areas(evidence.bins, theme), facecolors=theme.paper, edgecolors=data.colour,
+        linewidths=0.7 * theme.line_width, zorder=2.6, clip_on=False,
+    )  # fmt: skip
+    board.line(
+        "data", evidence.at, evidence.smoothed, color=data.colour, linewidth=theme.line_width,
+        zorder=3,
+    )  # fmt: skip
+
+
+CALIBRATION = Plate("calibration", _natural, _least, _notes, _paint)

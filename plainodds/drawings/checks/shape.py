@@ -1,0 +1,163 @@
+"""Model against data along a number, as shares and chances."""
+
+from __future__ import annotations
+
+from collections.abc import Sequence
+
+from plainodds.answers.checks.shape import Bin, ShapeEvidence
+from plainodds.drawings.checks.along import (
+    Axis,
+    band,
+    chances_axis,
+    density,
+    dot_areas,
+    draw_strip,
+    draw_x_axis,
+    draw_y_axis,
+    marked_places,
+    numbers_axis,
+    title_lines,
+    x_axis_height,
+    y_axis_width,
+)
+from plainodds.drawings.checks.board import Board
+from plainodds.drawings.checks.ends import EndLabel, draw_ends, ends_width
+from plainodds.drawings.checks.plate import Found, Plate
+from plainodds.drawings.geometry import Margins
+from plainodds.drawings.lettering import line_height, wrapped
+from plainodds.drawings.theme import Theme
+from plainodds.phrases.checks.headings import picture_axes, picture_legend
+from plainodds.phrases.checks.parts import cases
+from plainodds.phrases.numbers import confidence
+from plainodds.phrases.units import tidy
+
+__all__ = ["SHAPE", "cases_each", "intervals_of"]
+
+_STRIP = 1.6
+"""Height of the strip beneath the plot, in letters."""
+
+
+def _below(found: Found, theme: Theme, width: float) -> float:
+    """Room beneath the plot: strip, tick labels and title."""
+    title, _ = picture_axes(found.finding, found.subject)
+    return (1.25 * _STRIP + 0.1) * theme.font_size + x_axis_height(title, theme, width)
+
+
+def _above(theme: Theme) -> float:
+    return line_height(theme.small) + 0.6 * theme.font_size
+
+
+def _natural(found: Found, theme: Theme, width: float) -> float:
+    return max(0.46 * width, 20 * theme.font_size) + _below(found, theme, width)
+
+
+def _least(found: Found, theme: Theme, width: float) -> float:
+    return _above(theme) + 9 * theme.font_size + _below(found, theme, width)
+
+
+def _notes(found: Found) -> list[str]:
+    evidence, confident = found.evidence(ShapeEvidence), confidence(found.level)
+    return [
+        "Both lines are smoothed in the same way.",
+        f"Band and bars: {confident} intervals.",
+        f"{cases_each(evidence.bins, found)} Beneath: where the "
+        f"{tidy(found.subject.outcome.cases)} are.",
+    ]
+
+
+def cases_each(bins: Sequence[Bin], found: Found) -> str:
+    """How many cases the dots stand for: "Dots: 54 to 60 pipes each."."""
+    low, high = min(each.cases for each in bins), max(each.cases for each in bins)
+    told = cases(found.subject, high)
+    if low > 0.995 * high:
+        return f"Dots: {told} each."
+    least = cases(found.subject, low).split(" ")[0]
+    larger = ", the more the larger" if high > 1.5 * low else ""
+    return f"Dots: {least} to {told} each{larger}."
+
+
+def intervals_of(bins: Sequence[Bin], axis: Axis) -> list[list[tuple[float, float]]]:
+    """The bins' intervals as upright lines, as far as the axis goes."""
+    return [
+        [(each.centre, max(each.lower, axis.lower)), (each.centre, min(each.upper, axis.upper))]
+        for each in bins
+    ]
+
+
+def _paint(board: Board, found: Found, width: float, height: float) -> Margins:
+    theme, em = board.theme, board.theme.font_size
+    evidence = found.evidence(ShapeEvidence)
+    names = [each.split(",")[0] for each in picture_legend(found.finding, found.subject)]
+    bottom, top = _below(found, theme, width), _above(theme)
+    right = ends_width(names, theme, width)
+    plot_height = height - bottom - top
+    up = chances_axis(
+        (*evidence.observed, *evidence.expected, *(each.observed for each in evidence.bins)),
+        (*evidence.lower, *evidence.upper, *(each.lower for each in evidence.bins),
+         *(each.upper for each in evidence.bins)),
+        int(plot_height / (2.6 * theme.small)),
+    )  # fmt: skip
+    left = y_axis_width(up, theme)
+    plot_width = width - left - right
+    low = min(evidence.at[0], evidence.bins[0].low)
+    high = max(evidence.at[-1], evidence.bins[-1].high)
+    room = 0.02 * (high - low) or 0.5
+    across = numbers_axis(low - room, high + room, int(plot_width / (4.4 * theme.small)))
+    if found.subject.predictor(evidence.predictor).kind == "whole number":
+        across = across.of_whole_numbers()
+    along, share = picture_axes(found.finding, found.subject)
+    draw_y_axis(board, up)
+    lines = title_lines(along, theme, width)
+    draw_x_axis(board, across, along, plot_width, (1.25 * _STRIP + 0.35) * em, lines)
+    board.write(
+        wrapped(share, width, theme, theme.small, 1), -left, 0.45 * em, board.at(0, 1),
+        down="bottom",
+    )  # fmt: skip
+    _draw_curves(board, evidence, up)
+    bars = density(
+        [each.low for each in evidence.bins], [each.high for each in evidence.bins],
+        [each.cases for each in evidence.bins], high - low,
+    )  # fmt: skip
+    draw_strip(board, "support", bars, across, plot_width, _STRIP * em)
+    before = (1 - across.share(evidence.at[-1])) * plot_width
+    draw_ends(
+        board,
+        [EndLabel(name, up.share(each[-1]), place, before)
+         for place, (name, each) in enumerate(
+             zip(names, (evidence.observed, evidence.expected), strict=True))],
+        right, plot_height,
+    )  # fmt: skip
+    return Margins(left, right, bottom, top)
+
+
+def _draw_curves(board: Board, evidence: ShapeEvidence, up: Axis) -> None:
+    theme = board.theme
+    data, model = theme.series(0), theme.series(1)
+    board.area(
+        "band", band(evidence.at, evidence.lower, evidence.upper), facecolor=data.colour,
+        alpha=theme.band_opacity, zorder=1.5, clip=True,
+    )  # fmt: skip
+    board.strokes(
+        "intervals", intervals_of(evidence.bins, up), colors=data.colour,
+        linewidths=1.6 * theme.hairline, zorder=2.5, alpha=0.7,
+    )  # fmt: skip
+    board.circles(
+        "bins", [(each.centre, each.observed) for each in evidence.bins],
+        dot_areas(evidence.bins, theme), facecolors=theme.paper, edgecolors=data.colour,
+        linewidths=0.7 * theme.line_width, zorder=2.6, clip_on=False,
+    )  # fmt: skip
+    board.line(
+        "data", evidence.at, evidence.observed, color=data.colour, linewidth=theme.line_width,
+        zorder=3,
+    )  # fmt: skip
+    board.line(
+        "model", evidence.at, evidence.expected, color=model.colour, zorder=3.2,
+        linewidth=1.15 * theme.line_width, linestyle=(0, model.dash),
+    )  # fmt: skip
+    places = marked_places(len(evidence.at), 0.5)
+    board.marks(
+        "model marks", [(evidence.at[place], evidence.expected[place]) for place in places], 1
+    )
+
+
+SHAPE = Plate("shape", _natural, _least, _notes, _paint)

@@ -1,0 +1,132 @@
+"""Odds ratios that hang on few cases say so: in words, and beside their row."""
+
+import math
+from dataclasses import replace
+
+import numpy as np
+import pandas as pd
+import pytest
+import statsmodels.formula.api as smf
+
+import plainodds as po
+from plainodds.answers.estimate import Estimate
+from plainodds.answers.odds import OddsQuestion
+from plainodds.phrases import words
+from plainodds.phrases.concerns import counted_rows, sparse_cautions, sparse_row
+from tests.phrases.made import AGE, LINED, MATERIAL, level_facts, odds_answer, odds_row
+from tests.phrases.reading import faults
+
+HANGS = (
+    "Odds ratios that speak of material PVC (3 events in 14 pipes) hang on few cases of one "
+    "outcome."
+)
+
+
+def material(cases=(311.0, 200.0, 14.0), events=(87.0, 50.0, 3.0)):
+    return replace(MATERIAL, level_cases=cases, level_events=events)
+
+
+def answer_of(*rows, facts=None, **more):
+    return odds_answer(*rows, predictors=(AGE, facts or material(), LINED), **more)
+
+
+PVC = odds_row("material", "CI", "PVC", log=0.7)
+DUCTILE = odds_row("material", "CI", "DI", log=0.7)
+
+
+def test_a_row_of_few_events_is_marked_with_its_level():
+    subject = answer_of().subject
+    assert sparse_row(subject, PVC) == "PVC: 3 events in 14"
+    assert sparse_row(subject, DUCTILE) == ""
+
+
+@pytest.mark.parametrize(
+    ("events", "cases", "mark"),
+    [
+        (5.0, 14.0, ""),
+        (4.0, 14.0, "PVC: 4 events in 14"),
+        (10.0, 14.0, "PVC: 10 events in 14"),
+        (9.0, 14.0, ""),
+        (1.0, 1.0, "PVC: 1 event in 1"),
+        (0.0, 400.0, "PVC: 0 events in 400"),
+        (2.5, 30.0, "PVC: 2.5 events in 30"),
+    ],
+)
+def test_either_outcome_can_be_the_rare_one(events, cases, mark):
+    facts = material((311.0, 200.0, cases), (87.0, 50.0, events))
+    answer = answer_of(PVC, facts=facts)
+    assert sparse_row(answer.subject, PVC) == mark
+    assert bool(sparse_cautions(answer)) == bool(mark)
+
+
+def test_a_reference_of_few_cases_is_marked_too():
+    facts = material((9.0, 200.0, 14.0), (2.0, 50.0, 3.0))
+    subject = answer_of(facts=facts).subject
+    assert sparse_row(subject, PVC) == "PVC: 3 events in 14, cast iron: 2 events in 9"
+    assert sparse_row(subject, DUCTILE) == "cast iron: 2 events in 9"
+
+
+def test_levels_that_nobody_has_counted_and_numbers_are_not_marked():
+    subject = answer_of(facts=MATERIAL).subject
+    assert sparse_row(subject, PVC) == ""
+    assert sparse_row(subject, odds_row()) == ""
+    without_rows = material((311.0, 200.0, 0.0), (87.0, 50.0, 0.0))
+    assert sparse_row(answer_of(facts=without_rows).subject, PVC) == ""
+
+
+@pytest.mark.parametrize("audience", ["plain", "technical"])
+def test_words_of_odds_say_which_levels_have_few_cases(audience):
+    assert HANGS in words(answer_of(PVC, DUCTILE), audience).cautions
+    assert HANGS not in words(answer_of(DUCTILE), audience).cautions
+
+
+def test_a_level_that_a_row_is_given_counts_too():
+    row = odds_row(given=(("material", "PVC"), ("lined", False)))
+    assert sparse_cautions(answer_of(row)) == (HANGS,)
+    assert sparse_row(answer_of(row).subject, row) == ""
+
+
+def test_each_level_is_named_once_and_many_are_cut_short():
+    levels = tuple("abcdefg")
+    facts = level_facts(
+        levels=levels,
+        level_labels=levels,
+        level_counts=(100,) * 7,
+        level_cases=(100.0,) * 7,
+        level_events=(50.0, 1.0, 1.0, 1.0, 1.0, 1.0, 1.0),
+    )
+    rows = [odds_row("material", "a", level) for level in levels[1:]]
+    (caution,) = sparse_cautions(answer_of(*rows, *rows, facts=facts))
+    assert caution.count("material b ") == 1
+    assert "and 2 more" in caution
+    assert faults(caution) == []
+
+
+def test_where_there_is_no_finite_odds_ratio_its_reason_is_told_instead():
+    facts = material((311.0, 200.0, 14.0), (87.0, 50.0, 0.0))
+    endless = Estimate(0.0, None, 0.0, 0.42)
+    row = replace(PVC, log_odds_ratio=Estimate(-math.inf, None, None, -0.87), odds_ratio=endless)
+    answer = answer_of(row, facts=facts)
+    assert sparse_cautions(answer) == ()
+    assert sparse_row(answer.subject, row) == "PVC: 0 events in 14"
+    assert any("no finite odds ratio" in each for each in words(answer).cautions)
+
+
+def test_of_several_models_only_the_first_ones_rows_are_counted():
+    rows = [replace(PVC, model=name) for name in ("crude", "adjusted")]
+    question = OddsQuestion(models=("crude", "adjusted"))
+    answer = answer_of(*rows, question=question)
+    assert counted_rows(answer) == (rows[0],)
+    assert sparse_cautions(replace(answer, rows=(rows[1],))) == ()
+    assert sparse_cautions(answer) == (HANGS,)
+
+
+def test_a_real_fit_counts_its_own_cases():
+    rng = np.random.default_rng(4)
+    data = pd.DataFrame({"x": rng.normal(size=400), "site": ["a"] * 380 + ["b"] * 20})
+    data["y"] = (rng.uniform(size=400) < 0.4).astype(int)
+    data.loc[data.site == "b", "y"] = [1, 1, 1] + [0] * 17
+    answer = po.FittedLogit(smf.logit("y ~ x + site", data).fit(disp=0)).odds()
+    marks = {row.predictor: sparse_row(answer.subject, row) for row in answer.rows}
+    assert marks == {"x": "", "site": "b: 3 events in 20"}
+    assert any("site b (3 events in 20 cases)" in each for each in words(answer).cautions)
