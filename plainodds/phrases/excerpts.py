@@ -24,12 +24,12 @@ _SHOWN = {
 }
 
 
-@words.register
+@words.register_for_all
 def _(answer: ExcerptAnswer, audience: Audience = "plain") -> Words:
     return words(answer.whole, audience)
 
 
-@alternative.register
+@alternative.register_for_all
 def _(answer: ExcerptAnswer) -> str:
     return alternative(answer.whole)
 
@@ -48,7 +48,7 @@ def _(answer: ExcerptAnswer) -> str:
     )
 
 
-@methods_note.register
+@methods_note.register_for_all
 def _(answer: ExcerptAnswer) -> MethodsNote:
     return methods_note(answer.whole)
 

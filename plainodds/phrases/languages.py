@@ -20,6 +20,7 @@ __all__ = [
     "Ways",
     "add_language",
     "by_language",
+    "language_now",
     "language_of",
     "telling_in",
 ]
@@ -37,6 +38,9 @@ class Telling(Protocol[T_co]):
 
     def register(self, way: F) -> F:
         """Take a function as the English way for the kind of answer it is annotated with."""
+
+    def register_for_all(self, way: F) -> F:
+        """Take a function as the way in every language, since it only passes on other texts."""
 
 
 class Ways:
@@ -115,6 +119,11 @@ def language_of(code: str) -> Language:
     return _KNOWN[code]
 
 
+def language_now() -> Language:
+    """The language in which answers are told now."""
+    return _CURRENT.get()
+
+
 @contextmanager
 def telling_in(language: Language) -> Iterator[None]:
     """Tell answers in this language, in this context only."""
@@ -127,14 +136,14 @@ def telling_in(language: Language) -> Iterator[None]:
 
 def by_language(english: Callable[..., T]) -> Telling[T]:
     """Let a function tell answers in the language asked for; what is registered is English."""
-    ways, name = singledispatch(english), english.__name__
+    ways, for_all, name = singledispatch(english), Ways(), english.__name__
 
     @wraps(english)
     def tell(answer: Answer, *args: Any, **kwargs: Any) -> T:
         language = _CURRENT.get()
         if language is _ENGLISH or not isinstance(answer, Answer):
             return ways(answer, *args, **kwargs)
-        way = getattr(language, name).of(answer)
+        way = getattr(language, name).of(answer) or for_all.of(answer)
         if way is None:
             raise QuestionRefused(
                 f"There is no {name}() of {type(answer).__name__} in {language.name} "
@@ -147,5 +156,9 @@ def by_language(english: Callable[..., T]) -> Telling[T]:
         ways.register(way)
         return way
 
-    vars(tell).update(register=register)
+    def register_for_all(way: F) -> F:
+        for_all.register(way)
+        return register(way)
+
+    vars(tell).update(register=register, register_for_all=register_for_all)
     return cast("Telling[T]", tell)

@@ -12,7 +12,7 @@ from plainodds.phrases.saying import Audience, Words, words
 __all__: list[str] = []
 
 
-@words.register
+@words.register_for_all
 def _(answer: PanelsAnswer, audience: Audience = "plain") -> Words:
     told = [words(each, audience) for each in answer.answers]
     sentences = []
@@ -32,7 +32,7 @@ def _(answer: PanelsAnswer) -> str:
     return " ".join(told)
 
 
-@caption.register
+@caption.register_for_all
 def _(answer: PanelsAnswer) -> str:
     captions = [caption(each) for each in answer.answers]
     shared = _shared_end(captions)
@@ -54,7 +54,7 @@ def _shared_end(captions: list[str]) -> str:
     return ". ".join(first[len(first) - shared :]) if shared else ""
 
 
-@methods_note.register
+@methods_note.register_for_all
 def _(answer: PanelsAnswer) -> MethodsNote:
     notes = [methods_note(each) for each in answer.answers]
     return MethodsNote(

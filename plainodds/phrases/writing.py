@@ -2,13 +2,14 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator
+from collections.abc import Callable, Iterator
 from contextlib import AbstractContextManager, contextmanager
+from functools import partial
 
-from plainodds.phrases.languages import Language, language_of, telling_in
-from plainodds.phrases.numbers import Marks, marking
+from plainodds.phrases.languages import Language, language_now, language_of, telling_in
+from plainodds.phrases.numbers import Marks, marking, marks_now
 
-__all__ = ["writing"]
+__all__ = ["kept_writing", "writing"]
 
 
 def writing(
@@ -21,8 +22,8 @@ def writing(
     give never changes. Labels, units and levels are the analyst's own and are not translated;
     notices about the fit are handed on in English, and are introduced as such.
 
-    Nothing global changes: other threads and other tasks write as before, and so does a view
-    once its block has ended.
+    Nothing global changes: other threads and other tasks write as before. A view that is made
+    within the block keeps its language and its marks for as long as it lives.
 
     Parameters
     ----------
@@ -55,6 +56,17 @@ def writing(
     """
     chosen = language_of(language)
     return _writing(chosen, _marks(chosen, decimal, thousands))
+
+
+def kept_writing() -> Callable[[], AbstractContextManager[None]]:
+    """Keep the writing of now, to be taken up again later and in whatever context.
+
+    Returns
+    -------
+    callable
+        Gives the context manager that takes it up.
+    """
+    return partial(_writing, language_now(), marks_now())
 
 
 def _marks(language: Language, decimal: str | None, thousands: str | None) -> Marks:

@@ -23,6 +23,7 @@ from plainodds.model.predictors import Subject
 from plainodds.phrases import words
 from plainodds.phrases.labels import chance_of
 from plainodds.phrases.numbers import confidence
+from plainodds.phrases.writing import kept_writing
 from plainodds.views import markup
 from plainodds.views.controls import ChoiceControl, Control
 from plainodds.views.extras import Extras
@@ -73,6 +74,7 @@ class AnswerView(widgets.VBox):
         self.fit = result if isinstance(result, FittedLogit) else FittedLogit(result)
         self.problem: Exception | None = None
         self._quiet = False
+        self._writing = kept_writing()
         self._bindings: dict[int, Binding] = {}
         self._question = self._checked(question or self._first_question())
         self._stage = Stage(self._resize)
@@ -160,7 +162,7 @@ class AnswerView(widgets.VBox):
 
     @question.setter
     def question(self, question: Question) -> None:
-        with LOCK:
+        with self._alone():
             self._set(self._checked(question))
 
     @property
@@ -170,7 +172,7 @@ class AnswerView(widgets.VBox):
 
     @picture_width.setter
     def picture_width(self, width: int) -> None:
-        with LOCK:
+        with self._alone():
             self._stage.width = width
             self._redraw(self._question)
 
@@ -194,7 +196,7 @@ class AnswerView(widgets.VBox):
 
     def _repr_mimebundle_(self, **kwargs: Any) -> dict[str, Any]:
         """The live view, and its picture and words for whatever cannot show it."""
-        with LOCK:
+        with self._alone():
             still = bundle_of(self._stage.shot, words(self.answer))
         return {**super()._repr_mimebundle_(**kwargs), **still}
 
@@ -231,7 +233,7 @@ class AnswerView(widgets.VBox):
         )
 
     def _edited(self, control: Control, source: widgets.Widget) -> None:
-        with LOCK:
+        with self._alone():
             if self._quiet:
                 return
             binding = self._bindings[id(control)]
@@ -251,6 +253,12 @@ class AnswerView(widgets.VBox):
 
         button.on_click(pressed)
         return button
+
+    @contextmanager
+    def _alone(self) -> Iterator[None]:
+        """Hold the lock, and write as where the view was made: callbacks run elsewhere."""
+        with LOCK, self._writing():
+            yield
 
     @contextmanager
     def _quietly(self) -> Iterator[None]:
@@ -274,7 +282,7 @@ class AnswerView(widgets.VBox):
     @contextmanager
     def _guarded(self) -> Iterator[None]:
         """Hold the lock, and show an error here, since it would show nowhere else."""
-        with LOCK:
+        with self._alone():
             before = self.problem
             try:
                 yield

@@ -264,3 +264,31 @@ def test_a_narrow_page_can_have_a_picture_of_its_own(fit, page):
     assert f'width="{view.picture_width}"' in picture_of(view)
     page.press(view._stage.letters)
     assert view.picture_width == wide
+
+
+def test_a_view_keeps_the_writing_with_which_it_was_made(fit, page):
+    english = po.ProfileView(fit)
+    with po.writing("de"):
+        german = po.ProfileView(fit)
+        page.change(english.controls["age_years"].slider, value=80.0)
+    page.change(german.controls["age_years"].slider, value=80.0)
+    german.question = replace(german.question, level=0.9)
+    for view, word, other in ((english, "chance", "90"), (german, "Wahrscheinlichkeit", "90-%-")):
+        assert word in text_of(view._words.value)
+        assert word in view._stage.shot.alternative
+        assert word in view._repr_mimebundle_()["text/html"]
+        assert (other in text_of(view._words.value)) == (view is german)
+
+
+def test_a_view_keeps_its_writing_on_other_threads(fit, page):
+    with po.writing(decimal=","):
+        view = po.ProfileView(fit)
+    slider = view.controls["age_years"].slider
+    thread = threading.Thread(target=page.change, args=(slider,), kwargs={"value": 80.0})
+    thread.start()
+    thread.join()
+    assert view.question.values == (("age_years", 80),)
+    with po.writing(decimal=","):
+        told = po.words(view.answer).sentences[0]
+    assert told in text_of(view._words.value)
+    assert told != po.words(view.answer).sentences[0]
