@@ -19,6 +19,14 @@ class MethodsNote:
         Whole sentences, for a section on methods; they cite as "(Localio et al. 2007)".
     references : tuple of str
         The works cited, in full, in alphabetical order.
+
+    Examples
+    --------
+    >>> note = MethodsNote(("Odds ratios were computed.",), ("A. Author (1990). A work.",))
+    >>> print(note)
+    Odds ratios were computed.
+    <BLANKLINE>
+    A. Author (1990). A work.
     """
 
     sentences: tuple[str, ...]

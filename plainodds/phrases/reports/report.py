@@ -29,6 +29,16 @@ class ReportTable:
     rows : tuple of ReportRow
     notes : tuple of str
         Footnotes, in whole sentences.
+
+    Examples
+    --------
+    >>> import numpy as np, statsmodels.api as sm, plainodds as po
+    >>> x = np.repeat([0.0, 1.0, 2.0, 3.0], 10)
+    >>> y = np.tile([0, 0, 1, 0, 1, 1, 0, 1, 1, 1], 4)
+    >>> result = sm.Logit(y, sm.add_constant(x)).fit(disp=False)
+    >>> made = po.report_table(po.FittedLogit(result).odds())
+    >>> made.csv().splitlines()[0] == made.title
+    True
     """
 
     title: str
