@@ -12,6 +12,7 @@ from plainodds.phrases.labels import listed, value_label
 from plainodds.phrases.numbers import (
     NOT_KNOWN,
     cases_apart,
+    cases_apart_in,
     cases_on_sides,
     confidence,
     frequencies,
@@ -109,9 +110,10 @@ def _four(answer: PairAnswer, four: Corners, over: int) -> str:
 
 def _differences(answer: PairAnswer, four: Corners, apart: Estimate, over: int) -> str:
     before, after = _b_values(answer)
-    first, second = (cases_apart(each, over) for each in four.differences)
+    first, second = four.differences
     return (
-        f"With {change_words(answer)}, that is {first} in {over:,} with {before} and {second} with "
+        f"With {change_words(answer)}, that is {cases_apart_in(first, over)} with {before} and "
+        f"{cases_apart(second, over)} with "
         f"{after}{_apart_in_cases(answer, apart, over)}"
     )
 
@@ -126,7 +128,7 @@ def _apart_in_cases(answer: PairAnswer, apart: Estimate, over: int) -> str:
 
     open_end = _left_open(apart, "there are more or fewer")
     return (
-        f": {cases_apart(apart.estimate, over)} in {over:,} with {after} than with {before}"
+        f": {cases_apart_in(apart.estimate, over)} with {after} than with {before}"
         f"{interval(apart, ends, answer.question.level)}{open_end}"
     )
 

@@ -6,7 +6,7 @@ from plainodds.answers.joined import JoinedTest
 from plainodds.answers.pair import PairAnswer
 from plainodds.phrases.averaged import drawn_method
 from plainodds.phrases.labels import listed, predictor_name, sentence_case
-from plainodds.phrases.numbers import confidence, p_value, percentage_points, signed
+from plainodds.phrases.numbers import confidence, count, p_value, percentage_points, signed
 from plainodds.phrases.pair_corners import corners
 from plainodds.phrases.pair_labels import at_value, pair_noun, per_additional
 from plainodds.phrases.parts import (
@@ -93,7 +93,7 @@ def test_technical(answer: PairAnswer) -> list[str]:
 
 def _statistic(test: JoinedTest) -> str:
     written = signed(test.statistic).removeprefix("+")
-    freedom = f"{test.degrees_of_freedom:,}"
+    freedom = count(test.degrees_of_freedom)
     one = test.degrees_of_freedom == 1
     if test.denominator is None:
         on = f"χ² = {written} on {freedom} degree{'' if one else 's'} of freedom"

@@ -16,6 +16,7 @@ from plainodds.phrases.numbers import (
     cases_on_sides,
     chance,
     confidence,
+    count,
     needed,
     percentage_points,
     points_span,
@@ -54,7 +55,7 @@ def change_table(answer: ChangeAnswer) -> Markup:
         row(sentence_case(start_label(subject, moves)), answer.start, chance, span),
         row(sentence_case(end_label(subject, moves)), answer.end, chance, span),
         row("Difference, percentage points", difference, _points, _points_between),
-        *(row(f"In {over:,} {cases}", difference, *_counts(over)) for over in (100, 1_000)),
+        *(row(f"In {count(over)} {cases}", difference, *_counts(over)) for over in (100, 1_000)),
         row("Chances, as a ratio", compared.risk_ratio, ratio, ratio_interval),
         row("Odds, as a ratio", compared.odds_ratio, ratio, ratio_interval),
     ]

@@ -145,7 +145,7 @@ def _tested(answer: PairAnswer) -> str:
     name = "χ²"
     if found.test.denominator is not None:
         name = "F"
-        freedom = f"{degrees} and {found.test.denominator:,.0f} degrees of freedom"
+        freedom = f"{degrees} and {count(round(found.test.denominator))} degrees of freedom"
     return (
         f"{kind} of {terms} the two: {name} = {quantity(found.test.statistic)} on {freedom}, "
         f"p {_p(found.test.p_value)}."

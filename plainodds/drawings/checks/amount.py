@@ -11,7 +11,7 @@ from plainodds.drawings.lettering import line_height, text_width, wrapped
 from plainodds.drawings.theme import Theme
 from plainodds.phrases.checks.parts import amount, coefficients
 from plainodds.phrases.labels import sentence_case
-from plainodds.phrases.numbers import ratio
+from plainodds.phrases.numbers import count, ratio
 from plainodds.phrases.units import tidy
 
 __all__ = ["AMOUNT"]
@@ -38,7 +38,7 @@ def _gauge(found: Found, narrow: bool) -> Gauge:
     return Gauge(
         value=each, figure=ratio(each), lower=lower, upper=upper, marks=_MARKS,
         zones=("too few", "few", "no longer few"),
-        ticks=tuple((float(tick), f"{tick:,}") for tick in kept),
+        ticks=tuple((float(tick), count(tick)) for tick in kept),
         title=f"{sentence_case(kind)} for each of {coefficients(evidence.parameters)}",
     )  # fmt: skip
 

@@ -15,7 +15,7 @@ from plainodds.phrases.checks.finding_words import (
     made,
 )
 from plainodds.phrases.checks.parts import because, columns_named, counted
-from plainodds.phrases.numbers import NOT_KNOWN, count, ratio
+from plainodds.phrases.numbers import NOT_KNOWN, count, quantity, ratio
 
 __all__: list[str] = []
 
@@ -46,7 +46,7 @@ def _what(evidence: ConvergenceEvidence, finding: Finding) -> str:
         moves = "without an end" if math.isinf(step) else moves
         return f"{said}{joined} one more step would move the coefficient {whose} {moves}"
     joined = ", and yet" if evidence.converged is False else ", and"
-    no_more = f"more than {ratio(step)}" if step >= _VISIBLE else f"as much as {_VISIBLE:g}"
+    no_more = f"more than {ratio(step)}" if step >= _VISIBLE else f"as much as {quantity(_VISIBLE)}"
     return (
         f"{said}{joined} one more step would move no coefficient by {no_more} of its standard error"
     )

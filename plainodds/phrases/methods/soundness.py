@@ -7,6 +7,7 @@ from plainodds.answers.checks.finding import Topic
 from plainodds.answers.soundness import SoundnessAnswer
 from plainodds.phrases.methods.note import MethodsNote, methods_note
 from plainodds.phrases.methods.parts import note
+from plainodds.phrases.numbers import count
 
 __all__: list[str] = []
 
@@ -48,8 +49,8 @@ def _optimism(answer: SoundnessAnswer) -> list[str]:
         if isinstance(each.evidence, CalibrationEvidence) and each.evidence.optimism is not None:
             found = each.evidence.optimism
             way = {
-                "bootstrap": f"{found.repeats} bootstrap samples",
-                "cross-validation": f"{found.repeats} repeats of tenfold cross-validation",
+                "bootstrap": f"{count(found.repeats)} bootstrap samples",
+                "cross-validation": f"{count(found.repeats)} repeats of tenfold cross-validation",
             }[found.way]
             return [f"Optimism was estimated from {way} (Harrell et al. 1996)"]
     return []
