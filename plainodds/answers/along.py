@@ -12,6 +12,7 @@ from numpy.typing import NDArray
 from plainodds.answers.averaging import Averager, averaged_own_slope
 from plainodds.answers.crossing import held_slopes
 from plainodds.answers.delta import Intervals, interval_factor, mapped, wald
+from plainodds.answers.pair_levels import MOST_LEVELS, levels_told
 from plainodds.answers.pair_settled import Settled
 from plainodds.answers.points import POINTS, grid_along
 from plainodds.answers.population import Averages, everyone
@@ -65,7 +66,7 @@ def effect_along(
         turns = turns_along(measured, at, found.estimate) if exact is None else ()
         values = tuple(checked(pair.b, x) for x in at.tolist())
     else:
-        values = pair.b.levels_with_rows
+        values = levels_told(pair.b, pair.b_change, MOST_LEVELS)
         found = measured(model.coded_values(pair.b, values))
         stretches = tuple(
             Stretch(level, level, sign, share)

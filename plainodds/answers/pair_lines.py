@@ -6,6 +6,7 @@ import numpy as np
 
 from plainodds.answers.averaging import Averager, Exact
 from plainodds.answers.curve import CurveAnswer, CurveQuestion, answer_curve
+from plainodds.answers.pair_levels import MOST_LEVELS, MOST_LINES, levels_told
 from plainodds.answers.pair_settled import PairQuestion, Settled
 from plainodds.answers.points import POINTS, grid_along
 from plainodds.answers.remembered import remembered
@@ -52,7 +53,7 @@ def _values_of_lines(
 ) -> tuple[Scalar, ...]:
     """The stated values, every level, or a number's quartiles where they differ."""
     if not by.is_number:
-        return _levels_known(by)
+        return _levels(by, change, MOST_LINES)
     stated = question.a_values if by.name == question.a else question.b_values
     if stated or by.quartiles[0] != by.quartiles[2]:
         return stated
@@ -65,14 +66,14 @@ def _points_along(facts: PredictorFacts, ends: tuple[Scalar, ...]) -> tuple[Scal
     With them the four chances that are compared lie on the lines.
     """
     if not facts.is_number:
-        return _levels_known(facts)
+        return _levels(facts, ends, MOST_LEVELS)
     grid, compared = grid_along(facts, POINTS), np.array(ends, dtype=float)
     among = np.isclose(grid[:, None], compared, rtol=1e-9, atol=1e-12).any(axis=1)
     points = np.sort(np.append(grid[~among], compared))
     return tuple(checked(facts, x) for x in points.tolist())
 
 
-def _levels_known(facts: PredictorFacts) -> tuple[Scalar, ...]:
-    """The levels that some row has, where there are others; else nothing need be said."""
-    known = facts.levels_with_rows
-    return () if known == facts.levels else known
+def _levels(facts: PredictorFacts, compared: tuple[Scalar, ...], most: int) -> tuple[Scalar, ...]:
+    """The levels told, where they are not all that there are; else nothing need be said."""
+    told = levels_told(facts, compared, most)
+    return () if told == facts.levels else told

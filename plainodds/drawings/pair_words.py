@@ -7,7 +7,7 @@ from plainodds.answers.stretches import Stretch
 from plainodds.drawings.among import averaged_over, held_at
 from plainodds.phrases.labels import chance_of, odds_of_event, scale_title, value_label
 from plainodds.phrases.numbers import confidence
-from plainodds.phrases.pair_labels import pair_noun, share_label
+from plainodds.phrases.pair_labels import left_out, pair_noun, share_label
 from plainodds.phrases.units import per_unit
 
 __all__ = [
@@ -74,6 +74,7 @@ def pair_notes(answer: PairAnswer, cut: bool, leaves: bool) -> list[str]:
         if answer.subject.predictor(along).is_number:
             is_line = True
             notes.append(f"Beneath the lines: where the {cases} are.")
+    notes += left_out(answer)
     if loose:
         what = "Broken line" if is_line else "Hollow point"
         # a map has a broken line of its own, which is named

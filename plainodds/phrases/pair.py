@@ -21,6 +21,7 @@ from plainodds.phrases.pair_labels import (
     has_others,
     interaction_label,
     is_averaged,
+    left_out,
     pair_title,
 )
 from plainodds.phrases.pair_scales import disagreement_words, odds_words
@@ -82,6 +83,7 @@ def _words(answer: PairAnswer, told: list[str], more: list[str]) -> Words:
     held = answer.question.others != "observed"
     cautions = [
         *_beyond(answer),
+        *left_out(answer),
         *joint_cautions(answer),
         *_reading(answer),
         *_of_averages(answer),

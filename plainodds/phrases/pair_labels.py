@@ -21,7 +21,7 @@ from plainodds.phrases.labels import (
     value_label,
 )
 from plainodds.phrases.moves import moves_label, moves_words
-from plainodds.phrases.numbers import chance, quantity
+from plainodds.phrases.numbers import chance, count, quantity
 from plainodds.phrases.units import per_unit, tidy
 from plainodds.values import Scalar
 
@@ -35,6 +35,7 @@ __all__ = [
     "has_others",
     "interaction_label",
     "is_averaged",
+    "left_out",
     "odds_opening",
     "pair_noun",
     "pair_title",
@@ -60,6 +61,28 @@ def is_averaged(answer: PairAnswer) -> bool:
     if answer.question.others != "observed":
         return False
     return has_others(answer) or bool(answer.sloped) or answer.subject.offset is not None
+
+
+def left_out(answer: PairAnswer) -> list[str]:
+    """How many levels of a category with very many are told; empty where all are."""
+    subject, question = answer.subject, answer.question
+    told: dict[str, int] = {}
+    if answer.lines is not None:
+        asked = answer.lines.question
+        told[asked.predictor] = len(answer.lines.lines[0].at)
+        if asked.by is not None:
+            told[asked.by] = len(answer.lines.lines)
+    told[question.b] = min(len(answer.effect.at), told.get(question.b, len(answer.effect.at)))
+    notes = []
+    for name, number in told.items():
+        facts = subject.predictor(name)
+        known = len(facts.levels_with_rows)
+        if not facts.is_number and number < known:
+            notes.append(
+                f"Of {count(known)} values of {predictor_name(facts)}, those compared and the most "
+                "frequent."
+            )
+    return notes
 
 
 def pair_noun(answer: PairAnswer) -> str:

@@ -545,3 +545,29 @@ def test_another_unit_changes_slopes_by_the_unit_and_nothing_else(unit, origin):
     slope = one.pair("age", "depth", number="slope").interaction.averaged
     per_unit = other.pair("moved", "depth", number="slope").interaction.averaged
     assert per_unit.estimate == pytest.approx(slope.estimate / unit, rel=1e-5)
+
+
+def test_of_very_many_levels_those_compared_and_the_most_frequent_are_told(many_levels):
+    fit, counts = many_levels
+    answer = fit.pair("x", "place", b_values=("p29", "p00"))
+    shown = [line.by for line in answer.lines.lines]
+    assert len(shown) == 8
+    assert {"p29", "p00"} <= set(shown)
+    others = [level for level in shown if level not in ("p29", "p00")]
+    left = counts.drop(labels=shown)
+    assert counts[others].min() >= left.max()
+    assert shown == sorted(shown), "in the order of the levels"
+    assert len(answer.effect.at) == 16
+    assert "30 values of place" in po.caption(answer)
+
+
+@pytest.fixture(scope="module")
+def many_levels():
+    rng = np.random.default_rng(5)
+    n = 3_000
+    place = np.array([f"p{i:02d}" for i in range(30)])[rng.integers(0, 30, n) ** 2 // 30]
+    place[:60] = np.repeat([f"p{i:02d}" for i in range(30)], 2)
+    data = pd.DataFrame({"x": rng.normal(size=n), "place": place})
+    data["y"] = (rng.uniform(size=n) < 1 / (1 + np.exp(-0.5 * data.x))).astype(int)
+    result = smf.glm("y ~ x + place", data, family=sm.families.Binomial()).fit()
+    return po.FittedLogit(result), data.place.value_counts()

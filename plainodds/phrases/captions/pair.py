@@ -6,7 +6,7 @@ from plainodds.answers.pair import PairAnswer
 from plainodds.phrases.captions.caption import caption
 from plainodds.phrases.captions.parts import fitted_words, interval_words, joined, rest_words
 from plainodds.phrases.labels import predictor_name
-from plainodds.phrases.pair_labels import followed_label, has_others, pair_title
+from plainodds.phrases.pair_labels import followed_label, has_others, left_out, pair_title
 from plainodds.phrases.units import tidy
 
 __all__: list[str] = []
@@ -33,6 +33,7 @@ def _(answer: PairAnswer) -> str:
         else "Beneath, the ratio of odds ratios",
         interval_words(subject, question.level, "Lines and points are estimates, bands and bars"),
         rest,
+        " ".join(left_out(answer)),
         _where_nobody_is(answer),
         fitted_words(subject),
     )
