@@ -5,16 +5,16 @@ from __future__ import annotations
 from plainodds.answers.pair import PairAnswer
 from plainodds.phrases.alternative import alternative
 from plainodds.phrases.averaged import rows_chosen
+from plainodds.phrases.choices.pair import chances_spoken_of, main_interaction
+from plainodds.phrases.choices.stretches import turns_are_told
 from plainodds.phrases.held import held_words, kept_words
 from plainodds.phrases.labels import axis_title, listed, predictor_name
 from plainodds.phrases.pair_chances import (
     averaged_words,
     chances_words,
     intervals_words,
-    main_interaction,
     rounding_words,
 )
-from plainodds.phrases.pair_corners import corners
 from plainodds.phrases.pair_joint import additive_words, joint_cautions, joint_technical
 from plainodds.phrases.pair_labels import (
     followed_label,
@@ -63,20 +63,12 @@ def _plain(answer: PairAnswer) -> Words:
         *odds_words(answer),
         *disagreement_words(answer),
         *stretches_words(answer),
-        *_turns(answer),
+        *(turns_words(answer) if turns_are_told(answer) else []),
         *additive_words(answer),
         *_others(answer),
         *intervals_words(answer),
     ]
     return _words(answer, told, rounding_words(answer))
-
-
-def _turns(answer: PairAnswer) -> list[str]:
-    """Where the effect turns; without any clear stretch a turn is too uncertain to be told."""
-    stretches = answer.effect.stretches
-    if stretches and all(each.sign == "open" for each in stretches):
-        return []
-    return turns_words(answer)
 
 
 def _words(answer: PairAnswer, told: list[str], more: list[str]) -> Words:
@@ -105,17 +97,7 @@ def _reading(answer: PairAnswer) -> tuple[str, ...]:
             "An odds ratio is not a ratio of chances; the two are close only where the chances are "
             "under about 10%",
         )
-    return odds_ratio_cautions(_chances(answer))
-
-
-def _chances(answer: PairAnswer) -> list[float]:
-    """The chances that the answer speaks of."""
-    four = corners(answer)
-    if four is not None:
-        return [each.estimate for each in four.all]
-    if answer.lines is None or answer.lines.question.scale != "probability":
-        return []
-    return [each for line in answer.lines.lines for each in line.estimate]
+    return odds_ratio_cautions(chances_spoken_of(answer))
 
 
 def _others(answer: PairAnswer, at_most: int = 8) -> list[str]:

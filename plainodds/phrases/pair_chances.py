@@ -7,6 +7,15 @@ import math
 from plainodds.answers.estimate import Estimate
 from plainodds.answers.pair import PairAnswer
 from plainodds.phrases.averaged import rows_chosen
+from plainodds.phrases.choices.pair import (
+    corner_intervals,
+    is_unknown,
+    leaves_open,
+    main_interaction,
+    misses_one,
+    other_interaction,
+)
+from plainodds.phrases.choices.stretches import effect_estimate, places_told
 from plainodds.phrases.held import held_case
 from plainodds.phrases.labels import listed, value_label
 from plainodds.phrases.numbers import (
@@ -16,37 +25,27 @@ from plainodds.phrases.numbers import (
     cases_on_sides,
     confidence,
     frequencies,
-    span,
     told_apart,
 )
 from plainodds.phrases.pair_corners import Corners, corners, denominator_of_corners
 from plainodds.phrases.pair_labels import (
     at_value,
     change_words,
-    has_others,
     pair_noun,
     per_additional,
 )
 from plainodds.phrases.parts import difference_with_interval, interval, say_level_once, typical_case
-from plainodds.phrases.stretches import effect_estimate, places_told
 from plainodds.phrases.units import tidy
 
 __all__ = [
     "averaged_words",
     "chances_words",
     "intervals_words",
-    "main_interaction",
     "rounding_words",
 ]
 
 
 _UNTOLD = "how much these differ the data leave open altogether"
-
-
-def main_interaction(answer: PairAnswer) -> Estimate | None:
-    """The interaction on the probability scale that goes with the answer's own chances."""
-    found = answer.interaction
-    return found.averaged if answer.question.others == "observed" else found.at_profile
 
 
 def chances_words(answer: PairAnswer) -> list[str]:
@@ -57,15 +56,11 @@ def chances_words(answer: PairAnswer) -> list[str]:
     apart, four = main_interaction(answer), corners(answer)
     if apart is None:
         return []
-    if four is None or _unknown(four):
+    if four is None or is_unknown(four):
         along = _along(answer)
         return [*along, *_apart_in_points(answer, apart, follows=bool(along))]
     over = denominator_of_corners(four, apart.estimate)
     return [_four(answer, four, over), _differences(answer, four, apart, over)]
-
-
-def _unknown(four: Corners) -> bool:
-    return any(math.isnan(each.estimate) for each in four.all)
 
 
 def _whose(answer: PairAnswer) -> str:
@@ -134,9 +129,7 @@ def _apart_in_cases(answer: PairAnswer, apart: Estimate, over: int) -> str:
 
 
 def _left_open(apart: Estimate, which: str) -> str:
-    if apart.lower is None or apart.upper is None or not apart.lower < 0 < apart.upper:
-        return ""
-    return f", which leaves open whether {which}"
+    return f", which leaves open whether {which}" if leaves_open(apart) else ""
 
 
 def _along(answer: PairAnswer) -> list[str]:
@@ -203,14 +196,12 @@ def _apart_in_points(answer: PairAnswer, apart: Estimate, *, follows: bool) -> l
 
 def averaged_words(answer: PairAnswer) -> list[str]:
     """The same interaction once more, averaged or at a profile, whichever was not told yet."""
-    observed = answer.question.others == "observed"
-    found = answer.interaction.at_profile if observed else answer.interaction.averaged
-    alike = not has_others(answer) and not answer.sloped and answer.subject.offset is None
-    if found is None or math.isnan(found.estimate) or alike:
+    found = other_interaction(answer)
+    if found is None:
         return []
     case = tidy(answer.subject.outcome.case)
     whose = f"for {typical_case(answer.subject.outcome)}"
-    if not observed:
+    if answer.question.others != "observed":
         rows = rows_chosen(answer.subject, None, answer.counted)
         own = "its own values of everything else" if not answer.sloped else "its own values"
         whose = f"averaged over the {rows}, each {case} with {own}"
@@ -221,29 +212,15 @@ def averaged_words(answer: PairAnswer) -> list[str]:
 
 def rounding_words(answer: PairAnswer) -> list[str]:
     """That counts need not add up as they are written; empty where they do."""
-    apart, four = main_interaction(answer), corners(answer)
-    if apart is None or four is None or _unknown(four) or math.isnan(apart.estimate):
-        return []
-    over = denominator_of_corners(four, apart.estimate)
-    neither, a_alone, b_alone, both = (round(each.estimate * over) for each in four.all)
-    first, second = (round(each * over) for each in four.differences)
-    adds_up = (a_alone - neither, both - b_alone) == (first, second)
-    if adds_up and second - first == round(apart.estimate * over):
+    if not misses_one(answer):
         return []
     return ["Each figure is rounded on its own, so counts may differ by one from their difference"]
 
 
 def intervals_words(answer: PairAnswer) -> list[str]:
     """The intervals of the four chances, in the order in which these are told."""
-    four = corners(answer)
-    if four is None or _unknown(four) or main_interaction(answer) is None:
-        return []
-    ends = [
-        span(each.lower, each.upper)
-        for each in four.all
-        if each.lower is not None and each.upper is not None
-    ]
-    if len(ends) < len(four.all):
+    ends = corner_intervals(answer)
+    if not ends:
         return []
     level = confidence(answer.question.level)
     return [f"The {level} intervals of the four chances are, in their order, {listed(ends)}"]

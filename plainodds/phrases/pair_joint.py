@@ -9,6 +9,12 @@ from plainodds.answers.joint import AdditiveInteraction, JointCell, JointTable, 
 from plainodds.answers.moves import Move
 from plainodds.answers.pair import PairAnswer
 from plainodds.errors import QuestionRefused
+from plainodds.phrases.choices.pair import (
+    additive_of,
+    cells_without_events,
+    cells_without_rows,
+    leaves_open,
+)
 from plainodds.phrases.labels import listed
 from plainodds.phrases.moves import moves_words
 from plainodds.phrases.pair_labels import at_value, combination_label, pair_noun, rows_label
@@ -119,7 +125,7 @@ def additive_words(answer: PairAnswer) -> list[str]:
     table = answer.joint
     if table is None:
         return []
-    found, unit = _additive(table)
+    found, unit = additive_of(table), _unit(table)
     excess = found.relative_excess_risk
     if math.isnan(excess.estimate):
         return []
@@ -132,20 +138,17 @@ def additive_words(answer: PairAnswer) -> list[str]:
         f"{combination_label(answer, both)} together add {how} the two apart would: RERI "
         f"{signed_with_interval(excess, answer.question.level)}"
     )
-    if excess.lower is not None and excess.upper is not None and excess.lower < 0 < excess.upper:
+    if leaves_open(excess):
         told += ", which leaves open whether it is more or less"
     return [told]
 
 
-def _additive(table: JointTable) -> tuple[AdditiveInteraction, str]:
-    """The measures of adding up by chances where there are such, else by odds."""
-    if table.additive_by_chances is not None:
-        return table.additive_by_chances, "chance"
-    return table.additive_by_odds, "odds"
+def _unit(table: JointTable) -> str:
+    return "odds" if table.additive_by_chances is None else "chance"
 
 
 def _shares(answer: PairAnswer, table: JointTable) -> list[str]:
-    found, unit = _additive(table)
+    found, unit = additive_of(table), _unit(table)
     level, told = answer.question.level, []
     share = found.attributable_proportion
     if not math.isnan(share.estimate):
@@ -164,7 +167,7 @@ def _shares(answer: PairAnswer, table: JointTable) -> list[str]:
 
 def no_synergy_words(table: JointTable) -> list[str]:
     """Why a synergy index is missing; empty where none is."""
-    found, unit = _additive(table)
+    found, unit = additive_of(table), _unit(table)
     if found.synergy_index is not None:
         return []
     if math.isnan(found.relative_excess_risk.estimate):
@@ -192,17 +195,13 @@ def joint_cautions(answer: PairAnswer) -> list[str]:
         return []
     told = recoded_words(answer)
     cases = tidy(answer.subject.outcome.cases)
-    empty = [combination_label(answer, cell) for cell in answer.joint.cells if cell.rows == 0]
+    empty = [combination_label(answer, cell) for cell in cells_without_rows(answer.joint)]
     if empty:
         told.append(
             f"The data have no {cases} with {listed(empty)}; what is said there is the model's "
             "own, or is not known"
         )
-    still = [
-        combination_label(answer, cell)
-        for cell in answer.joint.cells
-        if cell.rows and cell.events == 0
-    ]
+    still = [combination_label(answer, cell) for cell in cells_without_events(answer.joint)]
     if still:
         told.append(
             f"Among the {cases} with {listed(still)} there is no event, so what is said there "

@@ -2,12 +2,16 @@
 
 from __future__ import annotations
 
-import math
-from itertools import pairwise
-
-from plainodds.answers.estimate import Estimate
 from plainodds.answers.pair import PairAnswer
-from plainodds.answers.stretches import EffectAlong, Stretch
+from plainodds.answers.stretches import Stretch
+from plainodds.phrases.choices.stretches import (
+    SPANS_AT_MOST,
+    TURNS_AT_MOST,
+    largest_stretches,
+    moves_told,
+    places_without_rows,
+    stretches_by_sign,
+)
 from plainodds.phrases.labels import listed, predictor_name, value_label
 from plainodds.phrases.pair_labels import (
     Sign,
@@ -20,78 +24,23 @@ from plainodds.phrases.pair_labels import (
     stretch_span,
 )
 from plainodds.phrases.units import tidy
-from plainodds.values import Scalar
 
-__all__ = [
-    "effect_at",
-    "effect_estimate",
-    "places_told",
-    "stretches_words",
-    "turns_words",
-    "unsupported_words",
-]
-
-_SPANS_AT_MOST = 3
-_TURNS_AT_MOST = 3
-_SIGNS: tuple[Sign, ...] = ("above", "below", "open")
+__all__ = ["stretches_words", "turns_words", "unsupported_words"]
 
 
-def effect_estimate(effect: EffectAlong, place: int) -> Estimate:
-    """The effect at one of its places."""
-    return Estimate(
-        effect.estimate[place],
-        None if effect.se is None else effect.se[place],
-        None if effect.lower is None else effect.lower[place],
-        None if effect.upper is None else effect.upper[place],
-    )
-
-
-def effect_at(effect: EffectAlong, value: Scalar) -> Estimate | None:
-    """The effect at exactly this value of `b`, if the answer has it."""
-    for place, at in enumerate(effect.at):
-        alike = at == value
-        if not alike and not isinstance(at, str) and not isinstance(value, str):
-            alike = math.isclose(at, value, rel_tol=1e-9, abs_tol=1e-12)
-        if alike:
-            return effect_estimate(effect, place)
-    return None
-
-
-def places_told(answer: PairAnswer) -> list[int]:
-    """Places at which the effect is told: those of the change of `b`, or its quartiles."""
-    effect, facts = answer.effect, answer.subject.predictor(answer.question.b)
-    wanted: tuple[Scalar, ...] = answer.b_change
-    if facts.name in answer.sloped:
-        wanted = facts.quartiles[0], facts.quartiles[2]
-    places = range(len(effect.at))
-    if not facts.is_number:
-        return [place for value in wanted for place in places if effect.at[place] == value]
-    near = [place for place in places if effect.supported[place]] or list(places)
-    if wanted[0] == wanted[1] or any(math.isnan(float(each)) for each in wanted):
-        wanted = effect.at[near[0]], effect.at[near[-1]]
-    nearest = [
-        min(near, key=lambda place: abs(float(effect.at[place]) - float(value))) for value in wanted
-    ]
-    return list(dict.fromkeys(nearest))
-
-
-def stretches_words(answer: PairAnswer, *, at_most: int = _SPANS_AT_MOST) -> list[str]:
+def stretches_words(answer: PairAnswer, *, at_most: int = SPANS_AT_MOST) -> list[str]:
     """Say where the whole interval lies on one side of no effect; empty without intervals."""
     clauses: list[str] = []
-    for sign in _SIGNS:
-        found = [each for each in answer.effect.stretches if each.sign == sign]
-        if found:
-            verdict = _verdict(answer, sign, first=not clauses)
-            clauses.append(f"{_where(answer, found, at_most)}, {verdict}")
+    for sign, found in stretches_by_sign(answer).items():
+        verdict = _verdict(answer, sign, first=not clauses)
+        clauses.append(f"{_where(answer, found, at_most)}, {verdict}")
     return ["; ".join(clauses)] if clauses else []
 
 
 def _where(answer: PairAnswer, found: list[Stretch], at_most: int) -> str:
     """The stretches of one kind with their shares, the largest first where not all are told."""
     facts = answer.subject.predictor(answer.question.b)
-    left = len(found) - at_most
-    if left > 0:
-        found = sorted(found, key=lambda each: -_size(each))[:at_most]
+    found, left = largest_stretches(found, at_most)
     told = []
     for place, each in enumerate(found):
         span = stretch_span(answer, each) if facts.is_number else value_label(facts, each.start)
@@ -106,10 +55,6 @@ def _where(answer: PairAnswer, found: list[Stretch], at_most: int) -> str:
     if left > 0:
         told.append(f"{left} more {'place' if left == 1 else 'places'}")
     return listed(told)
-
-
-def _size(stretch: Stretch) -> float:
-    return -1.0 if math.isnan(stretch.share) else stretch.share
 
 
 def _verdict(answer: PairAnswer, sign: Sign, *, first: bool) -> str:
@@ -155,55 +100,21 @@ def turns_words(answer: PairAnswer) -> list[str]:
         what = "this odds ratio"
     start = f"along {predictor_name(facts)}, {what}"
     values = [place_label(facts, each) for each in turns]
-    moves = _moves(answer.effect)
-    if len(turns) > _TURNS_AT_MOST or not moves:
-        return [f"{start} turns at {listed(values[:8])}; there the interaction changes its sign"]
+    moves = ["rises" if rising else "falls" for rising in moves_told(answer.effect)]
+    if not moves:
+        places = listed(values[:TURNS_AT_MOST])
+        return [f"{start} turns at {places}; there the interaction changes its sign"]
     told = [f"first {moves[0]}"]
     told += [f"from {at} on {move}" for at, move in zip(values, moves[1:], strict=True)]
     return [f"{start} {listed(told)}; where it turns, the interaction changes its sign"]
 
 
-def _moves(effect: EffectAlong) -> list[str]:
-    """Whether the effect rises or falls before the first turn, between turns and after."""
-    places = range(len(effect.at))
-
-    def nearest(value: float) -> int:
-        return min(places, key=lambda place: abs(float(effect.at[place]) - value))
-
-    stops = [0, *map(nearest, effect.turns), len(effect.at) - 1]
-    heights = [effect.estimate[place] for place in stops]
-    if any(map(math.isnan, heights)) or any(one == other for one, other in pairwise(heights)):
-        return []
-    return ["rises" if other > one else "falls" for one, other in pairwise(heights)]
-
-
 def unsupported_words(answer: PairAnswer) -> list[str]:
     """Where along `b` no row lies near; empty where the data are everywhere, or not known."""
-    effect, facts = answer.effect, answer.subject.predictor(answer.question.b)
-    if all(effect.supported) or not any(effect.supported):
+    told = places_without_rows(answer)
+    if not told:
         return []
-    if not facts.is_number:
-        told = [
-            value_label(facts, at)
-            for at, held in zip(effect.at, effect.supported, strict=True)
-            if not held
-        ]
-    else:
-        told = _gaps(answer)
-    name = predictor_name(facts)
+    name = predictor_name(answer.subject.predictor(answer.question.b))
     return [
         f"The data have no rows near by, and the model speaks on its own: {name} {listed(told)}"
     ]
-
-
-def _gaps(answer: PairAnswer) -> list[str]:
-    effect, facts = answer.effect, answer.subject.predictor(answer.question.b)
-    held = [place for place, supported in enumerate(effect.supported) if supported]
-    labels = [value_label(facts, at) for at in effect.at]
-    gaps = [f"below {labels[held[0]]}"] if held[0] > 0 else []
-    gaps += [
-        f"between {labels[low]} and {labels[high]}"
-        for low, high in pairwise(held)
-        if high > low + 1
-    ]
-    return [*gaps, f"above {labels[held[-1]]}"] if held[-1] < len(labels) - 1 else gaps

@@ -11,7 +11,7 @@ from plainodds.drawings.lettering import line_height, text_width, wrapped
 from plainodds.drawings.theme import Theme
 from plainodds.phrases.checks.parts import amount, coefficients
 from plainodds.phrases.labels import sentence_case
-from plainodds.phrases.numbers import count, ratio
+from plainodds.phrases.numbers import count, quantity, ratio
 from plainodds.phrases.units import tidy
 
 __all__ = ["AMOUNT"]
@@ -19,6 +19,10 @@ __all__ = ["AMOUNT"]
 _BAR = 1.3
 _MARKS = (5.0, 10.0)
 _TICKS = (0.1, 0.2, 0.5, 1, 2, 5, 10, 20, 50, 100, 200, 500, 1000, 10_000, 100_000, 1_000_000)
+
+
+def _tick(number: float) -> str:
+    return count(number) if isinstance(number, int) else quantity(number)
 
 
 def _gauge(found: Found, narrow: bool) -> Gauge:
@@ -38,7 +42,7 @@ def _gauge(found: Found, narrow: bool) -> Gauge:
     return Gauge(
         value=each, figure=ratio(each), lower=lower, upper=upper, marks=_MARKS,
         zones=("too few", "few", "no longer few"),
-        ticks=tuple((float(tick), count(tick)) for tick in kept),
+        ticks=tuple((float(tick), _tick(tick)) for tick in kept),
         title=f"{sentence_case(kind)} for each of {coefficients(evidence.parameters)}",
     )  # fmt: skip
 
