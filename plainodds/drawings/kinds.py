@@ -19,6 +19,7 @@ from plainodds.drawings.curve_levels import LevelsDrawing
 from plainodds.drawings.drawing import Drawing
 from plainodds.drawings.effects import EffectsDrawing
 from plainodds.drawings.odds import OddsDrawing
+from plainodds.drawings.odds_table import OddsTableDrawing
 from plainodds.drawings.pair import PairDrawing
 from plainodds.drawings.profile import ProfileDrawing
 from plainodds.drawings.soundness import SoundnessDrawing
@@ -40,7 +41,7 @@ def drawing_of(answer: Answer) -> type[Drawing[Any]]:
 
 @drawing_of.register
 def _(answer: OddsAnswer) -> type[Drawing[Any]]:
-    return OddsDrawing
+    return OddsTableDrawing if answer.question.layout == "table" else OddsDrawing
 
 
 @drawing_of.register

@@ -7,11 +7,11 @@ from collections.abc import Hashable, Sequence
 
 from matplotlib.axes import Axes
 from matplotlib.collections import LineCollection
-from matplotlib.lines import Line2D
 from matplotlib.transforms import blended_transform_factory
 
 from plainodds.answers.odds import OddsAnswer, OddsRow
-from plainodds.drawings.furniture import Key, Notes, Title, marker_line
+from plainodds.drawings.dots import Dots
+from plainodds.drawings.furniture import Key, Notes, Title
 from plainodds.drawings.geometry import Margins, Room, corner, slot_size
 from plainodds.drawings.lettering import letter, line_height, text_width, tick_style
 from plainodds.drawings.odds_axis import axis_range, shown
@@ -106,7 +106,9 @@ class OddsDrawing:
         for lines in (self._rules, self.grid, self.reference):
             axes.add_collection(lines, autolim=False)
             lines.set_clip_on(False)
-        self.marks = [_Marks(axes, theme, place) for place in range(len(self._models))]
+        self.marks = [
+            Dots(axes, theme, place, axes.transData) for place in range(len(self._models))
+        ]
         self.update(answer)
 
     @staticmethod
@@ -170,8 +172,11 @@ class OddsDrawing:
         self._rules.set_segments([[(x, y) for x in edges] for y in layout.rules])
         heights = {id(row): y for row, y in zip(rows, places, strict=True)}
         for name, marks in zip(self._models, self.marks, strict=True):
-            own = [row for row in rows if row.model == name]
-            marks.update(own, [heights[id(row)] for row in own], lower, upper)
+            own = [
+                row for row in rows if row.model == name and not math.isnan(row.odds_ratio.estimate)
+            ]
+            triples = [shown(row) for row in own]
+            marks.update(triples, [heights[id(row)] for row in own], lower, upper)
         self._heading.set_text(figures.heading)
         self._heading.set_position((gap, 0.2 * em))
         self._place_around(answer, layout.left, width, below)
@@ -237,48 +242,6 @@ class OddsDrawing:
         )
         notes = _notes(answer)
         self._notes.place(notes, -left, -below, width)
-
-
-class _Marks:
-    """The markers, intervals and arrows of one model."""
-
-    def __init__(self, axes: Axes, theme: Theme, place: int) -> None:
-        series = theme.series(place)
-        self.intervals = LineCollection(
-            [], colors=series.colour, linewidths=theme.line_width, capstyle="butt", zorder=3
-        )
-        axes.add_collection(self.intervals, autolim=False)
-        self.points = marker_line(theme, series)
-        # small and without an edge, so that short intervals still show on either side
-        self.points.set(markersize=0.72 * self.points.get_markersize(), markeredgewidth=0)
-        self.arrows = [
-            Line2D([], [], linestyle="none", marker=marker, markersize=0.8 * theme.marker_size,
-                   markerfacecolor=series.colour, markeredgewidth=0, zorder=4)
-            for marker in ("<", ">")
-        ]  # fmt: skip
-        for line in (self.points, *self.arrows):
-            axes.add_line(line)
-            line.set_clip_on(False)
-
-    def update(
-        self, rows: Sequence[OddsRow], places: Sequence[float], lower: float, upper: float
-    ) -> None:
-        """Set markers and intervals; what lies beyond the axis becomes an arrow."""
-        segments, inside, leaving = [], [], ([], [])  # type: ignore[var-annotated]
-        for row, y in zip(rows, places, strict=True):
-            middle, low, high = shown(row)
-            if math.isnan(middle):
-                continue
-            if lower <= middle <= upper:
-                inside.append((middle, y))
-            if low < lower or middle < lower:
-                leaving[0].append((lower, y))
-            if high > upper or middle > upper:
-                leaving[1].append((upper, y))
-            segments.append([(min(max(each, lower), upper), y) for each in (low, high)])
-        self.intervals.set_segments(segments)
-        for line, pairs in zip((self.points, *self.arrows), (inside, *leaving), strict=True):
-            line.set_data([x for x, _ in pairs], [y for _, y in pairs])
 
 
 def _models(answer: OddsAnswer) -> tuple[str, ...]:

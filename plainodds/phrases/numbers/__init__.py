@@ -27,7 +27,7 @@ from plainodds.phrases.numbers.quantities import (
     signed,
     summing,
 )
-from plainodds.phrases.numbers.ratios import p_value, ratio, ratio_interval, simple_fraction
+from plainodds.phrases.numbers.ratios import p_mark, p_value, ratio, ratio_interval, simple_fraction
 from plainodds.phrases.numbers.signs import MINUS, NOT_KNOWN
 from plainodds.phrases.numbers.spans import percentage_points, points_on_sides, points_span, span
 from plainodds.phrases.numbers.wording import ENGLISH_WORDING, Wording, worded, wording
@@ -56,6 +56,7 @@ __all__ = [
     "marking",
     "marks_now",
     "needed",
+    "p_mark",
     "p_value",
     "percentage_points",
     "points_on_sides",

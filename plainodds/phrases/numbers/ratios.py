@@ -8,7 +8,7 @@ from fractions import Fraction
 from plainodds.phrases.numbers.marks import marked
 from plainodds.phrases.numbers.wording import wording
 
-__all__ = ["p_value", "ratio", "ratio_interval", "simple_fraction"]
+__all__ = ["p_mark", "p_value", "ratio", "ratio_interval", "simple_fraction"]
 
 _RATIO_LIMIT = 1000.0
 
@@ -109,3 +109,16 @@ def p_value(p: float) -> str:
     if p > 0.99:
         return wording().over.format(marked("0.99"))
     return marked(f"{p:.3f}" if p < 0.0995 else f"{p:.2f}")
+
+
+def p_mark(p: float) -> str:
+    """Write a p-value in a column of figures, where there is little room.
+
+    Examples
+    --------
+    >>> p_mark(0.2345), p_mark(1e-12), p_mark(0.999)
+    ('0.23', '<0.001', '>0.99')
+    """
+    if p < 0.001:
+        return f"<{marked('0.001')}"
+    return f">{marked('0.99')}" if p > 0.99 else p_value(p)
