@@ -1,15 +1,17 @@
-"""What an answer's subject already knows against it: levels with few cases of one outcome."""
+"""What the subject of odds ratios already knows against them: few cases, and values never seen."""
 
 from __future__ import annotations
 
 from plainodds.answers.odds import OddsAnswer, OddsRow
-from plainodds.model.predictors import Subject
+from plainodds.model.predictors import PredictorFacts, Subject
 from plainodds.phrases.checks.parts import amount, cases, counted, level_name, short_list
-from plainodds.phrases.labels import value_label
+from plainodds.phrases.labels import predictor_name, step_label, value_label
+from plainodds.phrases.numbers import quantity
 from plainodds.phrases.unbounded import has_finite_estimate
+from plainodds.phrases.units import with_unit
 from plainodds.values import Scalar
 
-__all__ = ["counted_rows", "sparse_cautions", "sparse_row"]
+__all__ = ["counted_rows", "sparse_cautions", "sparse_row", "unseen_cautions"]
 
 # as where levels are checked: cases of the rarer outcome; common practice, no source
 _SPARSE = 5.0
@@ -64,6 +66,37 @@ def sparse_cautions(answer: OddsAnswer) -> tuple[str, ...]:
         return ()
     told = short_list(list(found.values()))
     return (f"Odds ratios that speak of {told} hang on few cases of one outcome.",)
+
+
+def unseen_cautions(answer: OddsAnswer) -> tuple[str, ...]:
+    """That odds ratios speak of numbers beyond the data; empty where none does."""
+    subject = answer.subject
+    found: dict[str, None] = {}
+    for row in answer.rows:
+        facts = subject.predictor(row.predictor)
+        if facts.is_number and row.per_step:
+            # equal steps have one odds ratio, so that only the size of the step can be too large
+            size = float(row.end) - float(row.start)
+            if abs(size) > facts.maximum - facts.minimum:
+                found[f"{predictor_name(facts)} {step_label(facts, size)} {_seen(facts)}"] = None
+            held = row.given
+        else:
+            held = ((row.predictor, row.start), (row.predictor, row.end), *row.given)
+        for name, value in held:
+            its = subject.predictor(name)
+            # false where the range is not known
+            if its.is_number and (its.minimum > float(value) or its.maximum < float(value)):
+                found[f"{predictor_name(its)} {value_label(its, value)} {_seen(its)}"] = None
+    if not found:
+        return ()
+    return (
+        f"Some odds ratios go beyond the data: {short_list(list(found))}; there the model speaks "
+        "on its own.",
+    )
+
+
+def _seen(facts: PredictorFacts) -> str:
+    return f"(the data have {quantity(facts.minimum)} to {with_unit(facts.maximum, facts.unit)})"
 
 
 def _levels(subject: Subject, row: OddsRow) -> list[Scalar]:

@@ -8,7 +8,7 @@ from plainodds import scales
 from plainodds.answers.odds import OddsAnswer, OddsRow
 from plainodds.model.predictors import PredictorFacts
 from plainodds.phrases.alternative import alternative
-from plainodds.phrases.concerns import sparse_cautions
+from plainodds.phrases.concerns import sparse_cautions, unseen_cautions
 from plainodds.phrases.labels import (
     change_label,
     from_to,
@@ -89,6 +89,7 @@ def _cautions(answer: OddsAnswer) -> tuple[str, ...]:
     return (
         *unbounded_cautions(answer),
         *sparse_cautions(answer),
+        *unseen_cautions(answer),
         *_changes(answer),
         *_extremes(answer),
         *likelihood_cautions(answer),

@@ -12,7 +12,7 @@ import plainodds as po
 from plainodds.answers.estimate import Estimate
 from plainodds.answers.odds import OddsQuestion
 from plainodds.phrases import words
-from plainodds.phrases.concerns import counted_rows, sparse_cautions, sparse_row
+from plainodds.phrases.concerns import counted_rows, sparse_cautions, sparse_row, unseen_cautions
 from tests.phrases.made import AGE, LINED, MATERIAL, level_facts, odds_answer, odds_row
 from tests.phrases.reading import faults
 
@@ -119,6 +119,40 @@ def test_of_several_models_only_the_first_ones_rows_are_counted():
     assert counted_rows(answer) == (rows[0],)
     assert sparse_cautions(replace(answer, rows=(rows[1],))) == ()
     assert sparse_cautions(answer) == (HANGS,)
+
+
+def test_values_that_no_row_has_are_said_to_lie_beyond_the_data():
+    row = odds_row(start=40.0, end=150.0, per_step=False)
+    told = (
+        "Some odds ratios go beyond the data: pipe age 150 years (the data have 0 to 110 years); "
+        "there the model speaks on its own."
+    )
+    assert unseen_cautions(answer_of(row)) == (told,)
+    for audience in ("plain", "technical"):
+        assert told in words(answer_of(row, row), audience).cautions
+
+
+def test_a_given_value_can_lie_beyond_the_data_too():
+    row = odds_row("material", "CI", "PVC", given=(("age_years", -5.0),))
+    assert "pipe age −5 years" in unseen_cautions(answer_of(row))[0]
+
+
+def test_of_equal_steps_only_the_size_can_go_beyond_the_data():
+    assert unseen_cautions(answer_of(odds_row(start=105.0, end=115.0))) == ()
+    (told,) = unseen_cautions(answer_of(odds_row(start=0.0, end=200.0)))
+    assert "pipe age per 200 years more (the data have 0 to 110 years)" in told
+    assert faults(told) == []
+
+
+def test_without_a_known_range_nothing_is_claimed():
+    age = replace(AGE, minimum=math.nan, maximum=math.nan)
+    row = odds_row(start=40.0, end=150.0, per_step=False)
+    assert unseen_cautions(odds_answer(row, odds_row(end=900.0), predictors=(age,))) == ()
+
+
+def test_values_within_the_data_are_not_remarked_upon():
+    within = odds_row(start=0.0, end=110.0, per_step=False, given=(("material", "PVC"),))
+    assert unseen_cautions(answer_of(within, PVC)) == ()
 
 
 def test_a_real_fit_counts_its_own_cases():
