@@ -8,6 +8,7 @@ from dataclasses import replace
 from plainodds import scales
 from plainodds.answers.curve import CurveAnswer, CurveLine, Scale
 from plainodds.phrases.alternative import alternative
+from plainodds.phrases.concerns import level_cautions
 from plainodds.phrases.held import others_words
 from plainodds.phrases.labels import (
     from_to,
@@ -57,7 +58,14 @@ def _plain(answer: CurveAnswer) -> Words:
 
 
 def _words(answer: CurveAnswer, told: Sequence[str]) -> Words:
-    cautions = map(sentence, (*beyond_words(answer), ASSOCIATION))
+    question = answer.question
+    spoken_of = [
+        pair
+        for line in answer.lines
+        for pair in ((question.by, line.by), *((question.predictor, at) for at in line.at))
+    ]
+    levels = level_cautions(answer.subject, spoken_of)
+    cautions = map(sentence, (*beyond_words(answer), *levels, ASSOCIATION))
     return Words(
         tuple(map(sentence, told)),
         (

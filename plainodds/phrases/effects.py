@@ -9,6 +9,7 @@ from plainodds.answers.effects import EffectRow, EffectsAnswer
 from plainodds.model.predictors import PredictorFacts
 from plainodds.phrases.alternative import alternative
 from plainodds.phrases.averaged import cases_chosen, drawn_method, drawn_words, rows_chosen
+from plainodds.phrases.concerns import level_cautions
 from plainodds.phrases.held import held_case
 from plainodds.phrases.labels import (
     effect_label,
@@ -64,10 +65,18 @@ def _plain(answer: EffectsAnswer) -> Words:
 
 
 def _words(answer: EffectsAnswer, told: list[str], more: list[str]) -> Words:
-    held = not _is_averaged(answer)
+    held, subject = not _is_averaged(answer), answer.subject
+    spoken_of = [
+        pair
+        for row in answer.rows
+        for pair in (
+            (row.predictor, row.end), (row.predictor, row.start), (answer.question.by, row.by)
+        )
+    ]  # fmt: skip
+    cautions = (ASSOCIATION, *level_cautions(subject, spoken_of), *more)
     return Words(
         tuple(map(sentence, told)),
-        (*map(sentence, (ASSOCIATION, *more)), *model_cautions(answer.subject, offset_held=held)),
+        (*map(sentence, cautions), *model_cautions(subject, offset_held=held)),
     )
 
 

@@ -25,6 +25,7 @@ __all__ = [
     "Moves",
     "beyond_cautions",
     "end_label",
+    "levels_moved",
     "moves_label",
     "moves_words",
     "settled_moves",
@@ -43,6 +44,16 @@ def settled_moves(answer: ChangeAnswer) -> Moves:
         (name, _at_typical(answer.subject.predictor(name), move))
         for name, move in answer.question.moves
     )
+
+
+def levels_moved(answer: ChangeAnswer) -> list[tuple[str, Scalar]]:
+    """The values between which a change moves its predictors, those that it leads to first."""
+    return [
+        (name, value)
+        for name, move in settled_moves(answer)
+        if isinstance(move, Move)
+        for value in (move.end, move.start)
+    ]
 
 
 def _at_typical(facts: PredictorFacts, move: Move | Shift) -> Move | Shift:
