@@ -9,7 +9,14 @@ from plainodds.fitted import FittedLogit, odds_of
 from plainodds.model.predictors import Outcome, Predictor
 from plainodds.phrases import alternative, code, words
 from plainodds.values import from_json, to_json
-from plainodds.views import ChangeView, CurveView, EffectsView, OddsView, ProfileView
+from plainodds.views import (
+    ChangeView,
+    CurveView,
+    EffectsView,
+    OddsView,
+    ProfileView,
+    SoundnessView,
+)
 
 __all__ = [
     "ChangeView",
@@ -23,6 +30,7 @@ __all__ = [
     "ProfileView",
     "QuestionRefused",
     "Shift",
+    "SoundnessView",
     "alternative",
     "code",
     "demo",

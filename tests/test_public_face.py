@@ -50,7 +50,7 @@ def test_the_face_has_what_the_readme_promises():
     promised = {
         "FittedLogit", "Predictor", "Outcome",
         "table", "draw", "words", "code", "save",
-        "OddsView", "CurveView", "ProfileView",
+        "OddsView", "CurveView", "ProfileView", "ChangeView", "EffectsView", "SoundnessView",
     }  # fmt: skip
     assert promised <= set(plainodds.__all__)
 

@@ -5,5 +5,6 @@ from plainodds.views.curve import CurveView
 from plainodds.views.effects import EffectsView
 from plainodds.views.odds import OddsView
 from plainodds.views.profile import ProfileView
+from plainodds.views.soundness import SoundnessView
 
-__all__ = ["ChangeView", "CurveView", "EffectsView", "OddsView", "ProfileView"]
+__all__ = ["ChangeView", "CurveView", "EffectsView", "OddsView", "ProfileView", "SoundnessView"]
