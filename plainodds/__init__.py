@@ -22,7 +22,15 @@ from plainodds.phrases import (
     writing,
 )
 from plainodds.values import from_json, to_json
-from plainodds.views import ChangeView, CurveView, EffectsView, OddsView, PairView, ProfileView
+from plainodds.views import (
+    ChangeView,
+    CurveView,
+    EffectsView,
+    OddsView,
+    PairView,
+    ProfileView,
+    SoundnessView,
+)
 
 __all__ = [
     "THEMES",
@@ -40,6 +48,7 @@ __all__ = [
     "QuestionRefused",
     "ReportTable",
     "Shift",
+    "SoundnessView",
     "Theme",
     "alternative",
     "caption",

@@ -33,7 +33,9 @@ def floor(name):
 
 
 @pytest.mark.parametrize("name", ["phrases", "drawings", "views"])
-@pytest.mark.parametrize("question", ["odds", "curve", "profile", "effects", "change", "pair"])
+@pytest.mark.parametrize(
+    "question", ["odds", "curve", "profile", "effects", "change", "pair", "soundness"]
+)
 def test_each_question_has_a_module_of_its_name_on_each_floor(question, name):
     assert question in floor("answers")
     assert question in floor(name)

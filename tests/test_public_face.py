@@ -55,6 +55,7 @@ def test_the_face_has_what_the_readme_promises():
         "FittedLogit", "Predictor", "Outcome",
         "table", "draw", "words", "code", "save",
         "OddsView", "CurveView", "ProfileView", "ChangeView", "EffectsView", "PairView",
+        "SoundnessView",
         "joint_table",
     }  # fmt: skip
     assert promised <= set(plainodds.__all__)

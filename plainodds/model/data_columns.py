@@ -29,6 +29,14 @@ class DataColumns:
         self._rows = len(frame)
         self._kept = kept
 
+    def names(self) -> tuple[str, ...]:
+        """Names of the columns that can be read, in their order; none once the data are gone."""
+        frame = self._frame()
+        if frame is None or len(frame) != self._rows:
+            return ()
+        written = [str(column) for column in frame.columns]
+        return tuple(name for name in written if written.count(name) == 1)
+
     def read(self, name: str) -> pd.Series[Any]:
         """A column's values in the rows used.
 

@@ -14,11 +14,13 @@ from plainodds.phrases.choices.change import (
     marks_told,
     misses_one,
 )
+from plainodds.phrases.concerns import level_cautions
 from plainodds.phrases.held import held_case, held_words, kept_words
 from plainodds.phrases.labels import sentence_case
 from plainodds.phrases.moves import (
     beyond_cautions,
     end_label,
+    levels_moved,
     moves_label,
     moves_words,
     settled_moves,
@@ -83,6 +85,7 @@ def _words(answer: ChangeAnswer, told: list[str], more: list[str]) -> Words:
     odds_ratio = answer.comparison.odds_ratio
     cautions = [
         *beyond_cautions(answer),
+        *level_cautions(answer.subject, levels_moved(answer)),
         *odds_ratio_cautions((answer.start.estimate, answer.end.estimate)),
         *_of_averages(answer),
         association(answer.subject),

@@ -13,6 +13,7 @@ from plainodds.phrases.choices.curve import (
     going,
     spoken_places,
 )
+from plainodds.phrases.concerns import level_cautions
 from plainodds.phrases.held import others_words
 from plainodds.phrases.labels import (
     from_to,
@@ -62,7 +63,14 @@ def _plain(answer: CurveAnswer) -> Words:
 
 
 def _words(answer: CurveAnswer, told: Sequence[str]) -> Words:
-    cautions = map(sentence, (*beyond_words(answer), association(answer.subject)))
+    question = answer.question
+    spoken_of = [
+        pair
+        for line in answer.lines
+        for pair in ((question.by, line.by), *((question.predictor, at) for at in line.at))
+    ]
+    levels = level_cautions(answer.subject, spoken_of)
+    cautions = map(sentence, (*beyond_words(answer), *levels, association(answer.subject)))
     return Words(
         tuple(map(sentence, told)),
         (

@@ -17,6 +17,7 @@ from plainodds.phrases.choices.effects import (
     rows_together,
     share_is_known,
 )
+from plainodds.phrases.concerns import level_cautions
 from plainodds.phrases.held import held_case
 from plainodds.phrases.labels import (
     effect_label,
@@ -70,13 +71,18 @@ def _plain(answer: EffectsAnswer) -> Words:
 
 
 def _words(answer: EffectsAnswer, told: list[str], more: list[str]) -> Words:
-    held = not effects_averaged(answer)
+    held, subject = not effects_averaged(answer), answer.subject
+    spoken_of = [
+        pair
+        for row in answer.rows
+        for pair in (
+            (row.predictor, row.end), (row.predictor, row.start), (answer.question.by, row.by)
+        )
+    ]  # fmt: skip
+    cautions = (association(subject), *level_cautions(subject, spoken_of), *more)
     return Words(
         tuple(map(sentence, told)),
-        (
-            *map(sentence, (association(answer.subject), *more)),
-            *model_cautions(answer.subject, offset_held=held),
-        ),
+        (*map(sentence, cautions), *model_cautions(subject, offset_held=held)),
     )
 
 

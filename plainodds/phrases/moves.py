@@ -30,6 +30,7 @@ __all__ = [
     "end_label",
     "end_rather_than_start",
     "ends_beyond",
+    "levels_moved",
     "moves_label",
     "moves_words",
     "settled_moves",
@@ -48,6 +49,16 @@ def settled_moves(answer: ChangeAnswer) -> Moves:
         (name, _at_typical(answer.subject.predictor(name), move))
         for name, move in answer.question.moves
     )
+
+
+def levels_moved(answer: ChangeAnswer) -> list[tuple[str, Scalar]]:
+    """The values between which a change moves its predictors, those that it leads to first."""
+    return [
+        (name, value)
+        for name, move in settled_moves(answer)
+        if isinstance(move, Move)
+        for value in (move.end, move.start)
+    ]
 
 
 def _at_typical(facts: PredictorFacts, move: Move | Shift) -> Move | Shift:

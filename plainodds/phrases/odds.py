@@ -16,7 +16,7 @@ from plainodds.phrases.choices.odds import (
     side_of,
     typical_chance,
 )
-from plainodds.phrases.concerns import sparse_cautions
+from plainodds.phrases.concerns import sparse_cautions, unseen_cautions
 from plainodds.phrases.labels import (
     change_label,
     from_to,
@@ -87,6 +87,7 @@ def _cautions(answer: OddsAnswer) -> tuple[str, ...]:
     return (
         *unbounded_cautions(answer),
         *sparse_cautions(answer),
+        *unseen_cautions(answer),
         *_changes(answer),
         *_extremes(answer),
         *likelihood_cautions(answer),

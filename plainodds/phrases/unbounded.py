@@ -18,6 +18,7 @@ __all__ = [
     "UNBOUNDED_NOTE",
     "has_finite_estimate",
     "odds_ratio_figures",
+    "one_outcome_told",
     "profile_unbounded_cautions",
     "ratio_or_none",
     "unbounded_cautions",
@@ -122,7 +123,7 @@ def why_unbounded(answer: OddsAnswer, row: OddsRow) -> str:
     told = [
         words
         for level in (row.end, row.start)
-        if not facts.is_number and (words := _one_outcome(subject, row.predictor, level))
+        if not facts.is_number and (words := one_outcome_told(subject, row.predictor, level))
     ]
     if told:
         return listed(told)
@@ -132,7 +133,7 @@ def why_unbounded(answer: OddsAnswer, row: OddsRow) -> str:
     )
 
 
-def _one_outcome(subject: Subject, name: str, level: Scalar) -> str:
+def one_outcome_told(subject: Subject, name: str, level: Scalar) -> str:
     """Said of a level all of whose cases had the same outcome; else empty."""
     facts = subject.predictor(name)
     if level not in facts.levels or not facts.level_events:

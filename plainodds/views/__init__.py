@@ -6,5 +6,14 @@ from plainodds.views.effects import EffectsView
 from plainodds.views.odds import OddsView
 from plainodds.views.pair import PairView
 from plainodds.views.profile import ProfileView
+from plainodds.views.soundness import SoundnessView
 
-__all__ = ["ChangeView", "CurveView", "EffectsView", "OddsView", "PairView", "ProfileView"]
+__all__ = [
+    "ChangeView",
+    "CurveView",
+    "EffectsView",
+    "OddsView",
+    "PairView",
+    "ProfileView",
+    "SoundnessView",
+]

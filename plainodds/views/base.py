@@ -66,6 +66,8 @@ class AnswerView(widgets.VBox):
     """The view's name in CSS classes and file names."""
     asks: ClassVar[type[Question]]
     """The kind of question that it edits."""
+    looks: ClassVar[str] = STYLE
+    """Its style sheet."""
 
     answer = traitlets.Any(read_only=True)
 
@@ -83,9 +85,9 @@ class AnswerView(widgets.VBox):
         with LOCK, self._quietly():
             panel = block(*self._make_controls(), name="controls")
             style = html("style")
-            style.value = markup.style_sheet(STYLE, KEYS)
-            rest = block(self._words, self._table, self._extras.widget, name="rest")
-            body = widgets.Box([block(*self._on_stage(), name="stage"), panel, rest])
+            style.value = markup.style_sheet(self.looks, KEYS)
+            rest = block(*self._beneath(), name="rest")
+            body = widgets.Box(self._in_order(block(*self._on_stage(), name="stage"), panel, rest))
             body.add_class("plainodds-body")
             self.children = [style, self._messages, body]
             self.add_class("plainodds-view")
@@ -105,6 +107,16 @@ class AnswerView(widgets.VBox):
     def _on_stage(self) -> list[widgets.Widget]:
         """What stands beside the controls, the picture among it."""
         return [self._stage.widget]
+
+    def _beneath(self) -> list[widgets.Widget]:
+        """What stands beneath the picture."""
+        return [self._words, self._table, self._extras.widget]
+
+    def _in_order(
+        self, stage: widgets.Widget, panel: widgets.Widget, rest: widgets.Widget
+    ) -> list[widgets.Widget]:
+        """What follows what in the page."""
+        return [stage, panel, rest]
 
     def _arrange(self, question: Any) -> None:
         """Let options and panels follow the question, before controls show their values."""

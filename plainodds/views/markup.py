@@ -22,6 +22,7 @@ __all__ = [
     "data_uri",
     "download",
     "element",
+    "folded",
     "joined",
     "note",
     "notice",
@@ -185,6 +186,11 @@ def banner(heading: str, text: str) -> Markup:
         "div", element("strong", f"{heading}. "), text, role="status",
         class_="plainodds-warning-text",
     )  # fmt: skip
+
+
+def folded(title: str, *inside: str) -> Markup:
+    """What is opened by whoever wants to read it, beneath its title."""
+    return element("details", element("summary", title), *inside)
 
 
 def note(text: str) -> Markup:

@@ -6,7 +6,7 @@ from playwright.sync_api import Locator, Page
 
 __all__ = ["ViewOnPage"]
 
-Kind = Literal["odds", "curve", "profile", "effects", "change", "pair"]
+Kind = Literal["odds", "curve", "profile", "effects", "change", "pair", "soundness"]
 
 
 class ViewOnPage:

@@ -6,13 +6,21 @@ from dataclasses import replace
 import numpy as np
 import pandas as pd
 import pytest
+import statsmodels.api as sm
 import statsmodels.formula.api as smf
 
 import plainodds as po
 from plainodds.answers.estimate import Estimate
 from plainodds.answers.odds import OddsQuestion
 from plainodds.phrases import words
-from plainodds.phrases.concerns import counted_rows, sparse_cautions, sparse_row
+from plainodds.phrases.concerns import (
+    counted_rows,
+    level_cautions,
+    sparse_cautions,
+    sparse_row,
+    unseen_cautions,
+)
+from tests.answers.checks.fits import invented
 from tests.phrases.made import AGE, LINED, MATERIAL, level_facts, odds_answer, odds_row
 from tests.phrases.reading import faults
 
@@ -119,6 +127,113 @@ def test_of_several_models_only_the_first_ones_rows_are_counted():
     assert counted_rows(answer) == (rows[0],)
     assert sparse_cautions(replace(answer, rows=(rows[1],))) == ()
     assert sparse_cautions(answer) == (HANGS,)
+
+
+def test_values_that_no_row_has_are_said_to_lie_beyond_the_data():
+    row = odds_row(start=40.0, end=150.0, per_step=False)
+    told = (
+        "Some odds ratios go beyond the data: pipe age 150 years (the data have 0 to 110 years); "
+        "there the model speaks on its own."
+    )
+    assert unseen_cautions(answer_of(row)) == (told,)
+    for audience in ("plain", "technical"):
+        assert told in words(answer_of(row, row), audience).cautions
+
+
+def test_a_given_value_can_lie_beyond_the_data_too():
+    row = odds_row("material", "CI", "PVC", given=(("age_years", -5.0),))
+    assert "pipe age −5 years" in unseen_cautions(answer_of(row))[0]
+
+
+def test_of_equal_steps_only_the_size_can_go_beyond_the_data():
+    assert unseen_cautions(answer_of(odds_row(start=105.0, end=115.0))) == ()
+    (told,) = unseen_cautions(answer_of(odds_row(start=0.0, end=200.0)))
+    assert "pipe age per 200 years more (the data have 0 to 110 years)" in told
+    assert faults(told) == []
+
+
+def test_without_a_known_range_nothing_is_claimed():
+    age = replace(AGE, minimum=math.nan, maximum=math.nan)
+    row = odds_row(start=40.0, end=150.0, per_step=False)
+    assert unseen_cautions(odds_answer(row, odds_row(end=900.0), predictors=(age,))) == ()
+
+
+def test_values_within_the_data_are_not_remarked_upon():
+    within = odds_row(start=0.0, end=110.0, per_step=False, given=(("material", "PVC"),))
+    assert unseen_cautions(answer_of(within, PVC)) == ()
+
+
+FIGURES_HANG = HANGS.replace("Odds ratios", "Figures")
+
+
+@pytest.mark.parametrize(
+    ("cases", "events", "told"),
+    [
+        (14.0, 3.0, FIGURES_HANG),
+        (14.0, 14.0, "All 14 pipes with material PVC had the event: take"),
+        (14.0, 0.0, "None of the 14 pipes with material PVC had the event: take"),
+        (1.0, 1.0, "The only pipe with material PVC had the event: take"),
+        (14.0, 7.0, ""),
+    ],
+)
+def test_figures_of_a_level_say_what_is_behind_it(cases, events, told):
+    facts = material((311.0, 200.0, cases), (87.0, 50.0, events))
+    subject = answer_of(facts=facts).subject
+    spoken_of = [("material", "PVC"), ("material", "CI"), ("age_years", 40.0), (None, None)]
+    cautions = level_cautions(subject, spoken_of * 2)
+    assert len(cautions) == bool(told)
+    for caution in cautions:
+        assert caution.startswith(told)
+        assert faults(caution) == []
+
+
+def test_levels_of_one_outcome_and_levels_of_few_cases_are_told_apart():
+    facts = material((311.0, 9.0, 14.0), (87.0, 2.0, 0.0))
+    subject = answer_of(facts=facts).subject
+    first, second = level_cautions(subject, [("material", "PVC"), ("material", "DI")])
+    assert first == (
+        "None of the 14 pipes with material PVC had the event: take what the model says of such "
+        "pipes with care, intervals most of all."
+    )
+    assert second == (
+        "Figures that speak of material ductile iron (2 events in 9 pipes) hang on few cases of "
+        "one outcome."
+    )
+
+
+@pytest.fixture(scope="module")
+def alarmed():
+    data = invented(300)
+    data["alarm"] = data.index < 6
+    data.loc[data.alarm, "y"] = 1
+    family = sm.families.Binomial()
+    return po.FittedLogit(smf.glm("y ~ x + w + alarm", data, family=family).fit())
+
+
+@pytest.mark.parametrize("audience", ["plain", "technical"])
+@pytest.mark.parametrize(
+    "ask",
+    [
+        lambda fit: fit.curve("x", by="alarm"),
+        lambda fit: fit.curve("alarm"),
+        lambda fit: fit.effects(),
+        lambda fit: fit.effects(others="typical"),
+        lambda fit: fit.effects(predictors=("x",), by="alarm"),
+        lambda fit: fit.change("alarm", False, True, others="typical"),
+        lambda fit: fit.change("alarm", False, True),
+    ],
+)
+def test_every_answer_that_speaks_of_a_level_with_one_outcome_says_so(alarmed, ask, audience):
+    told = [each for each in words(ask(alarmed), audience).cautions if "alarm yes had" in each]
+    assert told == [
+        "All 6 cases with alarm yes had the event: take what the model says of such cases with "
+        "care, intervals most of all."
+    ]
+
+
+@pytest.mark.parametrize("ask", [lambda fit: fit.curve("x"), lambda fit: fit.change("x", 40, 60)])
+def test_an_answer_that_does_not_speak_of_that_level_does_not(alarmed, ask):
+    assert not any("alarm yes" in each for each in words(ask(alarmed)).cautions)
 
 
 def test_a_real_fit_counts_its_own_cases():

@@ -10,7 +10,7 @@ from plainodds.answers.profile import ProfileQuestion
 from plainodds.drawings.picture import Picture
 from tests.views.frontend import control_of, text_of
 
-VIEWS = [po.OddsView, po.CurveView, po.ProfileView, po.EffectsView, po.ChangeView]
+VIEWS = [po.OddsView, po.CurveView, po.ProfileView, po.EffectsView, po.ChangeView, po.SoundnessView]
 
 
 def picture_of(view):

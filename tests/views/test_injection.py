@@ -14,7 +14,16 @@ from plainodds.views.style import KEYS
 
 HOSTILE = "<img src=x onerror=alert(1)>"
 OWN = {"div", "p", "ul", "li", "h4", "strong", "span", "b", "style", "pre", "code", "a", "img"}
-VIEWS = [po.OddsView, po.CurveView, po.ProfileView, po.EffectsView, po.ChangeView, po.PairView]
+VIEWS = [
+    po.OddsView,
+    po.CurveView,
+    po.ProfileView,
+    po.EffectsView,
+    po.ChangeView,
+    po.PairView,
+    po.SoundnessView,
+]
+FOLDED = {"details", "summary"}
 TABLE = {"table", "caption", "thead", "tbody", "tr", "th", "td"}
 
 
@@ -62,7 +71,7 @@ def widgets_of(view):
 
 def is_harmless(markup):
     for tag, attributes in Found(markup).elements:
-        assert tag in OWN | TABLE
+        assert tag in OWN | TABLE | FOLDED
         scripts = {name: held for name, held in attributes.items() if name.startswith("on")}
         assert scripts == {} or (tag == "style" and scripts == {"onload": KEYS})
         if tag == "img":
@@ -84,6 +93,10 @@ def opened(fit, kind):
     if kind is po.PairView:
         levels = (HOSTILE, "other")
         view.question = fit.pair("x", HOSTILE, a_values=(0.0, 1.0), b_values=levels).question
+    if kind is po.SoundnessView:
+        for card in view._list.cards:
+            card.button.click()
+        view.question = fit.soundness(show="levels", groups=HOSTILE).question
     view._extras.code_button.click()
     return view
 
@@ -119,7 +132,7 @@ def test_an_error_about_it_executes_nothing(fit, page):
     is_harmless(view._messages.value)
 
 
-@pytest.mark.parametrize("ask", ["odds", "profile", "effects"])
+@pytest.mark.parametrize("ask", ["odds", "profile", "effects", "soundness"])
 def test_an_answer_in_a_cell_executes_nothing(fit, ask):
     data, _ = bundle(getattr(fit, ask)())
     is_harmless(data["text/html"])

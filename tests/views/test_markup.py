@@ -109,6 +109,11 @@ def test_a_problem_and_a_remark_are_told_apart_by_words():
     assert "Not possible" not in remark
 
 
+def test_what_is_folded_has_a_title_and_both_are_escaped():
+    written = markup.folded(HOSTILE, markup.element("p", HOSTILE), HOSTILE)
+    assert tags(written) == ["details", "summary", "p"]
+
+
 def test_a_file_is_offered_under_its_own_name():
     link = next(
         held for tag, held in Tags(markup.download("a.svg", "/", b"x", "image/svg+xml")).made

@@ -26,13 +26,13 @@ __all__ = [
     "draw_y_axis",
     "marked_places",
     "numbers_axis",
-    "title_lines",
+    "plot_room",
     "x_axis_height",
     "y_axis_width",
 ]
 
 _MARKED = 5
-_TITLE = 0.5
+_LEAST_PLOT = 0.5
 _NARROWEST = 1 / 45
 
 
@@ -110,19 +110,18 @@ def draw_y_axis(board: Board, axis: Axis) -> None:
     axes.set_ylim(axis.lower, axis.upper)
 
 
-def title_lines(title: str, theme: Theme, width: float) -> int:
-    """How many lines the title of a horizontal axis may take, for a slot of a width in points."""
-    return 1 if text_width(title, theme, theme.small) < _TITLE * width else 2
+def plot_room(width: float) -> float:
+    """Room in points that a plot's own title has at least, whatever stands beside the plot."""
+    return _LEAST_PLOT * width
 
 
-def x_axis_height(title: str, theme: Theme, width: float) -> float:
-    """Height in points of tick labels and title, for a slot of a width."""
-    return line_height(theme.small, 1 + title_lines(title, theme, width)) + 0.7 * theme.font_size
+def x_axis_height(title: str, theme: Theme, room: float) -> float:
+    """Height in points of tick labels and a title for which there is so much room across."""
+    lines = 1 if text_width(title, theme, theme.small) <= room else 2
+    return line_height(theme.small, 1 + lines) + 0.7 * theme.font_size
 
 
-def draw_x_axis(
-    board: Board, axis: Axis, title: str, width: float, down: float, lines: int = 2
-) -> None:
+def draw_x_axis(board: Board, axis: Axis, title: str, width: float, down: float) -> None:
     """Set the horizontal axis with its title.
 
     Parameters
@@ -134,8 +133,6 @@ def draw_x_axis(
         That the title may take, in points.
     down : float
         How many points beneath the plot its tick labels begin.
-    lines : int
-        How many lines the title may take.
     """
     axes, theme = board.axes, board.theme
     floor = axes.spines["bottom"]
@@ -143,7 +140,7 @@ def draw_x_axis(
     axes.tick_params(axis="x", labelbottom=True, pad=down)
     label_ticks(axes, "x", axis.ticks, axis.labels, tick_style(theme))
     axes.set_xlim(axis.lower, axis.upper)
-    words = wrapped(title, width, theme, theme.small, lines)
+    words = wrapped(title, width, theme, theme.small, 2)
     beneath = -down - 1.25 * theme.small - 0.3 * theme.font_size
     board.write(words, 0.0, beneath, board.at(0.5, 0), across="center", down="top")
 
@@ -212,12 +209,15 @@ def draw_strip(
     plot_width, height : float
         In points.
     """
-    theme = board.theme
-    outlines = []
+    outline: list[tuple[float, float]] = []
+    base = -1.25 * height
     for first, last, share in bars:
-        if share <= 0:
-            continue
-        left, right = (axis.share(each) * plot_width for each in (first, last))
-        base, top = -1.25 * height, -1.25 * height + height * max(share, 0.1)
-        outlines.append([(left, base), (right, base), (right, top), (left, top)])
-    board.area(name, outlines, transform=board.at(0, 0), facecolor=theme.rule, zorder=2)
+        if share > 0:
+            left, right = (axis.share(each) * plot_width for each in (first, last))
+            top = base + height * max(share, 0.1)
+            outline += [(left, base), (left, top), (right, top), (right, base)]
+    # all bars are one outline, so that neighbours that overlap are not darker there
+    board.area(
+        name, [outline] if outline else [], transform=board.at(0, 0),
+        facecolor=board.theme.rule, alpha=0.6, zorder=2,
+    )  # fmt: skip

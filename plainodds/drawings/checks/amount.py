@@ -9,7 +9,7 @@ from plainodds.drawings.checks.plate import Found, Plate
 from plainodds.drawings.geometry import Margins
 from plainodds.drawings.lettering import line_height, text_width, wrapped
 from plainodds.drawings.theme import Theme
-from plainodds.phrases.checks.parts import amount, coefficients
+from plainodds.phrases.checks.parts import cases, coefficients
 from plainodds.phrases.labels import sentence_case
 from plainodds.phrases.numbers import count, quantity, ratio
 from plainodds.phrases.units import tidy
@@ -54,8 +54,8 @@ def _narrow(theme: Theme, width: float) -> bool:
 def _sides(found: Found) -> list[tuple[str, float]]:
     evidence, event = found.evidence(AmountEvidence), tidy(found.subject.outcome.event)
     return [
-        (f"{amount(evidence.events)} with {event}", evidence.events),
-        (f"{amount(evidence.others)} without {event}", evidence.others),
+        (f"{cases(found.subject, evidence.events)} with {event}", evidence.events),
+        (f"{cases(found.subject, evidence.others)} without {event}", evidence.others),
     ]
 
 

@@ -15,7 +15,7 @@ from plainodds.drawings.checks.along import (
     draw_strip,
     draw_x_axis,
     draw_y_axis,
-    title_lines,
+    plot_room,
     x_axis_height,
     y_axis_width,
 )
@@ -40,7 +40,7 @@ _WAYS = {"bootstrap": "bootstrap samples", "cross-validation": "repeats of cross
 
 def _below(found: Found, theme: Theme, width: float) -> float:
     em, (title, _) = theme.font_size, picture_axes(found.finding, found.subject)
-    axis = (1.25 * _STRIP + 0.1) * em + x_axis_height(title, theme, width)
+    axis = (1.25 * _STRIP + 0.1) * em + x_axis_height(title, theme, plot_room(width))
     table = table_height(_optimism(found), theme, width)
     return axis + (table + 0.8 * em if table else 0.0)
 
@@ -119,8 +119,7 @@ def _paint(board: Board, found: Found, width: float, height: float) -> Margins:
     across = Axis(axis.lower, axis.upper, *_thinned(axis, most))
     chance, share = picture_axes(found.finding, found.subject)
     draw_y_axis(board, axis)
-    lines = title_lines(chance, theme, width)
-    draw_x_axis(board, across, chance, plot_width, (1.25 * _STRIP + 0.35) * em, lines)
+    draw_x_axis(board, across, chance, plot_width, (1.25 * _STRIP + 0.35) * em)
     board.write(
         wrapped(share, width, theme, theme.small, 1), -left, 0.45 * em, board.at(0, 1),
         down="bottom",

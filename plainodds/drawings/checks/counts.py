@@ -6,7 +6,7 @@ from collections.abc import Sequence
 from dataclasses import replace
 
 from plainodds.answers.checks.amount import LevelCount
-from plainodds.drawings.checks.along import Axis, draw_x_axis, numbers_axis, title_lines
+from plainodds.drawings.checks.along import Axis, draw_x_axis, numbers_axis
 from plainodds.drawings.checks.board import Board
 from plainodds.drawings.checks.rows import LaidRows, Row, draw_grid, draw_rows, laid_rows
 from plainodds.drawings.furniture import Key
@@ -101,10 +101,7 @@ def draw_counts(
         wrapped(legend[0], laid.right + 0.5 * plot_width, theme, theme.small, 1), laid.right,
         0.25 * em, board.at(1, 1), across="right", down="bottom", colour=theme.faint,
     )  # fmt: skip
-    draw_x_axis(
-        board, axis, title, plot_width + 2 * min(laid.left, laid.right), 0.3 * em,
-        title_lines(title, theme, width),
-    )  # fmt: skip
+    draw_x_axis(board, axis, title, laid.title_room(width), 0.3 * em)
     board.axes.spines["bottom"].set_visible(False)
 
 

@@ -8,7 +8,7 @@ from plainodds.drawings.checks.along import (
     chances_axis,
     draw_x_axis,
     draw_y_axis,
-    title_lines,
+    plot_room,
     x_axis_height,
     y_axis_width,
 )
@@ -42,7 +42,7 @@ def _above(found: Found, theme: Theme, width: float) -> float:
 
 def _below(found: Found, theme: Theme, width: float) -> float:
     title, _ = picture_axes(found.finding, found.subject)
-    return x_axis_height(title, theme, width) + 0.1 * theme.font_size
+    return x_axis_height(title, theme, plot_room(width)) + 0.1 * theme.font_size
 
 
 def _natural(found: Found, theme: Theme, width: float) -> float:
@@ -95,7 +95,7 @@ def _paint(board: Board, found: Found, width: float, height: float) -> Margins:
     across = chances_axis(edges, (), int(plot_width / (4.6 * theme.small)))
     chance, number = picture_axes(found.finding, found.subject)
     draw_y_axis(board, up)
-    draw_x_axis(board, across, chance, plot_width, 0.35 * em, title_lines(chance, theme, width))
+    draw_x_axis(board, across, chance, plot_width, 0.35 * em)
     board.axes.spines["bottom"].set_visible(False)
     _draw_bars(board, evidence, factor)
     board.line(

@@ -5,7 +5,7 @@ from __future__ import annotations
 import math
 from dataclasses import dataclass
 
-from plainodds.drawings.checks.along import Axis, draw_x_axis, title_lines, x_axis_height
+from plainodds.drawings.checks.along import Axis, draw_x_axis, x_axis_height
 from plainodds.drawings.checks.board import Board
 from plainodds.drawings.geometry import Margins
 from plainodds.drawings.lettering import line_height, text_width, wrapped
@@ -106,8 +106,7 @@ def draw_gauge(board: Board, gauge: Gauge, width: float, height: float) -> Margi
         gauge.lower, gauge.upper, tuple(at for at, _ in gauge.ticks),
         tuple(words for _, words in gauge.ticks),
     )  # fmt: skip
-    lines = title_lines(gauge.title, theme, width)
-    draw_x_axis(board, axis, gauge.title, width, 0.3 * em, lines)
+    draw_x_axis(board, axis, gauge.title, width, 0.3 * em)
     top = board.at(0, 1)
     for words, middle in _zones(gauge, theme, inner):
         board.write(

@@ -11,7 +11,7 @@ from plainodds.drawings.checks.along import (
     draw_x_axis,
     draw_y_axis,
     numbers_axis,
-    title_lines,
+    plot_room,
     x_axis_height,
     y_axis_width,
 )
@@ -37,7 +37,7 @@ def _above(theme: Theme) -> float:
 
 def _axis_height(found: Found, theme: Theme, width: float) -> float:
     title, _ = picture_axes(found.finding, found.subject)
-    return x_axis_height(title, theme, width) + 0.1 * theme.font_size
+    return x_axis_height(title, theme, plot_room(width)) + 0.1 * theme.font_size
 
 
 def _around(found: Found, theme: Theme, width: float) -> float:
@@ -92,7 +92,7 @@ def _paint(board: Board, found: Found, width: float, height: float) -> Margins:
     across = chances_axis([x for x, _, _ in points], (), int(plot_width / (4.6 * theme.small)))
     chance, badly = picture_axes(found.finding, found.subject)
     draw_y_axis(board, up)
-    draw_x_axis(board, across, chance, plot_width, 0.35 * em, title_lines(chance, theme, width))
+    draw_x_axis(board, across, chance, plot_width, 0.35 * em)
     board.write(
         wrapped(badly, width, theme, theme.small, 1), -left, 0.45 * em, board.at(0, 1),
         down="bottom",
@@ -119,10 +119,11 @@ def _paint(board: Board, found: Found, width: float, height: float) -> Margins:
     def place(x: float, y: float) -> tuple[float, float]:
         return across.share(x) * plot_width, up.share(y) * plot_height
 
+    shown = [pattern for pattern, _ in moves_shown(found)]
     draw_tags(
         board,
         [Tag(label_of(each), *place(each.probability, each.delta_chi2),
-             math.sqrt(area(each.delta_beta)) / 2) for each in outstanding],
+             math.sqrt(area(each.delta_beta)) / 2, each in shown) for each in outstanding],
         [place(x, y) for x, y, _ in points], (plot_width, plot_height),
     )  # fmt: skip
     draw_without(

@@ -6,7 +6,7 @@ import math
 from collections.abc import Sequence
 from dataclasses import dataclass
 
-from plainodds.drawings.checks.along import Axis, draw_x_axis, title_lines, x_axis_height
+from plainodds.drawings.checks.along import Axis, draw_x_axis, x_axis_height
 from plainodds.drawings.checks.board import Board
 from plainodds.drawings.checks.rows import LaidRows, Row, draw_grid, draw_rows, laid_rows
 from plainodds.drawings.furniture import Key
@@ -61,8 +61,9 @@ def lanes_height(
     width: float,
 ) -> float:  # fmt: skip
     """Height in points of the key, the rows and their axis."""
-    rows = _laid(lanes, theme, width).height
-    return _head(names, heading, theme, width) + rows + x_axis_height(title, theme, width)
+    laid = _laid(lanes, theme, width)
+    axis = x_axis_height(title, theme, laid.title_room(width))
+    return _head(names, heading, theme, width) + laid.height + axis
 
 
 def draw_lanes(
@@ -104,10 +105,7 @@ def draw_lanes(
         linestyles=(0, (3.0, 2.0)), zorder=2,
     )  # fmt: skip
     draw_rows(board, laid)
-    draw_x_axis(
-        board, axis, title, plot_width + 2 * min(laid.left, laid.right), 0.3 * em,
-        title_lines(title, theme, width),
-    )  # fmt: skip
+    draw_x_axis(board, axis, title, laid.title_room(width), 0.3 * em)
     board.axes.spines["bottom"].set_visible(False)
     if names:
         board.key(names, -laid.left, top - 0.1 * em, width)

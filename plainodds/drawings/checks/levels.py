@@ -45,7 +45,11 @@ def _height(found: Found, theme: Theme, width: float) -> float:
     laid = laid_counts(_shown(found), found.subject, theme, width)
     legend = picture_legend(found.finding, found.subject)
     title, _ = picture_axes(found.finding, found.subject)
-    return head_height(legend, theme, width) + laid.height + x_axis_height(title, theme, width)
+    return (
+        head_height(legend, theme, width)
+        + laid.height
+        + x_axis_height(title, theme, laid.title_room(width))
+    )
 
 
 def _notes(found: Found) -> list[str]:

@@ -5,7 +5,7 @@ from __future__ import annotations
 import math
 
 from plainodds.answers.checks.amount import MissingEvidence
-from plainodds.drawings.checks.along import chances_axis, draw_x_axis, title_lines, x_axis_height
+from plainodds.drawings.checks.along import chances_axis, draw_x_axis, x_axis_height
 from plainodds.drawings.checks.board import Board
 from plainodds.drawings.checks.plate import Found, Plate
 from plainodds.drawings.checks.rows import LaidRows, Row, draw_grid, draw_rows, laid_rows
@@ -60,7 +60,7 @@ def _name(column: str, subject: Subject) -> str:
 
 def _foot(found: Found, theme: Theme, width: float) -> float:
     title = sentence_case(picture_axes(found.finding, found.subject)[0])
-    axis = x_axis_height(title, theme, width)
+    axis = x_axis_height(title, theme, _laid(found, theme, width).title_room(width))
     words = paragraph_height(_columns(found), theme, width, 0.94)
     return axis + (words + _GAP * theme.font_size if words else 0.0)
 
@@ -89,10 +89,7 @@ def _paint(board: Board, found: Found, width: float, height: float) -> Margins:
     draw_grid(board, laid, axis)
     draw_rows(board, laid)
     title = sentence_case(picture_axes(found.finding, found.subject)[0])
-    draw_x_axis(
-        board, axis, title, plot_width + 2 * min(laid.left, laid.right), 0.3 * em,
-        title_lines(title, theme, width),
-    )  # fmt: skip
+    draw_x_axis(board, axis, title, laid.title_room(width), 0.3 * em)
     board.axes.spines["bottom"].set_visible(False)
     first, second = laid.middles
     board.strokes(

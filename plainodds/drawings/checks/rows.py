@@ -49,6 +49,10 @@ class LaidRows:
     height: float
     stacked: bool
 
+    def title_room(self, width: float) -> float:
+        """Room in points for the title of the axis, centred on the plot."""
+        return width - self.left - self.right + 2 * min(self.left, self.right)
+
 
 def laid_rows(rows: Sequence[Row], theme: Theme, width: float, lane: float = LANE) -> LaidRows:
     """Lay rows out for a width in points: beside the plot, or above their lanes if narrow.

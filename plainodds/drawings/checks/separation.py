@@ -48,12 +48,13 @@ def _words(found: Found) -> str:
 
 
 def _counts(found: Found) -> tuple[LevelCount, ...]:
-    """The levels of responsible predictors; those to blame are never left out."""
+    """The levels of predictors with a level to blame; those to blame are never left out."""
     evidence = found.evidence(SeparationEvidence)
     blamed = set(evidence.levels)
+    names = dict.fromkeys(name for name, _ in evidence.levels)
     held = [
         LevelCount(facts.name, level, cases, events)
-        for facts in map(found.subject.predictor, evidence.predictors)
+        for facts in map(found.subject.predictor, names)
         for level, cases, events in zip(
             facts.levels, facts.level_cases, facts.level_events, strict=False
         )
@@ -69,10 +70,16 @@ def _open(found: Found) -> tuple[tuple[str, float], ...]:
     return tuple((name, float(side)) for name, side in pairs)
 
 
-def _laid_open(found: Found, theme: Theme, width: float) -> LaidRows:
-    return laid_rows(
-        [Row("", tidy(name), _side(side)) for name, side in _open(found)], theme, width
-    )
+def _laid_out(found: Found, theme: Theme, width: float) -> tuple[LaidRows | None, LaidRows]:
+    """The rows of levels, if there are any, and those of coefficients, one above the other."""
+    counts = _counts(found)
+    rows = [Row("", tidy(name), _side(side)) for name, side in _open(found)]
+    held = laid_rows(rows, theme, width)
+    if not counts:
+        return None, held
+    laid = laid_counts(counts, found.subject, theme, width)
+    left, right = max(laid.left, held.left), max(laid.right, held.right)
+    return replace(laid, left=left, right=right), replace(held, left=left, right=right)
 
 
 def _side(limit: float) -> str:
@@ -87,16 +94,19 @@ def _legend(found: Found) -> tuple[str, str]:
 
 def _heights(found: Found, theme: Theme, width: float) -> tuple[float, float, float]:
     """Of the words, the counts with their axis, and the coefficients."""
-    em, counts = theme.font_size, _counts(found)
+    em = theme.font_size
+    laid, held = _laid_out(found, theme, width)
     words = paragraph_height(_words(found), theme, width) + _GAP * em
     rows = 0.0
-    if counts:
-        laid = laid_counts(counts, found.subject, theme, width)
-        rows = head_height(_legend(found), theme, width) + laid.height
-        rows += x_axis_height(picture_axes(_LEVELS, found.subject)[0], theme, width)
-        rows += _GAP * em
-    open_rows = _laid_open(found, theme, width).height
-    return words, rows, line_height(theme.small) + 0.5 * em + open_rows + line_height(theme.small)
+    if laid is not None:
+        title, _ = picture_axes(_LEVELS, found.subject)
+        rows = head_height(_legend(found), theme, width) + laid.height + _GAP * em
+        rows += x_axis_height(title, theme, laid.title_room(width))
+    return words, rows, _open_head(theme) + held.height + line_height(theme.small)
+
+
+def _open_head(theme: Theme) -> float:
+    return line_height(theme.small) + 0.5 * theme.font_size
 
 
 def _height(found: Found, theme: Theme, width: float) -> float:
@@ -110,25 +120,20 @@ def _notes(found: Found) -> list[str]:
 
 
 def _paint(board: Board, found: Found, width: float, height: float) -> Margins:
-    theme, em = board.theme, board.theme.font_size
-    counts, held = _counts(found), _laid_open(found, theme, width)
+    theme = board.theme
+    laid, held = _laid_out(found, theme, width)
     words, rows, _ = _heights(found, theme, width)
-    open_head = line_height(theme.small) + 0.5 * em
-    if not counts:
-        top = words + open_head
+    if laid is None:
+        top, plot = words + _open_head(theme), held.height
         _draw_open(board, found, held, 0.0)
-        draw_paragraph(board, _words(found), -held.left, top, width, (0, 1))
-        return Margins(held.left, held.right, height - top - held.height, top)
-    laid = laid_counts(counts, found.subject, theme, width)
-    left, right = max(laid.left, held.left), max(laid.right, held.right)
-    laid, held = (replace(each, left=left, right=right) for each in (laid, held))
-    legend = _legend(found)
-    head = head_height(legend, theme, width)
-    title, _ = picture_axes(_LEVELS, found.subject)
-    draw_counts(board, counts, laid, legend, title, width)
-    _draw_open(board, found, held, rows - head + open_head)
-    draw_paragraph(board, _words(found), -left, words + head, width, (0, 1))
-    return Margins(left, right, height - words - head - laid.height, words + head)
+    else:
+        legend, (title, _) = _legend(found), picture_axes(_LEVELS, found.subject)
+        head = head_height(legend, theme, width)
+        top, plot = words + head, laid.height
+        draw_counts(board, _counts(found), laid, legend, title, width)
+        _draw_open(board, found, held, rows - head + _open_head(theme))
+    draw_paragraph(board, _words(found), -held.left, top, width, (0, 1))
+    return Margins(held.left, held.right, height - top - plot, top)
 
 
 def _draw_open(board: Board, found: Found, laid: LaidRows, down: float) -> None:

@@ -16,7 +16,7 @@ from plainodds.drawings.checks.along import (
     draw_y_axis,
     marked_places,
     numbers_axis,
-    title_lines,
+    plot_room,
     x_axis_height,
     y_axis_width,
 )
@@ -40,7 +40,7 @@ _STRIP = 1.6
 def _below(found: Found, theme: Theme, width: float) -> float:
     """Room beneath the plot: strip, tick labels and title."""
     title, _ = picture_axes(found.finding, found.subject)
-    return (1.25 * _STRIP + 0.1) * theme.font_size + x_axis_height(title, theme, width)
+    return (1.25 * _STRIP + 0.1) * theme.font_size + x_axis_height(title, theme, plot_room(width))
 
 
 def _above(theme: Theme) -> float:
@@ -107,8 +107,7 @@ def _paint(board: Board, found: Found, width: float, height: float) -> Margins:
         across = across.of_whole_numbers()
     along, share = picture_axes(found.finding, found.subject)
     draw_y_axis(board, up)
-    lines = title_lines(along, theme, width)
-    draw_x_axis(board, across, along, plot_width, (1.25 * _STRIP + 0.35) * em, lines)
+    draw_x_axis(board, across, along, plot_width, (1.25 * _STRIP + 0.35) * em)
     board.write(
         wrapped(share, width, theme, theme.small, 1), -left, 0.45 * em, board.at(0, 1),
         down="bottom",

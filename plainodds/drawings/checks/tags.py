@@ -20,16 +20,22 @@ _AWAY = (0.0, 1.4, 3.0, 5.0)
 _WIDEST = 12.0
 _COST = 1.2
 """What a letter's distance counts for, in marks that a name covers."""
+_FEW = 1.0
+"""So many marks may the name of one that is not wanted cover."""
 
 
 @dataclass(frozen=True)
 class Tag:
-    """A name, its mark's centre in points from the plot's lower left corner, and its radius."""
+    """A name, its mark's centre in points from the plot's lower left corner, and its radius.
+
+    One that is `wanted` may stand away from its mark; any other stands beside it or not at all.
+    """
 
     name: str
     x: float
     y: float
     radius: float
+    wanted: bool
 
 
 def draw_tags(
@@ -60,12 +66,14 @@ def draw_tags(
         words = wrapped(tag.name, _WIDEST * em, theme, theme.small, 1)
         size = (text_width(words, theme, theme.small), line_height(theme.small))
         best: tuple[float, Box, float] | None = None
-        for away in _AWAY:
+        for away in _AWAY if tag.wanted else _AWAY[:1]:
             for angle in _ANGLES:
                 box = _box(tag, size, math.radians(angle), 0.2 * em + away * em)
                 if not _inside(box, plot) or any(_meet(box, other) for other in taken):
                     continue
                 cost = _covered(box, marks) + _COST * away
+                if not tag.wanted and cost > _FEW:
+                    continue
                 if best is None or cost < best[0]:
                     best = (cost, box, away)
         if best is None:
@@ -76,6 +84,7 @@ def draw_tags(
         if away:
             near = (min(max(tag.x, box[0]), box[2]), min(max(tag.y, box[1]), box[3]))
             leaders.append([(tag.x, tag.y), near])
+            taken += [(x, y, x, y) for x, y in _between(tag, near)]
     board.strokes(
         "tag leaders", leaders, transform=board.at(0, 0), colors=theme.ink,
         linewidths=theme.hairline, zorder=2.8,
@@ -91,6 +100,14 @@ def _box(tag: Tag, size: tuple[float, float], angle: float, gap: float) -> Box:
         middle[0] - size[0] / 2, middle[1] - size[1] / 2, middle[0] + size[0] / 2,
         middle[1] + size[1] / 2,
     )  # fmt: skip
+
+
+def _between(tag: Tag, end: tuple[float, float]) -> list[tuple[float, float]]:
+    """Points along a leader, which other names are to keep off."""
+    shares = np.linspace(0.0, 1.0, 7)
+    return [
+        (tag.x + share * (end[0] - tag.x), tag.y + share * (end[1] - tag.y)) for share in shares
+    ]
 
 
 def _inside(box: Box, plot: tuple[float, float]) -> bool:

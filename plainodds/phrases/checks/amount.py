@@ -14,6 +14,7 @@ from plainodds.phrases.checks.finding_words import (
 )
 from plainodds.phrases.checks.parts import amount, cases, coefficients
 from plainodds.phrases.numbers import ratio
+from plainodds.phrases.units import tidy
 
 __all__: list[str] = []
 
@@ -26,7 +27,7 @@ def _(evidence: AmountEvidence, finding: Finding, subject: Subject, level: float
         each = "the only coefficient"
     what = (
         f"{cases(subject, evidence.events)} had the event and {amount(evidence.others)} did not, "
-        f"which makes {_each(evidence)} {rarer} for {each} beside the intercept"
+        f"which makes {_whom(evidence, subject)} {rarer} for {each} beside the intercept"
     )
     if finding.concern == "nothing found":
         return made(finding, subject, what, "Nothing needs doing about this")
@@ -34,6 +35,12 @@ def _(evidence: AmountEvidence, finding: Finding, subject: Subject, level: float
     if finding.concern == "keep in mind":
         step = "Call odds ratios rough, and do not add predictors to this model"
     return made(finding, subject, what, step)
+
+
+def _whom(evidence: AmountEvidence, subject: Subject) -> str:
+    if evidence.events_per_parameter == 1:
+        return cases(subject, 1)
+    return f"{_each(evidence)} {tidy(subject.outcome.cases)}"
 
 
 def _each(evidence: AmountEvidence) -> str:

@@ -25,7 +25,7 @@ from plainodds.phrases.labels import (
 from plainodds.phrases.numbers import chance, ratio
 from plainodds.phrases.units import tidy
 
-__all__ = ["moved_words", "pattern_words"]
+__all__ = ["moved_by_few", "moved_words", "pattern_words"]
 
 _LABELS_AT_MOST = 3
 # who raises a concern has few cases: so many, or so large a share of all
@@ -61,6 +61,15 @@ def _(
             "then do not say which way that odds ratio points"
         )
     return made(finding, subject, what, step)
+
+
+def moved_by_few(evidence: InfluenceEvidence, finding: Finding, subject: Subject) -> str:
+    """What an odds ratio is without some rows, whose labels are not told; empty where unknown."""
+    example = _example(evidence, finding, subject)
+    if example is None:
+        return ""
+    pattern, moved = example
+    return f"without {cases(subject, pattern.cases)}, {moved_words(moved, subject)}"
 
 
 def _example(

@@ -32,8 +32,8 @@ WHY_NOT_KNOWN: dict[Unknown, str] = {
     "no rows": "the result carries its rows no longer",
     "no outcome": "the result carries its outcome no longer",
     "no covariance": "the fit has no covariance matrix, and so no standard errors",
-    "no likelihood": "this can be had only of a maximum-likelihood fit to rows drawn one by one, "
-    "with finite coefficients",
+    "no likelihood": "the fit does not stand at a plain maximum of the likelihood of rows drawn one "
+    "by one",
     "no groups named": "nobody has said which rows belong together",
     "not said by the fit": "the result does not say",
     "rows chosen by outcome": "the rows were chosen by their outcome",

@@ -10,27 +10,34 @@ from plainodds.answers.checks.collinearity import CollinearityEvidence
 from plainodds.answers.checks.convergence import ConvergenceEvidence
 from plainodds.answers.checks.dependence import DependenceEvidence
 from plainodds.answers.checks.finding import Finding
+from plainodds.answers.checks.influence import InfluenceEvidence
 from plainodds.answers.checks.overall import OverallEvidence
+from plainodds.answers.checks.separation import SeparationEvidence
 from plainodds.answers.checks.shape import ShapeEvidence
 from plainodds.answers.checks.standard_errors import StandardErrorsEvidence
 from plainodds.model.predictors import Subject
 from plainodds.phrases.checks.bending import apart
 from plainodds.phrases.checks.finding_words import finding_words
+from plainodds.phrases.checks.influence import moved_by_few
 from plainodds.phrases.checks.parts import amount, cases, named
+from plainodds.phrases.checks.separation import told_without_exception
 from plainodds.phrases.labels import predictor_name
 from plainodds.phrases.parts import sentence
 from plainodds.phrases.units import tidy
 
 __all__ = ["plain_sentences"]
 
+_WITH_WHY = ("separation", "shape", "influence")
+
 
 def plain_sentences(finding: Finding, subject: Subject, level: float) -> tuple[str, ...]:
     """What a finding means for whoever hears the explanation, in at most two sentences."""
     other_words = _in_other_words(finding.evidence, finding, subject) if finding.reasons else ""
-    if other_words:
-        return (sentence(other_words),)
     said = finding_words(finding, subject, level)
-    return said.what, said.why
+    if not other_words:
+        return said.what, said.why
+    told = sentence(other_words)
+    return (told, said.why) if finding.topic in _WITH_WHY else (told,)
 
 
 @singledispatch
@@ -105,3 +112,15 @@ def _(evidence: ShapeEvidence, finding: Finding, subject: Subject) -> str:
 @_in_other_words.register
 def _(evidence: OverallEvidence, finding: Finding, subject: Subject) -> str:
     return "the model's chances bend in another way than what happened does, by enough to matter"
+
+
+@_in_other_words.register
+def _(evidence: SeparationEvidence, finding: Finding, subject: Subject) -> str:
+    return told_without_exception(evidence, subject)
+
+
+@_in_other_words.register
+def _(evidence: InfluenceEvidence, finding: Finding, subject: Subject) -> str:
+    # labels of rows may be people's: they are for the analyst
+    told = moved_by_few(evidence, finding, subject)
+    return f"much hangs on a few rows{f': {told}' if told else ''}"

@@ -17,7 +17,7 @@ from plainodds.phrases.checks.finding_words import (
 from plainodds.phrases.checks.parts import amount, coefficients, level_name, named, rows, short_list
 from plainodds.phrases.units import tidy
 
-__all__: list[str] = []
+__all__ = ["told_without_exception"]
 
 
 @evidence_words.register
@@ -35,9 +35,8 @@ def _(
     have = "would have" if restrained else "have" if len(evidence.unbounded) > 1 else "has"
     otherwise = " without the penalty or constraints" if restrained else ""
     what = (
-        f"{_who(evidence, subject)} the outcome of {_whose(evidence)} without exception"
-        f"{_levels(evidence, subject)}; {coefficients(len(evidence.unbounded))} {have} no finite "
-        f"estimate{otherwise}"
+        f"{told_without_exception(evidence, subject)}; {coefficients(len(evidence.unbounded))} "
+        f"{have} no finite estimate{otherwise}"
     )
     if restrained:
         return made(
@@ -53,6 +52,14 @@ def _(
         "levels, gather more data or fit with a penalty"
     )
     return made(finding, subject, what, step)
+
+
+def told_without_exception(evidence: SeparationEvidence, subject: Subject) -> str:
+    """Who tells the outcome of how many rows, and which levels have one outcome only."""
+    return (
+        f"{_who(evidence, subject)} the outcome of {_whose(evidence)} without exception"
+        f"{_levels(evidence, subject)}"
+    )
 
 
 def _who(evidence: SeparationEvidence, subject: Subject) -> str:

@@ -20,6 +20,7 @@ from plainodds.answers.checks import (
     standard_errors,
 )
 from plainodds.answers.checks.finding import CONCERNS, TOPICS, Finding
+from plainodds.answers.estimate import Estimate
 from plainodds.phrases.checks import finding_figures, finding_words
 from plainodds.phrases.checks.finding_words import WHY, evidence_figures, evidence_words
 from plainodds.phrases.checks.headings import (
@@ -34,6 +35,8 @@ from plainodds.phrases.checks.pictures import picture_words
 from plainodds.phrases.checks.plainly import plain_sentences
 from tests.phrases.made import level_facts, number_facts, subject
 from tests.phrases.made_findings import MADE, UNKNOWN, everything, finding, numbers_of
+from tests.phrases.made_findings import convergence as convergence_evidence
+from tests.phrases.made_findings import discrimination as discrimination_evidence
 from tests.phrases.made_findings import influence as influence_evidence
 from tests.phrases.made_findings import missing as missing_evidence
 from tests.phrases.made_findings import pattern as made_pattern
@@ -263,11 +266,21 @@ def test_a_penalised_fit_owes_its_finite_estimates_to_the_penalty():
 
 def test_the_plain_words_keep_columns_and_tests_to_the_analysts():
     for found in MADE:
-        if found.reasons and found.topic not in ("influence", "dependence"):
+        if found.reasons and found.topic != "dependence":
             told = " ".join(plain_sentences(found, subject(), LEVEL))
             assert "“" not in told
             assert "p-value" not in told
             assert "standard error" not in told
+            assert "coefficient" not in told
+
+
+def test_the_plain_words_name_no_row():
+    found = next(f for f in MADE if f.topic == "influence" and f.about == ("material",))
+    told = plain_sentences(found, subject(), LEVEL)[0]
+    assert told == (
+        "Much hangs on a few rows: without 1 pipe, the odds ratio for material PVC against cast "
+        "iron, given lined yes, is about 1.12 rather than 2.31."
+    )
 
 
 def test_the_plain_words_of_nothing_found_claim_nothing():
@@ -275,6 +288,73 @@ def test_the_plain_words_of_nothing_found_claim_nothing():
         if not found.reasons:
             said = finding_words(found, subject(), LEVEL)
             assert plain_sentences(found, subject(), LEVEL) == (said.what, said.why)
+
+
+# ------------------------------------------------------------------ over a grid of figures
+
+GAPS = (0.0, 0.00004, 0.0004, 0.012, 0.0299, 0.0301, 0.07, 0.3, 0.98)
+P_VALUES = (math.nan, 1e-30, 0.0004, 0.0099, 0.05, 0.7, 0.999)
+
+
+def held_to(found):
+    """Figures and grammar of all that is said of a finding."""
+    known = known_numbers(found)
+    for sentence in sentences_of(found):
+        assert faults(sentence) == [], sentence
+        assert unaccounted(tidied(sentence), known) == [], sentence
+    for _, text in finding_figures(found, subject(), LEVEL):
+        assert unaccounted(tidied(text), [*known, 100.0]) == [], text
+
+
+@pytest.mark.parametrize("concern", ["nothing found", "keep in mind", "don't explain yet"])
+@pytest.mark.parametrize("p", P_VALUES)
+@pytest.mark.parametrize("gap", GAPS)
+def test_shapes_of_every_size(gap, p, concern):
+    reasons = () if concern == "nothing found" else ("bends",)
+    evidence = shape_evidence(gap, p, 3.2, 0 if math.isnan(p) else 2)
+    found = finding("shape", concern, evidence, reasons, ("age_years",))
+    held_to(found)
+    said = finding_words(found, subject(), LEVEL).what
+    assert says(said, gap, 100) or "under 0.001 percentage points" in said
+
+
+@pytest.mark.parametrize("step", [0.0, 1e-9, 0.00099, 0.0011, 0.0099, 0.19, 1.0, 37.2, 5e7])
+@pytest.mark.parametrize("converged", [True, False, None])
+@pytest.mark.parametrize("iterations", [None, 0, 1, 12_345])
+def test_fits_that_ended_anywhere(step, converged, iterations):
+    reasons = (("not converged",) if converged is False else ()) + (
+        ("gradient",) if step > 0.01 else ()
+    )
+    evidence = convergence_evidence(converged, iterations, step)
+    concern = "don't explain yet" if step > 0.2 else "keep in mind" if reasons else "nothing found"
+    held_to(finding("convergence", concern, evidence, reasons))
+
+
+@pytest.mark.parametrize("dropped", [1, 2, 12, 12_345])
+@pytest.mark.parametrize("difference", [-0.9, -0.03, -0.00002, 0.0, 0.0004, 0.031, 0.6])
+def test_rows_left_out_in_any_number(dropped, difference):
+    estimate = Estimate(difference, 0.01, difference - 0.02, difference + 0.02)
+    for known in {1, dropped}:
+        held_to(finding("missing", "nothing found", missing_evidence(dropped, known, estimate)))
+
+
+@pytest.mark.parametrize("c", [0.5, 0.5004, 0.61, 0.9004, 0.9996])
+def test_ranks_of_every_quality(c):
+    evidence = discrimination_evidence(c, c - 0.01, min(c + 0.01, 0.9999))
+    held_to(finding("discrimination", "nothing found", evidence))
+    assert (
+        "100%"
+        not in finding_words(
+            finding("discrimination", "nothing found", evidence), subject(), LEVEL
+        ).what
+    )
+
+
+@pytest.mark.parametrize("events", [0.0, 1.0, 3.5, 12.0, 123_456.0])
+@pytest.mark.parametrize("parameters", [1, 2, 30])
+def test_any_amount_of_data(events, parameters):
+    evidence = amount.AmountEvidence(events, 5000.0, parameters, min(events, 5000) / parameters)
+    held_to(finding("amount", "keep in mind", evidence, ("few events",)))
 
 
 HOSTILE = "  <img src=x onerror=alert(1)>\n & “quoted” $x^2$ %s {0} "
