@@ -6,7 +6,7 @@ from plainodds.answers.joined import JoinedTest
 from plainodds.answers.odds_interactions import InteractionTest
 from plainodds.model.predictors import Subject
 from plainodds.phrases.labels import listed, predictor_name
-from plainodds.phrases.numbers import p_value, signed
+from plainodds.phrases.numbers import count, p_value, signed
 from plainodds.phrases.units import tidy
 
 __all__ = ["interaction_line", "joined_test", "statistic_words", "test_name"]
@@ -45,7 +45,7 @@ def interaction_line(subject: Subject, predictor: str, found: InteractionTest) -
 
 
 def _freedom(test: JoinedTest) -> str:
-    freedom = f"{test.degrees_of_freedom:,}"
+    freedom = count(test.degrees_of_freedom)
     if test.denominator is None:
         return f"on {freedom} degree{'' if test.degrees_of_freedom == 1 else 's'} of freedom"
     below = signed(test.denominator, decimals=0).removeprefix("+")

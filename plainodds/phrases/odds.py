@@ -5,6 +5,7 @@ from __future__ import annotations
 import math
 
 from plainodds.answers.odds import OddsAnswer, OddsRow
+from plainodds.answers.odds_interactions import InteractionTest
 from plainodds.model.predictors import PredictorFacts
 from plainodds.phrases.alternative import alternative
 from plainodds.phrases.choices.odds import (
@@ -17,6 +18,7 @@ from plainodds.phrases.choices.odds import (
     typical_chance,
 )
 from plainodds.phrases.concerns import sparse_cautions, unseen_cautions
+from plainodds.phrases.joined_tests import joined_test
 from plainodds.phrases.labels import (
     change_label,
     from_to,
@@ -193,6 +195,7 @@ def _extremes(answer: OddsAnswer) -> tuple[str, ...]:
 def _technical(answer: OddsAnswer) -> Words:
     subject = answer.subject
     told = [sentence(_technical_row(answer, row)) for row in answer.rows]
+    told += [sentence(_technical_test(answer, found)) for found in answer.interactions]
     method = (
         "Odds ratios are exponents of the change in the linear predictor, "
         f"from {rows_words(subject)}"
@@ -213,6 +216,12 @@ def _technical_row(answer: OddsAnswer, row: OddsRow) -> str:
         f"{signed_with_interval(row.log_odds_ratio, level)}{standard_error(row.log_odds_ratio)}"
     )
     return text if row.p_value is None else f"{text}, p-value {p_value(row.p_value)}"
+
+
+def _technical_test(answer: OddsAnswer, found: InteractionTest) -> str:
+    model = f"Model “{tidy(found.model)}”: " if found.model else ""
+    names = found.predictor, found.modifier
+    return f"{model}{joined_test(answer.subject, names, found.test)}"
 
 
 @alternative.register

@@ -19,6 +19,7 @@ from plainodds.phrases.labels import (
     sentence_case,
     step_label,
     value_label,
+    values_range,
 )
 from plainodds.phrases.moves import moves_label, moves_words
 from plainodds.phrases.numbers import chance, count, quantity
@@ -36,6 +37,7 @@ __all__ = [
     "interaction_label",
     "is_averaged",
     "left_out",
+    "levels_left_out",
     "odds_opening",
     "pair_noun",
     "pair_title",
@@ -65,6 +67,14 @@ def is_averaged(answer: PairAnswer) -> bool:
 
 def left_out(answer: PairAnswer) -> list[str]:
     """How many levels of a category with very many are told; empty where all are."""
+    return [
+        f"Of {count(known)} values of {predictor_name(facts)}, those compared and the most frequent."
+        for facts, known in levels_left_out(answer)
+    ]
+
+
+def levels_left_out(answer: PairAnswer) -> list[tuple[PredictorFacts, int]]:
+    """Categories of which not all levels are told, and how many have rows."""
     subject, question = answer.subject, answer.question
     told: dict[str, int] = {}
     if answer.lines is not None:
@@ -73,16 +83,12 @@ def left_out(answer: PairAnswer) -> list[str]:
         if asked.by is not None:
             told[asked.by] = len(answer.lines.lines)
     told[question.b] = min(len(answer.effect.at), told.get(question.b, len(answer.effect.at)))
-    notes = []
-    for name, number in told.items():
-        facts = subject.predictor(name)
-        known = len(facts.levels_with_rows)
-        if not facts.is_number and number < known:
-            notes.append(
-                f"Of {count(known)} values of {predictor_name(facts)}, those compared and the most "
-                "frequent."
-            )
-    return notes
+    known = [(subject.predictor(name), number) for name, number in told.items()]
+    return [
+        (facts, len(facts.levels_with_rows))
+        for facts, number in known
+        if not facts.is_number and number < len(facts.levels_with_rows)
+    ]
 
 
 def pair_noun(answer: PairAnswer) -> str:
@@ -202,7 +208,7 @@ def stretch_span(answer: PairAnswer, stretch: Stretch) -> str:
     low, high = _placed(facts, stretch.start), _placed(facts, stretch.end)
     if value_label(facts, low) == value_label(facts, high):
         return value_label(facts, low)
-    return from_to(facts, low, high).removeprefix("from ")
+    return values_range(facts, low, high)
 
 
 def place_label(facts: PredictorFacts, place: Scalar) -> str:

@@ -2,11 +2,11 @@
 
 from __future__ import annotations
 
-from plainodds.answers.joined import JoinedTest
 from plainodds.answers.pair import PairAnswer
 from plainodds.phrases.averaged import drawn_method
-from plainodds.phrases.labels import listed, predictor_name, sentence_case
-from plainodds.phrases.numbers import confidence, count, p_value, percentage_points, signed
+from plainodds.phrases.joined_tests import joined_test
+from plainodds.phrases.labels import listed, sentence_case
+from plainodds.phrases.numbers import confidence, p_value, percentage_points
 from plainodds.phrases.pair_corners import corners
 from plainodds.phrases.pair_labels import at_value, pair_noun, per_additional
 from plainodds.phrases.parts import (
@@ -86,21 +86,7 @@ def test_technical(answer: PairAnswer) -> list[str]:
     test, question = answer.interaction.test, answer.question
     if test is None:
         return []
-    names = [predictor_name(answer.subject.predictor(each)) for each in (question.a, question.b)]
-    kind = {"wald": "Wald test", "likelihood_ratio": "Likelihood-ratio test"}[test.kind]
-    return [f"{kind} that no term joins {listed(names)}: {_statistic(test)}"]
-
-
-def _statistic(test: JoinedTest) -> str:
-    written = signed(test.statistic).removeprefix("+")
-    freedom = count(test.degrees_of_freedom)
-    one = test.degrees_of_freedom == 1
-    if test.denominator is None:
-        on = f"χ² = {written} on {freedom} degree{'' if one else 's'} of freedom"
-    else:
-        below = signed(test.denominator, decimals=0).removeprefix("+")
-        on = f"F = {written} on {freedom} and {below} degrees of freedom"
-    return f"{on}, p-value {p_value(test.p_value)}"
+    return [joined_test(answer.subject, (question.a, question.b), test)]
 
 
 def pair_method(answer: PairAnswer) -> str:

@@ -34,13 +34,14 @@ from plainodds.views.several import TicksControl, values_control
 __all__ = ["OddsView"]
 
 _ORDERS = (("as in the model", "model"), ("largest first", "size"))
+_LAYOUTS = (("a row for each change", "changes"), ("as journals print it", "table"))
 _SAID_AT_ONCE = 8
 
 
 class OddsView(PatientView):
     """By what are the odds multiplied when a predictor changes?
 
-    Choose which predictors are shown, in which order and with which intervals; and for
+    Choose which predictors are shown, in which order, layout and with which intervals; and for
     one predictor at a time its step, its reference level or the two values compared, and
     the values of the predictors that it depends on.
 
@@ -97,6 +98,12 @@ class OddsView(PatientView):
             lambda question: question.order,
             lambda question, order: replace(question, order=order),
         )
+        layout = self._bind(
+            "layout",
+            ChoiceControl("Picture", _LAYOUTS, "changes"),
+            lambda question: question.layout,
+            lambda question, layout: replace(question, layout=layout),
+        )
         self._settings = block(name="set")
         self._unshown = html("unshown")
         self._unshown.value = markup.note("Not among the predictors shown.")
@@ -105,6 +112,7 @@ class OddsView(PatientView):
             self._settings,
             shown.widget,
             order.widget,
+            layout.widget,
             self._level_control().widget,
             *interval_controls(self.fit.model, self._bind),
         ]

@@ -117,6 +117,11 @@ def _(answer: OddsAnswer) -> MethodsNote:
             else "",
             intervals_made(subject, question.level, made),
             "" if subject.no_interval else f"{tests}-Tests",
+            ""
+            if not answer.interactions
+            else "Wechselwirkungen wurden mit "
+            f"{'Likelihood-Quotienten' if likelihood else 'Wald'}-Tests aller Terme geprüft, die "
+            "zwei Merkmale teilen",
         ),
     )
 

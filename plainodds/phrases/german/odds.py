@@ -5,6 +5,7 @@ from __future__ import annotations
 import math
 
 from plainodds.answers.odds import OddsAnswer, OddsRow
+from plainodds.answers.odds_interactions import InteractionTest
 from plainodds.model.predictors import PredictorFacts
 from plainodds.phrases.choices.odds import (
     curved_names,
@@ -43,7 +44,15 @@ from plainodds.phrases.labels import (
 )
 from plainodds.phrases.lexicon import lexicon
 from plainodds.phrases.moves import end_rather_than_start
-from plainodds.phrases.numbers import chance, denominator, frequency, p_value, quantity
+from plainodds.phrases.numbers import (
+    chance,
+    count,
+    denominator,
+    frequency,
+    p_value,
+    quantity,
+    signed,
+)
 from plainodds.phrases.parts import (
     RARE,
     rather,
@@ -187,6 +196,7 @@ def _extremes(answer: OddsAnswer) -> tuple[str, ...]:
 def _technical(answer: OddsAnswer) -> Words:
     subject = answer.subject
     told = [sentence(_technical_row(answer, row)) for row in answer.rows]
+    told += [sentence(_technical_test(answer, found)) for found in answer.interactions]
     method = (
         "Odds Ratios sind Exponenten der Änderung des linearen Prädiktors, aus "
         f"{rows_words(subject)}"
@@ -207,6 +217,23 @@ def _technical_row(answer: OddsAnswer, row: OddsRow) -> str:
         f"{standard_error(row.log_odds_ratio)}"
     )
     return text if row.p_value is None else f"{text}, p-Wert {p_value(row.p_value)}"
+
+
+def _technical_test(answer: OddsAnswer, found: InteractionTest) -> str:
+    test, subject = found.test, answer.subject
+    model = f"Modell „{tidy(found.model)}“: " if found.model else ""
+    kind = {"wald": "Wald-Test", "likelihood_ratio": "Likelihood-Quotienten-Test"}[test.kind]
+    names = [predictor_name(subject.predictor(each)) for each in (found.predictor, found.modifier)]
+    letter, freedom = "χ²", count(test.degrees_of_freedom)
+    degrees = "Freiheitsgrad" if test.degrees_of_freedom == 1 else "Freiheitsgraden"
+    if test.denominator is not None:
+        letter, degrees = "F", "Freiheitsgraden"
+        freedom = f"{freedom} und {count(round(test.denominator))}"
+    return (
+        f"{model}{kind}, ob kein Term {listed(names)} verbindet: {letter} = "
+        f"{signed(test.statistic).removeprefix('+')} bei {freedom} {degrees}, "
+        f"p-Wert {p_value(test.p_value)}"
+    )
 
 
 @GERMAN.alternative.register

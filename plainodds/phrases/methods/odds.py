@@ -34,5 +34,9 @@ def _(answer: OddsAnswer) -> MethodsNote:
             if subject.no_interval
             else f"Tests are {'likelihood-ratio' if likelihood else 'Wald'} tests of an odds "
             "ratio of 1",
+            ""
+            if not answer.interactions
+            else f"Interactions were tested by {'likelihood-ratio' if likelihood else 'Wald'} "
+            "tests of all terms that two predictors share",
         ),
     )

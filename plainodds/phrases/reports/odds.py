@@ -1,48 +1,76 @@
-"""Report tables of odds ratios: predictors as headings, reference levels shown."""
+"""Report tables of odds ratios: predictors as headings, references, counts and tests shown."""
 
 from __future__ import annotations
 
-from collections.abc import Iterator
-from itertools import groupby
+import math
+from collections.abc import Iterator, Sequence
+from dataclasses import dataclass
 
-from plainodds.answers.odds import OddsAnswer, OddsRow
-from plainodds.model.predictors import PredictorFacts
+from plainodds.answers.odds import OddsAnswer
 from plainodds.phrases.captions.parts import fitted_words, joined
-from plainodds.phrases.labels import (
-    change_label,
-    given_label,
-    listed,
-    odds_of_event,
-    predictor_label,
-    predictor_name,
-    value_label,
-)
-from plainodds.phrases.numbers import NOT_KNOWN
+from plainodds.phrases.labels import listed, odds_of_event, predictor_name, sentence_case
+from plainodds.phrases.numbers import NOT_KNOWN, count, guarded_count
+from plainodds.phrases.odds_lines import Counts, OddsLine, odds_lines
 from plainodds.phrases.parts import model_cautions
 from plainodds.phrases.reports.cells import interval_title, p_cell, ratio_cell
 from plainodds.phrases.reports.report import ReportTable, report_of
 from plainodds.phrases.reports.rows import ReportRow, entry, heading, reference
 from plainodds.phrases.units import tidy
-from plainodds.values import Pairs
 
 __all__: list[str] = []
+
+_WITHHELD = "\u2013"
 
 
 @report_of.register
 def _(answer: OddsAnswer) -> ReportTable:
-    subject, level = answer.subject, answer.question.level
+    subject, lines = answer.subject, odds_lines(answer)
     models = answer.question.models or ("",)
-    one = interval_title(subject, "Odds ratio", level)
+    one = interval_title(subject, "Odds ratio", answer.question.level)
     names = [tidy(name) for name in models if name]
     columns = [f"{name}: {one}" for name in names] or [one]
-    if not names and not subject.no_interval:
+    tested = not names and not subject.no_interval
+    if tested:
         columns.append("p-value")
+    shape = _Shape(models, tested, *_counted(lines), subject.smallest_cell)
+    counts = ["Events"] * shape.events + [sentence_case(subject.outcome.cases)] * shape.cases
+    told = joined(_kind(answer), *_given(answer), *_whose(answer, shape), fitted_words(subject))
     return ReportTable(
         odds_of_event(subject.outcome),
-        ("Predictor", *columns),
-        tuple(_rows(answer, models)),
-        (joined(_kind(answer), *_given(answer), fitted_words(subject)), *model_cautions(subject)),
+        ("Predictor", *counts, *columns),
+        tuple(row for line in lines for row in _rows(line, shape)),
+        (told, *model_cautions(subject)),
     )
+
+
+@dataclass(frozen=True)
+class _Shape:
+    """Which columns there are, beside those of the odds ratios."""
+
+    models: tuple[str, ...]
+    tested: bool
+    events: bool
+    cases: bool
+    smallest: int
+
+
+def _counted(lines: Sequence[OddsLine]) -> tuple[bool, bool]:
+    """Whether events are known of any line, and whether cases are."""
+    counts = [line.counts for line in lines if line.counts is not None]
+    return any(each.events is not None for each in counts), bool(counts)
+
+
+def _whose(answer: OddsAnswer, shape: _Shape) -> list[str]:
+    """What a dash among the events means, and whose counts these are."""
+    told = []
+    events = [line.counts.events for line in odds_lines(answer) if line.counts is not None]
+    if any(each is not None and math.isnan(each) for each in events):
+        few = count(shape.smallest)
+        told.append(f"{_WITHHELD} among the events: fewer than {few} with or without them")
+    if shape.cases and answer.question.models:
+        first = tidy(answer.question.models[0])
+        told.append(f"Counts are of the model “{first}”, or of the first that has the predictor")
+    return told
 
 
 def _kind(answer: OddsAnswer) -> str:
@@ -63,43 +91,45 @@ def _given(answer: OddsAnswer) -> list[str]:
     return list(told.values())
 
 
-def _rows(answer: OddsAnswer, models: tuple[str, ...]) -> Iterator[ReportRow]:
-    for name, group in groupby(answer.rows, lambda row: row.predictor):
-        facts = answer.subject.predictor(name)
-        changes: dict[Pairs, dict[tuple[object, ...], dict[str, OddsRow]]] = {}
-        for row in group:
-            of_given = changes.setdefault(row.given, {})
-            of_given.setdefault((row.start, row.end), {})[row.model] = row
-        yield heading(predictor_label(facts))
-        for given, told in changes.items():
-            yield from _of_one(answer, facts, given, list(told.values()), models)
-
-
-def _of_one(
-    answer: OddsAnswer,
-    facts: PredictorFacts,
-    given: Pairs,
-    changes: list[dict[str, OddsRow]],
-    models: tuple[str, ...],
-) -> Iterator[ReportRow]:
-    """The changes of one predictor at one combination of its modifiers."""
-    at = f"; {given_label(answer.subject, given)}" if given else ""
-    starts = {_any(held).start for held in changes}
-    show_reference = not facts.is_number and len(starts) == 1
-    if show_reference:
-        start = value_label(facts, next(iter(starts)))
-        blank = [""] if models == ("",) and not answer.subject.no_interval else []
-        yield reference(f"{start}{at}", *["1 (reference)"] * len(models), *blank)
-    for held in changes:
-        row = _any(held)
-        label = value_label(facts, row.end) if show_reference else change_label(facts, row)
+def _rows(line: OddsLine, shape: _Shape) -> Iterator[ReportRow]:
+    """A line of the printed table as rows of the report."""
+    counts = _counts(line.counts, shape)
+    last = [""] * shape.tested
+    if line.kind == "heading":
+        yield heading(", ".join(filter(None, (line.name, line.rest))))
+    elif line.kind == "level":
+        yield entry(line.name, *counts, *[""] * len(shape.models), *last, within=True)
+    elif line.kind == "reference":
+        ones = ["1 (reference)" if name in line.models else NOT_KNOWN for name in shape.models]
+        yield reference(line.name, *counts, *ones, *last)
+    elif line.kind == "test":
+        assert line.test is not None
+        told = p_cell(line.test.test.p_value)
+        cells = [f"p-value {told}" if name == line.test.model else "" for name in shape.models]
+        figures = ["", told] if shape.tested else cells
+        yield entry(line.name, *counts, *figures, within=True)
+    else:
+        if not line.depth:
+            yield heading(line.name)
+        label = line.name if line.depth else line.rest
+        label = "; ".join(filter(None, (line.level, label)))
+        by_model = {row.model: row for row in line.rows}
         cells = [
-            ratio_cell(held[model].odds_ratio) if model in held else NOT_KNOWN for model in models
+            ratio_cell(by_model[name].odds_ratio) if name in by_model else NOT_KNOWN
+            for name in shape.models
         ]
-        if models == ("",) and not answer.subject.no_interval:
-            cells.append(p_cell(row.p_value))
-        yield entry(f"{label}{at}", *cells, within=True)
+        if shape.tested:
+            cells.append(p_cell(line.rows[0].p_value))
+        yield entry(label, *counts, *cells, within=True)
 
 
-def _any(held: dict[str, OddsRow]) -> OddsRow:
-    return next(iter(held.values()))
+def _counts(counts: Counts | None, shape: _Shape) -> list[str]:
+    """Events and cases, as far as the table has columns for them."""
+    if counts is None:
+        return [""] * (shape.events + shape.cases)
+    cells = []
+    if shape.events:
+        events = counts.events
+        known = events is not None and not math.isnan(events)
+        cells.append(count(round(events or 0.0)) if known else _WITHHELD)
+    return [*cells, guarded_count(round(counts.cases), shape.smallest)]
