@@ -7,6 +7,7 @@ from typing import Any, Literal
 
 import pandas as pd
 
+from plainodds.answers.arguments import listed_values, odds_question
 from plainodds.answers.change import ChangeAnswer, ChangeQuestion, answer_change
 from plainodds.answers.checks.finding import Topic
 from plainodds.answers.curve import CurveAnswer, CurveQuestion, Others, Scale, answer_curve
@@ -23,7 +24,7 @@ from plainodds.errors import FitRefused, QuestionRefused
 from plainodds.model.fitted import FittedModel
 from plainodds.model.intake import take_in
 from plainodds.model.predictors import Outcome, Predictor, Sampling, Subject
-from plainodds.values import Scalar, pairs, plain
+from plainodds.values import Scalar, pairs
 
 __all__ = ["FittedLogit", "odds_of"]
 
@@ -233,7 +234,7 @@ class FittedLogit:
         >>> row.odds_ratio.lower < row.odds_ratio.estimate < row.odds_ratio.upper
         True
         """
-        question = _odds_question(
+        question = odds_question(
             predictors, steps, between, references, given, order, interval, level, layout
         )
         return answer_odds(self.model, question)
@@ -291,7 +292,9 @@ class FittedLogit:
         ['cast iron', 'ductile iron', 'PVC']
         """
         held: Others = others if isinstance(others, str) else pairs(others)
-        question = CurveQuestion(predictor, by, _tuple(by_values), held, scale, _tuple(at), level)
+        question = CurveQuestion(
+            predictor, by, listed_values(by_values), held, scale, listed_values(at), level
+        )
         return answer_curve(self.model, question)
 
     def effects(
@@ -490,8 +493,8 @@ class FittedLogit:
         question = PairQuestion(
             a,
             b,
-            a_values=_tuple(a_values),
-            b_values=_tuple(b_values),
+            a_values=listed_values(a_values),
+            b_values=listed_values(b_values),
             number=number,
             others=others if isinstance(others, str) else pairs(others),
             scale=scale,
@@ -656,45 +659,7 @@ def odds_of(
         str(name): result if isinstance(result, FittedLogit) else FittedLogit(result)
         for name, result in results.items()
     }
-    question = _odds_question(
+    question = odds_question(
         predictors, steps, between, references, given, order, interval, level, layout
     )
     return answer_odds_of({name: fit.model for name, fit in fits.items()}, question)
-
-
-def _odds_question(
-    predictors: str | Iterable[str],
-    steps: Mapping[str, float] | None,
-    between: Mapping[str, Sequence[Scalar]] | None,
-    references: Mapping[str, Scalar] | None,
-    given: Mapping[str, Any] | None,
-    order: Literal["model", "size"],
-    interval: Literal["wald", "likelihood"],
-    level: float,
-    layout: Literal["changes", "table"],
-) -> OddsQuestion:
-    if order not in ("model", "size"):
-        raise QuestionRefused(f"order={order!r}: choose 'model' or 'size'.")
-    if layout not in ("changes", "table"):
-        raise QuestionRefused(f"layout={layout!r}: choose 'changes' or 'table'.")
-    listed = {
-        name: (held,) if isinstance(held, str | bytes) or not hasattr(held, "__iter__") else held
-        for name, held in (given or {}).items()
-    }
-    return OddsQuestion(
-        predictors=(predictors,) if isinstance(predictors, str) else tuple(predictors),
-        steps=pairs(steps),
-        between=pairs(between),
-        references=pairs(references),
-        given=pairs({name: tuple(held) for name, held in listed.items()}),
-        order=order,
-        interval=interval,
-        level=level,
-        layout=layout,
-    )
-
-
-def _tuple(values: Sequence[Scalar]) -> tuple[Scalar, ...]:
-    if isinstance(values, str):
-        raise QuestionRefused(f"{values!r} is one text; give a list of values.")
-    return tuple(plain(each) for each in values)

@@ -23,7 +23,6 @@ from plainodds.model.predictors import (
     Predictor,
     PredictorFacts,
     Sampling,
-    Setting,
     Subject,
 )
 from plainodds.model.quantiles import weighted_quantiles
@@ -108,18 +107,7 @@ def take_in(
             *_empty_levels(known),
             *_suggestions(raw, declared),
         ),
-        setting=Setting(
-            predictors=tuple(stated.predictors.items()),
-            outcome=stated.outcome,
-            derived=tuple(stated.derived.items()),
-            functions=tuple(stated.functions),
-            offset=stated.offset,
-            with_data=data is not None,
-            sampling=sampling,
-            prevalence=stated.prevalence,
-            causal=stated.causal,
-            reason=stated.reason,
-        ),
+        setting=stated.setting(with_data=data is not None, sampling=sampling),
         sampling=stated.sampling,
         prevalence=stated.prevalence,
     )

@@ -8,7 +8,7 @@ from dataclasses import dataclass
 from typing import Any, get_args
 
 from plainodds.errors import FitRefused
-from plainodds.model.predictors import Kind, Outcome, Predictor, Sampling
+from plainodds.model.predictors import Kind, Outcome, Predictor, Sampling, Setting
 
 __all__ = ["Statements", "read_statements"]
 
@@ -26,6 +26,21 @@ class Statements:
     prevalence: float | None
     causal: bool
     reason: str
+
+    def setting(self, *, with_data: bool, sampling: Sampling | None) -> Setting:
+        """What was stated, as every answer carries it so that code can state it again."""
+        return Setting(
+            predictors=tuple(self.predictors.items()),
+            outcome=self.outcome,
+            derived=tuple(self.derived.items()),
+            functions=tuple(self.functions),
+            offset=self.offset,
+            with_data=with_data,
+            sampling=sampling,
+            prevalence=self.prevalence,
+            causal=self.causal,
+            reason=self.reason,
+        )
 
 
 def read_statements(
