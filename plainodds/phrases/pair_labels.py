@@ -68,7 +68,8 @@ def is_averaged(answer: PairAnswer) -> bool:
 def left_out(answer: PairAnswer) -> list[str]:
     """How many levels of a category with very many are told; empty where all are."""
     return [
-        f"Of {count(known)} values of {predictor_name(facts)}, those compared and the most frequent."
+        f"Of {count(known)} values of {predictor_name(facts)}, those compared and the most "
+        "frequent."
         for facts, known in levels_left_out(answer)
     ]
 

@@ -8,6 +8,7 @@ from plainodds.phrases.german import (  # noqa: F401
     effects,
     methods,
     odds,
+    pair,
     profile,
 )
 from plainodds.phrases.german.language import GERMAN

@@ -6,14 +6,17 @@ from plainodds.answers.change import ChangeAnswer
 from plainodds.answers.curve import CurveAnswer
 from plainodds.answers.effects import EffectsAnswer
 from plainodds.answers.odds import OddsAnswer
+from plainodds.answers.pair import PairAnswer
 from plainodds.answers.profile import ProfileAnswer
 from plainodds.phrases.german.curve import averaged_in_curve, curve_title
 from plainodds.phrases.german.effects import effects_title
 from plainodds.phrases.german.language import GERMAN
+from plainodds.phrases.german.pair_labels import followed, left_out, title
 from plainodds.phrases.german.parts import EVERYTHING, cases, chance, event, whom
 from plainodds.phrases.german.texts import fitted, intervals_shown, joined, rest
 from plainodds.phrases.labels import listed, predictor_name
 from plainodds.phrases.moves import moves_words, settled_moves
+from plainodds.phrases.pair_labels import has_others
 from plainodds.phrases.units import tidy
 from plainodds.values import Pairs
 
@@ -153,3 +156,45 @@ def _(answer: ProfileAnswer) -> str:
 def _stated(answer: ProfileAnswer, values: Pairs, article: str = "einen") -> str:
     whole = len(values) == len(answer.subject.predictors)
     return whom(answer.subject, values, whole=whole, article=article, at_most=EVERYTHING)
+
+
+@GERMAN.caption.register
+def _(answer: PairAnswer) -> str:
+    question, subject = answer.question, answer.subject
+    a, b = (predictor_name(subject.predictor(name)) for name in (question.a, question.b))
+    held = ""
+    if has_others(answer):
+        averaged = "die Wahrscheinlichkeiten"
+        held = rest(subject, question.others, answer.held, averaged, answer.counted)
+    intervals = intervals_shown(
+        subject, question.level, "Linien und Punkte sind Schätzungen, Bänder und Balken"
+    )
+    if answer.lines is None and answer.surface is None:
+        shown = (f"Das Odds Ratio von {a} entlang {b}", "Darunter: das Verhältnis der Odds Ratios")
+    else:
+        both = "beide zusammen"
+        if answer.surface is not None:
+            both = "eine Karte beider, mit Linien gleicher Wahrscheinlichkeit"
+        measure = "das Odds Ratio" if question.scale == "odds" else "die Änderung"
+        shown = (
+            f"Zuerst {both}; dann, entlang {b}, {measure} zu: {followed(answer)}",
+            "Zuletzt die Wechselwirkung selbst: auf der Skala der Wahrscheinlichkeit als Differenz "
+            "von Differenzen, auf der Skala der Odds als Verhältnis der Odds Ratios",
+        )
+    return joined(
+        title(answer), *shown, intervals, held, *left_out(answer), _nobody(answer), fitted(subject)
+    )
+
+
+def _nobody(answer: PairAnswer) -> str:
+    """How the picture marks where there are no data."""
+    many = cases(answer.subject.outcome)
+    if answer.surface is not None:
+        return f"Wo die Karte schraffiert ist, haben die Daten keine {many} in der Nähe"
+    lines = () if answer.lines is None else answer.lines.lines
+    if all(all(line.supported) for line in lines) and all(answer.effect.supported):
+        return ""
+    return (
+        f"Wo eine Linie unterbrochen oder ein Punkt offen ist, haben die Daten wenige {many} oder "
+        "keine"
+    )

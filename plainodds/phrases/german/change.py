@@ -18,6 +18,7 @@ from plainodds.phrases.german.needed import needed_sentences, needed_technical
 from plainodds.phrases.german.parts import (
     EVERYTHING,
     ODDS_MEANING,
+    ROUNDED_APART,
     among,
     association,
     beyond_saying,
@@ -199,12 +200,7 @@ def _of_averages(answer: ChangeAnswer) -> list[str]:
 
 
 def _rounding(answer: ChangeAnswer, over: int) -> list[str]:
-    if not misses_one(answer, over):
-        return []
-    return [
-        "Jede Zahl ist für sich gerundet, sodass Anzahlen um eins von ihrer Differenz abweichen "
-        "können"
-    ]
+    return [ROUNDED_APART] if misses_one(answer, over) else []
 
 
 def _technical(answer: ChangeAnswer) -> Words:

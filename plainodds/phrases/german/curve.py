@@ -43,7 +43,7 @@ from plainodds.phrases.slope import slope_places
 from plainodds.phrases.units import per_unit
 from plainodds.phrases.ways import estimate_at, way_of
 
-__all__ = ["averaged_in_curve", "curve_title", "is_averaged"]
+__all__ = ["averaged_in_curve", "beyond_data", "curve_title", "is_averaged"]
 
 _MATCHING = "der mittleren Wahrscheinlichkeit entsprechende"
 
@@ -68,7 +68,7 @@ def _plain(answer: CurveAnswer) -> Words:
 
 
 def _words(answer: CurveAnswer, told: Sequence[str], more: Sequence[str] = ()) -> Words:
-    cautions = map(sentence, (*more, *_beyond(answer), association(answer.subject)))
+    cautions = map(sentence, (*more, *beyond_data(answer), association(answer.subject)))
     held = answer.question.others != "observed"
     return Words(
         tuple(map(sentence, told)),
@@ -76,7 +76,8 @@ def _words(answer: CurveAnswer, told: Sequence[str], more: Sequence[str] = ()) -
     )
 
 
-def _beyond(answer: CurveAnswer) -> list[str]:
+def beyond_data(answer: CurveAnswer) -> list[str]:
+    """Where the curve leaves the data; empty where it does not."""
     told = parts_without_data(answer)
     if not told:
         return []

@@ -6,11 +6,13 @@ from plainodds.answers.change import ChangeAnswer
 from plainodds.answers.curve import CurveAnswer
 from plainodds.answers.effects import EffectsAnswer
 from plainodds.answers.odds import OddsAnswer
+from plainodds.answers.pair import PairAnswer
 from plainodds.answers.profile import ProfileAnswer
 from plainodds.phrases.german.curve import is_averaged
 from plainodds.phrases.german.language import GERMAN
 from plainodds.phrases.german.texts import drawn_note, intervals_made, note, others_made
 from plainodds.phrases.methods.note import MethodsNote
+from plainodds.phrases.numbers import count
 
 __all__: list[str] = []
 
@@ -151,3 +153,65 @@ def _(answer: ProfileAnswer) -> MethodsNote:
             "Extrapolation)",
         ),
     )
+
+
+@GERMAN.methods_note.register
+def _(answer: PairAnswer) -> MethodsNote:
+    question, subject = answer.question, answer.subject
+    found = answer.interaction
+    kinds = {0: "die Kreuzdifferenz", 1: "die Differenz der Steigungen"}
+    kind = kinds.get(len(answer.sloped), "die gemischte Ableitung")
+    on_chances = (
+        f"Auf der Skala der Wahrscheinlichkeit ist die Wechselwirkung {kind} der "
+        "Wahrscheinlichkeit, nicht der Koeffizient eines Produkts (Ai & Norton 2003)"
+    )
+    stretches = (
+        "Wo ein Effekt sich von keinem unterscheidet, wurde an den Enden seines punktweisen "
+        "Intervalls abgelesen (Johnson & Neyman 1936; Bauer & Curran 2005)"
+    )
+    return note(
+        subject,
+        (
+            on_chances if found.at_profile is not None or found.averaged is not None else "",
+            "Auf der Skala der Odds ist die Wechselwirkung das Verhältnis der Odds Ratios",
+            others_made(subject, question.others, "die Wahrscheinlichkeiten", answer.counted),
+            intervals_made(
+                subject,
+                question.level,
+                "nach der Delta-Methode mit exakten Gradienten berechnet: der Differenzen auf "
+                "ihrer eigenen Skala, der Verhältnisse auf der Log-Skala",
+            ),
+            "" if answer.effect.lower is None else stretches,
+            _test(answer),
+            *_joint(answer),
+        ),
+    )
+
+
+def _test(answer: PairAnswer) -> str:
+    test = answer.interaction.test
+    if test is None:
+        return ""
+    kind = {"wald": "Wald", "likelihood_ratio": "Likelihood-Quotienten"}[test.kind]
+    number = test.degrees_of_freedom
+    terms = "des einen Terms, der" if number == 1 else f"aller {count(number)} Terme, die"
+    verb = "verbindet" if number == 1 else "verbinden"
+    return (
+        f"Die Wechselwirkung wurde mit dem {kind}-Test {terms} die beiden Merkmale {verb}, geprüft"
+    )
+
+
+def _joint(answer: PairAnswer) -> list[str]:
+    if answer.joint is None:
+        return []
+    told = [
+        "Die gemeinsame Tafel folgt Knol & VanderWeele 2012; relatives Exzessrisiko, "
+        "zuschreibbarer Anteil und Synergie-Index haben Intervalle der Delta-Methode (Hosmer & "
+        "Lemeshow 1992)"
+    ]
+    if answer.joint.recoded:
+        told.append(
+            "Stufen wurden vertauscht, sodass die Verbindung mit den niedrigsten Odds die Referenz "
+            "ist (Knol et al. 2011)"
+        )
+    return told

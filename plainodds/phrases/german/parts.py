@@ -25,6 +25,7 @@ from plainodds.values import Pairs
 __all__ = [
     "EVERYTHING",
     "ODDS_MEANING",
+    "ROUNDED_APART",
     "among",
     "association",
     "beyond_saying",
@@ -50,6 +51,9 @@ EVERYTHING = 1_000_000
 ODDS_MEANING = (
     "Chance (Odds) heißt hier: die Wahrscheinlichkeit des Ereignisses geteilt durch die seines "
     "Ausbleibens; das ist nicht die Wahrscheinlichkeit selbst"
+)
+ROUNDED_APART = (
+    "Jede Zahl ist für sich gerundet, sodass Anzahlen um eins von ihrer Differenz abweichen können"
 )
 _COVARIANCE = {
     "nonrobust": "der modellbasierten Kovarianzmatrix",

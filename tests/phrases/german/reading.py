@@ -3,6 +3,7 @@
 import re
 from dataclasses import replace
 
+from plainodds.answers.questions import Answer
 from tests.phrases.made import FAMILIAR
 from tests.phrases.reading import unaccounted as unaccounted_in_english
 
@@ -51,7 +52,10 @@ def with_german_labels(answer):
     outcome = replace(
         answer.subject.outcome, event="Rohrbruch in diesem Winter", case="Rohr", cases="Rohre"
     )
-    return replace(answer, subject=replace(answer.subject, predictors=predictors, outcome=outcome))
+    said = replace(answer, subject=replace(answer.subject, predictors=predictors, outcome=outcome))
+    if isinstance(getattr(said, "lines", None), Answer):
+        said = replace(said, lines=with_german_labels(said.lines))
+    return said
 
 
 def unaccounted(text, numbers):
