@@ -170,4 +170,10 @@ def _draw_open(board: Board, found: Found, laid: LaidRows, down: float) -> None:
     )  # fmt: skip
 
 
-SEPARATION = Plate("separation", _height, _height, _notes, _paint, has_picture=_has_picture)
+def _variant(found: Found) -> str:
+    return "with levels" if _counts(found) else "without levels"
+
+
+SEPARATION = Plate(
+    "separation", _height, _height, _notes, _paint, has_picture=_has_picture, variant=_variant
+)
