@@ -120,7 +120,7 @@ def plot_room(width: float) -> float:
 def x_axis_height(title: str, theme: Theme, room: float) -> float:
     """Height in points of tick labels and a title for which there is so much room across."""
     lines = 1 if text_width(title, theme, theme.small) <= room else 2
-    return line_height(theme.small, 1 + lines) + 0.7 * theme.font_size
+    return line_height(theme.small, 1 + lines) + 0.5 * theme.font_size
 
 
 def draw_x_axis(board: Board, axis: Axis, title: str, width: float, down: float) -> None:
@@ -143,7 +143,7 @@ def draw_x_axis(board: Board, axis: Axis, title: str, width: float, down: float)
     label_ticks(axes, "x", axis.ticks, axis.labels, tick_style(theme))
     axes.set_xlim(axis.lower, axis.upper)
     words = wrapped(title, width, theme, theme.small, 2)
-    beneath = -down - 1.25 * theme.small - 0.3 * theme.font_size
+    beneath = -down - 1.25 * theme.small - 0.05 * theme.font_size
     board.write(words, 0.0, beneath, board.at(0.5, 0), across="center", down="top")
 
 
