@@ -76,3 +76,14 @@ def test_a_slope_that_no_resample_gave_is_not_known():
     answer = made.answer(made.calibration(optimism), made.discrimination())
     words = words_on(drawn(answer).axes.figure)
     assert words.count("not known") == 1
+
+
+def test_lines_are_named_at_their_ends_or_above_where_it_is_narrow():
+    wide, narrow = (board_of(made.answer(made.calibration()), width) for width in (480, 270))
+    names = {"data, smoothed", "chances that come true"}
+    for board in (wide, narrow):
+        assert names <= {text.get_text() for text in board.texts}
+    assert "sample 0" not in wide.lines
+    assert not narrow.lines["sample 0"].is_dashed()
+    assert narrow.lines["sample -1"].is_dashed()
+    assert "leader 0" not in narrow.segments

@@ -101,7 +101,6 @@ def test_an_odds_ratio_without_an_end_becomes_an_arrow():
 def test_without_any_that_stands_out_there_are_no_odds_ratios():
     words = text_of(made.answer(made.influence((), "nothing found")))
     assert "Odds ratio" not in words
-    assert "Beneath" not in words
 
 
 def test_measures_that_are_not_finite_are_left_out():
