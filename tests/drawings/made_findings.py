@@ -253,8 +253,8 @@ def convergence(step=0.4, converged=False, concern="don't explain yet"):
     return Finding("convergence", concern, reasons, (), evidence, unknown)
 
 
-def overall(p_value=0.29, link=0.43, concern="nothing found"):
-    evidence = OverallEvidence(10, 9.65, 8, p_value, 0.17, 0.14, link)
+def overall(p_value=0.29, link=0.43, concern="nothing found", statistic=9.65):
+    evidence = OverallEvidence(10, statistic, 8, p_value, 0.17, 0.14, link)
     reasons = ("link test",) if concern == "keep in mind" else ()
     return Finding("overall", concern, reasons, (), evidence)
 
@@ -337,6 +337,7 @@ FINDINGS = {
     "convergence without an end": lambda: answer(convergence(INF)),
     "convergence, step not known": lambda: answer(convergence(NAN)),
     "overall": lambda: answer(overall()),
+    "overall, long figures": lambda: answer(overall(NAN, NAN, statistic=1e9)),
     "overall with a bend": lambda: answer(overall(NAN, 0.0001, "keep in mind")),
     **{
         f"{finding.topic} with nasty labels": lambda finding=finding: nasty(finding)

@@ -63,6 +63,16 @@ def test_a_table_has_its_figures_flush_right_and_is_as_high_as_is_said(board):
     assert max(ends) <= 180.0
 
 
+def test_a_table_with_long_figures_stays_within_its_width(board):
+    rows = [("Measure", "figure"), ("A name of some length", "over 1,000, 8 df, p-value unknown")]
+    for width in (120.0, 180.0, 400.0):
+        board.begin()
+        draw_table(board, rows, 0.0, 0.0, width, (0, 1))
+        board.end()
+        edges = board.segments["rules of Measure"].get_segments()[0][:, 0]
+        assert edges.max() <= width + 1e-6
+
+
 def test_names_stand_clear_of_each_other_and_of_all_marks(board):
     tags = [Tag(f"row {place}", 200.0 + 3 * place, 100.0, 4.0, True) for place in range(5)]
     board.begin()
