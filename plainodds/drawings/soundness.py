@@ -103,7 +103,9 @@ class SoundnessDrawing:
     def structure(answer: SoundnessAnswer) -> Hashable:
         """The kind of picture, and what its marks are called."""
         found = found_of(answer)
-        return plate_of(found).name, picture_legend(found.finding, found.subject)
+        plate = plate_of(found)
+        legend = ("", "") if plate is TOLD else picture_legend(found.finding, found.subject)
+        return plate.name, plate.variant(found), legend
 
     @staticmethod
     def natural_height(answer: SoundnessAnswer, theme: Theme, width: float) -> float:

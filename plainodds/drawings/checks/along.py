@@ -71,10 +71,12 @@ def chances_axis(inner: Iterable[float], outer: Iterable[float], most: int) -> A
         How many ticks there is room for.
     """
     low, high = _ends(inner)
-    span = max(high - low, 0.02)
+    span = high - low or 0.02
     ends = [low, high, *(each for each in outer if math.isfinite(each))]
     lowest = max(min(ends), low - 0.6 * span, 0.0)
     highest = min(max(ends), high + 0.6 * span, 1.0)
+    if highest <= lowest:
+        lowest, highest = max(low - span, 0.0), min(low + span, 1.0)
     room = 0.05 * (highest - lowest)
     # the ends of the scale are shown where they cost little
     lower = lowest - room if lowest > 0.5 * (highest - lowest) else -0.4 * room
@@ -105,7 +107,7 @@ def draw_y_axis(board: Board, axis: Axis) -> None:
     """Set the vertical axis with its grid."""
     axes, theme = board.axes, board.theme
     axes.yaxis.grid(visible=True, color=theme.grid, linewidth=theme.hairline, linestyle="-")
-    axes.tick_params(axis="y", labelleft=True, pad=0.4 * theme.font_size)
+    axes.tick_params(axis="y", labelleft=True, length=0, pad=0.4 * theme.font_size)
     label_ticks(axes, "y", axis.ticks, axis.labels, tick_style(theme))
     axes.set_ylim(axis.lower, axis.upper)
 
@@ -118,7 +120,7 @@ def plot_room(width: float) -> float:
 def x_axis_height(title: str, theme: Theme, room: float) -> float:
     """Height in points of tick labels and a title for which there is so much room across."""
     lines = 1 if text_width(title, theme, theme.small) <= room else 2
-    return line_height(theme.small, 1 + lines) + 0.7 * theme.font_size
+    return line_height(theme.small, 1 + lines) + 0.5 * theme.font_size
 
 
 def draw_x_axis(board: Board, axis: Axis, title: str, width: float, down: float) -> None:
@@ -137,11 +139,11 @@ def draw_x_axis(board: Board, axis: Axis, title: str, width: float, down: float)
     axes, theme = board.axes, board.theme
     floor = axes.spines["bottom"]
     floor.set(visible=True, linewidth=1.4 * theme.hairline, color=theme.rule)
-    axes.tick_params(axis="x", labelbottom=True, pad=down)
+    axes.tick_params(axis="x", labelbottom=True, length=0, pad=down)
     label_ticks(axes, "x", axis.ticks, axis.labels, tick_style(theme))
     axes.set_xlim(axis.lower, axis.upper)
     words = wrapped(title, width, theme, theme.small, 2)
-    beneath = -down - 1.25 * theme.small - 0.3 * theme.font_size
+    beneath = -down - 1.25 * theme.small - 0.05 * theme.font_size
     board.write(words, 0.0, beneath, board.at(0.5, 0), across="center", down="top")
 
 

@@ -20,12 +20,13 @@ from plainodds.drawings.checks.along import (
     y_axis_width,
 )
 from plainodds.drawings.checks.board import Board
-from plainodds.drawings.checks.ends import EndLabel, draw_ends, ends_width
+from plainodds.drawings.checks.ends import EndLabel, above_height, draw_above, draw_ends, ends_width
 from plainodds.drawings.checks.plate import Found, Plate
 from plainodds.drawings.checks.shape import cases_each, intervals_of
 from plainodds.drawings.checks.tables import draw_table, table_height
 from plainodds.drawings.geometry import Margins
 from plainodds.drawings.lettering import line_height, wrapped
+from plainodds.drawings.odds_rows import is_narrow
 from plainodds.drawings.theme import Theme
 from plainodds.phrases.checks.headings import picture_axes, picture_legend
 from plainodds.phrases.numbers import NOT_KNOWN, confidence, count, quantity
@@ -45,22 +46,32 @@ def _below(found: Found, theme: Theme, width: float) -> float:
     return axis + (table + 0.8 * em if table else 0.0)
 
 
-def _above(theme: Theme) -> float:
-    return line_height(theme.small) + 0.6 * theme.font_size
+def _above(found: Found, theme: Theme, width: float) -> float:
+    names = 0.0
+    if is_narrow(theme, width):
+        names = above_height(_names(found), theme, width) + 0.3 * theme.font_size
+    return line_height(theme.small) + names + 0.6 * theme.font_size
 
 
 def _names(found: Found) -> tuple[str, str]:
     return picture_legend(found.finding, found.subject)
 
 
+def _beside(found: Found, theme: Theme, width: float) -> float:
+    """Room to the right of the plot, at whose ends lines are named unless it is narrow."""
+    if is_narrow(theme, width):
+        return 1.2 * theme.font_size
+    return ends_width(_names(found), theme, width)
+
+
 def _natural(found: Found, theme: Theme, width: float) -> float:
-    beside = ends_width(_names(found), theme, width) + 3 * theme.font_size
+    beside = _beside(found, theme, width) + 3 * theme.font_size
     side = min(max(width - beside, 12 * theme.font_size), _SIDE * theme.font_size)
-    return _above(theme) + side + _below(found, theme, width)
+    return _above(found, theme, width) + side + _below(found, theme, width)
 
 
 def _least(found: Found, theme: Theme, width: float) -> float:
-    return _above(theme) + 10 * theme.font_size + _below(found, theme, width)
+    return _above(found, theme, width) + 10 * theme.font_size + _below(found, theme, width)
 
 
 def _notes(found: Found) -> list[str]:
@@ -101,8 +112,7 @@ def _paint(board: Board, found: Found, width: float, height: float) -> Margins:
     theme, em = board.theme, board.theme.font_size
     evidence = found.evidence(CalibrationEvidence)
     names = _names(found)
-    bottom, top = _below(found, theme, width), _above(theme)
-    labels = ends_width(names, theme, width)
+    bottom, top = _below(found, theme, width), _above(found, theme, width)
     plot_height = height - bottom - top
     bins = evidence.bins
     axis = chances_axis(
@@ -113,7 +123,7 @@ def _paint(board: Board, found: Found, width: float, height: float) -> Margins:
         int(plot_height / (2.8 * theme.small)),
     )  # fmt: skip
     left = y_axis_width(axis, theme)
-    plot_width = min(width - left - labels, plot_height)
+    plot_width = min(width - left - _beside(found, theme, width), plot_height)
     right = width - left - plot_width
     most = int(plot_width / (4.4 * theme.small))
     across = Axis(axis.lower, axis.upper, *_thinned(axis, most))
@@ -127,14 +137,14 @@ def _paint(board: Board, found: Found, width: float, height: float) -> Margins:
     _draw_curves(board, evidence, axis)
     draw_strip(board, "support", _chances(found), across, plot_width, _STRIP * em)
     before = (1 - axis.share(evidence.at[-1])) * plot_width
-    draw_ends(
-        board,
-        [
-            EndLabel(names[0], axis.share(evidence.smoothed[-1]), 0, before),
-            EndLabel(names[1], 1.0, -1),
-        ],
-        right, plot_height,
-    )  # fmt: skip
+    labels = [
+        EndLabel(names[0], axis.share(evidence.smoothed[-1]), 0, before),
+        EndLabel(names[1], 1.0, -1),
+    ]
+    if is_narrow(theme, width):
+        draw_above(board, labels, -left, top, width)
+    else:
+        draw_ends(board, labels, right, plot_height)
     rows = _optimism(found)
     if rows:
         draw_table(board, rows, -left, -bottom + table_height(rows, theme, width), width, (0, 0))

@@ -15,6 +15,7 @@ from plainodds.drawings.theme import Theme
 from plainodds.model.predictors import Subject
 from plainodds.phrases.checks.parts import amount
 from plainodds.phrases.labels import predictor_label, value_label
+from plainodds.phrases.numbers import count
 
 __all__ = ["MOST_LEVELS", "count_rows", "draw_counts", "head_height", "laid_counts"]
 
@@ -35,13 +36,13 @@ def count_rows(counts: Sequence[LevelCount], subject: Subject) -> list[Row]:
     return rows
 
 
-def _told(count: LevelCount) -> str:
-    whole = amount(count.cases)
-    if count.events <= _NONE:
+def _told(held: LevelCount) -> str:
+    whole = amount(held.cases)
+    if held.events <= _NONE:
         return f"none of {whole}"
-    if count.events >= count.cases - _NONE:
-        return f"all of {whole}" if count.cases > 1 + _NONE else "the only one"
-    return f"{amount(count.events)} of {whole}"
+    if held.events >= held.cases - _NONE:
+        return f"all of {whole}" if held.cases > 1 + _NONE else "the only one"
+    return f"{amount(held.events)} of {whole}"
 
 
 def laid_counts(
@@ -107,4 +108,5 @@ def draw_counts(
 
 def _axis(highest: float, most: int) -> Axis:
     axis = numbers_axis(0.0, highest, most).of_whole_numbers()
-    return replace(axis, upper=1.02 * highest or 1.0)
+    labels = tuple(count(round(tick)) for tick in axis.ticks)
+    return replace(axis, upper=1.02 * highest or 1.0, labels=labels)

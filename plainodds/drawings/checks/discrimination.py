@@ -16,12 +16,12 @@ from plainodds.drawings.checks.board import Board
 from plainodds.drawings.checks.plate import Found, Plate
 from plainodds.drawings.checks.tables import draw_paragraph, paragraph_height
 from plainodds.drawings.geometry import Margins
-from plainodds.drawings.lettering import line_height, wrapped
+from plainodds.drawings.lettering import line_height, text_width, wrapped
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import round_ticks
 from plainodds.phrases.checks.finding_words import finding_words
 from plainodds.phrases.checks.headings import picture_axes, picture_legend
-from plainodds.phrases.checks.parts import cases
+from plainodds.phrases.checks.parts import amount, cases
 from plainodds.phrases.labels import sentence_case
 from plainodds.phrases.numbers import count
 
@@ -107,9 +107,16 @@ def _paint(board: Board, found: Found, width: float, height: float) -> Margins:
         (events, sum(evidence.events), -0.3 * em, "top"),
         (others, sum(evidence.others), 0.3 * em, "bottom"),
     ):
-        told = wrapped(f"{cases(found.subject, total)} {words}", plot_width - em, theme, em, 1)
+        told, room, size = (
+            f"{cases(found.subject, total)} {words}",
+            plot_width + right - 0.4 * em,
+            em,
+        )
+        if text_width(told, theme, em) > room:
+            told, size = f"{amount(total)} {words}", theme.small
         board.write(
-            told, 0.4 * em, y, board.at(0, 1 if down == "top" else 0), size=em,
+            wrapped(told, room, theme, size, 1), 0.4 * em, y,
+            board.at(0, 1 if down == "top" else 0), size=size,
             down="top" if down == "top" else "bottom",
         )  # fmt: skip
     board.write(

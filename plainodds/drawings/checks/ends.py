@@ -1,4 +1,4 @@
-"""Names at the right ends of lines."""
+"""Names at the right ends of lines, or above the plot where there is no room beside it."""
 
 from __future__ import annotations
 
@@ -10,7 +10,7 @@ from plainodds.drawings.geometry import apart
 from plainodds.drawings.lettering import line_height, text_width, wrapped
 from plainodds.drawings.theme import Theme
 
-__all__ = ["EndLabel", "draw_ends", "ends_width"]
+__all__ = ["EndLabel", "above_height", "draw_above", "draw_ends", "ends_width"]
 
 _WIDEST, _MOST = 0.28, 0.36
 _INDENT = 2.3
@@ -73,3 +73,55 @@ def draw_ends(board: Board, labels: Sequence[EndLabel], width: float, plot_heigh
             [[(-each.before + 0.15 * em, each.height * plot_height), (0.85 * em, middle)]],
             transform=beside, colors=colour, linewidths=1.4 * theme.hairline, zorder=2,
         )  # fmt: skip
+
+
+def _places(names: Sequence[str], theme: Theme, width: float) -> list[tuple[int, float, str]]:
+    """Line, place along it and words of each name above the plot."""
+    em, line, x = theme.font_size, 0, 0.0
+    places = []
+    for name in names:
+        words = wrapped(name, width - _INDENT * em, theme, theme.small, 1)
+        needed = _INDENT * em + text_width(words, theme, theme.small)
+        if x > 0 and x + needed > width:
+            line, x = line + 1, 0.0
+        places.append((line, x, words))
+        x += needed + 1.4 * em
+    return places
+
+
+def above_height(names: Sequence[str], theme: Theme, width: float) -> float:
+    """Height in points that names take above the plot."""
+    return line_height(theme.small, 1 + _places(names, theme, width)[-1][0])
+
+
+def draw_above(board: Board, labels: Sequence[EndLabel], x: float, y: float, width: float) -> None:
+    """Write names above the plot, each with a piece of its line.
+
+    Parameters
+    ----------
+    board : Board
+    labels : sequence of EndLabel
+        Of which only name and series are used.
+    x, y : float
+        In points from the upper left corner of the plot.
+    width : float
+        Of the slot, in points.
+    """
+    theme, em, points = board.theme, board.theme.font_size, board.at(0, 1)
+    step = line_height(theme.small)
+    places = _places([each.name for each in labels], theme, width)
+    for each, (line, along, words) in zip(labels, places, strict=True):
+        middle, start = y - (line + 0.5) * step, x + along
+        reference = each.place < 0
+        board.line(
+            f"sample {each.place}", [start, start + 1.8 * em], [middle, middle], transform=points,
+            clip=False, color=theme.rule if reference else theme.series(each.place).colour,
+            linewidth=1.6 * theme.hairline if reference else theme.line_width,
+            linestyle=(0, (4.0, 2.4)) if reference else "-",
+        )  # fmt: skip
+        if not reference:
+            board.marks(
+                f"sample mark {each.place}", [(start + 0.9 * em, middle)], each.place,
+                transform=points, hollow=each.place == 0,
+            )  # fmt: skip
+        board.write(words, start + _INDENT * em, middle, points)

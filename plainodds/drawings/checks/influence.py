@@ -55,13 +55,13 @@ def _least(found: Found, theme: Theme, width: float) -> float:
 def _notes(found: Found) -> list[str]:
     evidence = found.evidence(InfluenceEvidence)
     cases = tidy(found.subject.outcome.cases)
-    notes = [f"A mark is a kind of row: all {cases} of the same values."]
-    notes.append("The larger it is, the farther the fit moves without it (Δβ).")
+    notes = [
+        f"A mark is a kind of row: all {cases} of the same values. The larger it is, the farther "
+        "the fit moves without it (Δβ)."
+    ]
     if evidence.thinned:
         shown = count(len(evidence.probability))
         notes.append(f"{shown} of {count(evidence.patterns)} are shown, these among them.")
-    if moves_shown(found):
-        notes.append("Beneath: odds ratios with all rows, and without those that stand out.")
     return notes
 
 

@@ -73,6 +73,8 @@ class Plate:
         Whether there is anything to draw; else the finding is told in words.
     across : Scale
         Of the horizontal axis.
+    variant : callable (found) -> str
+        Which of several layouts is drawn, where a change of it needs other axes.
     """
 
     name: str
@@ -82,3 +84,4 @@ class Plate:
     paint: Callable[[Board, Found, float, float], Margins]
     across: Scale = "linear"
     has_picture: Callable[[Found], bool] = lambda found: True
+    variant: Callable[[Found], str] = lambda found: ""

@@ -23,7 +23,7 @@ from plainodds.drawings.checks.plate import Found, Plate
 from plainodds.drawings.checks.rows import LaidRows, Row, draw_rows, laid_rows
 from plainodds.drawings.checks.tables import draw_paragraph, paragraph_height
 from plainodds.drawings.geometry import Margins
-from plainodds.drawings.lettering import line_height
+from plainodds.drawings.lettering import line_height, wrapped
 from plainodds.drawings.theme import Theme
 from plainodds.phrases.checks.finding_words import finding_words
 from plainodds.phrases.checks.headings import picture_axes, picture_legend
@@ -34,7 +34,7 @@ __all__ = ["SEPARATION"]
 
 _MOST = 8
 _GAP = 0.9
-_OPEN = "Coefficients without a finite estimate (log odds)"
+_OPEN = "Coefficients without a finite estimate"
 _LEVELS = Finding("levels", "nothing found")
 
 
@@ -125,24 +125,25 @@ def _paint(board: Board, found: Found, width: float, height: float) -> Margins:
     words, rows, _ = _heights(found, theme, width)
     if laid is None:
         top, plot = words + _open_head(theme), held.height
-        _draw_open(board, found, held, 0.0)
+        _draw_open(board, found, held, 0.0, width)
     else:
         legend, (title, _) = _legend(found), picture_axes(_LEVELS, found.subject)
         head = head_height(legend, theme, width)
         top, plot = words + head, laid.height
         draw_counts(board, _counts(found), laid, legend, title, width)
-        _draw_open(board, found, held, rows - head + _open_head(theme))
+        _draw_open(board, found, held, rows - head + _open_head(theme), width)
     draw_paragraph(board, _words(found), -held.left, top, width, (0, 1))
     return Margins(held.left, held.right, height - top - plot, top)
 
 
-def _draw_open(board: Board, found: Found, laid: LaidRows, down: float) -> None:
+def _draw_open(board: Board, found: Found, laid: LaidRows, down: float, width: float) -> None:
     """Draw coefficients as lines from 0 that end in an arrow, so many points down the plot."""
     theme, em = board.theme, board.theme.font_size
     across = blended_transform_factory(board.axes.transAxes, board.at(0, 1))
     board.write(
-        _OPEN, -laid.left, -down + 0.25 * em, board.at(0, 1), down="bottom", colour=theme.faint
-    )
+        wrapped(_OPEN, width, theme, theme.small, 1), -laid.left, -down + 0.25 * em,
+        board.at(0, 1), down="bottom", colour=theme.faint,
+    )  # fmt: skip
     draw_rows(board, laid, down)
     lines: list[Sequence[tuple[float, float]]] = []
     arrows: dict[str, list[tuple[float, float]]] = {"<": [], ">": []}
@@ -170,4 +171,10 @@ def _draw_open(board: Board, found: Found, laid: LaidRows, down: float) -> None:
     )  # fmt: skip
 
 
-SEPARATION = Plate("separation", _height, _height, _notes, _paint, has_picture=_has_picture)
+def _variant(found: Found) -> str:
+    return "with levels" if _counts(found) else "without levels"
+
+
+SEPARATION = Plate(
+    "separation", _height, _height, _notes, _paint, has_picture=_has_picture, variant=_variant
+)

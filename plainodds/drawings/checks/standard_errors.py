@@ -76,5 +76,6 @@ def _paint(board: Board, found: Found, width: float, height: float) -> Margins:
 
 
 STANDARD_ERRORS = Plate(
-    "standard errors", _height, _height, _notes, _paint, across="log", has_picture=_has_picture
-)
+    "standard errors", _height, _height, _notes, _paint, across="log", has_picture=_has_picture,
+    variant=lambda found: "lanes" if _lanes(found) else "gauge",
+)  # fmt: skip

@@ -15,28 +15,35 @@ Cells = Sequence[tuple[str, ...]]
 _MOST_LINES = 8
 _GAP = 1.4
 _AIR = 0.35
+_FIGURES = 0.7
+"""So much of the width the figures may take."""
 
 
-def _columns(rows: Cells, theme: Theme, width: float) -> tuple[float, list[float]]:
-    """Widths of the first column, which may be broken, and of those with figures."""
-    columns = list(zip(*rows, strict=True))
-    widths = [max(text_width(cell, theme, theme.small) for cell in column) for column in columns]
-    rest = sum(widths[1:]) + _GAP * theme.font_size * len(widths[1:])
-    return min(widths[0], max(width - rest, 0.3 * width)), widths[1:]
+def _laid(rows: Cells, theme: Theme, width: float) -> tuple[list[float], list[list[str]]]:
+    """Widths of the columns, and the cells, broken where they would not fit otherwise."""
+    small, gap = theme.small, _GAP * theme.font_size
+    count = len(rows[0]) - 1
+    most = (_FIGURES * width - gap * count) / count
+    figures = [[wrapped(cell, most, theme, small, 3) for cell in row[1:]] for row in rows]
+    widths = [max(text_width(cell, theme, small) for cell in column)
+              for column in zip(*figures, strict=True)]  # fmt: skip
+    longest = max(text_width(row[0], theme, small) for row in rows)
+    first = min(longest, width - sum(widths) - gap * count)
+    names = [wrapped(row[0], first, theme, small, 3) for row in rows]
+    return [first, *widths], [[name, *cells] for name, cells in zip(names, figures, strict=True)]
 
 
-def _names(rows: Cells, theme: Theme, width: float) -> list[str]:
-    first, _ = _columns(rows, theme, width)
-    return [wrapped(row[0], first, theme, theme.small, 3) for row in rows]
-
-
-def _height(name: str, theme: Theme) -> float:
-    return line_height(theme.small, name.count("\n") + 1) + _AIR * theme.font_size
+def _height(cells: Sequence[str], theme: Theme) -> float:
+    lines = max(cell.count("\n") for cell in cells) + 1
+    return line_height(theme.small, lines) + _AIR * theme.font_size
 
 
 def table_height(rows: Cells, theme: Theme, width: float) -> float:
     """Height in points of a table, its heading counted; 0 of none."""
-    return sum(_height(name, theme) for name in _names(rows, theme, width)) if rows else 0.0
+    if not rows:
+        return 0.0
+    _, broken = _laid(rows, theme, width)
+    return sum(_height(cells, theme) for cells in broken)
 
 
 def draw_table(
@@ -57,17 +64,17 @@ def draw_table(
         A corner of the plot.
     """
     theme, points = board.theme, board.at(*origin)
-    first, widths = _columns(rows, theme, width)
+    (first, *widths), broken = _laid(rows, theme, width)
     ends, edge = [], x + first
     for each in widths:
         edge += _GAP * theme.font_size + each
         ends.append(edge)
     rules = []
-    for place, (row, name) in enumerate(zip(rows, _names(rows, theme, width), strict=True)):
-        height = _height(name, theme)
+    for place, (name, *cells) in enumerate(broken):
+        height = _height((name, *cells), theme)
         colour = theme.ink if place else theme.faint
         board.write(name, x, y - height / 2, points, colour=colour)
-        for cell, end in zip(row[1:], ends, strict=True):
+        for cell, end in zip(cells, ends, strict=True):
             board.write(cell, end, y - height / 2, points, colour=colour, across="right")
         y -= height
         rules.append([(x, y), (edge, y)])

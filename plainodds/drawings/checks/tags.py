@@ -18,6 +18,7 @@ Box = tuple[float, float, float, float]
 _ANGLES = (0, 180, 90, 270, 45, 315, 135, 225)
 _AWAY = (0.0, 1.4, 3.0, 5.0)
 _WIDEST = 12.0
+_AIR = 0.5
 _COST = 1.2
 """What a letter's distance counts for, in marks that a name covers."""
 _FEW = 1.0
@@ -64,11 +65,11 @@ def draw_tags(
     leaders = []
     for tag in tags:
         words = wrapped(tag.name, _WIDEST * em, theme, theme.small, 1)
-        size = (text_width(words, theme, theme.small), line_height(theme.small))
+        size = (text_width(words, theme, theme.small) + _AIR * em, line_height(theme.small))
         best: tuple[float, Box, float] | None = None
         for away in _AWAY if tag.wanted else _AWAY[:1]:
             for angle in _ANGLES:
-                box = _box(tag, size, math.radians(angle), 0.2 * em + away * em)
+                box = _box(tag, size, math.radians(angle), away * em)
                 if not _inside(box, plot) or any(_meet(box, other) for other in taken):
                     continue
                 cost = _covered(box, marks) + _COST * away
@@ -80,7 +81,9 @@ def draw_tags(
             continue
         _, box, away = best
         taken.append(box)
-        board.write(words, box[0], (box[1] + box[3]) / 2, board.at(0, 0), size=theme.small)
+        board.write(
+            words, box[0] + _AIR * em / 2, (box[1] + box[3]) / 2, board.at(0, 0), size=theme.small
+        )
         if away:
             near = (min(max(tag.x, box[0]), box[2]), min(max(tag.y, box[1]), box[3]))
             leaders.append([(tag.x, tag.y), near])

@@ -26,6 +26,7 @@ from plainodds.phrases.units import tidy
 
 __all__ = ["draw_without", "label_of", "moves_shown", "without_height"]
 
+_HEADING = "Odds ratio, with these rows and without"
 _MOST = 4
 _LABELS = 3
 _FARTHEST = math.log(1e4)
@@ -143,8 +144,7 @@ def draw_without(board: Board, found: Found, margins: Margins, width: float, dow
     laid = _laid(found, theme, width)
     points = board.at(0, 0)
     y = down - 0.9 * em
-    board.write("Odds ratio", -margins.left, y - line_height(theme.small) / 2, points,
-                weight="bold")  # fmt: skip
+    board.write(_HEADING, -margins.left, y - line_height(theme.small) / 2, points, weight="bold")
     _draw_key(board, -margins.left, y - line_height(theme.small), width)
     top = down - _head(theme, width)
     # the rows have a plot of their own: from its left edge, in points
