@@ -7,12 +7,12 @@ from dataclasses import dataclass
 from typing import Any
 
 from plainodds.answers.odds import OddsAnswer, OddsRow
-from plainodds.drawings.lettering import align_decimals, line_height, text_width, wrapped
+from plainodds.drawings.lettering import line_height, text_width, wrapped
+from plainodds.drawings.odds_figures import estimate_texts
 from plainodds.drawings.theme import Theme
 from plainodds.phrases.concerns import counted_rows, sparse_row
 from plainodds.phrases.labels import change_label, given_clause, given_label, predictor_label
-from plainodds.phrases.numbers import confidence, marks_now, ratio, ratio_interval
-from plainodds.phrases.unbounded import has_finite_estimate, odds_ratio_figures
+from plainodds.phrases.numbers import confidence
 
 __all__ = [
     "GAP",
@@ -20,7 +20,6 @@ __all__ = [
     "Group",
     "Layout",
     "Slot",
-    "estimate_texts",
     "figures_of",
     "groups_of",
     "is_narrow",
@@ -306,33 +305,3 @@ def figures_of(answer: OddsAnswer, theme: Theme, width: float) -> Figures:
         heading = heading.replace(" (", "\n(")
     widest = max(widest, text_width(heading, theme, theme.small))
     return Figures(tuple(texts), heading, widest)
-
-
-def estimate_texts(rows: Sequence[OddsRow]) -> list[str]:
-    """Each row's figures, "2.02 (1.08 to 3.78)", the estimates' decimal points in line."""
-    middles = [ratio(row.odds_ratio.estimate) for row in rows]
-    written = [
-        text
-        for row, text in zip(rows, middles, strict=True)
-        if text[:1].isdigit() and has_finite_estimate(row)
-    ]
-    whole = max((_before_point(text) for text in written), default=0)
-    after = dict(zip(written, align_decimals(written), strict=True))
-    texts = []
-    for row, middle in zip(rows, middles, strict=True):
-        if not has_finite_estimate(row):
-            figure, interval = odds_ratio_figures(row)
-            texts.append(f"{figure} ({interval})" if interval else figure)
-            continue
-        text = middle
-        if middle in after:
-            text = "\u2007" * (whole - _before_point(middle)) + after[middle]
-        lower, upper = row.odds_ratio.lower, row.odds_ratio.upper
-        if lower is not None and upper is not None:
-            text = f"{text} ({ratio_interval(lower, upper)})"
-        texts.append(text if lower is not None else text.rstrip("\u2007\u2008"))
-    return texts
-
-
-def _before_point(text: str) -> int:
-    return len(text.partition(marks_now().decimal)[0])

@@ -8,7 +8,8 @@ from dataclasses import dataclass
 
 from plainodds.answers.odds import OddsAnswer
 from plainodds.drawings.lettering import FIGURE_SPACE, text_width, wrapped
-from plainodds.drawings.odds_rows import GAP, estimate_texts
+from plainodds.drawings.odds_figures import estimate_texts
+from plainodds.drawings.odds_rows import GAP
 from plainodds.drawings.theme import Theme
 from plainodds.phrases.numbers import confidence, count, count_mark, marks_now, p_mark
 from plainodds.phrases.odds_lines import Counts, OddsLine
@@ -23,6 +24,8 @@ INDENT = 0.9
 
 _LEAST_PLOT = 11.0  # letters
 _LEAST_LABELS, _MOST_LABELS = 8.5, 24.0  # letters
+_NARROWEST = 6.0  # letters, of labels and plot where all is narrow
+_WIDEST_BROKEN = 0.36
 _POINT_SPACE = "\u2008"
 
 
@@ -140,6 +143,9 @@ def _columns(
     em, small, gap = theme.font_size, theme.small, GAP * theme.font_size
     models = models_of(answer)
     figures, tests = _figures(answer, lines, models, form), _tests(lines, models)
+    if form.broken:
+        most = _WIDEST_BROKEN * width
+        figures = tuple(tuple(_broken(text, most, theme) for text in each) for each in figures)
     heading, own = _figures_heading(answer), len(models) if form.apart else 1
     widths = [
         _widest([each[place] for each in figures], theme, em)
@@ -185,6 +191,9 @@ def _columns(
         wanted = max(wanted, _widest(counts, theme, small) + INDENT * em)
     spare = width - fixed - gap - _LEAST_PLOT * em
     labels = min(wanted, max(spare, _LEAST_LABELS * em))
+    if form.broken:
+        # nothing is left to leave out: labels and plot share what there is
+        labels = min(labels, max(_NARROWEST * em, width - fixed - gap - _NARROWEST * em))
     return Columns(
         form, counts, figures, tests, counts_heading, heading, "p-value" if form.tests else "",
         names, tuple(filter(None, models)), labels, counts_width, tuple(widths),
@@ -227,8 +236,14 @@ def _figures(
         texts = []
         for name in models:
             texts.append(_figure(line, name, written, form.apart))
-        told.append(tuple(text.replace(" (", "\n(") if form.broken else text for text in texts))
+        told.append(tuple(texts))
     return tuple(told)
+
+
+def _broken(text: str, width: float, theme: Theme) -> str:
+    """The interval beneath the estimate; in two lines where it is wider than a width."""
+    pieces = text.replace(" (", "\n(").split("\n")
+    return "\n".join(wrapped(each, width, theme, theme.font_size, 3) for each in pieces)
 
 
 def _figure(line: OddsLine, model: str, written: dict[int, str], apart: bool) -> str:

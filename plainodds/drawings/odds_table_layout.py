@@ -15,7 +15,7 @@ from plainodds.phrases.odds_lines import OddsLine
 __all__ = ["Place", "TableLayout", "laid_out"]
 
 _LABEL_LINES, _TEST_LINES = 3, 4
-_BETWEEN_GROUPS, _BETWEEN_LINES = 0.55, 0.14  # letters
+_BETWEEN_GROUPS, _BETWEEN_ROWS, _BETWEEN_LINES = 0.55, 0.5, 0.14  # letters
 _BETWEEN_MODELS = 0.78  # letters, of markers in one line
 
 
@@ -89,10 +89,13 @@ def laid_out(
             y += _BETWEEN_GROUPS * em
         put, height = _placed(line, place, columns, theme, width, y, air)
         if line.kind == "test":
-            spans.append((start, y))
+            if lines[place - 1].kind != "test":
+                spans.append((start, y))
             start = y + height
         places.append(put)
-        y += height + _BETWEEN_LINES * em
+        # several lines of figures are one row of the table
+        several = len(set(put.stacked)) > 1
+        y += height + (_BETWEEN_ROWS if several else _BETWEEN_LINES) * em
     y += 0.3 * em
     spans.append((start, y))
     return TableLayout(tuple(places), tuple(rules), tuple(spans), y)
@@ -145,8 +148,10 @@ def _test(
 ) -> tuple[Place, float]:
     """A test is told across the whole table."""
     assert line.test is not None
-    told = f"{line.name}: p-value {p_value(line.test.test.p_value)}"
-    text = wrapped(told, width - indent, theme, theme.small, _TEST_LINES)
+    # never broken between the name and the figure
+    test = f"p-value {p_value(line.test.test.p_value)}".replace(" ", "\u00a0")
+    told = f"{line.name}: {test}"
+    text = wrapped(told, width - indent - theme.font_size, theme, theme.small, _TEST_LINES)
     height = line_height(theme.small, text.count("\n") + 1) + 0.5 * air
     y = top + height / 2
     return Place("", text, "", indent, indent, y, y, y, y, (), ()), height

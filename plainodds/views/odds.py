@@ -120,11 +120,24 @@ class OddsView(PatientView):
     def _work_before(self, question: OddsQuestion) -> Work | None:
         if question.interval != "likelihood" or self._has(question):
             return None
+        known = self._laid_out_otherwise(question)
+        if known is not None:
+            self._prepared = known
+            return None
         return self._answering(
             question,
             "Refitting for likelihood intervals",
             lambda progress: answer_odds(self.fit.model, question, progress),
         )
+
+    def _laid_out_otherwise(self, question: OddsQuestion) -> OddsAnswer | None:
+        """The answer, where only its layout is another than what was answered before."""
+        for each in (self._prepared, self.answer):
+            if isinstance(each, OddsAnswer) and (
+                replace(each.question, layout=question.layout) == question
+            ):
+                return replace(each, question=question)
+        return None
 
     def _names(self, question: OddsQuestion) -> tuple[str, ...]:
         return question.predictors or tuple(each.name for each in self.subject.predictors)

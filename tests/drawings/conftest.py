@@ -16,6 +16,19 @@ ANSWERS: dict[str, Callable] = {
     "odds without intervals": made.odds_without_intervals,
     "odds with giants": made.odds_with_giants,
     "odds with nasty labels": made.odds_nasty,
+    "odds printed": made.odds_printed,
+    "odds printed, by level": lambda: made.odds_printed(made.odds_by_level()),
+    "odds printed, of one row": lambda: made.odds_printed(made.odds_answer(made.odds_rows()[:1])),
+    "odds printed, of models": lambda: made.odds_printed(made.odds_of_models()),
+    "odds printed, of four models": lambda: made.odds_printed(
+        made.odds_of_models(("crude", "aged", "soiled", "adjusted for everything known"))
+    ),
+    "odds printed without intervals": lambda: made.odds_printed(
+        made.odds_without_intervals(), tests=False
+    ),
+    "odds printed without counts": lambda: made.odds_printed(counts=False, tests=False),
+    "odds printed with giants": lambda: made.odds_printed(made.odds_with_giants()),
+    "odds printed with nasty labels": lambda: made.odds_printed(made.odds_nasty()),
     "curve": made.curve_by_material,
     "curve alone": made.curve_alone,
     "curve of six": made.curve_of_six,

@@ -7,7 +7,9 @@ import numpy as np
 
 from plainodds.answers.curve import CurveAnswer, CurveLine, CurveQuestion, Support
 from plainodds.answers.estimate import Estimate
+from plainodds.answers.joined import JoinedTest
 from plainodds.answers.odds import OddsAnswer, OddsQuestion, OddsRow
+from plainodds.answers.odds_interactions import InteractionTest
 from plainodds.answers.profile import (
     Comparison,
     Familiarity,
@@ -152,6 +154,43 @@ def odds_nasty():
     event = "$event$ _of a kind that takes a great many words before it has been named in full"
     about = subject((bad, AGE), outcome=OutcomeFacts("y", event, "case", "cases", 1, 0.3))
     return odds_answer(rows, about)
+
+
+def odds_printed(answer=None, counts=True, tests=True, **about):
+    """An answer to be printed as a table: with events and cases, and tests of interaction."""
+    answer = odds_answer() if answer is None else answer
+    predictors = tuple(
+        replace(
+            facts,
+            level_cases=tuple(map(float, facts.level_counts)),
+            level_events=tuple(float(n // 9 + i) for i, n in enumerate(facts.level_counts)),
+        )
+        if counts and not facts.is_number
+        else facts
+        for facts in answer.subject.predictors
+    )
+    joined = JoinedTest("wald", 6.93, 2, None, 0.0313)
+    models = answer.question.models or ("",)
+    pairs = {(row.predictor, name) for row in answer.rows for name, _ in row.given}
+    pair = min(pairs, default=None)
+    return replace(
+        answer,
+        question=replace(answer.question, layout="table"),
+        subject=replace(answer.subject, predictors=predictors, **about),
+        interactions=tuple(
+            InteractionTest(*pair, joined, name) for name in models if tests and pair
+        ),
+    )
+
+
+def odds_by_level(levels=("low", "moderate", "high"), at=((18.0, 0.2), (41.0, 0.5), (63.0, 0.9))):
+    """A category's odds ratios at three values of a number."""
+    first, *others = levels
+    return odds_answer(
+        odds_row("soil", first, level, log * (1 + i), 0.2, given=(("age_years", age),))
+        for i, level in enumerate(others)
+        for age, log in at
+    )
 
 
 # ---------------------------------------------------------------- curves

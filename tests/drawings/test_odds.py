@@ -9,7 +9,8 @@ from plainodds.answers.bounded import UNDETERMINED, as_ratio
 from plainodds.answers.estimate import Estimate
 from plainodds.drawings.odds import OddsDrawing
 from plainodds.drawings.odds_axis import axis_range
-from plainodds.drawings.odds_rows import estimate_texts, groups_of
+from plainodds.drawings.odds_figures import estimate_texts
+from plainodds.drawings.odds_rows import groups_of
 from plainodds.drawings.theme import theme_of
 from tests.drawings import made
 from tests.drawings.conftest import words_on
