@@ -1,5 +1,6 @@
 """Counts of few rows do not leave the notebook."""
 
+import math
 from dataclasses import replace
 
 import pytest
@@ -7,7 +8,9 @@ from hypothesis import given
 from hypothesis import strategies as st
 
 import plainodds as po
+from plainodds.answers.bounded import as_ratio
 from plainodds.answers.disclosure import guarded
+from plainodds.answers.estimate import Estimate
 from tests.phrases import made, made_changes
 
 
@@ -60,6 +63,53 @@ def test_level_counts_and_rows_averaged_over_are_guarded_too():
     assert found.subject.predictor("material").level_counts == (10, 0, 500)
     effects = replace(made_changes.effects_answer(made_changes.effect_row()), counted=(3,))
     assert guarded(effects).counted == (10,)
+
+
+@given(
+    st.lists(st.tuples(st.integers(0, 60), st.integers(0, 60)), min_size=1, max_size=8),
+    st.integers(2, 15),
+)
+def test_events_leave_only_where_they_and_the_others_are_enough(levels, smallest):
+    names = tuple(f"level {i}" for i, _ in enumerate(levels))
+    material = replace(
+        made.MATERIAL, levels=names, level_labels=names, typical=names[0],
+        level_counts=tuple(sum(each) for each in levels),
+        level_cases=tuple(float(sum(each)) for each in levels),
+        level_events=tuple(float(events) for events, _ in levels),
+    )  # fmt: skip
+    answer = made.profile_answer()
+    subject = replace(answer.subject, predictors=(made.AGE, material))
+    found = guarded(replace(answer, subject=subject), smallest)
+    again = guarded(found, smallest).subject.predictor("material")
+    facts = found.subject.predictor("material")
+    for (events, others), told, cases in zip(
+        levels, facts.level_events, facts.level_cases, strict=True
+    ):
+        few = 0 < events < smallest or 0 < others < smallest
+        assert math.isnan(told) if few else told == events
+        assert cases == 0 or cases >= smallest
+        assert few or cases == events + others
+    assert str(again) == str(facts), "what is guarded stays as it is"
+
+
+def test_withheld_events_are_not_read_as_none_or_all():
+    """A level all of whose few cases had one outcome is not named as such once guarded."""
+    material = replace(
+        made.MATERIAL, level_counts=(400, 300, 7), level_cases=(400.0, 300.0, 7.0),
+        level_events=(40.0, 30.0, 7.0),
+    )  # fmt: skip
+    start, _, level = material.levels
+    log = Estimate(math.inf, None, 0.2, math.inf)
+    row = replace(
+        made.odds_row("material", start, level, per_step=False),
+        log_odds_ratio=log, odds_ratio=as_ratio(log),
+    )  # fmt: skip
+    answer = made.odds_answer(row)
+    answer = replace(answer, subject=replace(answer.subject, predictors=(made.AGE, material)))
+    assert "all 7" in str(po.words(answer))
+    told = str(po.words(guarded(answer)))
+    assert "all 7" not in told
+    assert "none of the" not in told
 
 
 def test_with_a_smallest_cell_of_one_nothing_changes():

@@ -6,6 +6,7 @@ import statsmodels.formula.api as smf
 
 import plainodds as po
 from plainodds.answers.odds import OddsQuestion
+from plainodds.drawings.odds_table import OddsTableDrawing
 from plainodds.views.odds import odds_table
 from tests.views.frontend import control_of, text_of
 from tests.views.test_curve import choose, labels
@@ -245,3 +246,31 @@ def test_an_odds_ratio_without_a_finite_estimate_has_no_figure_in_the_table(main
     robust = smf.glm("burst ~ bad", separated, family=sm.families.Binomial()).fit(cov_type="HC1")
     ((_, figure, interval, _),) = cells(odds_table(po.FittedLogit(robust).odds()))
     assert (figure, interval) == ("no finite value", "not known")
+
+
+def test_the_picture_may_be_the_printed_table(fit, page):
+    view = po.OddsView(fit)
+    built = view._stage._picture.structure
+    choose(page, control_of(view, "layout"), "table")
+    assert view.question == OddsQuestion(layout="table")
+    assert view._stage._picture.structure[0] is OddsTableDrawing
+    assert view._stage._picture.structure != built
+    assert view.answer.rows == po.FittedLogit.odds(fit).rows
+    choose(page, control_of(view, "layout"), "changes")
+    assert view.question == OddsQuestion()
+    assert view._stage._picture.structure == built
+
+
+def test_another_layout_needs_no_refit_of_likelihood_intervals(fit, page, monkeypatch):
+    question = OddsQuestion(predictors=("past_repairs",), interval="likelihood")
+    view = po.OddsView(fit, question)
+    before = view.answer
+
+    def refused(*_):
+        raise AssertionError("it was refitted")
+
+    monkeypatch.setattr("plainodds.views.odds.answer_odds", refused)
+    choose(page, control_of(view, "layout"), "table")
+    assert view.question.layout == "table"
+    assert view.answer.rows == before.rows
+    assert text_of(view._messages.value) == ""
