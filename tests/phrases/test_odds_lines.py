@@ -4,6 +4,7 @@ from dataclasses import replace
 
 import pytest
 
+import plainodds as po
 from plainodds.phrases.joined_tests import joined_test, statistic_words
 from plainodds.phrases.numbers import Marks, marking
 from plainodds.phrases.odds_lines import Counts, odds_lines
@@ -131,3 +132,30 @@ def test_a_test_is_named_and_follows_the_marks_of_numbers():
     assert told.startswith("Likelihood-ratio test that no term joins pipe age and material: χ²")
     with marking(Marks(",", ".")):
         assert "χ² = 6,93" in joined_test(answer.subject, names, test)
+
+
+def test_the_caption_says_what_the_printed_table_has_more_of():
+    answer = made.odds_printed()
+    told = po.caption(answer)
+    assert "Counted beside each level: events and pipes." in told
+    assert "Tests of interaction are of all terms that the two predictors share." in told
+    assert "Counted" not in po.caption(made.odds_answer())
+    assert "Counted" not in po.caption(made.odds_printed(counts=False))
+    with po.writing("de"):
+        assert "Neben jeder Stufe gezählt: Ereignisse und pipes." in po.caption(answer)
+
+
+@pytest.mark.parametrize(
+    ("language", "words"),
+    [
+        ("en", "Wald test that no term joins pipe age and material: χ² = 6.93 on 2 degrees of "
+               "freedom, p-value 0.031"),
+        ("de", "χ² = 6,93 bei 2 Freiheitsgraden, p-Wert 0,031"),
+    ],
+)  # fmt: skip
+def test_technical_words_tell_the_test_with_its_statistic(language, words):
+    answer, models = made.odds_printed(), made.odds_printed(made.odds_of_models())
+    with po.writing(language):
+        assert words in str(po.words(answer, "technical"))
+        assert words not in str(po.words(answer))
+        assert str(po.words(models, "technical")).count("χ²") == 2

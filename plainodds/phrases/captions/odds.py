@@ -6,6 +6,7 @@ from plainodds.answers.odds import OddsAnswer
 from plainodds.phrases.captions.caption import caption
 from plainodds.phrases.captions.parts import fitted_words, interval_words, joined
 from plainodds.phrases.labels import listed
+from plainodds.phrases.odds_lines import odds_lines
 from plainodds.phrases.units import tidy
 
 __all__: list[str] = []
@@ -25,9 +26,25 @@ def _(answer: OddsAnswer) -> str:
         f"Odds ratios of {tidy(subject.outcome.event)}, each for the change that stands beside it",
         intervals if subject.no_interval else f"{intervals} {kind}",
         "The scale is logarithmic; at 1 the odds are the same before and after the change",
+        *_printed(answer),
         _given(answer),
         models,
         fitted_words(subject),
+    )
+
+
+def _printed(answer: OddsAnswer) -> tuple[str, ...]:
+    """What stands in the printed table and in no other layout."""
+    if answer.question.layout != "table":
+        return ()
+    counts = [line.counts for line in odds_lines(answer) if line.counts is not None]
+    events = "events and " if any(each.events is not None for each in counts) else ""
+    cases = tidy(answer.subject.outcome.cases)
+    return (
+        f"Counted beside each level: {events}{cases}" if counts else "",
+        "Tests of interaction are of all terms that the two predictors share"
+        if answer.interactions
+        else "",
     )
 
 

@@ -16,6 +16,7 @@ from plainodds.phrases.german.parts import EVERYTHING, cases, chance, event, who
 from plainodds.phrases.german.texts import fitted, intervals_shown, joined, rest
 from plainodds.phrases.labels import listed, predictor_name
 from plainodds.phrases.moves import moves_words, settled_moves
+from plainodds.phrases.odds_lines import odds_lines
 from plainodds.phrases.pair_labels import has_others
 from plainodds.phrases.units import tidy
 from plainodds.values import Pairs
@@ -110,6 +111,21 @@ def _(answer: EffectsAnswer) -> str:
     )
 
 
+def _printed(answer: OddsAnswer) -> tuple[str, ...]:
+    """What stands in the printed table and in no other layout."""
+    if answer.question.layout != "table":
+        return ()
+    counts = [line.counts for line in odds_lines(answer) if line.counts is not None]
+    events = "Ereignisse und " if any(each.events is not None for each in counts) else ""
+    cases = tidy(answer.subject.outcome.cases)
+    return (
+        f"Neben jeder Stufe gezählt: {events}{cases}" if counts else "",
+        "Wechselwirkungen sind mit allen Termen geprüft, die zwei Merkmale teilen"
+        if answer.interactions
+        else "",
+    )
+
+
 @GERMAN.caption.register
 def _(answer: OddsAnswer) -> str:
     question, subject = answer.question, answer.subject
@@ -130,6 +146,7 @@ def _(answer: OddsAnswer) -> str:
         "die daneben steht",
         intervals if subject.no_interval else f"{intervals} {kind}",
         "Die Achse ist logarithmisch; bei 1 ist die Chance (Odds) vor und nach der Änderung gleich",
+        *_printed(answer),
         given,
         models,
         fitted(subject),
