@@ -18,6 +18,7 @@ from plainodds.drawings.odds_table_axis import extent_of
 from plainodds.drawings.odds_table_columns import columns_of
 from plainodds.drawings.theme import theme_of
 from plainodds.phrases.odds_lines import odds_lines
+from plainodds.phrases.writing import writing
 from tests.drawings import made
 from tests.drawings.seen import assert_readable, boxes_on, words_on
 
@@ -343,3 +344,14 @@ def test_no_text_meets_another_and_none_leaves_the_picture(
     assert_readable(drawing.axes.get_figure())
     columns = columns_of(drawing._answer, odds_lines(drawing._answer), PAGE, width)
     assert columns.plot_width > 4 * PAGE.font_size
+
+
+def test_figures_stay_in_line_with_a_decimal_comma():
+    answer = made.odds_printed()
+    with writing(decimal=",", thousands="."):
+        drawing = drawn(answer)
+        told = words(drawing)
+    assert "1,51 (1,17 to 1,94)" in told
+    assert "262 / 2.350" in told
+    heads = [text.get_text().partition(" (")[0] for (text,) in drawing._figures if text.get_text()]
+    assert len({len(head) for head in heads}) == 1
