@@ -37,7 +37,7 @@ VIEWS = {
     "profile": "po.ProfileView(fit)",
     "effects": "po.EffectsView(fit)",
     "change": "po.ChangeView(fit, fit.change('group', BAD, 'a').question)",
-    "soundness": "po.SoundnessView(fit, fit.soundness(show='shape').question)",
+    "soundness": "po.SoundnessView(fit, fit.soundness(show='influence').question)",
 }
 
 
