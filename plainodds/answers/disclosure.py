@@ -49,7 +49,11 @@ def guarded(answer: Answer, smallest_cell: int = SMALLEST_CELL) -> Answer:
     ------
     QuestionRefused
         If it is no whole number of at least 1.
+    TypeError
+        If it is no answer.
     """
+    if not isinstance(answer, Answer):
+        raise TypeError(f"{type(answer).__name__} is not an answer of plainodds.")
     if isinstance(smallest_cell, bool) or not isinstance(smallest_cell, int) or smallest_cell < 1:
         raise QuestionRefused(
             f"smallest_cell={smallest_cell!r}: state the smallest count that may leave, a whole "

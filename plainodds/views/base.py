@@ -314,12 +314,20 @@ class AnswerView(widgets.VBox):
             self._redraw(question, edited)
         self._messages.value = markup.notice(remark, is_problem=False)
 
-    def _redraw(self, question: Any, edited: Control | None = None) -> None:
+    def _redraw(
+        self, question: Any, edited: Control | None = None, before: Any | None = None
+    ) -> None:
+        """Show a question's answer, and set those controls that show something else.
+
+        A control may have been changed that waits for its turn on another thread: so what
+        controls show already (`before`; default: what is wanted) is not written to them.
+        """
+        before = self._wanted if before is None else before
         answer = self._ask(question)
         # everything that can fail comes before anything that can be seen
         shown = self._stage.taken(answer)
         said, listed = self._words_of(answer), self._table_of(answer)
-        before, self._question = self._question, question
+        self._question = question
         with self._quietly():
             self._arrange(question)
             for binding in self._bindings.values():

@@ -23,6 +23,12 @@ FINDINGS_STYLE = """
 }
 .plainodds-view .plainodds-weighs > .jupyter-button.jupyter-button,
 .plainodds-view .plainodds-chosen > .jupyter-button.jupyter-button { font-weight: 600; }
+.plainodds-view .plainodds-finding > .jupyter-button.jupyter-button:focus {
+  outline: none !important; box-shadow: none;
+}
+.plainodds-view .plainodds-finding:has(> .jupyter-button:focus-visible) {
+  outline: 2px solid var(--plainodds-focus); outline-offset: -2px;
+}
 /* the whole card is the button */
 .plainodds-view .plainodds-finding > .jupyter-button::after {
   content: ""; position: absolute; inset: 0; z-index: 1;
@@ -45,7 +51,10 @@ FINDINGS_STYLE = """
   color: var(--plainodds-ink); text-align: left; overflow: visible;
 }
 .plainodds-soundness .plainodds-stage .widget-dropdown > select { flex: 0 1 260px; }
-.plainodds-soundness .plainodds-stage { min-height: 44px; }
+.plainodds-soundness :is(.plainodds-ahead, .plainodds-beside):empty { display: none; }
+.plainodds-soundness .plainodds-beside:has(> .plainodds-work:empty) { display: none; }
+.plainodds-soundness .plainodds-begin { align-self: flex-start; }
+.plainodds-soundness .plainodds-work { position: static; align-self: flex-start; }
 .plainodds-soundness .plainodds-table th[scope="row"] { min-width: 9em; }
 .plainodds-view summary { cursor: pointer; font-weight: 600; padding: 3px 0; }
 .plainodds-view summary:focus-visible {

@@ -28,6 +28,8 @@ _USUAL_REPEATS = {"none": 200, "bootstrap": 200, "cross-validation": 20}
 class OptimismPart:
     """The drop-down of ways to find the fit's own optimism, and how often it is fitted.
 
+    Whoever asks for it is shown the finding that tells of it.
+
     Parameters
     ----------
     bind : callable
@@ -57,7 +59,8 @@ class OptimismPart:
 def _with_way(question: SoundnessQuestion, way: Any) -> SoundnessQuestion:
     if way == question.optimism:
         return question
-    return replace(question, optimism=way, repeats=_USUAL_REPEATS[way])
+    changed = replace(question, optimism=way, repeats=_USUAL_REPEATS[way])
+    return changed if way == "none" else replace(changed, show="calibration", predictor="")
 
 
 def _with_repeats(question: SoundnessQuestion, repeats: Any) -> SoundnessQuestion:
@@ -67,6 +70,8 @@ def _with_repeats(question: SoundnessQuestion, repeats: Any) -> SoundnessQuestio
 
 class GroupsPart:
     """The drop-down of columns that may tell which rows belong together.
+
+    Whoever names one is shown the finding that tells of it.
 
     Parameters
     ----------
@@ -100,4 +105,6 @@ class GroupsPart:
 
 
 def _with_groups(question: SoundnessQuestion, groups: Groups | None) -> SoundnessQuestion:
-    return replace(question, groups=groups)
+    if groups is None or groups == question.groups:
+        return replace(question, groups=groups)
+    return replace(question, groups=groups, show="dependence", predictor="")

@@ -29,7 +29,7 @@ from plainodds.views.lock import LOCK
 from plainodds.views.long_work import Work
 from plainodds.views.looking import GroupsPart, OptimismPart
 from plainodds.views.markup import Column, Markup, Row
-from plainodds.views.parts import html, titled
+from plainodds.views.parts import block, fill, html, titled
 from plainodds.views.patient import PatientView
 from plainodds.views.sketched import MANY_ROWS
 from plainodds.views.style import STYLE
@@ -112,18 +112,20 @@ class SoundnessView(PatientView):
         self._optimism = OptimismPart(self._bind)
         self._groups = GroupsPart(model, self._bind, self._handed_over)
         level = self._level_control()
+        self._beside, self._ahead = block(name="beside"), block(name="ahead")
         settings = titled(
             "How it is looked at",
             *self._groups.widgets,
             *self._optimism.widgets,
             level.widget,
+            self._beside,
             name="settings",
         )
         self._begin = self._button("Look at the fit", "begin", lambda question: question)
         return [self._list.widget, settings]
 
     def _on_stage(self) -> list[widgets.Widget]:
-        return [self._begin, self._whose.place, *super()._on_stage()]
+        return [self._begin, self._ahead, self._whose.place, self._stage.widget]
 
     def _beneath(self) -> list[widgets.Widget]:
         self._for_analysts = html("analysts")
@@ -142,6 +144,9 @@ class SoundnessView(PatientView):
         display = None if there_is_one else "none"
         for each in (self._stage.widget, self._extras.widget, self._list.widget):
             each.layout.display = display
+        # a first look is all there is to see; later the bar stands by what started the work
+        fill(self._ahead, [] if there_is_one else [self._work.widget])
+        fill(self._beside, [self._work.widget] if there_is_one else [])
 
     # the question
 
@@ -169,7 +174,7 @@ class SoundnessView(PatientView):
             # what is wanted is under way already, and what there is can be shown meanwhile
             self._waiting = question
             shown = replace(self._question, show=question.show, predictor=question.predictor)
-            self._redraw(shown, edited)
+            self._redraw(shown, edited, before=self._question)
         else:
             super()._show(question, remark, edited)
         with self._quietly():

@@ -38,7 +38,7 @@ VIEWS = {
     "effects": "po.EffectsView(fit)",
     "change": "po.ChangeView(fit, fit.change('group', BAD, 'a').question)",
     "pair": "po.PairView(fit, fit.pair(BAD, 'group', a_values=(40.0, 60.0)).question)",
-    "soundness": "po.SoundnessView(fit, fit.soundness(show='shape').question)",
+    "soundness": "po.SoundnessView(fit, fit.soundness(show='influence').question)",
 }
 
 

@@ -2,6 +2,7 @@
 
 import re
 import threading
+import time
 from dataclasses import replace
 from html import unescape
 
@@ -264,7 +265,6 @@ def test_a_column_of_the_data_tells_which_rows_belong_together(view, sound, page
     assert labels(control) == [
         "nobody has said", "by x", "by w", "by count", "by group", "by clinic",
     ]  # fmt: skip
-    page.press(card_of(view, "dependence").button)
     choose(page, control, view.fit.soundness(groups="clinic").question.groups)
     assert view.problem is None
     assert view.answer == sound.soundness(groups="clinic", show="dependence")
@@ -293,7 +293,7 @@ def test_groups_may_be_handed_over_as_a_column_or_as_values(sound, page):
     choose(page, control, None)
     assert by_value.answer == sound.soundness(level=0.9)
     choose(page, control, control._options[1][1])
-    assert by_value.answer == sound.soundness(groups=values, level=0.9)
+    assert by_value.answer == sound.soundness(groups=values, level=0.9, show="dependence")
 
 
 def test_groups_that_cannot_be_read_are_refused_at_once(sound, page):
@@ -379,8 +379,7 @@ def test_optimism_is_found_beside_the_page(view, sound, page):
     page.change(control_of(view, "repeats").widget, value=3.0)
     view._work.wait()
     assert view.problem is None
-    assert view.answer == sound.soundness(optimism="bootstrap", repeats=3)
-    page.press(card_of(view, "calibration").button)
+    assert view.answer == sound.soundness(optimism="bootstrap", repeats=3, show="calibration")
     assert "corrected for optimism" in read(view._table.value)
 
 
@@ -412,17 +411,40 @@ def test_stopping_keeps_what_is_shown_and_puts_controls_back(view, page, slow):
 
 def test_meanwhile_another_finding_is_shown_at_once_and_the_work_goes_on(view, page, slow):
     begin(view, page, slow)
-    page.press(card_of(view, "calibration").button)
-    assert view.question == SoundnessQuestion(show="calibration")
-    assert [card._entry.first.topic for card in chosen(view)] == ["calibration"]
+    page.press(card_of(view, "discrimination").button)
+    assert view.question == SoundnessQuestion(show="discrimination")
+    assert [card._entry.first.topic for card in chosen(view)] == ["discrimination"]
     assert control_of(view, "optimism").value == "cross-validation"
     assert view._work.key is not None
     slow.go_on.set()
     view._work.wait()
     assert len(slow.asked) == 1
     assert view.question == SoundnessQuestion(
-        show="calibration", optimism="cross-validation", repeats=20
+        show="discrimination", optimism="cross-validation", repeats=20
     )
+
+
+def test_a_change_that_comes_while_the_result_is_drawn_is_not_lost(view, page, slow, monkeypatch):
+    repeats = control_of(view, "repeats").widget
+    other = threading.Thread(target=page.change, args=(repeats,), kwargs={"value": 30.0})
+    show = Picture.show
+
+    def interrupted(picture, answer):
+        if not other.ident:
+            other.start()
+            # the number has arrived and waits for its turn
+            while repeats.value != 30:
+                time.sleep(0.01)
+        show(picture, answer)
+
+    monkeypatch.setattr(Picture, "show", interrupted)
+    begin(view, page, slow)
+    slow.go_on.set()
+    view._work.wait()
+    other.join(WAIT)
+    view._work.wait()
+    assert repeats.value == 30
+    assert view.question.repeats == 30
 
 
 def test_going_back_and_forth_computes_nothing_again(view, page, slow):
@@ -430,7 +452,7 @@ def test_going_back_and_forth_computes_nothing_again(view, page, slow):
     begin(view, page, slow)
     view._work.wait()
     choose(page, control_of(view, "optimism"), "none")
-    assert view.question == SoundnessQuestion()
+    assert view.question == SoundnessQuestion(show="calibration")
     choose(page, control_of(view, "optimism"), "cross-validation")
     view._work.wait()
     assert view.question.optimism == "cross-validation"
@@ -505,6 +527,7 @@ def test_a_view_of_many_rows_opens_at_once_and_the_findings_come_when_they_are_f
     view, slow = opening
     assert view.answer is None
     assert "400 rows" in read(view._work._said.value)
+    assert view._work.widget in view._ahead.children
     assert view._list.widget.layout.display == "none"
     assert view._extras.widget.layout.display == "none"
     slow.go_on.set()
@@ -513,6 +536,7 @@ def test_a_view_of_many_rows_opens_at_once_and_the_findings_come_when_they_are_f
     assert view.answer == sound.soundness(show="calibration")
     assert view._list.widget.layout.display is None
     assert view._extras.widget.layout.display is None
+    assert (view._ahead.children, view._beside.children) == ((), (view._work.widget,))
     assert view._begin.layout.display == "none"
 
 
