@@ -9,9 +9,16 @@ from dataclasses import replace
 import numpy as np
 from numpy.typing import NDArray
 
-from plainodds.answers.bounded import as_ratio, limits_of, unbounded_estimate, unbounded_p_value
+from plainodds.answers.bounded import (
+    as_ratio,
+    ends_are_quick,
+    limits_of,
+    unbounded_estimate,
+    unbounded_p_value,
+)
 from plainodds.answers.changes import OddsQuestion, OddsRow, changes_asked, contrasts_of
 from plainodds.answers.delta import Intervals, checked_level, mapped, p_values, wald
+from plainodds.answers.estimate import Estimate
 from plainodds.answers.likelihood import likelihood_of
 from plainodds.answers.odds_interactions import InteractionTest, interaction_tests
 from plainodds.answers.progress import Progress, silent
@@ -94,11 +101,12 @@ def answer_odds(
         logs, tests = _by_likelihood(model, logs, contrasts, limits, level, progress)
     elif question.interval != "wald":
         raise QuestionRefused(f"interval={question.interval!r}: choose 'wald' or 'likelihood'.")
+    unasked = question.interval == "wald" and not ends_are_quick(model, np.count_nonzero(limits))
     ratios = mapped(logs, odds_from_linear_predictor, odds_from_linear_predictor)
     rows = tuple(
         replace(row, odds_ratio=ratios.at(i), log_odds_ratio=logs.at(i), p_value=p)
         if limits[i] == 0
-        else _unbounded(model, row, contrasts[i], float(limits[i]), level)
+        else _unbounded(model, row, contrasts[i], float(limits[i]), None if unasked else level)
         for i, (row, p) in enumerate(zip(changes, tests, strict=True))
     )
     interactions = interaction_tests(model, rows, question.interval)
@@ -120,9 +128,12 @@ def _size(row: OddsRow) -> tuple[bool, float]:
 
 
 def _unbounded(
-    model: FittedModel, row: OddsRow, contrast: Floats, limit: float, level: float
+    model: FittedModel, row: OddsRow, contrast: Floats, limit: float, level: float | None
 ) -> OddsRow:
-    """A row whose odds ratio has no finite estimate."""
+    """A row whose odds ratio has no finite estimate; without a level its interval is left out."""
+    if level is None:
+        log = Estimate(limit, None, None, None)
+        return replace(row, odds_ratio=as_ratio(log), log_odds_ratio=log, p_value=None)
     log = unbounded_estimate(model, contrast, limit, level)
     return replace(
         row,

@@ -1,6 +1,7 @@
 """Odds ratios of stated changes."""
 
 import numpy as np
+import pandas as pd
 import pytest
 import statsmodels.api as sm
 import statsmodels.formula.api as smf
@@ -169,3 +170,30 @@ def test_what_cannot_be_answered_is_refused_with_the_way_out(fit, asked, words):
         fit.odds(**asked)
     for word in words:
         assert word in str(refusal.value)
+
+
+def test_many_ends_without_a_finite_estimate_are_left_out_unless_asked_for(monkeypatch):
+    rng = np.random.default_rng(3)
+    place = np.repeat([f"p{i}" for i in range(8)], 15)
+    x = rng.normal(size=len(place))
+    y = (rng.uniform(size=len(place)) < 0.4).astype(int)
+    y[np.isin(place, ["p1", "p2"])] = 1
+    data = pd.DataFrame({"x": x, "place": place, "y": y})
+    result = smf.glm("y ~ x + place", data, family=sm.families.Binomial()).fit()
+
+    def row(answer, level):
+        return next(each for each in answer.rows if each.end == level)
+
+    told = row(po.FittedLogit(result).odds(), "p1")
+    assert told.odds_ratio.estimate == np.inf
+    assert 1 < told.odds_ratio.lower < np.inf
+    monkeypatch.setattr("plainodds.answers.bounded._DEAREST", 10.0)
+    fit = po.FittedLogit(result)
+    left_out = row(fit.odds(), "p1")
+    assert left_out.odds_ratio.estimate == np.inf
+    assert (left_out.odds_ratio.lower, left_out.p_value) == (None, None)
+    assert "finite end is missing" in str(po.words(fit.odds()))
+    assert row(fit.odds(interval="likelihood"), "p1").odds_ratio.lower == pytest.approx(
+        told.odds_ratio.lower, rel=1e-6
+    )
+    po.draw(fit.odds())
