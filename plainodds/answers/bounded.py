@@ -57,7 +57,7 @@ def limits_of(model: FittedModel, contrasts: Floats) -> Floats:
 def ends_are_quick(model: FittedModel, number: int) -> bool:
     """Whether the finite ends of so many unbounded contrasts can be found in a few seconds."""
     rows, columns = model.sample.matrix.shape
-    return rows * columns**2 * number <= _DEAREST
+    return bool(rows * columns**2 * number <= _DEAREST)
 
 
 def unbounded_estimate(

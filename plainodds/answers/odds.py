@@ -101,7 +101,7 @@ def answer_odds(
         logs, tests = _by_likelihood(model, logs, contrasts, limits, level, progress)
     elif question.interval != "wald":
         raise QuestionRefused(f"interval={question.interval!r}: choose 'wald' or 'likelihood'.")
-    unasked = question.interval == "wald" and not ends_are_quick(model, np.count_nonzero(limits))
+    unasked = question.interval == "wald" and not ends_are_quick(model, int((limits != 0).sum()))
     ratios = mapped(logs, odds_from_linear_predictor, odds_from_linear_predictor)
     rows = tuple(
         replace(row, odds_ratio=ratios.at(i), log_odds_ratio=logs.at(i), p_value=p)
