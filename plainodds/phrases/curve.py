@@ -6,6 +6,7 @@ from collections.abc import Sequence
 
 from plainodds.answers.curve import CurveAnswer, CurveLine
 from plainodds.phrases.alternative import alternative
+from plainodds.phrases.choices.concerns import curve_spoken_of
 from plainodds.phrases.choices.curve import (
     LISTED_AT_MOST,
     as_chances,
@@ -63,13 +64,7 @@ def _plain(answer: CurveAnswer) -> Words:
 
 
 def _words(answer: CurveAnswer, told: Sequence[str]) -> Words:
-    question = answer.question
-    spoken_of = [
-        pair
-        for line in answer.lines
-        for pair in ((question.by, line.by), *((question.predictor, at) for at in line.at))
-    ]
-    levels = level_cautions(answer.subject, spoken_of)
+    levels = level_cautions(answer.subject, curve_spoken_of(answer))
     cautions = map(sentence, (*beyond_words(answer), *levels, association(answer.subject)))
     return Words(
         tuple(map(sentence, told)),

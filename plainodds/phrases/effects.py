@@ -6,6 +6,7 @@ from plainodds.answers.effects import EffectRow, EffectsAnswer
 from plainodds.model.predictors import PredictorFacts
 from plainodds.phrases.alternative import alternative
 from plainodds.phrases.averaged import cases_chosen, drawn_method, drawn_words, rows_chosen
+from plainodds.phrases.choices.concerns import effects_spoken_of
 from plainodds.phrases.choices.effects import (
     effects_averaged,
     groups_counted,
@@ -72,14 +73,8 @@ def _plain(answer: EffectsAnswer) -> Words:
 
 def _words(answer: EffectsAnswer, told: list[str], more: list[str]) -> Words:
     held, subject = not effects_averaged(answer), answer.subject
-    spoken_of = [
-        pair
-        for row in answer.rows
-        for pair in (
-            (row.predictor, row.end), (row.predictor, row.start), (answer.question.by, row.by)
-        )
-    ]  # fmt: skip
-    cautions = (association(subject), *level_cautions(subject, spoken_of), *more)
+    levels = level_cautions(subject, effects_spoken_of(answer))
+    cautions = (association(subject), *levels, *more)
     return Words(
         tuple(map(sentence, told)),
         (*map(sentence, cautions), *model_cautions(subject, offset_held=held)),

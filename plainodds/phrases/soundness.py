@@ -11,15 +11,13 @@ from plainodds.phrases.checks.headings import concern_label
 from plainodds.phrases.checks.overall import OVERALL_LIMITS
 from plainodds.phrases.checks.pictures import picture_words
 from plainodds.phrases.checks.plainly import plain_sentences
+from plainodds.phrases.choices.checks import findings_told, how_many
 from plainodds.phrases.labels import listed, sentence_case
 from plainodds.phrases.numbers import count
 from plainodds.phrases.parts import sentence
 from plainodds.phrases.saying import Audience, Words, for_audience, words
 
 __all__ = ["summary"]
-
-_TOLD_AT_MOST = 3
-_WEIGHTY = ("keep in mind", "don't explain yet")
 
 _LOOKED_AT = (
     "A check that finds nothing says only that these data do not show it; whether the predictors "
@@ -41,8 +39,8 @@ def summary(answer: SoundnessAnswer) -> str:
         "Of 13 checks, 1 needs keeping in mind and 1 could not be made; nothing that was
         looked at speaks against explaining this fit."
     """
-    every, heavy = len(answer.findings), _how_many(answer, "don't explain yet")
-    mind, unknown = _how_many(answer, "keep in mind"), _how_many(answer, "not known")
+    every, heavy = len(answer.findings), how_many(answer, "don't explain yet")
+    mind, unknown = how_many(answer, "keep in mind"), how_many(answer, "not known")
     if every == unknown:
         return "None of the checks could be made, so whether to explain this fit is not known."
     others = []
@@ -60,16 +58,11 @@ def summary(answer: SoundnessAnswer) -> str:
     return sentence(f"{of}, all found nothing to keep in mind; {nothing}")
 
 
-def _how_many(answer: SoundnessAnswer, concern: str) -> int:
-    return sum(each.concern == concern for each in answer.findings)
-
-
 def _plain(answer: SoundnessAnswer) -> Words:
-    heaviest = [each for each in answer.findings if each.concern in _WEIGHTY]
+    shown, left = findings_told(answer)
     told = [summary(answer)]
-    for each in heaviest[:_TOLD_AT_MOST]:
+    for each in shown:
         told += plain_sentences(each, answer.subject, answer.question.level)
-    left = len(heaviest) - _TOLD_AT_MOST
     if left > 0:
         more = "1 more finding is" if left == 1 else f"{count(left)} more findings are"
         told.append(f"{more} told in the words for analysts.")

@@ -18,6 +18,7 @@ __all__ = [
     "UNBOUNDED_NOTE",
     "has_finite_estimate",
     "odds_ratio_figures",
+    "one_outcome",
     "one_outcome_told",
     "profile_unbounded_cautions",
     "ratio_or_none",
@@ -133,22 +134,32 @@ def why_unbounded(answer: OddsAnswer, row: OddsRow) -> str:
     )
 
 
-def one_outcome_told(subject: Subject, name: str, level: Scalar) -> str:
-    """Said of a level all of whose cases had the same outcome; else empty."""
+def one_outcome(subject: Subject, name: str, level: Scalar) -> tuple[int, bool] | None:
+    """How many cases a level has and whether all had the event; None unless all or none had."""
     facts = subject.predictor(name)
     if level not in facts.levels or not facts.level_events:
-        return ""
+        return None
     place = facts.levels.index(level)
     cases, share = facts.level_cases[place], facts.level_events[place]
     number, share = round(cases), share / cases if cases else 0.5
     if number < 1 or math.isnan(share) or 1e-9 < share < 1 - 1e-9:
+        return None
+    return number, share > 0.5
+
+
+def one_outcome_told(subject: Subject, name: str, level: Scalar) -> str:
+    """Said of a level all of whose cases had the same outcome; else empty."""
+    found = one_outcome(subject, name, level)
+    if found is None:
         return ""
+    number, with_event = found
+    facts = subject.predictor(name)
     whom = f"with {predictor_name(facts)} {value_label(facts, level)}"
     if number == 1:
-        had = "had" if share > 0.5 else "did not have"
+        had = "had" if with_event else "did not have"
         return f"the only {tidy(subject.outcome.case)} {whom} {had} the event"
     many = f"{count(number)} {tidy(subject.outcome.cases)} {whom} had the event"
-    return f"all {many}" if share > 0.5 else f"none of the {many}"
+    return f"all {many}" if with_event else f"none of the {many}"
 
 
 def unbounded_cautions(answer: OddsAnswer) -> tuple[str, ...]:

@@ -5,9 +5,9 @@ from __future__ import annotations
 import math
 
 from plainodds.answers.checks.finding import Finding
-from plainodds.answers.checks.shape import gap_that_matters
 from plainodds.model.predictors import Subject
 from plainodds.phrases.checks.parts import because, gap
+from plainodds.phrases.choices.checks import verdict_of
 from plainodds.phrases.numbers import p_value
 
 __all__ = ["IN_SAMPLE", "apart", "judged"]
@@ -34,12 +34,10 @@ def judged(size: float, p: float, finding: Finding, subject: Subject, bends: boo
         Whether the gap raised a concern.
     """
     test = "" if math.isnan(p) else f" (p-value {p_value(p)})"
-    if bends:
-        return f", more than chance would explain{test}"
-    if size <= gap_that_matters(subject.outcome.share):
-        return f", too little to change an explanation{test}"
-    if test:
-        return f", which chance alone may explain{test}"
-    if finding.unknown == "no likelihood":
-        return f"; whether that is more than chance is not known{because(finding.unknown)}"
-    return "; the model leaves no other shape to test against"
+    return {
+        "more than chance": f", more than chance would explain{test}",
+        "too little": f", too little to change an explanation{test}",
+        "maybe chance": f", which chance alone may explain{test}",
+        "not known": f"; whether that is more than chance is not known{because(finding.unknown)}",
+        "nothing to test": "; the model leaves no other shape to test against",
+    }[verdict_of(size, p, finding, subject, bends)]

@@ -2,8 +2,6 @@
 
 from __future__ import annotations
 
-import math
-
 from plainodds.answers.checks.dependence import DependenceEvidence, StandardErrorPair
 from plainodds.answers.checks.finding import Finding
 from plainodds.model.predictors import Subject
@@ -15,6 +13,7 @@ from plainodds.phrases.checks.finding_words import (
     made,
 )
 from plainodds.phrases.checks.parts import amount, because, counted, rows
+from plainodds.phrases.choices.checks import farthest_pair
 from plainodds.phrases.numbers import ratio
 from plainodds.phrases.units import tidy
 
@@ -41,7 +40,7 @@ def _what(evidence: DependenceEvidence, finding: Finding) -> str:
         f"the {rows(evidence.rows)} belong to {groups} by {by}, the largest of them with "
         f"{rows(evidence.largest)}"
     )
-    worst = _farthest(evidence)
+    worst = farthest_pair(evidence)
     if evidence.already:
         what += f"; {_ALREADY}"
     elif worst is None:
@@ -61,17 +60,6 @@ def _what(evidence: DependenceEvidence, finding: Finding) -> str:
 
 def _sizes(pair: StandardErrorPair) -> str:
     return f"{ratio(pair.by_groups)} rather than {ratio(pair.model_based)}"
-
-
-def _farthest(evidence: DependenceEvidence) -> StandardErrorPair | None:
-    known = [
-        pair for pair in evidence.standard_errors if pair.model_based > 0 and pair.by_groups > 0
-    ]
-    # nobody asks for the intercept's
-    known = [pair for pair in known if pair.predictors] or known
-    return max(
-        known, key=lambda pair: abs(math.log(pair.by_groups / pair.model_based)), default=None
-    )
 
 
 def _next(evidence: DependenceEvidence, finding: Finding) -> str:

@@ -15,6 +15,7 @@ from plainodds.phrases.checks.finding_words import (
     made,
 )
 from plainodds.phrases.checks.parts import amount, cases, counted, short_list
+from plainodds.phrases.choices.checks import example_of, ratio_without
 from plainodds.phrases.labels import (
     from_to,
     given_clause,
@@ -28,15 +29,13 @@ from plainodds.phrases.units import tidy
 __all__ = ["moved_by_few", "moved_words", "pattern_words"]
 
 _LABELS_AT_MOST = 3
-# who raises a concern has few cases: so many, or so large a share of all
-_FEW_CASES, _FEW_SHARE = 2.0, 0.01
 
 
 @evidence_words.register
 def _(
     evidence: InfluenceEvidence, finding: Finding, subject: Subject, level: float
 ) -> FindingWords:
-    example = _example(evidence, finding, subject)
+    example = example_of(evidence, finding, subject)
     told = "" if example is None else _without(*example, subject)
     patterns = counted(evidence.patterns, "kind of row", "different rows")
     if finding.concern == "nothing found":
@@ -65,45 +64,11 @@ def _(
 
 def moved_by_few(evidence: InfluenceEvidence, finding: Finding, subject: Subject) -> str:
     """What an odds ratio is without some rows, whose labels are not told; empty where unknown."""
-    example = _example(evidence, finding, subject)
+    example = example_of(evidence, finding, subject)
     if example is None:
         return ""
     pattern, moved = example
     return f"without {cases(subject, pattern.cases)}, {moved_words(moved, subject)}"
-
-
-def _example(
-    evidence: InfluenceEvidence, finding: Finding, subject: Subject
-) -> tuple[InfluentialPattern, Moved] | None:
-    """The pattern that moves an odds ratio farthest, in the way that the finding speaks of."""
-    most = max(_FEW_CASES, _FEW_SHARE * subject.rows)
-    moves = [
-        (pattern, moved)
-        for pattern in evidence.standing_out
-        for moved in pattern.moved
-        if _far(moved) > 0 and (moved.predictor in finding.about or not finding.about)
-    ]
-    few = [each for each in moves if each[0].cases <= most]
-    moves = few or (moves if finding.reasons else [])
-    if "turns an odds ratio" in finding.reasons:
-        moves = [each for each in moves if _turns(each[1])] or moves
-    return max(moves, key=lambda each: _far(each[1]), default=None)
-
-
-def _after(moved: Moved) -> float:
-    """The odds ratio without the pattern: refitted, or else by one step."""
-    return moved.one_step if math.isnan(moved.refitted) else moved.refitted
-
-
-def _far(moved: Moved) -> float:
-    before, after = moved.odds_ratio, _after(moved)
-    if not (before > 0 and after > 0) or math.isinf(before):
-        return 0.0
-    return abs(math.log(after / before))
-
-
-def _turns(moved: Moved) -> bool:
-    return (moved.odds_ratio - 1) * (_after(moved) - 1) < 0
 
 
 def _without(pattern: InfluentialPattern, moved: Moved, subject: Subject) -> str:
@@ -136,7 +101,7 @@ def moved_words(moved: Moved, subject: Subject) -> str:
         end, start = value_label(facts, moved.end), value_label(facts, moved.start)
         change = f"{predictor_name(facts)} {end} against {start}"
     given = f", {given_clause(subject, moved.given)}," if moved.given else ""
-    before, after = ratio(moved.odds_ratio), ratio(_after(moved))
+    before, after = ratio(moved.odds_ratio), ratio(ratio_without(moved))
     how = "about " if math.isnan(moved.refitted) else ""
     sizes = f"{after} either way" if before == after else f"{after} rather than {before}"
     return f"the odds ratio for {change}{given} is {how}{sizes}"

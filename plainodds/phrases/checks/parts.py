@@ -12,6 +12,7 @@ from plainodds.phrases.units import tidy
 from plainodds.values import Scalar
 
 __all__ = [
+    "LISTED_AT_MOST",
     "WHY_NOT_KNOWN",
     "amount",
     "because",
@@ -26,14 +27,15 @@ __all__ = [
     "short_list",
 ]
 
-_LISTED_AT_MOST = 4
+LISTED_AT_MOST = 4
+"""So many names, before only their number is told."""
 
 WHY_NOT_KNOWN: dict[Unknown, str] = {
     "no rows": "the result carries its rows no longer",
     "no outcome": "the result carries its outcome no longer",
     "no covariance": "the fit has no covariance matrix, and so no standard errors",
-    "no likelihood": "the fit does not stand at a plain maximum of the likelihood of rows drawn one "
-    "by one",
+    "no likelihood": "the fit does not stand at a plain maximum of the likelihood of rows drawn "
+    "one by one",
     "no groups named": "nobody has said which rows belong together",
     "not said by the fit": "the result does not say",
     "rows chosen by outcome": "the rows were chosen by their outcome",
@@ -77,18 +79,18 @@ def coefficients(number: int) -> str:
     return counted(number, "coefficient", "coefficients")
 
 
-def short_list(items: list[str], at_most: int = _LISTED_AT_MOST) -> str:
+def short_list(items: list[str], at_most: int = LISTED_AT_MOST) -> str:
     """Join as in speech; of many only the first, and how many more there are."""
     left = len(items) - at_most
     return listed([*items[:at_most], f"{left} more"]) if left > 1 else listed(items)
 
 
-def named(subject: Subject, names: tuple[str, ...], at_most: int = _LISTED_AT_MOST) -> str:
+def named(subject: Subject, names: tuple[str, ...], at_most: int = LISTED_AT_MOST) -> str:
     """Predictors as within a sentence: "pipe age and material"."""
     return short_list([predictor_name(subject.predictor(name)) for name in names], at_most)
 
 
-def columns_named(names: tuple[str, ...], at_most: int = _LISTED_AT_MOST) -> str:
+def columns_named(names: tuple[str, ...], at_most: int = LISTED_AT_MOST) -> str:
     """Columns of the design, as the fit's own table of coefficients calls them."""
     return short_list([f"“{tidy(name)}”" for name in names], at_most)
 

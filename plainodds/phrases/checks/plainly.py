@@ -21,13 +21,12 @@ from plainodds.phrases.checks.finding_words import finding_words
 from plainodds.phrases.checks.influence import moved_by_few
 from plainodds.phrases.checks.parts import amount, cases, named
 from plainodds.phrases.checks.separation import told_without_exception
+from plainodds.phrases.choices.checks import TOLD_WITH_WHY
 from plainodds.phrases.labels import predictor_name
 from plainodds.phrases.parts import sentence
 from plainodds.phrases.units import tidy
 
 __all__ = ["plain_sentences"]
-
-_WITH_WHY = ("separation", "shape", "influence")
 
 
 def plain_sentences(finding: Finding, subject: Subject, level: float) -> tuple[str, ...]:
@@ -37,7 +36,7 @@ def plain_sentences(finding: Finding, subject: Subject, level: float) -> tuple[s
     if not other_words:
         return said.what, said.why
     told = sentence(other_words)
-    return (told, said.why) if finding.topic in _WITH_WHY else (told,)
+    return (told, said.why) if finding.topic in TOLD_WITH_WHY else (told,)
 
 
 @singledispatch

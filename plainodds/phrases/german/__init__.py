@@ -10,6 +10,9 @@ from plainodds.phrases.german import (  # noqa: F401
     odds,
     pair,
     profile,
+    soundness,
+    soundness_methods,
+    together,
 )
 from plainodds.phrases.german.language import GERMAN
 from plainodds.phrases.languages import add_language

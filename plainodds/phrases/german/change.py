@@ -13,6 +13,7 @@ from plainodds.phrases.choices.change import (
     marks_told,
     misses_one,
 )
+from plainodds.phrases.german.concerns import level_cautions
 from plainodds.phrases.german.language import GERMAN
 from plainodds.phrases.german.needed import needed_sentences, needed_technical
 from plainodds.phrases.german.parts import (
@@ -41,6 +42,7 @@ from plainodds.phrases.lexicon import lexicon
 from plainodds.phrases.moves import (
     end_label,
     ends_beyond,
+    levels_moved,
     moves_label,
     moves_words,
     settled_moves,
@@ -95,6 +97,7 @@ def _words(answer: ChangeAnswer, told: list[str], before: list[str], after: list
     odds_ratio = answer.comparison.odds_ratio
     cautions = [
         *_beyond(answer),
+        *level_cautions(answer.subject, levels_moved(answer)),
         *before,
         *odds_ratio_cautions((answer.start.estimate, answer.end.estimate)),
         *_of_averages(answer),

@@ -5,6 +5,7 @@ from __future__ import annotations
 from collections.abc import Sequence
 
 from plainodds.answers.curve import CurveAnswer, CurveLine, Scale
+from plainodds.phrases.choices.concerns import curve_spoken_of
 from plainodds.phrases.choices.curve import (
     LISTED_AT_MOST,
     as_chances,
@@ -12,6 +13,7 @@ from plainodds.phrases.choices.curve import (
     going,
     spoken_places,
 )
+from plainodds.phrases.german.concerns import level_cautions
 from plainodds.phrases.german.language import GERMAN
 from plainodds.phrases.german.parts import (
     EVERYTHING,
@@ -68,7 +70,8 @@ def _plain(answer: CurveAnswer) -> Words:
 
 
 def _words(answer: CurveAnswer, told: Sequence[str], more: Sequence[str] = ()) -> Words:
-    cautions = map(sentence, (*more, *beyond_data(answer), association(answer.subject)))
+    levels = level_cautions(answer.subject, curve_spoken_of(answer))
+    cautions = map(sentence, (*more, *beyond_data(answer), *levels, association(answer.subject)))
     held = answer.question.others != "observed"
     return Words(
         tuple(map(sentence, told)),

@@ -5,6 +5,7 @@ from __future__ import annotations
 from plainodds.answers.effects import EffectRow, EffectsAnswer
 from plainodds.model.predictors import PredictorFacts
 from plainodds.phrases.averaged import rows_chosen
+from plainodds.phrases.choices.concerns import effects_spoken_of
 from plainodds.phrases.choices.effects import (
     effects_averaged,
     groups_counted,
@@ -16,6 +17,7 @@ from plainodds.phrases.choices.effects import (
     rows_together,
     share_is_known,
 )
+from plainodds.phrases.german.concerns import level_cautions
 from plainodds.phrases.german.language import GERMAN
 from plainodds.phrases.german.parts import (
     EVERYTHING,
@@ -78,10 +80,11 @@ def _plain(answer: EffectsAnswer) -> Words:
 
 def _words(answer: EffectsAnswer, told: list[str], more: list[str]) -> Words:
     held = not effects_averaged(answer)
+    levels = level_cautions(answer.subject, effects_spoken_of(answer))
     return Words(
         tuple(map(sentence, told)),
         (
-            *map(sentence, (association(answer.subject), *more)),
+            *map(sentence, (association(answer.subject), *levels, *more)),
             *model_cautions(answer.subject, offset_held=held),
         ),
     )

@@ -4,11 +4,13 @@ from __future__ import annotations
 
 from plainodds.answers.odds import OddsAnswer, OddsRow
 from plainodds.phrases.german.parts import covariance, level_intervals
+from plainodds.phrases.german.unbounded import ratio_figure
 from plainodds.phrases.labels import listed
 from plainodds.phrases.lexicon import lexicon
 from plainodds.phrases.likelihood import names_open, open_ends
 from plainodds.phrases.numbers import level_figures, ratio
 from plainodds.phrases.parts import ratio_with_interval
+from plainodds.phrases.unbounded import has_finite_estimate
 
 __all__ = ["interval_method", "likelihood_cautions", "odds_ratio_words"]
 
@@ -23,6 +25,8 @@ def odds_ratio_words(row: OddsRow, level: float) -> str:
     """
     open_below, open_above = open_ends(row)
     odds = row.odds_ratio
+    if not has_finite_estimate(row) and odds.lower is None:
+        return ratio_figure(odds.estimate)
     if not (open_below or open_above) or odds.lower is None or odds.upper is None:
         return ratio_with_interval(odds, level)
     told = "ohne Grenze auf beiden Seiten"
@@ -30,7 +34,8 @@ def odds_ratio_words(row: OddsRow, level: float) -> str:
         told = f"ab {ratio(odds.lower)}, ohne obere Grenze"
     elif not open_above:
         told = f"bis {ratio(odds.upper)}, ohne untere Grenze"
-    return ratio(odds.estimate) + lexicon().interval.format(level_figures(level), told)
+    figure = ratio(odds.estimate) if has_finite_estimate(row) else ratio_figure(odds.estimate)
+    return figure + lexicon().interval.format(level_figures(level), told)
 
 
 def likelihood_cautions(answer: OddsAnswer) -> tuple[str, ...]:

@@ -107,7 +107,8 @@ def _(answer: OddsAnswer) -> MethodsNote:
             "Profil-Likelihood-Intervalle, durch erneutes Anpassen gefunden (Venzon & Moolgavkar "
             "1988), bei Standardfehlern nach Wald"
         )
-    tests = f"Tests eines Odds Ratio von 1 sind {'Likelihood-Quotienten' if likelihood else 'Wald'}"
+    kind = "Likelihood-Quotienten" if likelihood else "Wald"
+    tests = f"Tests eines Odds Ratio von 1 sind {kind}"
     return note(
         subject,
         (
@@ -119,11 +120,10 @@ def _(answer: OddsAnswer) -> MethodsNote:
             else "",
             intervals_made(subject, question.level, made),
             "" if subject.no_interval else f"{tests}-Tests",
-            ""
-            if not answer.interactions
-            else "Wechselwirkungen wurden mit "
-            f"{'Likelihood-Quotienten' if likelihood else 'Wald'}-Tests aller Terme geprüft, die "
-            "zwei Merkmale teilen",
+            f"Wechselwirkungen wurden mit {kind}-Tests aller Terme geprüft, die zwei Merkmale "
+            "gemeinsam haben"
+            if answer.interactions
+            else "",
         ),
     )
 

@@ -16,6 +16,8 @@ from plainodds.phrases.choices.odds import (
     side_of,
     typical_chance,
 )
+from plainodds.phrases.german.concerns import sparse_cautions, unseen_cautions
+from plainodds.phrases.german.joined_tests import joined_test
 from plainodds.phrases.german.language import GERMAN
 from plainodds.phrases.german.likelihood import (
     interval_method,
@@ -34,6 +36,7 @@ from plainodds.phrases.german.parts import (
 )
 from plainodds.phrases.german.parts import chance as chance_for
 from plainodds.phrases.german.texts import joined
+from plainodds.phrases.german.unbounded import unbounded_cautions, unbounded_told
 from plainodds.phrases.labels import (
     change_label,
     given_clause,
@@ -46,12 +49,10 @@ from plainodds.phrases.lexicon import lexicon
 from plainodds.phrases.moves import end_rather_than_start
 from plainodds.phrases.numbers import (
     chance,
-    count,
     denominator,
     frequency,
     p_value,
     quantity,
-    signed,
 )
 from plainodds.phrases.parts import (
     RARE,
@@ -62,6 +63,7 @@ from plainodds.phrases.parts import (
     standard_error,
 )
 from plainodds.phrases.saying import Audience, Words, for_audience
+from plainodds.phrases.unbounded import has_finite_estimate
 from plainodds.phrases.units import tidy
 
 __all__: list[str] = []
@@ -97,7 +99,14 @@ def _plain(answer: OddsAnswer) -> Words:
 
 
 def _cautions(answer: OddsAnswer) -> tuple[str, ...]:
-    return (*_changes(answer), *_extremes(answer), *likelihood_cautions(answer))
+    return (
+        *unbounded_cautions(answer),
+        *sparse_cautions(answer),
+        *unseen_cautions(answer),
+        *_changes(answer),
+        *_extremes(answer),
+        *likelihood_cautions(answer),
+    )
 
 
 def _typical(answer: OddsAnswer, over: int) -> str:
@@ -120,6 +129,9 @@ def _plain_row(
     opening = _change(facts, row)
     if row.given:
         opening = f"{opening}, {given_clause(subject, row.given)},"
+    if not has_finite_estimate(row):
+        model = f"im Modell „{tidy(row.model)}“ gilt: {opening}" if row.model else opening
+        return f"{model} {unbounded_told(answer, row)}"
     odds = _odds_words(row, answer.question.level)
     if move is None:
         model = f"im Modell „{tidy(row.model)}“ " if row.model else ""
@@ -220,20 +232,8 @@ def _technical_row(answer: OddsAnswer, row: OddsRow) -> str:
 
 
 def _technical_test(answer: OddsAnswer, found: InteractionTest) -> str:
-    test, subject = found.test, answer.subject
     model = f"Modell „{tidy(found.model)}“: " if found.model else ""
-    kind = {"wald": "Wald-Test", "likelihood_ratio": "Likelihood-Quotienten-Test"}[test.kind]
-    names = [predictor_name(subject.predictor(each)) for each in (found.predictor, found.modifier)]
-    letter, freedom = "χ²", count(test.degrees_of_freedom)
-    degrees = "Freiheitsgrad" if test.degrees_of_freedom == 1 else "Freiheitsgraden"
-    if test.denominator is not None:
-        letter, degrees = "F", "Freiheitsgraden"
-        freedom = f"{freedom} und {count(round(test.denominator))}"
-    return (
-        f"{model}{kind}, ob kein Term {listed(names)} verbindet: {letter} = "
-        f"{signed(test.statistic).removeprefix('+')} bei {freedom} {degrees}, "
-        f"p-Wert {p_value(test.p_value)}"
-    )
+    return f"{model}{joined_test(answer.subject, (found.predictor, found.modifier), found.test)}"
 
 
 @GERMAN.alternative.register

@@ -2,13 +2,13 @@
 
 from __future__ import annotations
 
-from plainodds.answers.joined import JoinedTest
 from plainodds.answers.pair import PairAnswer
+from plainodds.phrases.german.joined_tests import joined_test
 from plainodds.phrases.german.pair_labels import at_b, interaction, noun, per_additional
 from plainodds.phrases.german.parts import covariance, drawn_method, event, level_intervals
-from plainodds.phrases.labels import listed, named_value, predictor_name
+from plainodds.phrases.labels import listed, named_value
 from plainodds.phrases.lexicon import lexicon
-from plainodds.phrases.numbers import count, p_value, percentage_points, signed
+from plainodds.phrases.numbers import p_value, percentage_points
 from plainodds.phrases.pair_corners import corners
 from plainodds.phrases.parts import (
     chance_with_interval,
@@ -75,21 +75,7 @@ def tested_technical(answer: PairAnswer) -> list[str]:
     test, question = answer.interaction.test, answer.question
     if test is None:
         return []
-    names = [predictor_name(answer.subject.predictor(each)) for each in (question.a, question.b)]
-    kind = {"wald": "Wald-Test", "likelihood_ratio": "Likelihood-Quotienten-Test"}[test.kind]
-    return [f"{kind} darauf, dass kein Term {listed(names)} verbindet: {_statistic(test)}"]
-
-
-def _statistic(test: JoinedTest) -> str:
-    written = signed(test.statistic).removeprefix("+")
-    freedom = count(test.degrees_of_freedom)
-    if test.denominator is None:
-        one = test.degrees_of_freedom == 1
-        on = f"χ² = {written} bei {freedom} {'Freiheitsgrad' if one else 'Freiheitsgraden'}"
-    else:
-        below = signed(test.denominator, decimals=0).removeprefix("+")
-        on = f"F = {written} bei {freedom} und {below} Freiheitsgraden"
-    return f"{on}, p-Wert {p_value(test.p_value)}"
+    return [joined_test(answer.subject, (question.a, question.b), test)]
 
 
 def pair_method(answer: PairAnswer) -> str:

@@ -26,6 +26,7 @@ from plainodds.phrases.german.parts import (
 )
 from plainodds.phrases.german.parts import chance as chance_for
 from plainodds.phrases.german.texts import joined
+from plainodds.phrases.german.unbounded import profile_cautions, ratio_told
 from plainodds.phrases.labels import listed, predictor_name, value_label
 from plainodds.phrases.lexicon import lexicon
 from plainodds.phrases.numbers import chance, frequency, frequency_span, ratio, signed
@@ -67,7 +68,7 @@ def _plain(answer: ProfileAnswer) -> Words:
 
 
 def _words(answer: ProfileAnswer, told: list[str], more: list[str]) -> Words:
-    cautions = [*familiarity_cautions(answer), *more]
+    cautions = [*profile_cautions(answer), *familiarity_cautions(answer), *more]
     if answer.comparison is not None:
         cautions += odds_ratio_cautions(
             (answer.point.probability.estimate, answer.start.probability.estimate)
@@ -120,7 +121,7 @@ def _comparison(answer: ProfileAnswer, comparison: Comparison, over: int) -> lis
         f"{_NOT} {rather(1 - here, 1 - there, over)}",
         "Als Verhältnisse gesagt wird die Wahrscheinlichkeit mit "
         f"{ratio_with_interval(comparison.risk_ratio, level)} multipliziert und die Chance (Odds) "
-        f"mit {ratio_with_interval(comparison.odds_ratio, level)}",
+        f"mit {ratio_told(comparison.odds_ratio, level)}",
     ]
 
 
@@ -164,7 +165,7 @@ def _technical(answer: ProfileAnswer) -> Words:
         compared = answer.comparison
         told.append(_on_scales(answer, answer.start, answer.question.against or ()))
         told.append(
-            f"Odds Ratio {ratio_with_interval(compared.odds_ratio, level)}, relatives Risiko "
+            f"Odds Ratio {ratio_told(compared.odds_ratio, level)}, relatives Risiko "
             f"{ratio_with_interval(compared.risk_ratio, level)}; das Risiko liegt "
             f"{difference_with_interval(compared.risk_difference, level)}"
         )
