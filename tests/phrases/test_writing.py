@@ -10,15 +10,20 @@ from hypothesis import strategies as st
 from matplotlib.text import Text
 
 import plainodds as po
+from plainodds.answers.excerpts import ExcerptAnswer
+from plainodds.answers.odds import OddsAnswer
+from plainodds.answers.panels import PanelsAnswer
 from plainodds.answers.questions import Answer
 from plainodds.phrases import numbers
 from plainodds.phrases.alternative import alternative
 from plainodds.phrases.captions.caption import caption
-from plainodds.phrases.languages import language_of
+from plainodds.phrases.languages import _KNOWN, Ways, language_of
 from plainodds.phrases.methods.note import methods_note
 from plainodds.phrases.saying import words
 from plainodds.values import value
-from tests.phrases import made, made_changes, test_change, test_curve, test_odds
+from tests.phrases import made, made_changes, test_change, test_curve, test_odds, test_pair
+from tests.phrases.made_findings import answer_of, everything
+from tests.phrases.made_pairs import pair_answer
 from tests.phrases.reading import faults, unaccounted
 
 ANSWERS = {
@@ -27,6 +32,7 @@ ANSWERS = {
     "profile": made.profile_answer(),
     "effects": made_changes.effects_answer(made_changes.effect_row()),
     "change": made_changes.change_answer(),
+    "pair": pair_answer(),
 }
 TELLINGS = (po.words, po.caption, po.methods_note, po.alternative)
 SWAP = str.maketrans({".": ",", ",": "."})
@@ -151,7 +157,7 @@ def test_a_space_between_thousands_does_not_break():
 
 @value
 class UntoldAnswer(Answer):
-    """An answer that German has no words for."""
+    """An answer that only English has words for."""
 
     question: None = None
     subject: None = None
@@ -162,14 +168,62 @@ def _(answer: UntoldAnswer, audience: str = "plain") -> str:
     return "English words"
 
 
-@pytest.mark.parametrize("tell", [words, caption, methods_note, alternative])
-def test_what_a_language_cannot_tell_is_refused_and_never_english(tell):
-    assert words(UntoldAnswer()) == "English words"
-    with po.writing("de"), pytest.raises(po.QuestionRefused) as refused:
-        tell(UntoldAnswer())
+@pytest.fixture
+def invented(monkeypatch):
+    """A language that has small phrases, and words for odds ratios alone."""
+    language = replace(language_of("de"), code="xx", name="Invented", **{
+        name: Ways() for name in ("words", "caption", "methods_note", "alternative")
+    })  # fmt: skip
+
+    def told(answer: OddsAnswer, audience: str = "plain") -> str:
+        return f"invented words in {audience}"
+
+    language.words.register(told)
+    monkeypatch.setitem(_KNOWN, "xx", language)
+    return language
+
+
+@pytest.mark.parametrize("tell", TELLINGS, ids=lambda each: each.__name__)
+def test_what_a_language_cannot_tell_is_refused_and_never_english(tell, invented):
+    with po.writing("xx"), pytest.raises(po.QuestionRefused) as refused:
+        tell(ANSWERS["change"])
     told = str(refused.value)
-    assert f"{tell.__name__}() of UntoldAnswer in German" in told
+    assert f"{tell.__name__}() of ChangeAnswer in Invented ('xx')" in told
     assert "writing('en')" in told
+
+
+@pytest.mark.parametrize("tell", [words, caption, methods_note, alternative])
+def test_an_answer_of_another_kind_is_refused_in_german(tell):
+    assert words(UntoldAnswer()) == "English words"
+    with po.writing("de"), pytest.raises(po.QuestionRefused, match="of UntoldAnswer in German"):
+        tell(UntoldAnswer())
+
+
+def test_what_only_passes_on_other_texts_is_told_in_every_language(invented):
+    both = po.panels(ANSWERS["odds"], ANSWERS["curve"])
+    with po.writing("xx"):
+        assert po.words(ANSWERS["odds"]) == "invented words in plain"
+        with pytest.raises(po.QuestionRefused, match="of CurveAnswer in Invented"):
+            po.words(both)
+        with pytest.raises(po.QuestionRefused, match="of PanelsAnswer in Invented"):
+            po.alternative(both)
+
+
+def kinds_of_answers():
+    found = [Answer]
+    for each in found:
+        found += each.__subclasses__()
+    return sorted(
+        {each for each in found[1:] if each.__module__.startswith("plainodds.")},
+        key=lambda each: each.__name__,
+    )
+
+
+@pytest.mark.parametrize("tell", TELLINGS, ids=lambda each: each.__name__)
+@pytest.mark.parametrize("kind", kinds_of_answers(), ids=lambda each: each.__name__)
+def test_german_has_a_way_for_every_kind_of_answer(kind, tell):
+    way = getattr(language_of("de"), tell.__name__).of(object.__new__(kind))
+    assert way is not None or kind in (PanelsAnswer, ExcerptAnswer)
 
 
 @pytest.mark.parametrize("tell", TELLINGS, ids=lambda each: each.__name__)
@@ -233,6 +287,7 @@ GRIDS = {
         ],
         test_change.numbers_of,
     ),
+    "pair": ([test_pair.made(*case) for case in test_pair.GRID[::7]], test_pair.numbers_of),
 }
 
 
@@ -251,6 +306,15 @@ def test_english_with_decimal_commas_is_the_same_sentences_with_other_marks(kind
             for sentence in said.sentences:
                 assert faults(back(sentence)) == []
                 assert unaccounted(back(sentence), [*known, 6]) == []
+
+
+@pytest.mark.parametrize("found", everything(), ids=lambda each: each.topic)
+def test_findings_with_decimal_commas_are_the_same_sentences_with_other_marks(found):
+    answer = answer_of(found)
+    plain = [*told_in_english(answer), po.caption(answer), po.report_table(answer).markdown()]
+    with po.writing(decimal=","):
+        told = [*told_in_english(answer), po.caption(answer), po.report_table(answer).markdown()]
+    assert [back(each) for each in told] == plain
 
 
 @given(st.floats(0, 1), st.floats(1e-6, 1e6), st.integers(0, 10**9))
