@@ -22,7 +22,7 @@ from plainodds.phrases.methods.note import methods_note
 from plainodds.phrases.saying import words
 from plainodds.values import value
 from tests.phrases import made, made_changes, test_change, test_curve, test_odds, test_pair
-from tests.phrases.made_findings import answer_of, everything
+from tests.phrases.made_findings import MADE, answer_of, everything
 from tests.phrases.made_pairs import pair_answer
 from tests.phrases.reading import faults, unaccounted
 
@@ -352,6 +352,20 @@ def test_drawings_write_their_numbers_with_the_marks(answer, decimal):
     assert changed or decimal == "·"
     for one, other in changed:
         assert (back(other) if decimal == "," else other.replace("·", ".")) == one
+
+
+@pytest.mark.parametrize(
+    "found", [each for each in MADE if each.topic != "discrimination"], ids=lambda each: each.topic
+)
+def test_drawings_of_findings_write_their_numbers_with_the_marks(found):
+    def texts():
+        figure = po.draw(answer_of(found))
+        return [each.get_text() for each in figure.findobj(Text) if each.get_visible()]
+
+    plain = texts()
+    with po.writing(decimal=","):
+        told = texts()
+    assert [back(each) for each in told] == plain
 
 
 def test_every_language_has_a_code_and_marks_of_its_own():

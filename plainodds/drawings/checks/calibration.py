@@ -29,7 +29,7 @@ from plainodds.drawings.lettering import line_height, wrapped
 from plainodds.drawings.odds_rows import is_narrow
 from plainodds.drawings.theme import Theme
 from plainodds.phrases.checks.headings import picture_axes, picture_legend
-from plainodds.phrases.numbers import NOT_KNOWN, confidence, count, quantity
+from plainodds.phrases.numbers import NOT_KNOWN, confidence, count, quantity, signed
 from plainodds.phrases.units import tidy
 
 __all__ = ["CALIBRATION"]
@@ -104,7 +104,7 @@ def _figure(number: float, decimals: int = 2) -> str:
         if math.isnan(number)
         else quantity(round(number, 9))
         if number == round(number)
-        else f"{number:.{decimals}f}".replace("-", "−")
+        else signed(number, decimals=decimals).removeprefix("+")
     )
 
 

@@ -12,7 +12,7 @@ from plainodds.drawings.checks.tables import draw_paragraph, paragraph_height
 from plainodds.drawings.geometry import Margins
 from plainodds.drawings.theme import Theme
 from plainodds.phrases.checks.finding_words import finding_words
-from plainodds.phrases.numbers import ratio
+from plainodds.phrases.numbers import quantity, ratio
 
 __all__ = ["CONVERGENCE"]
 
@@ -25,7 +25,7 @@ def _gauge(found: Found) -> Gauge:
     return Gauge(
         value=step, figure="without an end" if math.isinf(step) else ratio(step), lower=1e-4,
         upper=100.0, marks=_MARKS, zones=("cannot be seen", "can be seen", "changes figures"),
-        ticks=((0.001, "0.001"), (0.01, "0.01"), (0.2, "0.2"), (1.0, "1"), (10.0, "10")),
+        ticks=tuple((tick, quantity(tick)) for tick in (0.001, 0.01, 0.2, 1.0, 10.0)),
         title="Largest remaining step of a coefficient, in its standard errors",
     )  # fmt: skip
 

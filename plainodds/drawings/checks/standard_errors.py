@@ -12,7 +12,7 @@ from plainodds.drawings.checks.plate import Found, Plate
 from plainodds.drawings.geometry import Margins
 from plainodds.drawings.theme import Theme
 from plainodds.phrases.checks.headings import picture_axes
-from plainodds.phrases.numbers import count, ratio
+from plainodds.phrases.numbers import count, quantity, ratio
 from plainodds.phrases.units import tidy
 
 __all__ = ["STANDARD_ERRORS"]
@@ -20,10 +20,15 @@ __all__ = ["STANDARD_ERRORS"]
 _MARKS = (4.0, 10.0)
 _MOST = 12
 _HEADING = "standard error"
-_NOTE = (
-    "At 4, an interval goes from a 3,000th to 3,000 times the odds for one standard deviation "
-    "more; at 10 there are no words for it. Both marks are custom."
-)
+_TIMES = 3_000
+
+
+def _note() -> str:
+    times = count(_TIMES)
+    return (
+        f"At 4, an interval goes from a {times}th to {times} times the odds for one standard "
+        "deviation more; at 10 there are no words for it. Both marks are custom."
+    )
 
 
 def _gauge(found: Found) -> Gauge:
@@ -31,7 +36,7 @@ def _gauge(found: Found) -> Gauge:
     return Gauge(
         value=largest, figure=f"the widest: {ratio(largest)}", lower=0.1, upper=60.0,
         marks=_MARKS, zones=("as usual", "wide", "absurd"),
-        ticks=((0.1, "0.1"), (1.0, "1"), (4.0, "4"), (10.0, "10")),
+        ticks=tuple((tick, quantity(tick)) for tick in (0.1, 1.0, 4.0, 10.0)),
         title=picture_axes(found.finding, found.subject)[0],
     )  # fmt: skip
 
@@ -64,7 +69,7 @@ def _height(found: Found, theme: Theme, width: float) -> float:
 
 def _notes(found: Found) -> list[str]:
     left = len(found.evidence(StandardErrorsEvidence).wide) - _MOST
-    return [_NOTE, *([f"Not shown: {count(left)} more coefficients."] if left > 0 else [])]
+    return [_note(), *([f"Not shown: {count(left)} more coefficients."] if left > 0 else [])]
 
 
 def _paint(board: Board, found: Found, width: float, height: float) -> Margins:
