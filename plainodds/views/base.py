@@ -212,10 +212,14 @@ class AnswerView(widgets.VBox):
             still = bundle_of(self._stage.shot, words(self.answer))
         return {**super()._repr_mimebundle_(**kwargs), **still}
 
-    def _ipython_display_(self) -> None:
+    def _left_in_notebook(self) -> tuple[dict[str, Any], dict[str, Any]]:
+        """The view, and what waits beneath it until there is no kernel to move it."""
         data = self._repr_mimebundle_()
-        display(data, raw=True)
-        display({"text/html": markup.waiting(data["text/html"]), "text/plain": ""}, raw=True)
+        return data, {"text/html": markup.waiting(data["text/html"]), "text/plain": ""}
+
+    def _ipython_display_(self) -> None:
+        for each in self._left_in_notebook():
+            display(each, raw=True)
 
     # controls
 

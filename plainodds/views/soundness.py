@@ -6,6 +6,7 @@ from dataclasses import replace
 from typing import Any
 
 import ipywidgets as widgets
+from IPython.display import display
 
 from plainodds.answers.groups import Groups, grouping, stated_groups
 from plainodds.answers.progress import Progress, silent
@@ -282,6 +283,21 @@ class SoundnessView(PatientView):
                 return super()._repr_mimebundle_(**kwargs)
             live = widgets.VBox._repr_mimebundle_(self, **kwargs)
             return {**live, "text/html": markup.note(_STILL_LOOKING)}
+
+    def _ipython_display_(self) -> None:
+        if self.answer is not None:
+            super()._ipython_display_()
+            return
+        shown = [display(each, raw=True, display_id=True) for each in self._left_in_notebook()]
+
+        def update(_: Any) -> None:
+            """Leave the picture to a saved notebook, once there is one."""
+            self.unobserve(update, "answer")
+            for place, each in zip(shown, self._left_in_notebook(), strict=True):
+                if place is not None:
+                    place.update(each, raw=True)
+
+        self.observe(update, "answer")
 
     def _exactly(self, then: Any) -> None:
         if self.answer is None:

@@ -2,6 +2,7 @@
 
 import re
 
+import nbformat
 import pytest
 from playwright.sync_api import expect
 
@@ -10,7 +11,7 @@ from plainodds.phrases.checks import finding_figures, finding_words
 from tests.browser.models import MANY, PLAIN, TESSEL_BAY, named
 from tests.browser.notebooks import put_notebook
 from tests.browser.page import opened
-from tests.browser.reading import eventually
+from tests.browser.reading import eventually, rows_of
 from tests.browser.views import ViewOnPage
 
 LONG_MS = 120_000
@@ -125,7 +126,12 @@ def test_cross_validation_runs_beside_the_page_to_its_end(view):
     expect(working(view)).to_contain_text(re.compile(r"cross-validation: \d+ of 20"))
     expect(working(view).locator("progress")).to_be_visible()
     view.enter("repeats", "2")
-    expect(view.table).to_contain_text("corrected for optimism", timeout=LONG_MS)
+
+    def check():
+        assert rows_of(view.table).get("Repeats (cross-validation)") == ["2"]
+
+    eventually(view.page, check)
+    expect(view.table).to_contain_text("corrected for optimism")
     expect(working(view)).to_be_hidden()
     assert view.chosen("optimism") == "by cross-validation"
 
@@ -192,17 +198,24 @@ def test_the_list_stands_beside_the_picture_where_there_is_room(view):
     assert list_box["x"] + list_box["width"] <= picture["x"]
 
 
-def test_many_rows_are_looked_at_beside_the_page(browser, lab):
-    with opened(browser, lab, put_notebook(lab, MANY, "po.SoundnessView(result)")) as shown:
+def test_many_rows_are_looked_at_beside_the_page_and_a_saved_notebook_has_the_picture(browser, lab):
+    path = put_notebook(lab, MANY, "po.SoundnessView(result)")
+    with opened(browser, lab, path) as shown:
         shown.run_all()
         view = ViewOnPage(shown.page, "soundness")
         cards = view.root.locator(".plainodds-finding")
-        eventually(shown.page, lambda: expect(view.root).to_be_visible())
         expect(cards.first).to_be_visible(timeout=LONG_MS)
         expect(view.picture).to_be_visible()
         expect(working(view)).to_be_hidden()
         expect(view.button("Look at the fit")).to_be_hidden()
         expect(view.root.locator(".plainodds-summary")).to_contain_text("checks")
+        card(view, "How much data there is").click()
+        expect(view.words).to_contain_text("for each")
+        shown.save()
+    live, beneath = nbformat.read(path, as_version=4).cells[-1].outputs
+    assert live.data["image/png"]
+    for each in (live, beneath):
+        assert "<img " in each.data["text/html"]
 
 
 def test_a_first_look_can_be_stopped_and_begun_again(browser, lab):

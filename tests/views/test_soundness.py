@@ -367,6 +367,15 @@ def slow(monkeypatch, view):
     monkeypatch.setattr(soundness, "answer_soundness", made)
     yield made
     made.go_on.set()
+    until_idle(view)
+
+
+def until_idle(view):
+    """Wait until nothing is wanted but what is shown, whichever thread begins what."""
+    until = time.monotonic() + WAIT
+    while view._waiting is not None or view._work.key is not None:
+        assert time.monotonic() < until
+        time.sleep(0.01)
 
 
 def begin(view, page, slow, way="cross-validation"):
@@ -430,19 +439,21 @@ def test_a_change_that_comes_while_the_result_is_drawn_is_not_lost(view, page, s
     show = Picture.show
 
     def interrupted(picture, answer):
-        if not other.ident:
+        if slow.go_on.is_set() and not other.ident:
             other.start()
             # the number has arrived and waits for its turn
-            while repeats.value != 30:
+            until = time.monotonic() + WAIT
+            while repeats.value != 30 and time.monotonic() < until:
                 time.sleep(0.01)
         show(picture, answer)
 
     monkeypatch.setattr(Picture, "show", interrupted)
     begin(view, page, slow)
     slow.go_on.set()
-    view._work.wait()
+    until_idle(view)
     other.join(WAIT)
-    view._work.wait()
+    until_idle(view)
+    assert view.problem is None
     assert repeats.value == 30
     assert view.question.repeats == 30
 
@@ -545,6 +556,36 @@ def test_what_is_left_in_the_page_meanwhile_says_so(opening):
     data = view._repr_mimebundle_()
     assert "application/vnd.jupyter.widget-view+json" in data
     assert "still being looked at" in data["text/html"]
+
+
+class Place:
+    """An output that can be written again."""
+
+    def __init__(self, data):
+        self.data = data
+
+    def update(self, data, raw):
+        self.data = data
+
+
+def test_a_saved_notebook_gets_the_picture_once_there_is_one(opening, monkeypatch):
+    view, slow = opening
+    places = []
+
+    def display(data, raw, display_id):
+        places.append(Place(data))
+        return places[-1]
+
+    monkeypatch.setattr(soundness, "display", display)
+    view._ipython_display_()
+    assert [("<img " in each.data["text/html"]) for each in places] == [False, False]
+    slow.go_on.set()
+    view._work.wait()
+    assert view.problem is None
+    assert [("<img " in each.data["text/html"]) for each in places] == [True, True]
+    first = places[0].data
+    view.question = SoundnessQuestion(show="levels")
+    assert places[0].data is first
 
 
 def test_a_first_look_can_be_stopped_and_begun_again(opening, page, sound):
