@@ -179,6 +179,13 @@ def unbounded_cautions(answer: OddsAnswer) -> tuple[str, ...]:
                 "What is known of it comes from the likelihood: the values under which the data "
                 "are still about as well explained."
             )
+        known = [row for row in without if row.odds_ratio.lower is not None]
+        if len(known) < len(without) and answer.question.interval == "wald":
+            told.append(
+                "Where the interval's finite end is missing, it was left out because so many of "
+                "them take long to compute (interval=\"likelihood\" computes them), or because "
+                "the fit has no likelihood to compute it by."
+            )
     if left_open:
         told.append(
             f"The odds ratio for {_named(answer, left_open)} is left open by the data: some "
