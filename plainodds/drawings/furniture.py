@@ -11,6 +11,7 @@ from matplotlib.text import Text
 from plainodds.drawings.geometry import corner
 from plainodds.drawings.lettering import letter, line_height, text_width, wrapped
 from plainodds.drawings.theme import Series, Theme
+from plainodds.phrases.units import tidy
 
 __all__ = ["Key", "Notes", "Title", "marker_line"]
 
@@ -97,7 +98,7 @@ class Key:
         em = theme.font_size
         places, line, x = [], 0, 0.0
         for name in names:
-            text = wrapped(name, 0.5 * width, theme, theme.small, 1)
+            text = wrapped(tidy(name), 0.5 * width, theme, theme.small, 1)
             needed = 1.1 * em + text_width(text, theme, theme.small)
             if x > 0 and x + needed > width:
                 line, x = line + 1, 0.0

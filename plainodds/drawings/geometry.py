@@ -17,10 +17,20 @@ from matplotlib.transforms import Affine2D, Bbox, ScaledTranslation, Transform
 
 from plainodds.drawings.stamps import root_figure
 
-__all__ = ["POINTS_PER_INCH", "Margins", "Room", "apart", "corner", "shifted", "slot_size"]
+__all__ = [
+    "LEAST_SHARE",
+    "POINTS_PER_INCH",
+    "Margins",
+    "Room",
+    "apart",
+    "corner",
+    "shifted",
+    "slot_size",
+]
 
 POINTS_PER_INCH = 72.0
-_LEAST_SHARE = 0.15
+LEAST_SHARE = 0.15
+"""Of a slot's width or height: no margins make a plot smaller."""
 _SAME = 0.5  # points
 
 
@@ -101,7 +111,7 @@ class Room:
 
 
 def _fitting(first: float, second: float, whole: float) -> tuple[float, float]:
-    wanted, most = first + second, whole * (1.0 - _LEAST_SHARE)
+    wanted, most = first + second, whole * (1.0 - LEAST_SHARE)
     if wanted <= most:
         return first, second
     return first * most / wanted, second * most / wanted

@@ -7,6 +7,7 @@ from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
 
 from plainodds.answers.odds import OddsAnswer
+from plainodds.drawings.geometry import LEAST_SHARE
 from plainodds.drawings.lettering import FIGURE_SPACE, text_width, wrapped
 from plainodds.drawings.odds_figures import estimate_texts
 from plainodds.drawings.odds_rows import GAP
@@ -117,7 +118,7 @@ def columns_of(
     made = None
     for form in _forms(answer, lines):
         made = _columns(answer, lines, form, theme, width)
-        if made.plot_width >= _LEAST_PLOT * theme.font_size:
+        if made.plot_width >= _least_plot(theme, width):
             break
     assert made is not None
     return made
@@ -189,16 +190,21 @@ def _columns(
     wanted = min(max(wanted, 0.0), _MOST_LABELS * em)
     if counts and not form.counts:
         wanted = max(wanted, _widest(counts, theme, small) + INDENT * em)
-    spare = width - fixed - gap - _LEAST_PLOT * em
+    spare = width - fixed - gap - _least_plot(theme, width)
     labels = min(wanted, max(spare, _LEAST_LABELS * em))
     if form.broken:
         # nothing is left to leave out: labels and plot share what there is
-        labels = min(labels, max(_NARROWEST * em, width - fixed - gap - _NARROWEST * em))
+        least_plot = max(_NARROWEST * em, LEAST_SHARE * width)
+        labels = min(labels, max(_NARROWEST * em, width - fixed - gap - least_plot))
     return Columns(
         form, counts, figures, tests, counts_heading, heading, "p-value" if form.tests else "",
         names, tuple(filter(None, models)), labels, counts_width, tuple(widths),
         tests_width if form.tests else 0.0, width - fixed - gap - labels,
     )  # fmt: skip
+
+
+def _least_plot(theme: Theme, width: float) -> float:
+    return max(_LEAST_PLOT * theme.font_size, LEAST_SHARE * width)
 
 
 def _widest(texts: Sequence[str], theme: Theme, size: float) -> float:

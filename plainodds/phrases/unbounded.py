@@ -183,7 +183,7 @@ def unbounded_cautions(answer: OddsAnswer) -> tuple[str, ...]:
         if len(known) < len(without) and answer.question.interval == "wald":
             told.append(
                 "Where the interval's finite end is missing, it was left out because so many of "
-                "them take long to compute (interval=\"likelihood\" computes them), or because "
+                'them take long to compute (interval="likelihood" computes them), or because '
                 "the fit has no likelihood to compute it by."
             )
     if left_open:
