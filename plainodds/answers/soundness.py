@@ -11,7 +11,7 @@ from plainodds.answers.checks.collinearity import collinearity_of
 from plainodds.answers.checks.convergence import convergence_of
 from plainodds.answers.checks.dependence import dependence_of
 from plainodds.answers.checks.discrimination import discrimination_of
-from plainodds.answers.checks.finding import TOPICS, Finding, Topic
+from plainodds.answers.checks.finding import CONCERNS, TOPICS, Finding, Topic
 from plainodds.answers.checks.influence import influence_of
 from plainodds.answers.checks.optimism import optimism_of
 from plainodds.answers.checks.overall import overall_of
@@ -37,7 +37,8 @@ class SoundnessQuestion(Question):
     Attributes
     ----------
     show : Topic, or ""
-        Which finding the picture shows; empty for the heaviest that has one.
+        Which finding the picture shows; empty for the heaviest, or calibration where
+        nothing weighs.
     predictor : str
         Whose shape, level or influence is shown, where the topic has a predictor; empty
         for the heaviest.
@@ -81,7 +82,10 @@ class SoundnessAnswer(Answer):
 
 
 def shown_finding(answer: SoundnessAnswer) -> Finding:
-    """The finding that the question wants shown; the heaviest with evidence by default.
+    """The finding that the question wants shown.
+
+    By default the heaviest that weighs and has evidence; where none does, calibration:
+    it says most of what can be said of a fit that nothing speaks against.
 
     Raises
     ------
@@ -90,7 +94,7 @@ def shown_finding(answer: SoundnessAnswer) -> Finding:
     """
     wanted = answer.question
     if not wanted.show:
-        return next((each for each in answer.findings if each.evidence), answer.findings[0])
+        return _first_shown([each for each in answer.findings if each.evidence], answer.findings)
     of_topic = [each for each in answer.findings if each.topic == wanted.show]
     for each in of_topic:
         if not wanted.predictor or wanted.predictor in each.about:
@@ -100,6 +104,13 @@ def shown_finding(answer: SoundnessAnswer) -> Finding:
     raise QuestionRefused(
         f"show={wanted.show!r}, predictor={wanted.predictor!r}: there is no such finding."
     )
+
+
+def _first_shown(told: list[Finding], findings: tuple[Finding, ...]) -> Finding:
+    first = told[0] if told else findings[0]
+    if CONCERNS.index(first.concern) > CONCERNS.index("not known"):
+        return first
+    return next((each for each in told if each.topic == "calibration"), first)
 
 
 def answer_soundness(

@@ -85,6 +85,12 @@ def test_shown_is_the_heaviest_finding_that_has_evidence():
     assert first.weight == max(each.weight for each in answer.findings if each.evidence)
 
 
+def test_where_nothing_weighs_calibration_is_shown():
+    answer = fitted().soundness()
+    light = tuple(dataclasses.replace(each, concern="nothing found") for each in answer.findings)
+    assert shown_finding(dataclasses.replace(answer, findings=light)).topic == "calibration"
+
+
 def test_shown_is_what_was_asked_for(fit):
     assert shown_finding(fit.soundness(show="influence")).topic == "influence"
     shown = shown_finding(fit.soundness(show="shape", predictor="w"))

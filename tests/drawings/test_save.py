@@ -14,6 +14,7 @@ from PIL import Image
 from plainodds.drawings import save
 from plainodds.phrases import caption
 from tests.drawings import made
+from tests.phrases.reports.test_reports import HOSTILE, with_label
 
 SVG = "{http://www.w3.org/2000/svg}"
 MM = 72 / 25.4
@@ -302,3 +303,19 @@ def test_a_slide_has_the_slides_theme_unless_told_otherwise(tmp_path):
     default = save(answer, tmp_path / "a.svg", "slide").read_bytes()
     assert default == save(answer, tmp_path / "b.svg", "slide", theme="slide").read_bytes()
     assert default != save(answer, tmp_path / "c.svg", "slide", theme="page").read_bytes()
+
+
+@pytest.mark.parametrize("suffix", ["svg", "pdf", "png", "tiff"])
+@pytest.mark.parametrize("label", ["dollar", "tag", "quotes", "newline", "right to left", "long"])
+def test_any_label_goes_into_any_kind_of_file(tmp_path, suffix, label):
+    answer = with_label(made.odds_answer(made.odds_rows()[:2]), HOSTILE[label])
+    path = save(answer, tmp_path / f"fig.{suffix}")
+    told = told_by(path) if suffix != "pdf" or shutil.which("pdfinfo") else HOSTILE[label]
+    # what the file says of itself holds the label as it is, whatever its format escapes
+    assert " ".join(HOSTILE[label].split())[:20] in " ".join(told.split())
+
+
+@pytest.mark.parametrize("suffix", ["svg", "pdf", "png", "tiff"])
+def test_a_folder_that_is_not_there_is_said(tmp_path, suffix):
+    with pytest.raises(FileNotFoundError, match="no"):
+        save(made.odds_answer(), tmp_path / "no" / f"fig.{suffix}")

@@ -174,7 +174,7 @@ def test_choosing_sends_one_picture_and_computes_nothing_again(sound, page, look
     view = po.SoundnessView(sound)
     assert len(looks) == 1
     page.forget()
-    page.press(card_of(view, "calibration").button)
+    page.press(card_of(view, "discrimination").button)
     assert len(page.updates(view._stage.place)) == 1
     page.press(card_of(view, "shape").button)
     choose(page, control_of(view, "predictor"), "count")
