@@ -126,6 +126,12 @@ def answer_change(
     else:
         held, averages = _at_profile(model, question, moves)
         counted = 0
+    if model.leaves_open(averages.gradient).any():
+        raise QuestionRefused(
+            "The rows leave open what this change does: some columns of the model follow from "
+            "others, or no row has such a combination of levels. Leave one of the columns out of "
+            "the model, or ask about levels that rows have together."
+        )
     both = chances(model, averages, level, drawn)
     comparison = compared(model, averages.value, averages.gradient, level, drawn)
     return ChangeAnswer(

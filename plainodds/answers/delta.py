@@ -89,6 +89,12 @@ def wald(
     level : float
     extra : array (m,), optional
         Variance from another source than the coefficients, to be added.
+
+    Returns
+    -------
+    Intervals
+        nan, all of it, for a quantity that the rows leave open: in a fit whose columns
+        follow from each other, or of a combination that no row has.
     """
     estimate = np.asarray(estimate, dtype=float)
     if model.covariance is None:
@@ -98,6 +104,10 @@ def wald(
         variance = variance + extra
     # rounding can leave a variance of zero a hair below it
     se = np.sqrt(np.maximum(variance, 0.0))
+    left_open = model.leaves_open(gradients)
+    if left_open.any():
+        # a generalised inverse gives a figure and an interval there; neither means anything
+        estimate, se = np.where(left_open, np.nan, estimate), np.where(left_open, np.nan, se)
     reach = interval_factor(model, level) * se
     return Intervals(estimate, se, estimate - reach, estimate + reach)
 

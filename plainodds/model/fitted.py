@@ -189,6 +189,28 @@ class FittedModel:
             )
 
     @cached_property
+    def _may_leave_open(self) -> bool:
+        """Whether the covariance lacks a direction, as it does where columns follow from others."""
+        if self.covariance is None:
+            return False
+        size = np.sqrt(np.maximum(np.diag(self.covariance), 0.0))
+        if not (size > 0).all():
+            return True
+        strength = np.linalg.eigvalsh(self.covariance / np.outer(size, size))
+        return bool(strength[0] <= 1e-9 * strength[-1])
+
+    @property
+    def leaves_something_open(self) -> bool:
+        """Whether some combination of the coefficients makes no difference in any row."""
+        return self._may_leave_open and bool(self.estimable.open.shape[1])
+
+    def leaves_open(self, gradients: Floats) -> NDArray[np.bool_]:
+        """Which functions of the coefficients, by their gradients (m, k), the rows leave open."""
+        if not self._may_leave_open:
+            return np.zeros(len(gradients), dtype=bool)
+        return ~self.estimable.determined(gradients)
+
+    @cached_property
     def standard_deviations(self) -> dict[str, float]:
         """Of each predictor that takes numbers, over the rows."""
         return {

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import math
 from collections.abc import Callable, Mapping
+from dataclasses import replace
 from typing import Any
 
 import numpy as np
@@ -34,6 +35,10 @@ from plainodds.model.statements import Statements, read_statements
 
 __all__ = ["take_in"]
 
+_LEFT_OPEN = (
+    "Some columns of the model follow from others in every row, so the data leave some figures "
+    "open; these are not known, whatever figure the fit itself gives."
+)
 # rows at which the shape of a factor of several predictors is looked at
 _LOOKED_AT = 5
 
@@ -111,7 +116,7 @@ def take_in(
         sampling=stated.sampling,
         prevalence=stated.prevalence,
     )
-    return FittedModel(
+    model = FittedModel(
         coefficients=sign * estimates.coefficients,
         covariance=estimates.covariance,
         degrees_of_freedom=estimates.degrees_of_freedom,
@@ -123,6 +128,9 @@ def take_in(
         record=record,
         data=source.data,
     )
+    if not model.leaves_something_open:
+        return model
+    return replace(model, subject=replace(subject, notices=(*subject.notices, _LEFT_OPEN)))
 
 
 def _raw_columns(

@@ -83,9 +83,12 @@ def profile_unbounded_cautions(answer: ProfileAnswer) -> tuple[str, ...]:
     told = []
     for which, point in points:
         if math.isnan(point.limit):
+            given = ", and the one given is where the fit happened to stop"
+            if math.isnan(point.probability.estimate):
+                given = ""
             told.append(
                 f"The data leave the chance of {tidy(outcome.event)} for {which} open: any chance "
-                "would explain them as well, and the one given is where the fit happened to stop."
+                f"would explain them as well{given}."
             )
         elif point.limit != 0:
             had, best = "had the event", "certainty"

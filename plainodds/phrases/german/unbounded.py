@@ -54,10 +54,12 @@ def profile_cautions(answer: ProfileAnswer) -> list[str]:
     outcome, told = answer.subject.outcome, []
     for which, dative, point in points:
         if math.isnan(point.limit):
+            given = ", und die angegebene ist die, bei der die Anpassung stehen blieb"
+            if math.isnan(point.probability.estimate):
+                given = ""
             told.append(
                 f"Die Daten lassen die Wahrscheinlichkeit für {event(outcome)} für {which} offen: "
-                "jede würde sie gleich gut erklären, und die angegebene ist die, bei der die "
-                "Anpassung stehen blieb"
+                f"jede würde sie gleich gut erklären{given}"
             )
         elif point.limit != 0:
             had, best = "hatten alle", "Gewissheit"
