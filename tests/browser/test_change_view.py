@@ -38,6 +38,10 @@ def ends(view):
 
 def shows(view, answer, labels):
     """Wait until table, words and picture show an answer with its intervals."""
+    eventually(view.page, lambda: shows_now(view, answer, labels))
+
+
+def shows_now(view, answer, labels):
     figures = {
         labels[0]: (answer.start, 1),
         labels[1]: (answer.end, 1),
@@ -45,27 +49,27 @@ def shows(view, answer, labels):
         "Chances, as a ratio": (answer.comparison.risk_ratio, 1),
         "Odds, as a ratio": (answer.comparison.odds_ratio, 1),
     }
-
-    def check():
-        rows = rows_of(view.table)
-        for title, (estimate, unit) in figures.items():
-            assert title in rows
-            shown = [number for cell in rows[title] for number in numbers_in(cell)]
-            exact = [unit * each for each in (estimate.estimate, estimate.lower, estimate.upper)]
-            pairs = zip(shown, exact, strict=True)
-            assert all(each.stands_for(value) for each, value in pairs), (title, rows[title], exact)
-        for where in (view.words.inner_text(), view.picture.get_attribute("alt")):
-            said = [each for each in numbers_in(where) if each.unit == 0.01]
-            for estimate in (answer.start, answer.end):
-                assert any(each.stands_for(estimate.estimate) for each in said), where
-
-    eventually(view.page, check)
+    rows = rows_of(view.table)
+    for title, (estimate, unit) in figures.items():
+        assert title in rows
+        shown = [number for cell in rows[title] for number in numbers_in(cell)]
+        exact = [unit * each for each in (estimate.estimate, estimate.lower, estimate.upper)]
+        pairs = zip(shown, exact, strict=True)
+        assert all(each.stands_for(value) for each, value in pairs), (title, rows[title], exact)
+    for where in (view.words.inner_text(), view.picture.get_attribute("alt")):
+        said = [each for each in numbers_in(where) if each.unit == 0.01]
+        for estimate in (answer.start, answer.end):
+            assert any(each.stands_for(estimate.estimate) for each in said), where
 
 
 def shows_ages(view, fit, **asked):
-    start, end = ends(view)
-    labels = f"Age {start:g} years", f"Age {end:g} years"
-    shows(view, fit.change("age_years", start, end, **asked), labels)
+    def check():
+        # a handle that was dragged may still be on its way
+        start, end = ends(view)
+        labels = f"Age {start:g} years", f"Age {end:g} years"
+        shows_now(view, fit.change("age_years", start, end, **asked), labels)
+
+    eventually(view.page, check)
 
 
 def test_its_chances_are_averages_of_what_statsmodels_predicts(view, model):
