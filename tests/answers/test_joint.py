@@ -429,12 +429,15 @@ def test_a_table_goes_to_json_and_back(raw):
 
 
 class Plain:
-    """A covariance and nothing else: what the delta method needs of a model."""
+    """A covariance, and rows that tell everything: what the delta method needs of a model."""
 
     degrees_of_freedom = None
 
     def __init__(self, covariance):
         self.covariance = covariance
+
+    def leaves_open(self, gradients):
+        return np.zeros(len(gradients), dtype=bool)
 
 
 log_ratio = st.floats(-3, 3)
