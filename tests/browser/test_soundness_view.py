@@ -149,7 +149,9 @@ def test_it_is_stopped_and_what_was_shown_stays(view):
 
 def test_meanwhile_another_finding_can_be_read(view, fit):
     view.choose("optimism", "by bootstrap")
-    expect(working(view)).to_be_visible()
+    # so many that they are not done before the finding has been read
+    view.enter("repeats", "50000")
+    expect(working(view)).to_contain_text(re.compile(r"bootstrap samples: \d+ of 50,?000"))
     card(view, said(fit, "amount").heading).click()
     expect(view.words).to_contain_text(said(fit, "amount").what, timeout=3000)
     expect(working(view)).to_be_visible()
