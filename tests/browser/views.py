@@ -4,6 +4,8 @@ from typing import Literal
 
 from playwright.sync_api import Locator, Page
 
+from tests.browser.reading import eventually
+
 __all__ = ["ViewOnPage"]
 
 Kind = Literal["odds", "curve", "profile", "effects", "change", "pair", "soundness"]
@@ -29,9 +31,20 @@ class ViewOnPage:
         return self.control(field).locator("input").first
 
     def enter(self, field: str, number: str) -> None:
-        """Type a number into a field's box."""
-        self.box(field).fill(number)
-        self.box(field).press("Enter")
+        """Type a number into a field's box, see it there, and press Enter.
+
+        On a busy machine a box that was put back may be written once more while the next
+        number is typed, faster than anybody types.
+        """
+        box = self.box(field)
+
+        def typed() -> None:
+            box.fill(number)
+            self.page.wait_for_timeout(100)
+            assert box.input_value() == number
+
+        eventually(self.page, typed)
+        box.press("Enter")
 
     def choose(self, field: str, label: str) -> None:
         """Choose from a field's drop-down."""
