@@ -21,11 +21,11 @@ from plainodds.phrases.labels import (
 )
 from plainodds.phrases.moves import end_label, settled_moves, start_label
 from plainodds.phrases.numbers import (
+    bare_points_span,
     denominator,
     frequency,
     frequency_span,
     percentage_points,
-    points_span,
     span,
     told_apart,
 )
@@ -46,7 +46,6 @@ GAP = 1.1
 _WIDEST_LABELS = 0.36
 _NARROW = 37.0  # letters
 _LINES = 3
-_POINTS = " percentage points"
 
 
 @dataclass(frozen=True)
@@ -141,7 +140,7 @@ def _rows(answer: ChangeAnswer) -> tuple[BridgeRow, ...]:
         BridgeRow(
             "Difference",
             percentage_points(difference.estimate, sign=True),
-            _between(difference, points_span).replace(_POINTS, ""),
+            _between(difference, bare_points_span),
         ),
         BridgeRow(sentence_case(end_label(subject, moves)), figures[1], _between(answer.end, say)),
     )

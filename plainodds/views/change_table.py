@@ -12,14 +12,14 @@ from plainodds.phrases.labels import chance_of, sentence_case
 from plainodds.phrases.moves import end_label, settled_moves, start_label
 from plainodds.phrases.numbers import (
     NOT_KNOWN,
+    bare_points,
+    bare_points_span,
     cases_apart,
     cases_on_sides,
     chance,
     confidence,
     count,
     needed,
-    percentage_points,
-    points_span,
     ratio,
     ratio_interval,
     span,
@@ -54,7 +54,7 @@ def change_table(answer: ChangeAnswer) -> Markup:
     rows = [
         row(sentence_case(start_label(subject, moves)), answer.start, chance, span),
         row(sentence_case(end_label(subject, moves)), answer.end, chance, span),
-        row("Difference, percentage points", difference, _points, _points_between),
+        row("Difference, percentage points", difference, bare_points, bare_points_span),
         *(row(f"In {count(over)} {cases}", difference, *_counts(over)) for over in (100, 1_000)),
         row("Chances, as a ratio", compared.risk_ratio, ratio, ratio_interval),
         row("Odds, as a ratio", compared.odds_ratio, ratio, ratio_interval),
@@ -69,14 +69,6 @@ def change_table(answer: ChangeAnswer) -> Markup:
 
 _Say = Callable[[float], str]
 _SpanOf = Callable[[float, float], str]
-
-
-def _points(difference: float) -> str:
-    return percentage_points(difference, sign=True).removesuffix(" percentage points")
-
-
-def _points_between(lower: float, upper: float) -> str:
-    return points_span(lower, upper).removesuffix(" percentage points")
 
 
 def _counts(over: int) -> tuple[_Say, _SpanOf]:

@@ -9,6 +9,7 @@ from typing import Any
 import ipywidgets as widgets
 
 from plainodds.answers.curve import CurveAnswer, CurveLine, CurveQuestion, Scale
+from plainodds.phrases.choices.curve import tabled_places
 from plainodds.phrases.labels import (
     axis_title,
     line_label,
@@ -17,10 +18,10 @@ from plainodds.phrases.labels import (
     value_label,
 )
 from plainodds.phrases.numbers import (
+    bare_points,
+    bare_points_span,
     chance,
     count,
-    percentage_points,
-    points_span,
     quantity,
     ratio,
     ratio_interval,
@@ -167,7 +168,6 @@ class CurveView(SketchedView):
         return curve_table(answer)
 
 
-_ROWS = 11
 _STACKED_FROM = 3
 
 
@@ -176,7 +176,7 @@ def curve_table(answer: CurveAnswer) -> Markup:
     question, subject = answer.question, answer.subject
     facts = subject.predictor(question.predictor)
     at = answer.lines[0].at
-    places = _spread(len(at))
+    places = tabled_places(len(at))
     columns = [Column(axis_title(facts))]
     for line in answer.lines:
         title = "Estimate"
@@ -202,12 +202,6 @@ def curve_table(answer: CurveAnswer) -> Markup:
     return markup.table(scale_title(answer), columns, rows, " ".join(remarks), stacked)
 
 
-def _spread(points: int) -> list[int]:
-    if points <= 2 * _ROWS:
-        return list(range(points))
-    return [round(each * (points - 1) / (_ROWS - 1)) for each in range(_ROWS)]
-
-
 def _cell(answer: CurveAnswer, line: CurveLine, place: int) -> tuple[str, ...]:
     say, span_of = _WRITTEN[answer.question.scale]
     star = "" if line.supported[place] else " *"
@@ -215,14 +209,6 @@ def _cell(answer: CurveAnswer, line: CurveLine, place: int) -> tuple[str, ...]:
     if line.lower is None or line.upper is None:
         return (estimate,)
     return estimate, f"({span_of(line.lower[place], line.upper[place])})"
-
-
-def _points(slope: float) -> str:
-    return percentage_points(slope, sign=True).removesuffix(" percentage points")
-
-
-def _points_between(lower: float, upper: float) -> str:
-    return points_span(lower, upper).removesuffix(" percentage points")
 
 
 def _signed_between(lower: float, upper: float) -> str:
@@ -233,5 +219,5 @@ _WRITTEN: dict[Scale, tuple[Callable[[float], str], Callable[[float, float], str
     "probability": (chance, span),
     "odds": (ratio, ratio_interval),
     "linear_predictor": (signed, _signed_between),
-    "slope": (_points, _points_between),
+    "slope": (bare_points, bare_points_span),
 }

@@ -17,11 +17,11 @@ from plainodds.phrases.labels import (
 )
 from plainodds.phrases.numbers import (
     NOT_KNOWN,
+    bare_points,
+    bare_points_span,
     confidence,
     count,
     p_value,
-    percentage_points,
-    points_span,
 )
 from plainodds.views import markup
 from plainodds.views.among import AmongPart
@@ -161,7 +161,7 @@ def effects_table(answer: EffectsAnswer) -> Markup:
     rows, heading = [], ""
     for row in answer.rows:
         facts = subject.predictor(row.predictor)
-        cells = [_label(facts, row), _points(row.effect.estimate)]
+        cells = [_label(facts, row), bare_points(row.effect.estimate)]
         if has_interval:
             cells += _interval_and_p(row)
         own = _group(answer, row)
@@ -185,9 +185,5 @@ def _interval_and_p(row: EffectRow) -> list[str]:
     lower, upper = row.effect.lower, row.effect.upper
     interval = NOT_KNOWN
     if lower is not None and upper is not None:
-        interval = points_span(lower, upper).removesuffix(" percentage points")
+        interval = bare_points_span(lower, upper)
     return [interval, NOT_KNOWN if row.p_value is None else p_value(row.p_value)]
-
-
-def _points(effect: float) -> str:
-    return percentage_points(effect, sign=True).removesuffix(" percentage points")

@@ -22,11 +22,11 @@ from plainodds.phrases.labels import (
 )
 from plainodds.phrases.numbers import (
     NOT_KNOWN,
+    bare_points,
+    bare_points_span,
     chance,
     confidence,
     count,
-    percentage_points,
-    points_span,
     quantity,
     ratio,
     ratio_interval,
@@ -88,7 +88,9 @@ def _of_level(
         rows.append((f"{sentence_case(cases)} with / without it", *map(_counted, cells), ""))
     if effect.risk_difference is not None:
         chances = (_with_interval(cell.chance, chance, span) for cell in cells)
-        difference = _with_interval(effect.risk_difference, _points, _points_between, " points")
+        difference = _with_interval(
+            effect.risk_difference, bare_points, bare_points_span, " points"
+        )
         rows.append(("Chance", *chances, difference))
     odds = (
         ("1", "(reference)") if cell.is_reference else _of_ratio(cell.odds_ratio) for cell in cells
@@ -113,7 +115,7 @@ def _of_column(answer: PairAnswer, effects: list[StratumEffect]) -> list[Row]:
     rows: list[tuple[_Cell, ...]] = []
     if all(each.risk_difference is not None for each in effects):
         differences = (
-            _with_interval(each.risk_difference, _points, _points_between, " points")
+            _with_interval(each.risk_difference, bare_points, bare_points_span, " points")
             for each in effects
         )
         rows.append(("Chance", *differences, ""))
@@ -245,14 +247,6 @@ def _of_ratio(estimate: Estimate) -> tuple[str, ...]:
 def _times(estimate: Estimate) -> tuple[str, ...]:
     told, *interval = _of_ratio(estimate)
     return f"× {told}", *interval
-
-
-def _points(difference: float) -> str:
-    return percentage_points(difference, sign=True).removesuffix(" percentage points")
-
-
-def _points_between(lower: float, upper: float) -> str:
-    return points_span(lower, upper).removesuffix(" percentage points")
 
 
 def _signed_between(lower: float, upper: float) -> str:

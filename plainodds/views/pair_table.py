@@ -7,14 +7,15 @@ from collections.abc import Callable
 from plainodds.answers.estimate import Estimate
 from plainodds.answers.pair import PairAnswer
 from plainodds.model.predictors import PredictorFacts
+from plainodds.phrases.choices.curve import tabled_places
 from plainodds.phrases.labels import axis_title, predictor_name, sentence_case, value_label
 from plainodds.phrases.numbers import (
     NOT_KNOWN,
+    bare_points,
+    bare_points_span,
     confidence,
     count,
     p_value,
-    percentage_points,
-    points_span,
     quantity,
     ratio,
     ratio_interval,
@@ -35,9 +36,6 @@ from plainodds.views.markup import Column, Markup, Row
 
 __all__ = ["pair_table"]
 
-_ROWS = 11
-_POINTS = " percentage points"
-
 _Cell = str | tuple[str, ...]
 
 
@@ -54,8 +52,8 @@ def effect_table(answer: PairAnswer) -> Markup:
     effect, subject = answer.effect, answer.subject
     b = subject.predictor(answer.question.b)
     in_odds = answer.question.scale == "odds"
-    say, span_of = (ratio, ratio_interval) if in_odds else (_points, _points_between)
-    places = _spread(len(effect.at), b.is_number)
+    say, span_of = (ratio, ratio_interval) if in_odds else (bare_points, bare_points_span)
+    places = tabled_places(len(effect.at)) if b.is_number else list(range(len(effect.at)))
     columns = [Column(axis_title(b)), Column("Odds ratio" if in_odds else "Effect", True)]
     if not subject.no_interval:
         columns.append(Column(f"{confidence(answer.question.level)} interval", True))
@@ -95,7 +93,9 @@ def interaction_table(answer: PairAnswer) -> Markup:
     ):
         if estimate is not None:
             # by slopes it is far smaller than what points are made for
-            say, span_of = (_fine, _fine_between) if answer.sloped else (_points, _points_between)
+            say, span_of = (
+                (_fine, _fine_between) if answer.sloped else (bare_points, bare_points_span)
+            )
             cells = [sentence_case(where), say(estimate.estimate)]
             if has_interval:
                 cells += [_interval(estimate, span_of), NOT_KNOWN if p is None else p_value(p)]
@@ -165,20 +165,6 @@ def _interval(estimate: Estimate, span_of: Callable[[float, float], str]) -> str
 
 def _at(facts: PredictorFacts, value: Scalar) -> str:
     return quantity(float(value)) if facts.is_number else value_label(facts, value)
-
-
-def _spread(points: int, is_number: bool) -> list[int]:
-    if not is_number or points <= 2 * _ROWS:
-        return list(range(points))
-    return [round(each * (points - 1) / (_ROWS - 1)) for each in range(_ROWS)]
-
-
-def _points(difference: float) -> str:
-    return percentage_points(difference, sign=True).removesuffix(_POINTS)
-
-
-def _points_between(lower: float, upper: float) -> str:
-    return points_span(lower, upper).removesuffix(_POINTS)
 
 
 def _fine(slope: float) -> str:

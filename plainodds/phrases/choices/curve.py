@@ -12,9 +12,17 @@ from plainodds.phrases.reach import supported_places
 from plainodds.phrases.slope import slope_places
 from plainodds.phrases.ways import Way
 
-__all__ = ["LISTED_AT_MOST", "as_chances", "extreme_points", "going", "spoken_places"]
+__all__ = [
+    "LISTED_AT_MOST",
+    "as_chances",
+    "extreme_points",
+    "going",
+    "spoken_places",
+    "tabled_places",
+]
 
 LISTED_AT_MOST = 6
+_TABLED = 11
 
 
 def as_chances(line: CurveLine, scale: Scale) -> CurveLine:
@@ -55,6 +63,13 @@ def spoken_places(answer: CurveAnswer, line: CurveLine) -> list[int]:
     at_ends = {chance(chances[place]) for place in ends}
     turns = [place for place in (low, high) if chance(chances[place]) not in at_ends]
     return [*ends, *turns]
+
+
+def tabled_places(points: int) -> list[int]:
+    """The points that a table has a row for: all of a few, of many some evenly spaced ones."""
+    if points <= 2 * _TABLED:
+        return list(range(points))
+    return [round(each * (points - 1) / (_TABLED - 1)) for each in range(_TABLED)]
 
 
 def going(line: CurveLine, start: int, end: int, way: Way) -> Literal["level", "rising", "falling"]:

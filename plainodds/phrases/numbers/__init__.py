@@ -29,7 +29,14 @@ from plainodds.phrases.numbers.quantities import (
 )
 from plainodds.phrases.numbers.ratios import p_mark, p_value, ratio, ratio_interval, simple_fraction
 from plainodds.phrases.numbers.signs import MINUS, NOT_KNOWN
-from plainodds.phrases.numbers.spans import percentage_points, points_on_sides, points_span, span
+from plainodds.phrases.numbers.spans import (
+    bare_points,
+    bare_points_span,
+    percentage_points,
+    points_on_sides,
+    points_span,
+    span,
+)
 from plainodds.phrases.numbers.wording import ENGLISH_WORDING, Wording, worded, wording
 
 __all__ = [
@@ -38,6 +45,8 @@ __all__ = [
     "NOT_KNOWN",
     "Marks",
     "Wording",
+    "bare_points",
+    "bare_points_span",
     "cases",
     "cases_apart",
     "cases_apart_in",

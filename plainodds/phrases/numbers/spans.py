@@ -13,7 +13,15 @@ from plainodds.phrases.numbers.ratios import ratio, ratio_interval
 from plainodds.phrases.numbers.signs import MINUS, with_sign
 from plainodds.phrases.numbers.wording import wording
 
-__all__ = ["Say", "percentage_points", "points_on_sides", "points_span", "span"]
+__all__ = [
+    "Say",
+    "bare_points",
+    "bare_points_span",
+    "percentage_points",
+    "points_on_sides",
+    "points_span",
+    "span",
+]
 
 Say: TypeAlias = Callable[..., str]
 """Writes one number; takes the number of decimals as the keyword `decimals`."""
@@ -110,6 +118,17 @@ def percentage_points(difference: float, *, decimals: int | None = None, sign: b
     return wording().points.format(_points(difference, decimals=decimals, sign=sign))
 
 
+def bare_points(difference: float) -> str:
+    """Write a difference of two chances, with its sign, where a heading names the unit.
+
+    Examples
+    --------
+    >>> bare_points(0.034), bare_points(-0.12)
+    ('+3.4', '−12')
+    """
+    return _points(difference, sign=True)
+
+
 def points_span(lower: float, upper: float) -> str:
     """Write a range of differences of chances in percentage points.
 
@@ -118,12 +137,23 @@ def points_span(lower: float, upper: float) -> str:
     >>> points_span(-0.021, 0.056), points_span(0.021, 0.056)
     ('−2 to +6 percentage points', '2.1 to 5.6 percentage points')
     """
+    return wording().points.format(bare_points_span(lower, upper))
+
+
+def bare_points_span(lower: float, upper: float) -> str:
+    """Write a range of differences of chances where a heading names the unit.
+
+    Examples
+    --------
+    >>> bare_points_span(-0.021, 0.056), bare_points_span(0.021, 0.056)
+    ('−2 to +6', '2.1 to 5.6')
+    """
     sign = lower < 0 < upper
 
     def say(difference: float, decimals: int | None = None) -> str:
         return _points(difference, decimals=decimals, sign=sign)
 
-    return wording().points.format(_span(lower, upper, say, 0.01, _points_decimals))
+    return _span(lower, upper, say, 0.01, _points_decimals)
 
 
 def points_on_sides(lower: float, upper: float) -> str:

@@ -8,11 +8,11 @@ from plainodds.answers.estimate import Estimate
 from plainodds.model.predictors import Subject
 from plainodds.phrases.numbers import (
     NOT_KNOWN,
+    bare_points,
+    bare_points_span,
     chance,
     confidence,
     p_value,
-    percentage_points,
-    points_span,
     ratio,
     ratio_interval,
     signed,
@@ -27,8 +27,6 @@ __all__ = [
     "ratio_cell",
     "signed_cell",
 ]
-
-_POINTS = " percentage points"
 
 
 def interval_title(subject: Subject, name: str, level: float) -> str:
@@ -48,11 +46,7 @@ def chance_cell(estimate: Estimate) -> str:
 
 def points_cell(estimate: Estimate) -> str:
     """As in "+3.4 (1.2 to 5.6)", in percentage points that the heading names."""
-    return _cell(
-        estimate,
-        lambda x: percentage_points(x, sign=True).removesuffix(_POINTS),
-        lambda low, high: points_span(low, high).removesuffix(_POINTS),
-    )
+    return _cell(estimate, bare_points, bare_points_span)
 
 
 def signed_cell(estimate: Estimate) -> str:

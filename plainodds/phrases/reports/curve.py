@@ -7,6 +7,7 @@ from collections.abc import Callable
 from plainodds.answers.curve import CurveAnswer, CurveLine, Scale
 from plainodds.answers.estimate import Estimate
 from plainodds.phrases.captions.parts import fitted_words, joined
+from plainodds.phrases.choices.curve import tabled_places
 from plainodds.phrases.held import others_words
 from plainodds.phrases.labels import axis_title, line_label, scale_title, value_label
 from plainodds.phrases.numbers import confidence, quantity
@@ -19,7 +20,7 @@ from plainodds.phrases.ways import estimate_at
 
 __all__: list[str] = []
 
-_MOST, _ALL = 11, 1_000_000
+_ALL = 1_000_000
 _CELLS: dict[Scale, Callable[[Estimate], str]] = {
     "probability": chance_cell,
     "slope": points_cell,
@@ -33,7 +34,7 @@ def _(answer: CurveAnswer) -> ReportTable:
     subject, question = answer.subject, answer.question
     facts = subject.predictor(question.predictor)
     at = answer.lines[0].at
-    places = _spread(len(at))
+    places = tabled_places(len(at))
     rows = tuple(
         entry(
             quantity(float(at[place])) if facts.is_number else value_label(facts, at[place]),
@@ -66,9 +67,3 @@ def _title(answer: CurveAnswer, line: CurveLine) -> str:
 def _cell(line: CurveLine, place: int, scale: Scale) -> str:
     star = "" if line.supported[place] else " *"
     return _CELLS[scale](estimate_at(line, place)) + star
-
-
-def _spread(points: int) -> list[int]:
-    if points <= 2 * _MOST:
-        return list(range(points))
-    return [round(each * (points - 1) / (_MOST - 1)) for each in range(_MOST)]
