@@ -16,13 +16,13 @@ from plainodds.drawings.pair_effect import EffectPanel
 from plainodds.drawings.pair_interaction import InteractionPanel
 from plainodds.drawings.pair_layout import (
     TITLE_SIZE,
-    Place,
     least_height,
     natural_height,
     notes_of,
     pair_layout,
 )
 from plainodds.drawings.pair_map import MapPanel
+from plainodds.drawings.parts import part_axes, set_place
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import bare
 from plainodds.phrases.pair_labels import pair_title
@@ -79,14 +79,14 @@ class PairDrawing:
         layout = pair_layout(answer, theme, *slot_size(axes))
         self.together: CurveDrawing | LevelsDrawing | MapPanel | None = None
         if layout.together is not None:
-            own = self._part(layout.together)
+            own = part_axes(axes, layout.together)
             if answer.surface is not None:
                 self.together = MapPanel(own, answer, theme)
             elif answer.lines is not None:
                 along = answer.subject.predictor(answer.lines.question.predictor)
                 self.together = (_Lines if along.is_number else _Levels)(own, answer.lines, theme)
-        self.effect = EffectPanel(self._part(layout.effect), answer, theme)
-        self.interaction = InteractionPanel(self._part(layout.interaction), answer, theme)
+        self.effect = EffectPanel(part_axes(axes, layout.effect), answer, theme)
+        self.interaction = InteractionPanel(part_axes(axes, layout.interaction), answer, theme)
         self.update(answer)
 
     @staticmethod
@@ -126,11 +126,11 @@ class PairDrawing:
         theme = self._theme
         width, height = slot_size(self.axes)
         layout = pair_layout(answer, theme, width, height)
-        self._set_place(self.effect.axes, layout.effect)
-        self._set_place(self.interaction.axes, layout.interaction)
+        set_place(self.axes, self.effect.axes, layout.effect)
+        set_place(self.axes, self.interaction.axes, layout.interaction)
         beside: Margins | None = None
         if self.together is not None and layout.together is not None:
-            self._set_place(self.together.axes, layout.together)
+            set_place(self.axes, self.together.axes, layout.together)
             if layout.beside:
                 above, below = EffectPanel.around(answer, theme, layout.effect.width)
                 beside = Margins(0.0, 0.0, below, above)
@@ -150,26 +150,3 @@ class PairDrawing:
             self.together.update(answer.lines)
             return self.together.frame.room.margins
         return None
-
-    def _part(self, place: Place) -> Axes:
-        """Axes for a part, which belong to the picture's and not to its figure."""
-        figure = self.axes.get_figure()
-        assert figure is not None
-        part = Axes(figure, self._fractions(place))
-        self.axes.add_child_axes(part)
-        return part
-
-    def _set_place(self, part: Axes, place: Place) -> None:
-        part.set_position(self._fractions(place))
-
-    def _fractions(self, place: Place) -> tuple[float, float, float, float]:
-        """A place in fractions of the figure."""
-        slot = self.axes.get_position(original=True)
-        width, height = slot_size(self.axes)
-        across, up = slot.width / width, slot.height / height
-        return (
-            slot.x0 + place.left * across,
-            slot.y1 - (place.top + place.height) * up,
-            place.width * across,
-            place.height * up,
-        )

@@ -14,13 +14,13 @@ from plainodds.drawings.pair_interaction import InteractionPanel
 from plainodds.drawings.pair_interaction_rows import interaction_leaves
 from plainodds.drawings.pair_map import MapPanel
 from plainodds.drawings.pair_words import pair_notes
+from plainodds.drawings.parts import Place
 from plainodds.drawings.theme import Theme
 from plainodds.phrases.pair_labels import pair_title
 
 __all__ = [
     "TITLE_SIZE",
     "PairLayout",
-    "Place",
     "least_height",
     "natural_height",
     "notes_of",
@@ -35,16 +35,6 @@ _BENEATH = 1.3  # letters between parts beneath each other
 _MORE_PLOT = 8.0  # letters that a plot would like to be higher than it has to be
 _TALL_MAP = 0.72  # height of a map in its width
 _HIGHEST_MAP = 24.0  # letters
-
-
-@dataclass(frozen=True)
-class Place:
-    """A part's place in points, from the upper left of the slot; heights downwards."""
-
-    left: float
-    top: float
-    width: float
-    height: float
 
 
 @dataclass(frozen=True)

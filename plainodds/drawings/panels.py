@@ -3,7 +3,6 @@
 from __future__ import annotations
 
 from collections.abc import Hashable
-from dataclasses import dataclass
 from typing import Any
 
 from matplotlib.axes import Axes
@@ -14,6 +13,7 @@ from plainodds.drawings.drawing import Drawing, fitting_theme
 from plainodds.drawings.geometry import Room, corner, slot_size
 from plainodds.drawings.kinds import drawing_of
 from plainodds.drawings.lettering import letter, line_height
+from plainodds.drawings.parts import Place, part_axes, set_place
 from plainodds.drawings.sharing import share_scale
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import bare
@@ -24,16 +24,6 @@ __all__ = ["PanelsDrawing"]
 _LETTER = 1.2  # size of a panel's letter, in letters of the theme
 _ACROSS, _BETWEEN = 2.4, 1.8  # between panels beside and beneath each other, in letters
 _NARROWEST = 26.0  # letters
-
-
-@dataclass(frozen=True)
-class _Place:
-    """A panel's place in points, from the upper left; heights downwards."""
-
-    left: float
-    top: float
-    width: float
-    height: float
 
 
 class PanelsDrawing:
@@ -66,7 +56,7 @@ class PanelsDrawing:
         for each, place in zip(answer.answers, self._places(), strict=True):
             drawing = drawing_of(each)
             own = fitting_theme(drawing, each, theme, place.width, place.height)
-            self.panels.append(drawing(self._part(place), each, own))
+            self.panels.append(drawing(part_axes(axes, place), each, own))
         self.update(answer)
 
     @staticmethod
@@ -105,12 +95,12 @@ class PanelsDrawing:
         for number, (drawing, each, place) in enumerate(
             zip(self.panels, answer.answers, places, strict=True)
         ):
-            drawing.axes.set_position(self._fractions(place))
+            set_place(self.axes, drawing.axes, place)
             drawing.update(each)
             self.letters[number].set_text(panel_letter(number))
             self.letters[number].set_position((place.left, -(place.top - strip)))
 
-    def _places(self) -> list[_Place]:
+    def _places(self) -> list[Place]:
         answer, theme = self._answer, self._theme
         width, height = slot_size(self.axes)
         columns = _columns(answer, theme, width)
@@ -124,28 +114,9 @@ class PanelsDrawing:
             top += _strip(theme)
             for column in range(columns):
                 left = column * (across + _ACROSS * theme.font_size)
-                places.append(_Place(left, top, across, tall))
+                places.append(Place(left, top, across, tall))
             top += tall + _BETWEEN * theme.font_size
         return places[: len(answer.answers)]
-
-    def _part(self, place: _Place) -> Axes:
-        """Axes for a panel, which belong to the picture's and not to its figure."""
-        figure = self.axes.get_figure()
-        assert figure is not None
-        part = Axes(figure, self._fractions(place))
-        self.axes.add_child_axes(part)
-        return part
-
-    def _fractions(self, place: _Place) -> tuple[float, float, float, float]:
-        slot = self.axes.get_position(original=True)
-        width, height = slot_size(self.axes)
-        across, up = slot.width / width, slot.height / height
-        return (
-            slot.x0 + place.left * across,
-            slot.y1 - (place.top + place.height) * up,
-            place.width * across,
-            place.height * up,
-        )
 
 
 def _columns(answer: PanelsAnswer, theme: Theme, width: float) -> int:
