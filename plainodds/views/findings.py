@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Callable
 from dataclasses import dataclass
+from operator import itemgetter
 
 import ipywidgets as widgets
 
@@ -110,9 +111,12 @@ class FindingsList:
         while len(self._made) < len(told):
             self._made.append(Card(self._choose))
         self.cards = self._made[: len(told)]
+        marks = [any(each is chosen for each in entry.findings) for entry in told]
         for card, entry in zip(self.cards, told, strict=True):
-            is_chosen = any(each is chosen for each in entry.findings)
-            card.show(entry, answer, is_chosen=is_chosen)
+            card.show(entry, answer)
+        # each mark is a message of its own: the one that goes first leaves no two on the page
+        for card, is_chosen in sorted(zip(self.cards, marks, strict=True), key=itemgetter(1)):
+            card.mark(is_chosen=is_chosen)
         fill(self._place, [card.widget for card in self.cards])
 
 
@@ -126,16 +130,19 @@ class Card:
         self.sentence = html("found")
         self.widget = block(self.button, self.sentence, name="finding")
 
-    def show(self, entry: Entry, answer: SoundnessAnswer, *, is_chosen: bool) -> None:
+    def show(self, entry: Entry, answer: SoundnessAnswer) -> None:
         """Show an entry; what stays the same is not sent again."""
         self._entry = entry
         subject, level = answer.subject, answer.question.level
         self.button.description = entry.heading(subject)
-        self.button.tooltip = "Shown in the picture" if is_chosen else "Show this in the picture"
         self.sentence.value = markup.element("span", entry.sentence(subject, level))
-        weighs = entry.first.weight >= _WEIGHS
-        for box, name, wanted in (
-            (self.widget, _CHOSEN, is_chosen),
-            (self.widget, "plainodds-weighs", weighs),
-        ):
-            (box.add_class if wanted else box.remove_class)(name)
+        _put_class(self.widget, "plainodds-weighs", entry.first.weight >= _WEIGHS)
+
+    def mark(self, *, is_chosen: bool) -> None:
+        """Say whether this is what the picture shows."""
+        self.button.tooltip = "Shown in the picture" if is_chosen else "Show this in the picture"
+        _put_class(self.widget, _CHOSEN, is_chosen)
+
+
+def _put_class(box: widgets.Box, name: str, wanted: bool) -> None:
+    (box.add_class if wanted else box.remove_class)(name)

@@ -153,6 +153,16 @@ def test_it_starts_with_the_heaviest_that_has_evidence(view, sound):
     assert card.button.tooltip == "Shown in the picture"
 
 
+def test_at_no_moment_are_two_findings_marked(view, page):
+    marked = []
+    for card in view._list.cards:
+        card.widget.observe(lambda _: marked.append(len(chosen(view))), "_dom_classes")
+    told = [card._entry.first.topic for card in view._list.cards]
+    for topic in (told[-1], told[0], told[1]):
+        page.press(card_of(view, topic).button)
+    assert set(marked) == {0, 1}
+
+
 @pytest.mark.parametrize("topic", TOPICS)
 def test_choosing_a_finding_shows_its_picture_words_and_figures(view, sound, page, topic):
     page.press(card_of(view, topic).button)
