@@ -8,7 +8,6 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from plainodds.answers.checks.shape import Bin
 from plainodds.drawings.checks.board import Board
 from plainodds.drawings.lettering import line_height, text_width, tick_style, wrapped
 from plainodds.drawings.theme import Theme
@@ -17,10 +16,8 @@ from plainodds.phrases.numbers import quantity
 
 __all__ = [
     "Axis",
-    "band",
     "chances_axis",
     "density",
-    "dot_areas",
     "draw_strip",
     "draw_x_axis",
     "draw_y_axis",
@@ -147,28 +144,12 @@ def draw_x_axis(board: Board, axis: Axis, title: str, width: float, down: float)
     board.write(words, 0.0, beneath, board.at(0.5, 0), across="center", down="top")
 
 
-def band(
-    x: Sequence[float], lower: Sequence[float], upper: Sequence[float]
-) -> list[list[tuple[float, float]]]:
-    """The outline of a band, in one piece; empty where its ends are not known."""
-    there = [(a, b) for a, b in zip(x, upper, strict=True) if math.isfinite(b)]
-    back = [(a, b) for a, b in zip(x, lower, strict=True) if math.isfinite(b)]
-    return [[*there, *reversed(back)]] if len(there) > 1 and len(back) > 1 else []
-
-
 def marked_places(points: int, offset: float) -> list[int]:
     """Where a line carries markers: a few places, no two lines alike."""
     if points <= _MARKED:
         return list(range(points))
     steps = (np.arange(_MARKED) + offset) / _MARKED
     return [int(each) for each in np.unique(np.round(steps * (points - 1)))]
-
-
-def dot_areas(bins: Sequence[Bin], theme: Theme) -> list[float]:
-    """Areas in square points, in proportion to cases; the least can still be seen."""
-    largest = max((each.cases for each in bins), default=1.0) or 1.0
-    whole = (1.05 * theme.marker_size) ** 2
-    return [whole * max(each.cases / largest, 0.2) for each in bins]
 
 
 def density(

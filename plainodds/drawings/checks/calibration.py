@@ -8,10 +8,8 @@ from plainodds.answers.checks.calibration import CalibrationEvidence
 from plainodds.answers.checks.discrimination import DiscriminationEvidence
 from plainodds.drawings.checks.along import (
     Axis,
-    band,
     chances_axis,
     density,
-    dot_areas,
     draw_strip,
     draw_x_axis,
     draw_y_axis,
@@ -21,8 +19,8 @@ from plainodds.drawings.checks.along import (
 )
 from plainodds.drawings.checks.board import Board
 from plainodds.drawings.checks.ends import EndLabel, above_height, draw_above, draw_ends, ends_width
+from plainodds.drawings.checks.observed import cases_each, draw_observed
 from plainodds.drawings.checks.plate import Found, Plate
-from plainodds.drawings.checks.shape import cases_each, intervals_of
 from plainodds.drawings.checks.tables import draw_table, table_height
 from plainodds.drawings.geometry import Margins
 from plainodds.drawings.lettering import line_height, wrapped
@@ -175,28 +173,13 @@ def _chances(found: Found) -> list[tuple[float, float, float]]:
 
 def _draw_curves(board: Board, evidence: CalibrationEvidence, axis: Axis) -> None:
     theme = board.theme
-    data = theme.series(0)
     board.line(
         "equality", [axis.lower, axis.upper], [axis.lower, axis.upper], color=theme.rule,
         linewidth=1.6 * theme.hairline, linestyle=(0, (4.0, 2.4)), zorder=2,
     )  # fmt: skip
-    board.area(
-        "band", band(evidence.at, evidence.lower, evidence.upper), facecolor=data.colour,
-        alpha=theme.band_opacity, zorder=1.5, clip=True,
-    )  # fmt: skip
-    board.strokes(
-        "intervals", intervals_of(evidence.bins, axis), colors=data.colour,
-        linewidths=1.6 * theme.hairline, zorder=2.5, alpha=0.7,
-    )  # fmt: skip
-    board.circles(
-        "bins", [(each.centre, each.observed) for each in evidence.bins],
-        dot_areas(evidence.bins, theme), facecolors=theme.paper, edgecolors=data.colour,
-        linewidths=0.7 * theme.line_width, zorder=2.6, clip_on=False,
-    )  # fmt: skip
-    board.line(
-        "data", evidence.at, evidence.smoothed, color=data.colour, linewidth=theme.line_width,
-        zorder=3,
-    )  # fmt: skip
+    draw_observed(
+        board, evidence.at, evidence.smoothed, (evidence.lower, evidence.upper), evidence.bins, axis
+    )
 
 
 CALIBRATION = Plate("calibration", _natural, _least, _notes, _paint)

@@ -2,15 +2,11 @@
 
 from __future__ import annotations
 
-from collections.abc import Sequence
-
-from plainodds.answers.checks.shape import Bin, ShapeEvidence
+from plainodds.answers.checks.shape import ShapeEvidence
 from plainodds.drawings.checks.along import (
     Axis,
-    band,
     chances_axis,
     density,
-    dot_areas,
     draw_strip,
     draw_x_axis,
     draw_y_axis,
@@ -22,16 +18,16 @@ from plainodds.drawings.checks.along import (
 )
 from plainodds.drawings.checks.board import Board
 from plainodds.drawings.checks.ends import EndLabel, draw_ends, ends_width
+from plainodds.drawings.checks.observed import cases_each, draw_observed
 from plainodds.drawings.checks.plate import Found, Plate
 from plainodds.drawings.geometry import Margins
 from plainodds.drawings.lettering import line_height, wrapped
 from plainodds.drawings.theme import Theme
 from plainodds.phrases.checks.headings import picture_axes, picture_legend
-from plainodds.phrases.checks.parts import cases
 from plainodds.phrases.numbers import confidence
 from plainodds.phrases.units import tidy
 
-__all__ = ["SHAPE", "cases_each", "intervals_of"]
+__all__ = ["SHAPE"]
 
 _STRIP = 1.6
 """Height of the strip beneath the plot, in letters."""
@@ -62,25 +58,6 @@ def _notes(found: Found) -> list[str]:
         f"Band and bars: {confident} intervals.",
         f"{cases_each(evidence.bins, found)} Beneath: where the "
         f"{tidy(found.subject.outcome.cases)} are.",
-    ]
-
-
-def cases_each(bins: Sequence[Bin], found: Found) -> str:
-    """How many cases the dots stand for: "Dots: 54 to 60 pipes each."."""
-    low, high = min(each.cases for each in bins), max(each.cases for each in bins)
-    told = cases(found.subject, high)
-    if low > 0.995 * high:
-        return f"Dots: {told} each."
-    least = cases(found.subject, low).split(" ")[0]
-    larger = ", the more the larger" if high > 1.5 * low else ""
-    return f"Dots: {least} to {told} each{larger}."
-
-
-def intervals_of(bins: Sequence[Bin], axis: Axis) -> list[list[tuple[float, float]]]:
-    """The bins' intervals as upright lines, as far as the axis goes."""
-    return [
-        [(each.centre, max(each.lower, axis.lower)), (each.centre, min(each.upper, axis.upper))]
-        for each in bins
     ]
 
 
@@ -131,24 +108,10 @@ def _paint(board: Board, found: Found, width: float, height: float) -> Margins:
 
 def _draw_curves(board: Board, evidence: ShapeEvidence, up: Axis) -> None:
     theme = board.theme
-    data, model = theme.series(0), theme.series(1)
-    board.area(
-        "band", band(evidence.at, evidence.lower, evidence.upper), facecolor=data.colour,
-        alpha=theme.band_opacity, zorder=1.5, clip=True,
-    )  # fmt: skip
-    board.strokes(
-        "intervals", intervals_of(evidence.bins, up), colors=data.colour,
-        linewidths=1.6 * theme.hairline, zorder=2.5, alpha=0.7,
-    )  # fmt: skip
-    board.circles(
-        "bins", [(each.centre, each.observed) for each in evidence.bins],
-        dot_areas(evidence.bins, theme), facecolors=theme.paper, edgecolors=data.colour,
-        linewidths=0.7 * theme.line_width, zorder=2.6, clip_on=False,
-    )  # fmt: skip
-    board.line(
-        "data", evidence.at, evidence.observed, color=data.colour, linewidth=theme.line_width,
-        zorder=3,
-    )  # fmt: skip
+    model = theme.series(1)
+    draw_observed(
+        board, evidence.at, evidence.observed, (evidence.lower, evidence.upper), evidence.bins, up
+    )
     board.line(
         "model", evidence.at, evidence.expected, color=model.colour, zorder=3.2,
         linewidth=1.15 * theme.line_width, linestyle=(0, model.dash),

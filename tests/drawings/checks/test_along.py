@@ -8,7 +8,6 @@ from hypothesis import given
 from hypothesis import strategies as st
 
 from plainodds.drawings.checks.along import (
-    band,
     chances_axis,
     density,
     marked_places,
@@ -82,13 +81,6 @@ def test_single_values_have_bars_as_high_as_their_cases():
 def test_small_gaps_between_bins_are_shared():
     bars = density([0.0, 10.5], [10.0, 40.0], [100.0, 150.0], 40.0)
     assert bars[0][1] == bars[1][0] == 10.25
-
-
-def test_a_band_without_ends_is_none():
-    assert band((1.0, 2.0), (math.nan,) * 2, (math.nan,) * 2) == []
-    assert band((1.0, 2.0), (0.1, 0.2), (0.3, 0.4)) == [
-        [(1.0, 0.3), (2.0, 0.4), (2.0, 0.2), (1.0, 0.1)]
-    ]
 
 
 def test_marks_are_few_and_no_two_lines_alike():
