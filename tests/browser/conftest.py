@@ -3,12 +3,15 @@
 from pathlib import Path
 
 import pytest
-from playwright.sync_api import sync_playwright
+from playwright.sync_api import expect, sync_playwright
 
 from tests.browser import chromium
 from tests.browser.lab import LabServer
 
 HERE = Path(__file__).parent
+
+# a busy machine may be slow: what is tested is what appears, not how soon
+expect.set_options(timeout=20_000)
 
 
 def pytest_collection_modifyitems(items):

@@ -44,7 +44,7 @@ def test_refitting_is_stopped_while_it_goes_on(odds):
     odds.choose("interval", "the likelihood")
     expect(working(odds)).to_contain_text("Refitting for likelihood intervals")
     odds.button("Stop").click()
-    expect(odds.problem).to_contain_text("Stopped", timeout=2000)
+    expect(odds.problem).to_contain_text("Stopped")
     expect(working(odds)).to_have_count(1)
     expect(working(odds)).to_be_hidden()
     assert odds.chosen("interval") == "standard errors (Wald)"
