@@ -107,8 +107,11 @@ class Likelihood:
     @cached_property
     def _best(self) -> _Refit:
         """The unconstrained minimum, polished from where the fit ended."""
-        free = np.eye(len(self.coefficients))
-        coefficients, deviance, _ = self._minimised(self.coefficients, free)
+        # of singular columns a fit can end anywhere, worse than where it began: there η is so
+        # large that rounding hides every descent
+        nought = np.zeros_like(self.coefficients)
+        start = min((self.coefficients, nought), key=lambda each: self._parts(each)[0])
+        coefficients, deviance, _ = self._minimised(start, np.eye(len(start)))
         return _Refit(coefficients, deviance, 0.0)
 
     @cached_property
