@@ -28,8 +28,6 @@ from plainodds.phrases.moves import (
 )
 from plainodds.phrases.needed import needed_technical, needed_words
 from plainodds.phrases.numbers import (
-    cases_apart_in,
-    cases_on_sides,
     confidence,
     denominator_of_change,
     percentage_points,
@@ -37,10 +35,10 @@ from plainodds.phrases.numbers import (
 from plainodds.phrases.parts import (
     association,
     beyond_saying,
+    cases_with_interval,
     chance_with_interval,
     covariance_words,
     difference_with_interval,
-    interval,
     is_beyond_saying,
     model_cautions,
     odds_ratio_cautions,
@@ -49,10 +47,10 @@ from plainodds.phrases.parts import (
     ratio_with_interval,
     rows_words,
     say_level_once,
-    sentence,
     standard_error,
 )
 from plainodds.phrases.saying import Audience, Words, for_audience, words
+from plainodds.phrases.sentences import sentence
 from plainodds.phrases.units import tidy
 
 __all__: list[str] = []
@@ -129,20 +127,11 @@ def _intervals(answer: ChangeAnswer) -> list[str]:
 def _difference(answer: ChangeAnswer, over: int) -> str:
     level, difference = answer.question.level, answer.comparison.risk_difference
     cases, points = say_level_once(
-        [_cases_with_interval(answer, over), difference_with_interval(difference, level)], level
+        [cases_with_interval(difference, over, level), difference_with_interval(difference, level)],
+        level,
     )
     told = f"That is {cases}, or {points}"
     return f"{told}, which leaves open whether there are more or fewer" if is_open(answer) else told
-
-
-def _cases_with_interval(answer: ChangeAnswer, over: int) -> str:
-    difference = answer.comparison.risk_difference
-
-    def ends(lower: float, upper: float) -> str:
-        return cases_on_sides(lower, upper, over)
-
-    told = cases_apart_in(difference.estimate, over)
-    return told + interval(difference, ends, answer.question.level)
 
 
 def _framed(answer: ChangeAnswer, over: int) -> str:
@@ -197,7 +186,8 @@ def _technical(answer: ChangeAnswer) -> Words:
         f"{_with_error(answer.end, level)}",
         f"Risk difference {points_with_interval(compared.risk_difference, level)}"
         f"{_points_error(compared.risk_difference)}; that is "
-        f"{_cases_with_interval(answer, 100)} and {_cases_with_interval(answer, 1_000)}",
+        f"{cases_with_interval(compared.risk_difference, 100, level)} and "
+        f"{cases_with_interval(compared.risk_difference, 1_000, level)}",
         f"Risk ratio {ratio_with_interval(compared.risk_ratio, level)}"
         f"{standard_error(compared.risk_ratio)}; {kind} "
         f"{ratio_with_interval(compared.odds_ratio, level)}{standard_error(compared.odds_ratio)}",

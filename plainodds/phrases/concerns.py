@@ -14,7 +14,7 @@ from plainodds.phrases.choices.concerns import (
     unseen_told,
 )
 from plainodds.phrases.labels import listed, value_label
-from plainodds.phrases.parts import sentence
+from plainodds.phrases.sentences import sentence
 from plainodds.phrases.unbounded import one_outcome_told
 from plainodds.phrases.units import tidy
 from plainodds.values import Scalar

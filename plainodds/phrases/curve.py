@@ -31,10 +31,10 @@ from plainodds.phrases.parts import (
     model_cautions,
     rows_words,
     say_level_once,
-    sentence,
 )
 from plainodds.phrases.reach import beyond_words, line_words
 from plainodds.phrases.saying import Audience, Words, for_audience, words
+from plainodds.phrases.sentences import sentence
 from plainodds.phrases.slope import slope_line
 from plainodds.phrases.units import tidy
 from plainodds.phrases.ways import Way, estimate_at, way_of

@@ -45,9 +45,9 @@ from plainodds.phrases.parts import (
     profile_words,
     rows_words,
     say_level_once,
-    sentence,
 )
 from plainodds.phrases.saying import Audience, Words, for_audience, words
+from plainodds.phrases.sentences import sentence
 from plainodds.phrases.units import per_unit, tidy
 
 __all__: list[str] = []

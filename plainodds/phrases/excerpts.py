@@ -5,11 +5,12 @@ from __future__ import annotations
 from plainodds.answers.excerpts import ExcerptAnswer
 from plainodds.phrases.alternative import alternative
 from plainodds.phrases.captions.caption import caption
-from plainodds.phrases.captions.parts import fitted_words, interval_words, joined
+from plainodds.phrases.captions.parts import fitted_words, interval_words
 from plainodds.phrases.code import code
 from plainodds.phrases.methods.note import MethodsNote, methods_note
 from plainodds.phrases.reports.report import ReportTable, report_of
 from plainodds.phrases.saying import Audience, Words, words
+from plainodds.phrases.sentences import joined
 
 __all__: list[str] = []
 

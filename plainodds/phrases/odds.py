@@ -47,13 +47,13 @@ from plainodds.phrases.parts import (
     model_cautions,
     rather,
     rows_words,
-    sentence,
     signed_with_interval,
     standard_error,
     typical_case,
     typical_words,
 )
 from plainodds.phrases.saying import Audience, Words, for_audience, words
+from plainodds.phrases.sentences import sentence
 from plainodds.phrases.unbounded import (
     has_finite_estimate,
     unbounded_cautions,

@@ -40,10 +40,10 @@ from plainodds.phrases.parts import (
     odds_ratio_cautions,
     points_with_interval,
     ratio_with_interval,
-    sentence,
 )
 from plainodds.phrases.reach import beyond_words, line_words
 from plainodds.phrases.saying import Audience, Words, for_audience, words
+from plainodds.phrases.sentences import sentence
 from plainodds.phrases.stretches import stretches_words, turns_words, unsupported_words
 
 __all__: list[str] = []

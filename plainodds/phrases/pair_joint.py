@@ -25,11 +25,11 @@ from plainodds.phrases.parts import (
     model_cautions,
     odds_ratio_cautions,
     ratio_with_interval,
-    sentence,
     signed_with_interval,
     standard_error,
 )
 from plainodds.phrases.saying import Words
+from plainodds.phrases.sentences import sentence
 from plainodds.phrases.units import tidy
 
 __all__ = [

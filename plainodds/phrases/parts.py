@@ -7,10 +7,12 @@ from collections.abc import Callable, Iterable
 
 from plainodds.answers.estimate import Estimate
 from plainodds.model.predictors import OutcomeFacts, Subject
-from plainodds.phrases.labels import listed, named_value, sentence_case
+from plainodds.phrases.labels import listed, named_value
 from plainodds.phrases.lexicon import lexicon
 from plainodds.phrases.numbers import (
     cases,
+    cases_apart_in,
+    cases_on_sides,
     chance,
     count,
     frequency,
@@ -26,6 +28,7 @@ from plainodds.phrases.numbers import (
     told_apart,
     wording,
 )
+from plainodds.phrases.sentences import sentence
 from plainodds.phrases.stakes import stakes_cautions
 from plainodds.phrases.units import tidy
 from plainodds.values import Pairs
@@ -37,6 +40,7 @@ __all__ = [
     "association",
     "beyond_saying",
     "case_words",
+    "cases_with_interval",
     "chance_with_interval",
     "counted_rows",
     "covariance_words",
@@ -51,7 +55,6 @@ __all__ = [
     "ratio_with_interval",
     "rows_words",
     "say_level_once",
-    "sentence",
     "signed_with_interval",
     "standard_error",
     "typical_case",
@@ -88,12 +91,6 @@ def association(subject: Subject) -> str:
     )
 
 
-def sentence(text: str) -> str:
-    """Make a sentence: one line, a capital where one is due, a full stop."""
-    text = sentence_case(text)
-    return text if text.endswith((".", "!", "?")) else f"{text}."
-
-
 def article(noun: str) -> str:
     """Put "a" or "an" before a noun.
 
@@ -123,6 +120,15 @@ def interval(estimate: Estimate, say: Callable[[float, float], str], level: floa
 def chance_with_interval(estimate: Estimate, level: float) -> str:
     """As in "23% (95% interval 18% to 29%)"."""
     return chance(estimate.estimate) + interval(estimate, span, level)
+
+
+def cases_with_interval(difference: Estimate, over: int, level: float) -> str:
+    """As in "7 more in 100 (95% interval 2 to 12 more)"."""
+
+    def ends(lower: float, upper: float) -> str:
+        return cases_on_sides(lower, upper, over)
+
+    return cases_apart_in(difference.estimate, over) + interval(difference, ends, level)
 
 
 def ratio_with_interval(estimate: Estimate, level: float) -> str:

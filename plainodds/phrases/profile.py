@@ -34,12 +34,12 @@ from plainodds.phrases.parts import (
     rather,
     ratio_with_interval,
     rows_words,
-    sentence,
     signed_with_interval,
     standard_error,
     typical_case,
 )
 from plainodds.phrases.saying import Audience, Words, for_audience, words
+from plainodds.phrases.sentences import sentence
 from plainodds.phrases.unbounded import profile_unbounded_cautions, ratio_or_none
 from plainodds.phrases.units import tidy
 from plainodds.values import Pairs

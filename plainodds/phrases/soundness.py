@@ -14,8 +14,8 @@ from plainodds.phrases.checks.plainly import plain_sentences
 from plainodds.phrases.choices.checks import findings_told, how_many
 from plainodds.phrases.labels import listed, sentence_case
 from plainodds.phrases.numbers import count
-from plainodds.phrases.parts import sentence
 from plainodds.phrases.saying import Audience, Words, for_audience, words
+from plainodds.phrases.sentences import sentence
 
 __all__ = ["summary"]
 

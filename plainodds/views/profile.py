@@ -12,7 +12,8 @@ from plainodds.phrases import words
 from plainodds.phrases.familiarity import familiarity_cautions
 from plainodds.phrases.labels import predictor_label, value_label
 from plainodds.phrases.numbers import chance, ratio, signed, summing
-from plainodds.phrases.parts import profile_words, sentence, typical_case
+from plainodds.phrases.parts import profile_words, typical_case
+from plainodds.phrases.sentences import sentence
 from plainodds.values import Pairs, Scalar
 from plainodds.views import markup
 from plainodds.views.base import AnswerView

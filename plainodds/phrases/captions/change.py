@@ -4,8 +4,9 @@ from __future__ import annotations
 
 from plainodds.answers.change import ChangeAnswer
 from plainodds.phrases.captions.caption import caption
-from plainodds.phrases.captions.parts import fitted_words, interval_words, joined, rest_words
+from plainodds.phrases.captions.parts import fitted_words, interval_words, rest_words
 from plainodds.phrases.moves import moves_words, settled_moves
+from plainodds.phrases.sentences import joined
 from plainodds.phrases.units import tidy
 
 __all__: list[str] = []

@@ -4,8 +4,9 @@ from __future__ import annotations
 
 from plainodds.answers.effects import EffectsAnswer
 from plainodds.phrases.captions.caption import caption
-from plainodds.phrases.captions.parts import fitted_words, interval_words, joined, rest_words
+from plainodds.phrases.captions.parts import fitted_words, interval_words, rest_words
 from plainodds.phrases.labels import effects_title, predictor_name
+from plainodds.phrases.sentences import joined
 
 __all__: list[str] = []
 

@@ -4,9 +4,10 @@ from __future__ import annotations
 
 from plainodds.answers.odds import OddsAnswer
 from plainodds.phrases.captions.caption import caption
-from plainodds.phrases.captions.parts import fitted_words, interval_words, joined
+from plainodds.phrases.captions.parts import fitted_words, interval_words
 from plainodds.phrases.labels import listed
 from plainodds.phrases.odds_lines import odds_lines
+from plainodds.phrases.sentences import joined
 from plainodds.phrases.units import tidy
 
 __all__: list[str] = []

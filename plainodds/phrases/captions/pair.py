@@ -4,9 +4,10 @@ from __future__ import annotations
 
 from plainodds.answers.pair import PairAnswer
 from plainodds.phrases.captions.caption import caption
-from plainodds.phrases.captions.parts import fitted_words, interval_words, joined, rest_words
+from plainodds.phrases.captions.parts import fitted_words, interval_words, rest_words
 from plainodds.phrases.labels import predictor_name
 from plainodds.phrases.pair_labels import followed_label, has_others, left_out, pair_title
+from plainodds.phrases.sentences import joined
 from plainodds.phrases.units import tidy
 
 __all__: list[str] = []

@@ -8,18 +8,13 @@ from plainodds.model.predictors import Subject
 from plainodds.phrases.averaged import rows_chosen
 from plainodds.phrases.held import held_words, kept_words
 from plainodds.phrases.numbers import chance, confidence, count
-from plainodds.phrases.parts import sentence
+from plainodds.phrases.sentences import sentence
 from plainodds.phrases.units import tidy
 from plainodds.values import Pairs
 
-__all__ = ["fitted_words", "interval_words", "joined", "rest_words"]
+__all__ = ["fitted_words", "interval_words", "rest_words"]
 
 _EVERYTHING = 1_000_000
-
-
-def joined(*told: str) -> str:
-    """Whole sentences in a row, empty ones left out."""
-    return " ".join(sentence(each) for each in told if each)
 
 
 def interval_words(subject: Subject, level: float, marks: str) -> str:

@@ -4,8 +4,9 @@ from __future__ import annotations
 
 from plainodds.answers.profile import ProfileAnswer
 from plainodds.phrases.captions.caption import caption
-from plainodds.phrases.captions.parts import fitted_words, interval_words, joined
+from plainodds.phrases.captions.parts import fitted_words, interval_words
 from plainodds.phrases.parts import case_words
+from plainodds.phrases.sentences import joined
 from plainodds.phrases.units import tidy
 from plainodds.values import Pairs
 

@@ -5,8 +5,9 @@ from __future__ import annotations
 from plainodds.answers.soundness import SoundnessAnswer, shown_finding
 from plainodds.phrases.alternative import alternative
 from plainodds.phrases.captions.caption import caption
-from plainodds.phrases.captions.parts import fitted_words, joined
+from plainodds.phrases.captions.parts import fitted_words
 from plainodds.phrases.checks.headings import concern_label, finding_heading
+from plainodds.phrases.sentences import joined
 
 __all__: list[str] = []
 

@@ -8,7 +8,7 @@ from plainodds.answers.checks.finding import Evidence, Finding, Topic, Unknown
 from plainodds.model.predictors import Subject
 from plainodds.phrases.checks.headings import finding_heading
 from plainodds.phrases.checks.parts import WHY_NOT_KNOWN
-from plainodds.phrases.parts import sentence
+from plainodds.phrases.sentences import sentence
 from plainodds.values import value
 
 __all__ = [

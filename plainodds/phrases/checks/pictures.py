@@ -17,7 +17,7 @@ from plainodds.phrases.checks.finding_words import finding_words
 from plainodds.phrases.checks.headings import concern_label
 from plainodds.phrases.checks.parts import coefficients, counted
 from plainodds.phrases.labels import predictor_name
-from plainodds.phrases.parts import sentence
+from plainodds.phrases.sentences import sentence
 from plainodds.phrases.units import tidy
 
 __all__ = ["picture_words"]

@@ -23,7 +23,7 @@ from plainodds.phrases.checks.parts import amount, cases, named
 from plainodds.phrases.checks.separation import told_without_exception
 from plainodds.phrases.choices.checks import TOLD_WITH_WHY
 from plainodds.phrases.labels import predictor_name
-from plainodds.phrases.parts import sentence
+from plainodds.phrases.sentences import sentence
 from plainodds.phrases.units import tidy
 
 __all__ = ["plain_sentences"]

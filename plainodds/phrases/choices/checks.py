@@ -5,8 +5,9 @@ from __future__ import annotations
 import math
 from typing import Literal, TypeAlias
 
+from plainodds.answers.checks.calibration import CalibrationEvidence, Optimism
 from plainodds.answers.checks.dependence import DependenceEvidence, StandardErrorPair
-from plainodds.answers.checks.finding import Concern, Finding
+from plainodds.answers.checks.finding import Concern, Finding, Topic
 from plainodds.answers.checks.influence import InfluenceEvidence, InfluentialPattern, Moved
 from plainodds.answers.checks.shape import gap_that_matters
 from plainodds.answers.soundness import SoundnessAnswer
@@ -19,7 +20,9 @@ __all__ = [
     "farthest_pair",
     "findings_told",
     "how_many",
+    "optimism_of",
     "ratio_without",
+    "topics_looked_at",
     "verdict_of",
 ]
 
@@ -113,3 +116,16 @@ def findings_told(answer: SoundnessAnswer) -> tuple[list[Finding], int]:
     weighty = ("keep in mind", "don't explain yet")
     heaviest = [each for each in answer.findings if each.concern in weighty]
     return heaviest[:_TOLD_AT_MOST], len(heaviest) - _TOLD_AT_MOST
+
+
+def topics_looked_at(answer: SoundnessAnswer) -> list[Topic]:
+    """The topics of which there is evidence, the heaviest first, each once."""
+    return list(dict.fromkeys(each.topic for each in answer.findings if each.evidence is not None))
+
+
+def optimism_of(answer: SoundnessAnswer) -> Optimism | None:
+    """How much of the calibration is the fit's own optimism, where that was looked at."""
+    for each in answer.findings:
+        if isinstance(each.evidence, CalibrationEvidence) and each.evidence.optimism is not None:
+            return each.evidence.optimism
+    return None

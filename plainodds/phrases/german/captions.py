@@ -13,11 +13,12 @@ from plainodds.phrases.german.effects import effects_title
 from plainodds.phrases.german.language import GERMAN
 from plainodds.phrases.german.pair_labels import followed, left_out, title
 from plainodds.phrases.german.parts import EVERYTHING, cases, chance, event, whom
-from plainodds.phrases.german.texts import fitted, intervals_shown, joined, rest
+from plainodds.phrases.german.texts import fitted, intervals_shown, rest
 from plainodds.phrases.labels import listed, predictor_name
 from plainodds.phrases.moves import moves_words, settled_moves
 from plainodds.phrases.odds_lines import odds_lines
 from plainodds.phrases.pair_labels import has_others
+from plainodds.phrases.sentences import joined
 from plainodds.phrases.units import tidy
 from plainodds.values import Pairs
 

@@ -34,9 +34,6 @@ from plainodds.phrases.german.parts import (
     model_cautions,
     odds_ratio_cautions,
 )
-from plainodds.phrases.german.texts import (
-    joined,
-)
 from plainodds.phrases.labels import listed
 from plainodds.phrases.lexicon import lexicon
 from plainodds.phrases.moves import (
@@ -49,25 +46,23 @@ from plainodds.phrases.moves import (
     start_label,
 )
 from plainodds.phrases.numbers import (
-    cases_apart_in,
-    cases_on_sides,
     denominator_of_change,
     percentage_points,
 )
 from plainodds.phrases.parts import (
+    cases_with_interval,
     chance_with_interval,
     difference_with_interval,
-    interval,
     is_beyond_saying,
     points_with_interval,
     rather,
     ratio_with_interval,
     rows_words,
     say_level_once,
-    sentence,
     standard_error,
 )
 from plainodds.phrases.saying import Audience, Words, for_audience
+from plainodds.phrases.sentences import joined, sentence
 
 __all__: list[str] = []
 
@@ -148,20 +143,11 @@ def _intervals(answer: ChangeAnswer) -> list[str]:
 def _difference(answer: ChangeAnswer, over: int) -> str:
     level, difference = answer.question.level, answer.comparison.risk_difference
     counted, points = say_level_once(
-        [_cases_with_interval(answer, over), difference_with_interval(difference, level)], level
+        [cases_with_interval(difference, over, level), difference_with_interval(difference, level)],
+        level,
     )
     told = f"Das sind {counted}, anders gesagt {points}"
     return f"{told}; offen bleibt, ob es mehr oder weniger sind" if is_open(answer) else told
-
-
-def _cases_with_interval(answer: ChangeAnswer, over: int) -> str:
-    difference = answer.comparison.risk_difference
-
-    def ends(lower: float, upper: float) -> str:
-        return cases_on_sides(lower, upper, over)
-
-    told = cases_apart_in(difference.estimate, over)
-    return told + interval(difference, ends, answer.question.level)
 
 
 def _framed(answer: ChangeAnswer, over: int) -> str:
@@ -217,7 +203,8 @@ def _technical(answer: ChangeAnswer) -> Words:
         f"Ende {_with_error(answer.end, level)}",
         f"Risikodifferenz {points_with_interval(compared.risk_difference, level)}"
         f"{_points_error(compared.risk_difference)}; das sind "
-        f"{_cases_with_interval(answer, 100)} und {_cases_with_interval(answer, 1_000)}",
+        f"{cases_with_interval(compared.risk_difference, 100, level)} und "
+        f"{cases_with_interval(compared.risk_difference, 1_000, level)}",
         f"Relatives Risiko {ratio_with_interval(compared.risk_ratio, level)}"
         f"{standard_error(compared.risk_ratio)}; {kind} "
         f"{ratio_with_interval(compared.odds_ratio, level)}{standard_error(compared.odds_ratio)}",

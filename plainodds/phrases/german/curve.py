@@ -27,20 +27,13 @@ from plainodds.phrases.german.parts import (
     level_intervals,
     model_cautions,
 )
-from plainodds.phrases.german.texts import (
-    joined,
-)
 from plainodds.phrases.labels import from_to, listed, predictor_name, value_label, values_range
 from plainodds.phrases.lexicon import lexicon
 from plainodds.phrases.numbers import count, denominator, frequencies
-from plainodds.phrases.parts import (
-    difference_with_interval,
-    rows_words,
-    say_level_once,
-    sentence,
-)
+from plainodds.phrases.parts import difference_with_interval, rows_words, say_level_once
 from plainodds.phrases.reach import line_words, parts_without_data
 from plainodds.phrases.saying import Audience, Words, for_audience
+from plainodds.phrases.sentences import joined, sentence
 from plainodds.phrases.slope import slope_places
 from plainodds.phrases.units import per_unit
 from plainodds.phrases.ways import estimate_at, way_of

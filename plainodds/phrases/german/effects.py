@@ -33,9 +33,6 @@ from plainodds.phrases.german.parts import (
     model_cautions,
 )
 from plainodds.phrases.german.parts import chance as chance_for
-from plainodds.phrases.german.texts import (
-    joined,
-)
 from plainodds.phrases.labels import (
     effect_label,
     line_label,
@@ -54,9 +51,9 @@ from plainodds.phrases.parts import (
     profile_words,
     rows_words,
     say_level_once,
-    sentence,
 )
 from plainodds.phrases.saying import Audience, Words, for_audience
+from plainodds.phrases.sentences import joined, sentence
 from plainodds.phrases.units import per_unit
 
 __all__ = ["effects_title"]

@@ -35,7 +35,6 @@ from plainodds.phrases.german.parts import (
     whom,
 )
 from plainodds.phrases.german.parts import chance as chance_for
-from plainodds.phrases.german.texts import joined
 from plainodds.phrases.german.unbounded import unbounded_cautions, unbounded_told
 from plainodds.phrases.labels import (
     change_label,
@@ -54,15 +53,9 @@ from plainodds.phrases.numbers import (
     p_value,
     quantity,
 )
-from plainodds.phrases.parts import (
-    RARE,
-    rather,
-    rows_words,
-    sentence,
-    signed_with_interval,
-    standard_error,
-)
+from plainodds.phrases.parts import RARE, rather, rows_words, signed_with_interval, standard_error
 from plainodds.phrases.saying import Audience, Words, for_audience
+from plainodds.phrases.sentences import joined, sentence
 from plainodds.phrases.unbounded import has_finite_estimate
 from plainodds.phrases.units import tidy
 

@@ -42,18 +42,13 @@ from plainodds.phrases.german.parts import (
     model_cautions,
     odds_ratio_cautions,
 )
-from plainodds.phrases.german.texts import joined
 from plainodds.phrases.labels import axis_title, listed, predictor_name
 from plainodds.phrases.numbers import quantity
 from plainodds.phrases.pair_labels import has_others, is_averaged
-from plainodds.phrases.parts import (
-    is_beyond_saying,
-    points_with_interval,
-    ratio_with_interval,
-    sentence,
-)
+from plainodds.phrases.parts import is_beyond_saying, points_with_interval, ratio_with_interval
 from plainodds.phrases.reach import line_words
 from plainodds.phrases.saying import Audience, Words, for_audience
+from plainodds.phrases.sentences import joined, sentence
 
 __all__: list[str] = []
 

@@ -12,13 +12,8 @@ from plainodds.model.predictors import OutcomeFacts, Stakes, Subject
 from plainodds.phrases.averaged import values_chosen
 from plainodds.phrases.held import stated_and_typical
 from plainodds.phrases.numbers import count, guarded_count, level_figures, quantity
-from plainodds.phrases.parts import (
-    BEYOND_SAYING,
-    RARE,
-    counted_rows,
-    profile_words,
-    sentence,
-)
+from plainodds.phrases.parts import BEYOND_SAYING, RARE, counted_rows, profile_words
+from plainodds.phrases.sentences import sentence
 from plainodds.phrases.units import tidy
 from plainodds.values import Pairs
 

@@ -25,7 +25,6 @@ from plainodds.phrases.german.parts import (
     whom,
 )
 from plainodds.phrases.german.parts import chance as chance_for
-from plainodds.phrases.german.texts import joined
 from plainodds.phrases.german.unbounded import profile_cautions, ratio_told
 from plainodds.phrases.labels import listed, predictor_name, value_label
 from plainodds.phrases.lexicon import lexicon
@@ -37,11 +36,11 @@ from plainodds.phrases.parts import (
     rather,
     ratio_with_interval,
     rows_words,
-    sentence,
     signed_with_interval,
     standard_error,
 )
 from plainodds.phrases.saying import Audience, Words, for_audience
+from plainodds.phrases.sentences import joined, sentence
 from plainodds.values import Pairs
 
 __all__: list[str] = []

@@ -10,11 +10,11 @@ from plainodds.phrases.german.checks.pictures import picture_words
 from plainodds.phrases.german.checks.plainly import plain_sentences
 from plainodds.phrases.german.language import GERMAN
 from plainodds.phrases.german.parts import handed_on
-from plainodds.phrases.german.texts import fitted, joined
+from plainodds.phrases.german.texts import fitted
 from plainodds.phrases.labels import listed
 from plainodds.phrases.numbers import count
-from plainodds.phrases.parts import sentence
 from plainodds.phrases.saying import Audience, Words, for_audience
+from plainodds.phrases.sentences import joined, sentence
 
 __all__: list[str] = []
 

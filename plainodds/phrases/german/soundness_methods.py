@@ -2,9 +2,9 @@
 
 from __future__ import annotations
 
-from plainodds.answers.checks.calibration import CalibrationEvidence
 from plainodds.answers.checks.finding import Topic
 from plainodds.answers.soundness import SoundnessAnswer
+from plainodds.phrases.choices.checks import optimism_of, topics_looked_at
 from plainodds.phrases.german.language import GERMAN
 from plainodds.phrases.german.texts import note
 from plainodds.phrases.methods.note import MethodsNote
@@ -42,22 +42,19 @@ _METHODS: dict[Topic, str] = {
 
 @GERMAN.methods_note.register
 def _(answer: SoundnessAnswer) -> MethodsNote:
-    topics = dict.fromkeys(each.topic for each in answer.findings if each.evidence is not None)
-    told = [_METHODS[topic] for topic in topics if topic in _METHODS]
+    told = [_METHODS[topic] for topic in topics_looked_at(answer) if topic in _METHODS]
     return note(answer.subject, [*told, *_optimism(answer)])
 
 
 def _optimism(answer: SoundnessAnswer) -> list[str]:
     """How optimism was estimated, where it was."""
-    for each in answer.findings:
-        if isinstance(each.evidence, CalibrationEvidence) and each.evidence.optimism is not None:
-            found = each.evidence.optimism
-            way = {
-                "bootstrap": "Bootstrap-Stichproben",
-                "cross-validation": "Wiederholungen einer zehnfachen Kreuzvalidierung",
-            }[found.way]
-            return [
-                f"Der Optimismus wurde aus {count(found.repeats)} {way} geschätzt "
-                "(Harrell et al. 1996)"
-            ]
-    return []
+    found = optimism_of(answer)
+    if found is None:
+        return []
+    way = {
+        "bootstrap": "Bootstrap-Stichproben",
+        "cross-validation": "Wiederholungen einer zehnfachen Kreuzvalidierung",
+    }[found.way]
+    return [
+        f"Der Optimismus wurde aus {count(found.repeats)} {way} geschätzt (Harrell et al. 1996)"
+    ]

@@ -19,10 +19,9 @@ from plainodds.phrases.german.parts import (
     level_intervals,
 )
 from plainodds.phrases.labels import listed, predictor_name
-from plainodds.phrases.methods.note import MethodsNote
+from plainodds.phrases.methods.note import MethodsNote, noted
 from plainodds.phrases.numbers import chance, count, level_figures, quantity
-from plainodds.phrases.parts import sentence
-from plainodds.phrases.references import REFERENCES
+from plainodds.phrases.sentences import sentence
 from plainodds.phrases.versions import versions
 from plainodds.values import Pairs
 
@@ -31,16 +30,10 @@ __all__ = [
     "fitted",
     "intervals_made",
     "intervals_shown",
-    "joined",
     "note",
     "others_made",
     "rest",
 ]
-
-
-def joined(*told: str) -> str:
-    """Whole sentences in a row, empty ones left out."""
-    return " ".join(sentence(each) for each in told if each)
 
 
 def intervals_shown(subject: Subject, level: float, marks: str) -> str:
@@ -85,10 +78,7 @@ def fitted(subject: Subject) -> str:
 def note(subject: Subject, sentences: Iterable[str]) -> MethodsNote:
     """A note that opens with the model and ends with the works that its sentences cite."""
     made = f"Berechnet mit {versions('plainodds', 'statsmodels', 'numpy')}"
-    told = tuple(sentence(each) for each in (*_model(subject), *sentences, made) if each)
-    text = " ".join(told)
-    cited = [full for short, full in REFERENCES.items() if short in text]
-    return MethodsNote(told, tuple(sorted(cited)))
+    return noted(*_model(subject), *sentences, made)
 
 
 def _model(subject: Subject) -> list[str]:

@@ -7,7 +7,8 @@ from plainodds.answers.panels import PanelsAnswer, panel_letter
 from plainodds.phrases.alternative import alternative
 from plainodds.phrases.captions.caption import caption
 from plainodds.phrases.german.language import GERMAN
-from plainodds.phrases.german.texts import fitted, intervals_shown, joined
+from plainodds.phrases.german.texts import fitted, intervals_shown
+from plainodds.phrases.sentences import joined
 
 __all__: list[str] = []
 

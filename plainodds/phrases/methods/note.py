@@ -4,9 +4,11 @@ from __future__ import annotations
 
 from plainodds.answers.questions import Answer
 from plainodds.phrases.languages import by_language
+from plainodds.phrases.references import REFERENCES
+from plainodds.phrases.sentences import sentence
 from plainodds.values import value
 
-__all__ = ["MethodsNote", "methods_note"]
+__all__ = ["MethodsNote", "methods_note", "noted"]
 
 
 @value
@@ -37,6 +39,14 @@ class MethodsNote:
         return "\n\n".join(
             part for part in (" ".join(self.sentences), "\n".join(self.references)) if part
         )
+
+
+def noted(*told: str) -> MethodsNote:
+    """A note of these sentences, empty ones left out, with the works that they cite."""
+    sentences = tuple(sentence(each) for each in told if each)
+    text = " ".join(sentences)
+    cited = [full for short, full in REFERENCES.items() if short in text]
+    return MethodsNote(sentences, tuple(sorted(cited)))
 
 
 @by_language

@@ -9,10 +9,9 @@ from plainodds.answers.where import Where
 from plainodds.model.predictors import Subject
 from plainodds.phrases.averaged import rows_chosen
 from plainodds.phrases.labels import listed, predictor_name
-from plainodds.phrases.methods.note import MethodsNote
+from plainodds.phrases.methods.note import MethodsNote, noted
 from plainodds.phrases.numbers import confidence, count, quantity
-from plainodds.phrases.parts import covariance_words, sentence
-from plainodds.phrases.references import REFERENCES
+from plainodds.phrases.parts import covariance_words
 from plainodds.phrases.units import tidy
 from plainodds.phrases.versions import versions
 
@@ -24,10 +23,7 @@ _MADE = f"Computed with {versions('plainodds', 'statsmodels', 'numpy')}"
 
 def note(subject: Subject, sentences: Iterable[str]) -> MethodsNote:
     """A note that opens with the model and ends with the works that its sentences cite."""
-    told = tuple(sentence(each) for each in (*_model(subject), *sentences, _MADE) if each)
-    text = " ".join(told)
-    cited = [full for short, full in REFERENCES.items() if short in text]
-    return MethodsNote(told, tuple(sorted(cited)))
+    return noted(*_model(subject), *sentences, _MADE)
 
 
 def _model(subject: Subject) -> list[str]:

@@ -2,9 +2,9 @@
 
 from __future__ import annotations
 
-from plainodds.answers.checks.calibration import CalibrationEvidence
 from plainodds.answers.checks.finding import Topic
 from plainodds.answers.soundness import SoundnessAnswer
+from plainodds.phrases.choices.checks import optimism_of, topics_looked_at
 from plainodds.phrases.methods.note import MethodsNote, methods_note
 from plainodds.phrases.methods.parts import note
 from plainodds.phrases.numbers import count
@@ -38,19 +38,17 @@ _METHODS: dict[Topic, str] = {
 
 @methods_note.register
 def _(answer: SoundnessAnswer) -> MethodsNote:
-    topics = dict.fromkeys(each.topic for each in answer.findings if each.evidence is not None)
-    told = [_METHODS[topic] for topic in topics if topic in _METHODS]
+    told = [_METHODS[topic] for topic in topics_looked_at(answer) if topic in _METHODS]
     return note(answer.subject, [*told, *_optimism(answer)])
 
 
 def _optimism(answer: SoundnessAnswer) -> list[str]:
     """How optimism was estimated, where it was."""
-    for each in answer.findings:
-        if isinstance(each.evidence, CalibrationEvidence) and each.evidence.optimism is not None:
-            found = each.evidence.optimism
-            way = {
-                "bootstrap": f"{count(found.repeats)} bootstrap samples",
-                "cross-validation": f"{count(found.repeats)} repeats of tenfold cross-validation",
-            }[found.way]
-            return [f"Optimism was estimated from {way} (Harrell et al. 1996)"]
-    return []
+    found = optimism_of(answer)
+    if found is None:
+        return []
+    way = {
+        "bootstrap": f"{count(found.repeats)} bootstrap samples",
+        "cross-validation": f"{count(found.repeats)} repeats of tenfold cross-validation",
+    }[found.way]
+    return [f"Optimism was estimated from {way} (Harrell et al. 1996)"]

@@ -5,11 +5,11 @@ from __future__ import annotations
 import math
 
 from plainodds.answers.change import ChangeAnswer
-from plainodds.phrases.captions.parts import fitted_words, joined, rest_words
+from plainodds.phrases.captions.parts import fitted_words, rest_words
 from plainodds.phrases.labels import chance_of, sentence_case
 from plainodds.phrases.moves import end_label, settled_moves, start_label
 from plainodds.phrases.needed import needed_technical
-from plainodds.phrases.parts import model_cautions, sentence
+from plainodds.phrases.parts import model_cautions
 from plainodds.phrases.reports.cells import (
     chance_cell,
     interval_title,
@@ -18,6 +18,7 @@ from plainodds.phrases.reports.cells import (
 )
 from plainodds.phrases.reports.report import ReportTable, report_of
 from plainodds.phrases.reports.rows import entry, heading
+from plainodds.phrases.sentences import joined, sentence
 
 __all__: list[str] = []
 

@@ -6,7 +6,7 @@ from collections.abc import Callable
 
 from plainodds.answers.curve import CurveAnswer, CurveLine, Scale
 from plainodds.answers.estimate import Estimate
-from plainodds.phrases.captions.parts import fitted_words, joined
+from plainodds.phrases.captions.parts import fitted_words
 from plainodds.phrases.choices.curve import tabled_places
 from plainodds.phrases.held import others_words
 from plainodds.phrases.labels import axis_title, line_label, scale_title, value_label
@@ -15,6 +15,7 @@ from plainodds.phrases.parts import model_cautions
 from plainodds.phrases.reports.cells import chance_cell, points_cell, ratio_cell, signed_cell
 from plainodds.phrases.reports.report import ReportTable, report_of
 from plainodds.phrases.reports.rows import entry
+from plainodds.phrases.sentences import joined
 from plainodds.phrases.units import tidy
 from plainodds.phrases.ways import estimate_at
 

@@ -3,12 +3,13 @@
 from __future__ import annotations
 
 from plainodds.answers.effects import EffectsAnswer
-from plainodds.phrases.captions.parts import fitted_words, joined, rest_words
+from plainodds.phrases.captions.parts import fitted_words, rest_words
 from plainodds.phrases.labels import effect_label, effects_title, predictor_label, value_label
 from plainodds.phrases.parts import model_cautions
 from plainodds.phrases.reports.cells import interval_title, p_cell, points_cell
 from plainodds.phrases.reports.report import ReportTable, report_of
 from plainodds.phrases.reports.rows import ReportRow, entry, heading
+from plainodds.phrases.sentences import joined
 
 __all__: list[str] = []
 

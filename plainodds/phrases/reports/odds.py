@@ -7,7 +7,7 @@ from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
 
 from plainodds.answers.odds import OddsAnswer
-from plainodds.phrases.captions.parts import fitted_words, joined
+from plainodds.phrases.captions.parts import fitted_words
 from plainodds.phrases.labels import listed, odds_of_event, predictor_name, sentence_case
 from plainodds.phrases.numbers import NOT_KNOWN, count, guarded_count
 from plainodds.phrases.odds_lines import Counts, OddsLine, odds_lines
@@ -15,6 +15,7 @@ from plainodds.phrases.parts import model_cautions
 from plainodds.phrases.reports.cells import interval_title, p_cell, ratio_cell
 from plainodds.phrases.reports.report import ReportTable, report_of
 from plainodds.phrases.reports.rows import ReportRow, entry, heading, reference
+from plainodds.phrases.sentences import joined
 from plainodds.phrases.units import tidy
 
 __all__: list[str] = []

@@ -8,7 +8,7 @@ from collections.abc import Iterator
 from plainodds.answers.joint import AdditiveInteraction, JointTable
 from plainodds.answers.moves import Move
 from plainodds.answers.pair import PairAnswer
-from plainodds.phrases.captions.parts import fitted_words, joined, rest_words
+from plainodds.phrases.captions.parts import fitted_words, rest_words
 from plainodds.phrases.moves import moves_label
 from plainodds.phrases.numbers import guarded_count
 from plainodds.phrases.pair_labels import at_value, has_others, interaction_label, pair_title
@@ -23,6 +23,7 @@ from plainodds.phrases.reports.cells import (
 )
 from plainodds.phrases.reports.report import ReportTable, report_of
 from plainodds.phrases.reports.rows import ReportRow, entry, heading
+from plainodds.phrases.sentences import joined
 
 __all__: list[str] = []
 

@@ -5,7 +5,7 @@ from __future__ import annotations
 from collections.abc import Iterator
 
 from plainodds.answers.profile import ProfileAnswer, ProfilePoint
-from plainodds.phrases.captions.parts import fitted_words, joined
+from plainodds.phrases.captions.parts import fitted_words
 from plainodds.phrases.labels import chance_of, listed, predictor_label, value_label
 from plainodds.phrases.parts import model_cautions, profile_words
 from plainodds.phrases.reports.cells import (
@@ -17,6 +17,7 @@ from plainodds.phrases.reports.cells import (
 )
 from plainodds.phrases.reports.report import ReportTable, report_of
 from plainodds.phrases.reports.rows import ReportRow, entry, heading
+from plainodds.phrases.sentences import joined
 
 __all__: list[str] = []
 

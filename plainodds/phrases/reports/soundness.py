@@ -5,12 +5,13 @@ from __future__ import annotations
 from collections.abc import Iterator
 
 from plainodds.answers.soundness import SoundnessAnswer
-from plainodds.phrases.captions.parts import fitted_words, joined
+from plainodds.phrases.captions.parts import fitted_words
 from plainodds.phrases.checks.finding_words import finding_figures, finding_words
 from plainodds.phrases.checks.headings import concern_label
 from plainodds.phrases.parts import model_cautions
 from plainodds.phrases.reports.report import ReportTable, report_of
 from plainodds.phrases.reports.rows import ReportRow, entry, heading
+from plainodds.phrases.sentences import joined
 
 __all__: list[str] = []
 

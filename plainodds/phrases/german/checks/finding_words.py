@@ -10,7 +10,7 @@ from plainodds.phrases.checks.finding_words import FindingWords
 from plainodds.phrases.german.checks.headings import finding_heading
 from plainodds.phrases.german.checks.parts import WHY_NOT_KNOWN
 from plainodds.phrases.numbers import quantity
-from plainodds.phrases.parts import sentence
+from plainodds.phrases.sentences import sentence
 
 __all__ = ["NOTHING", "evidence_words", "finding_words", "made"]
 

@@ -18,7 +18,7 @@ from plainodds.phrases.german.checks.headings import concern_label
 from plainodds.phrases.german.checks.parts import coefficients, counted
 from plainodds.phrases.german.parts import cases, event
 from plainodds.phrases.labels import predictor_name
-from plainodds.phrases.parts import sentence
+from plainodds.phrases.sentences import sentence
 
 __all__ = ["picture_words"]
 

@@ -24,7 +24,7 @@ from plainodds.phrases.german.checks.finding_words import finding_words
 from plainodds.phrases.german.checks.fit import told_without_exception
 from plainodds.phrases.german.checks.parts import cases, named
 from plainodds.phrases.labels import predictor_name
-from plainodds.phrases.parts import sentence
+from plainodds.phrases.sentences import sentence
 from plainodds.phrases.units import tidy
 
 __all__ = ["plain_sentences"]
