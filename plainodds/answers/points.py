@@ -16,7 +16,7 @@ from plainodds.model.predictors import PredictorFacts
 from plainodds.scales import probability_from_linear_predictor, probability_slope
 from plainodds.values import Pairs
 
-__all__ = ["POINTS", "Around", "chances_at", "grid_along", "rows_at"]
+__all__ = ["POINTS", "Around", "grid_along"]
 
 POINTS = 101
 """How many points a line is drawn through."""
@@ -78,13 +78,3 @@ class Around:
         rows = self.rows(moved)
         pi = probability_from_linear_predictor(rows @ self.model.coefficients + self.model.offset)
         return Averages(pi, probability_slope(pi)[:, None] * rows)
-
-
-def rows_at(model: FittedModel, base: Pairs, moved: Coded) -> Floats:
-    """Design rows of n points around a whole profile, shape (n, k)."""
-    return Around(model, base).rows(moved)
-
-
-def chances_at(model: FittedModel, base: Pairs, moved: Coded) -> Averages:
-    """The chance at n points around a whole profile, with its gradient."""
-    return Around(model, base).chances(moved)

@@ -3,10 +3,13 @@
 from __future__ import annotations
 
 from collections.abc import Hashable
+from typing import cast
 
 from matplotlib.axes import Axes
 
+from plainodds.answers.change import ChangeAnswer
 from plainodds.answers.excerpts import ExcerptAnswer
+from plainodds.answers.profile import ProfileAnswer
 from plainodds.drawings.change import ChangeDrawing, change_notes
 from plainodds.drawings.change_marks import Marks
 from plainodds.drawings.furniture import Notes, Title
@@ -26,31 +29,31 @@ class RulerExcerpt:
 
     def __init__(self, axes: Axes, answer: ExcerptAnswer, theme: Theme) -> None:
         self.axes = axes
-        self.ruler = RulerDrawing(axes, answer.whole, theme)  # type: ignore[arg-type]
+        self.ruler = RulerDrawing(axes, _profile(answer), theme)
 
     @staticmethod
     def title(answer: ExcerptAnswer) -> str:
         """The chance of the profile itself."""
-        return RulerDrawing.title(answer.whole)  # type: ignore[arg-type]
+        return RulerDrawing.title(_profile(answer))
 
     @staticmethod
     def structure(answer: ExcerptAnswer) -> Hashable:
         """Whether another profile is compared with."""
-        return RulerDrawing.structure(answer.whole)  # type: ignore[arg-type]
+        return RulerDrawing.structure(_profile(answer))
 
     @staticmethod
     def natural_height(answer: ExcerptAnswer, theme: Theme, width: float) -> float:
         """Height in points at which the answer looks best."""
-        return RulerDrawing.natural_height(answer.whole, theme, width)  # type: ignore[arg-type]
+        return RulerDrawing.natural_height(_profile(answer), theme, width)
 
     @staticmethod
     def least_height(answer: ExcerptAnswer, theme: Theme, width: float) -> float:
         """Height in points below which texts would meet."""
-        return RulerDrawing.least_height(answer.whole, theme, width)  # type: ignore[arg-type]
+        return RulerDrawing.least_height(_profile(answer), theme, width)
 
     def update(self, answer: ExcerptAnswer) -> None:
         """Show another answer of the same structure."""
-        self.ruler.update(answer.whole)  # type: ignore[arg-type]
+        self.ruler.update(_profile(answer))
 
 
 class LedgerExcerpt:
@@ -68,7 +71,7 @@ class LedgerExcerpt:
     @staticmethod
     def title(answer: ExcerptAnswer) -> str:
         """The chance of the profile itself."""
-        return RulerDrawing.title(answer.whole)  # type: ignore[arg-type]
+        return RulerDrawing.title(_profile(answer))
 
     @staticmethod
     def structure(answer: ExcerptAnswer) -> Hashable:
@@ -79,7 +82,7 @@ class LedgerExcerpt:
     def natural_height(answer: ExcerptAnswer, theme: Theme, width: float) -> float:
         """Height in points that the lines need."""
         title = Title.height(LedgerExcerpt.title(answer), theme, width)
-        lines = Ledger.height(answer.whole, theme, width)  # type: ignore[arg-type]
+        lines = Ledger.height(_profile(answer), theme, width)
         return title + _BENEATH_TITLE * theme.font_size + lines
 
     @staticmethod
@@ -93,7 +96,7 @@ class LedgerExcerpt:
         width, height = slot_size(self.axes)
         title = self._title.place(self.title(answer), 0.0, 0.0, width)
         top = height - title - _BENEATH_TITLE * self._theme.font_size
-        self.ledger.place(answer.whole, 0.0, top, width)  # type: ignore[arg-type]
+        self.ledger.place(_profile(answer), 0.0, top, width)
 
 
 class MarksExcerpt:
@@ -112,7 +115,7 @@ class MarksExcerpt:
     @staticmethod
     def title(answer: ExcerptAnswer) -> str:
         """The chance that changes."""
-        return ChangeDrawing.title(answer.whole)  # type: ignore[arg-type]
+        return ChangeDrawing.title(_change(answer))
 
     @staticmethod
     def structure(answer: ExcerptAnswer) -> Hashable:
@@ -122,13 +125,13 @@ class MarksExcerpt:
     @staticmethod
     def natural_height(answer: ExcerptAnswer, theme: Theme, width: float) -> float:
         """Height in points at which the answer looks best."""
-        marks = Marks.height(answer.whole, theme, width)  # type: ignore[arg-type]
+        marks = Marks.height(_change(answer), theme, width)
         return _around(answer, theme, width) + marks
 
     @staticmethod
     def least_height(answer: ExcerptAnswer, theme: Theme, width: float) -> float:
         """Height in points below which marks could not be counted."""
-        marks = Marks.height(answer.whole, theme, width, least=True)  # type: ignore[arg-type]
+        marks = Marks.height(_change(answer), theme, width, least=True)
         return _around(answer, theme, width) + marks
 
     def update(self, answer: ExcerptAnswer) -> None:
@@ -138,12 +141,22 @@ class MarksExcerpt:
         title = self._title.place(self.title(answer), 0.0, 0.0, width)
         top = height - title - _BENEATH_TITLE * self._theme.font_size
         room = height - _around(answer, self._theme, width)
-        self.marks.place(answer.whole, 0.0, top, width, room)  # type: ignore[arg-type]
+        self.marks.place(_change(answer), 0.0, top, width, room)
         self._notes.place(_notes(answer), 0.0, 0.0, width)
 
 
+def _profile(answer: ExcerptAnswer) -> ProfileAnswer:
+    """The whole of a ruler or a ledger, which `excerpt` takes from profiles only."""
+    return cast(ProfileAnswer, answer.whole)
+
+
+def _change(answer: ExcerptAnswer) -> ChangeAnswer:
+    """The whole of marks, which `excerpt` takes from changes only."""
+    return cast(ChangeAnswer, answer.whole)
+
+
 def _notes(answer: ExcerptAnswer) -> list[str]:
-    return change_notes(answer.whole)[-1:]  # type: ignore[arg-type]
+    return change_notes(_change(answer))[-1:]
 
 
 def _around(answer: ExcerptAnswer, theme: Theme, width: float) -> float:
