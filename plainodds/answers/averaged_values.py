@@ -8,6 +8,7 @@ from numpy.typing import NDArray
 
 from plainodds.answers import rebuilding
 from plainodds.answers.population import Population, rest_of, slices
+from plainodds.answers.progress import Progress, silent
 from plainodds.answers.sketch import patterns_of
 from plainodds.model.design.design import Coded, Floats
 from plainodds.model.design.split import Split, split
@@ -42,7 +43,9 @@ def affordable_points(model: FittedModel, names: tuple[str, str], wanted: int) -
     return int(np.clip(np.sqrt(points), 12, wanted))
 
 
-def averaged_values(model: FittedModel, moved: Coded, population: Population) -> Floats:
+def averaged_values(
+    model: FittedModel, moved: Coded, population: Population, progress: Progress = silent
+) -> Floats:
     """The average chance when every row is given the moved values, shape (J,).
 
     Where rows differ in few patterns of modifiers, the average of a pattern's rows is a
@@ -57,23 +60,37 @@ def averaged_values(model: FittedModel, moved: Coded, population: Population) ->
     moved : mapping of name to coded array (J,)
         Point j gives every row the j-th value of each moved predictor.
     population : Population
+    progress : callable, optional
+        Told how many of how many parts are done; may raise to stop.
     """
     parts = split(model.design, moved)
     if parts is None:
-        movers = rebuilding.setters(moved)
-        return rebuilding.averaged_probability(model, movers, population).value
+        return _rebuilt(model, moved, population, progress)
     own = parts.own_values(moved) * model.coefficients[parts.touched]
     strength = own @ parts.membership()
     found = patterns_of(model, parts)
     if found is None:
-        return _at_each_point(model, parts, strength, population)
+        return _at_each_point(model, parts, strength, population, progress)
     patterns, pattern_of = found
     rest = _rest(model, parts)
     total = np.zeros(len(strength))
     for place, pattern in enumerate(patterns):
         rows = pattern_of == place
         total += _by_polynomial(rest[rows], population.weights[rows], strength @ pattern)
+        progress(place + 1, len(patterns))
     return total
+
+
+def _rebuilt(
+    model: FittedModel, moved: Coded, population: Population, progress: Progress
+) -> Floats:
+    """Point by point, with each row's design built anew."""
+    movers = rebuilding.setters(moved)
+    found = np.empty(len(movers))
+    for j, mover in enumerate(movers):
+        found[j] = rebuilding.averaged_probability(model, [mover], population).value[0]
+        progress(j + 1, len(movers))
+    return found
 
 
 def _rest(model: FittedModel, parts: Split) -> Floats:
@@ -119,7 +136,7 @@ def _averages(rest: Floats, weights: Floats, shifts: Floats) -> Floats:
 
 
 def _at_each_point(
-    model: FittedModel, parts: Split, strength: Floats, population: Population
+    model: FittedModel, parts: Split, strength: Floats, population: Population, progress: Progress
 ) -> Floats:
     """Row by row and point by point, where a modifier has many values."""
     total = np.zeros(len(strength))
@@ -130,4 +147,5 @@ def _at_each_point(
         eta = product(still[block], np.ascontiguousarray(strength.T)) + rest[block, None]
         chances: NDArray[np.float64] = probability_from_linear_predictor(eta)
         total += np.einsum("i,ij->j", population.weights[block], chances)
+        progress(block.stop, model.sample.rows)
     return total

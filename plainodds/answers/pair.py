@@ -13,6 +13,7 @@ from plainodds.answers.joint import JointTable, joint_table_of
 from plainodds.answers.pair_lines import lines_of
 from plainodds.answers.pair_settled import PairQuestion, Settled, settled
 from plainodds.answers.population import Averages, everyone
+from plainodds.answers.progress import Progress, silent, within
 from plainodds.answers.questions import Answer
 from plainodds.answers.remembered import remembered
 from plainodds.answers.stretches import EffectAlong, Stretch
@@ -30,6 +31,8 @@ __all__ = [
     "Stretch",
     "answer_pair",
 ]
+
+_STAGES = 4
 
 
 @value
@@ -110,7 +113,10 @@ class PairAnswer(Answer):
 
 
 def answer_pair(
-    model: FittedModel, question: PairQuestion, averager: Averager | None = None
+    model: FittedModel,
+    question: PairQuestion,
+    averager: Averager | None = None,
+    progress: Progress = silent,
 ) -> PairAnswer:
     """Two predictors together, on the probability scale and on the odds scale.
 
@@ -125,6 +131,8 @@ def answer_pair(
     question : PairQuestion
     averager : Averager, optional
         What averages over the rows; exactly over every row when left out.
+    progress : callable, optional
+        Told how many of how many parts are done; may raise to stop.
 
     Raises
     ------
@@ -140,6 +148,17 @@ def answer_pair(
         # says why nobody can be averaged over
         everyone(model)
     moving = averager if question.others == "observed" else None
+    stages = [within(progress, stage, _STAGES) for stage in range(_STAGES)]
+    lines = lines_of(model, question, pair, moving) if _tells_chances(model) else None
+    stages[0](1, 1)
+    surface = None
+    if question.shape == "map":
+        surface = _surface(model, question, pair, moving, stages[1])
+    stages[1](1, 1)
+    effect = effect_along(model, pair, question.scale, moving)
+    stages[2](1, 1)
+    interaction = _interaction(model, question, pair, averager)
+    stages[3](1, 1)
     return PairAnswer(
         question=question,
         subject=model.subject,
@@ -148,10 +167,10 @@ def answer_pair(
         sloped=pair.sloped,
         held=pair.held,
         counted=0 if averager is None else averager.population.counted,
-        lines=lines_of(model, question, pair, moving) if _tells_chances(model) else None,
-        surface=_surface(model, question, pair, moving) if question.shape == "map" else None,
-        effect=effect_along(model, pair, question.scale, moving),
-        interaction=_interaction(model, question, pair, averager),
+        lines=lines,
+        surface=surface,
+        effect=effect,
+        interaction=interaction,
         joint=_joint(model, question, pair, moving),
     )
 
@@ -162,7 +181,11 @@ def _tells_chances(model: FittedModel) -> bool:
 
 
 def _surface(
-    model: FittedModel, question: PairQuestion, pair: Settled, averager: Averager | None
+    model: FittedModel,
+    question: PairQuestion,
+    pair: Settled,
+    averager: Averager | None,
+    progress: Progress,
 ) -> Surface:
     if averager is None:
         return surface_of(model, pair, question.scale, None)
@@ -170,7 +193,7 @@ def _surface(
     return remembered(
         model,
         ("averaged surface", pair.a.name, pair.b.name, question.scale),
-        lambda: surface_of(model, pair, question.scale, averager),
+        lambda: surface_of(model, pair, question.scale, averager, progress),
     )
 
 

@@ -11,6 +11,7 @@ from plainodds.answers.averaged_values import affordable_points, averaged_values
 from plainodds.answers.averaging import Averager
 from plainodds.answers.pair_settled import Settled
 from plainodds.answers.points import grid_along
+from plainodds.answers.progress import Progress, silent
 from plainodds.model.design.design import Floats
 from plainodds.model.fitted import FittedModel
 from plainodds.model.predictors import PredictorFacts
@@ -51,7 +52,13 @@ class Surface:
     supported: tuple[tuple[bool, ...], ...]
 
 
-def surface_of(model: FittedModel, pair: Settled, scale: str, averager: Averager | None) -> Surface:
+def surface_of(
+    model: FittedModel,
+    pair: Settled,
+    scale: str,
+    averager: Averager | None,
+    progress: Progress = silent,
+) -> Surface:
     """The chance, or the odds, over both numbers.
 
     Parameters
@@ -62,6 +69,8 @@ def surface_of(model: FittedModel, pair: Settled, scale: str, averager: Averager
     scale : {"probability", "odds"}
     averager : Averager or None
         What averages over the rows; None at the held profile.
+    progress : callable, optional
+        Told how far the averages are; may raise to stop.
     """
     names = pair.a.name, pair.b.name
     points = _POINTS if averager is None else affordable_points(model, names, _POINTS)
@@ -72,7 +81,7 @@ def surface_of(model: FittedModel, pair: Settled, scale: str, averager: Averager
         eta = pair.around.linear_predictors(moved).reshape(shape)
         chance = probability_from_linear_predictor(eta)
     else:
-        chance = averaged_values(model, moved, averager.population).reshape(shape)
+        chance = averaged_values(model, moved, averager.population, progress).reshape(shape)
         eta = linear_predictor_from_probability(chance)
     estimate = odds_from_linear_predictor(eta) if scale == "odds" else chance
     crossing = _crossing(eta if scale == "odds" else chance, a_at, b_at)

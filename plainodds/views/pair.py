@@ -8,8 +8,9 @@ from typing import Any
 
 import ipywidgets as widgets
 
-from plainodds.answers.pair import PairAnswer, PairQuestion
+from plainodds.answers.pair import PairAnswer, PairQuestion, answer_pair
 from plainodds.answers.pair_settled import settled
+from plainodds.answers.progress import Progress
 from plainodds.errors import QuestionRefused
 from plainodds.model.predictors import PredictorFacts, Subject
 from plainodds.phrases.labels import predictor_label
@@ -199,6 +200,9 @@ class PairView(SketchedView):
             return work
         averaged = question.others == "observed" and self._key(question) is None
         return self._exact_work(question) if averaged or self._tests_anew(question) else None
+
+    def _exact_answer(self, question: PairQuestion, progress: Progress) -> PairAnswer:
+        return answer_pair(self.fit.model, question, progress=progress)
 
     def _tests_anew(self, question: PairQuestion) -> bool:
         """Whether the model has to be fitted again, for a test that the last answer has not."""

@@ -12,6 +12,7 @@ from typing import Any, ClassVar
 
 import ipywidgets as widgets
 
+from plainodds.answers.progress import Progress
 from plainodds.answers.questions import Answer, Question
 from plainodds.answers.quick import answer_by_sketch, sketch_for, sketched
 from plainodds.answers.sketch import Sketch
@@ -89,9 +90,13 @@ class SketchedView(PatientView):
     def _exact_work(self, question: Any) -> Work:
         return self._answering(
             question,
-            f"Averaging over all {count(self.subject.rows)} rows",
-            lambda progress: self.fit.ask(question),
+            f"Averaging over all {count(self.subject.rows)} rows, parts done",
+            lambda progress: self._exact_answer(question, progress),
         )
+
+    def _exact_answer(self, question: Any, progress: Progress) -> Answer:
+        """Answer from every row, telling how far that is where it may take long."""
+        return self.fit.ask(question)
 
     # the exact answer, at the press of a button
 

@@ -62,6 +62,15 @@ def test_a_number_far_from_0_is_no_less_exact(pipes):
     np.testing.assert_allclose(found, expected, rtol=0, atol=1e-10)
 
 
+@pytest.mark.parametrize("name", FORMULAS)
+def test_how_far_it_is_is_told_to_the_end(pipes, name):
+    model, told = modelled(name, pipes), []
+    averaged_values(model, grid(4), everyone(model), lambda done, parts: told.append((done, parts)))
+    assert [done for done, _ in told] == sorted(done for done, _ in told)
+    assert len({parts for _, parts in told}) == 1
+    assert told[-1][0] == told[-1][1]
+
+
 def test_only_some_rows_may_be_averaged_over(pipes):
     model = modelled("few patterns", pipes)
     among = everyone(model).among((pipes.soil == "high").to_numpy(), "high soil")

@@ -1,5 +1,6 @@
 """PairView: two predictors, the switch of scales, and what goes when a predictor is changed."""
 
+import re
 import threading
 from dataclasses import replace
 
@@ -569,10 +570,12 @@ def test_what_cannot_be_sketched_is_averaged_beside_the_page(mains, page, many):
     # pressure, which age depends on, has more values than a sketch tells apart
     formula = "burst ~ age_years * pressure_m + age_years * material"
     view = po.PairView(smf.logit(formula, mains).fit(disp=0))
-    asked = []
+    asked, said = [], []
     view.observe(lambda change: asked.append(threading.current_thread()), "answer")
+    view._work._said.observe(lambda change: said.append(text_of(change.new)), "value")
     choose(page, control_of(view, "others"), "observed")
     view._work.wait()
+    assert any(re.search(r"all 900 rows, parts done: \d+ of 100", each) for each in said)
     assert view.is_exact
     assert view.question.others == "observed"
     assert asked != [threading.current_thread()]
