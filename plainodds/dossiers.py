@@ -58,7 +58,8 @@ def dossier(
     size, theme
         As in `plainodds.save`.
     smallest_cell : int
-        Counts of fewer rows are merged or withheld.
+        Counts of fewer rows are merged or withheld. What follows from several answers laid
+        side by side is not looked for: local rules on disclosure come first.
     overwrite : bool
         Whether a dossier of that name is replaced. A folder in which there is anything that
         no dossier wrote is never replaced.

@@ -4,8 +4,9 @@ An answer holds no rows, but a count of one or two can be as telling. In a guard
 neighbouring bins are merged until each holds enough, and a count from 1 to the smallest
 cell stands as the smallest cell itself, to be read as "up to": `Subject.smallest_cell`
 says so. A level's events are withheld where they, or its cases without the event, are too
-few. Source: common practice in official statistics; the size is the analyst's to set, local
-rules come first.
+few; so are another level's, where one alone would follow from a total. What follows from
+several tables laid side by side is not looked for. Source: common practice in official
+statistics; the size is the analyst's to set, local rules come first.
 """
 
 from __future__ import annotations
@@ -27,6 +28,7 @@ from plainodds.answers.profile import ProfileAnswer
 from plainodds.answers.questions import Answer
 from plainodds.answers.soundness import SoundnessAnswer
 from plainodds.answers.support import Support
+from plainodds.answers.withheld import withheld
 from plainodds.errors import QuestionRefused
 from plainodds.model.predictors import PredictorFacts, Subject
 
@@ -76,9 +78,10 @@ def _about(answer: Answer, smallest: int) -> Answer:
 def _facts(facts: PredictorFacts, smallest: int) -> PredictorFacts:
     events = facts.level_events
     if events and facts.level_cases:
+        counts = tuple(zip(events, facts.level_cases, strict=True))
+        hidden = withheld(counts, smallest)
         events = tuple(
-            _told_events(each, cases, smallest)
-            for each, cases in zip(events, facts.level_cases, strict=True)
+            math.nan if is_hidden else each for each, is_hidden in zip(events, hidden, strict=True)
         )
     return replace(
         facts,
@@ -86,15 +89,6 @@ def _facts(facts: PredictorFacts, smallest: int) -> PredictorFacts:
         level_cases=tuple(_raised_cases(each, smallest) for each in facts.level_cases),
         level_events=events,
     )
-
-
-def _told_events(events: float, cases: float, smallest: int) -> float:
-    """A level's events; nan, which is withheld, where they or the others are too few."""
-    return math.nan if _few(events, cases, smallest) else events
-
-
-def _few(events: float, cases: float, smallest: int) -> bool:
-    return any(0 < each < smallest for each in (events, cases - events))
 
 
 def _raised(count: int, smallest: int) -> int:
@@ -144,17 +138,29 @@ def _(answer: PairAnswer, smallest: int) -> Answer:
     lines = None if answer.lines is None else _curve(answer.lines, smallest)
     joint = answer.joint
     if joint is not None:
-        joint = replace(joint, cells=tuple(_cell(each, smallest) for each in joint.cells))
+        joint = replace(joint, cells=_cells(joint.cells, smallest))
     return replace(answer, lines=lines, joint=joint, counted=_raised(answer.counted, smallest))
 
 
-def _cell(cell: JointCell, smallest: int) -> JointCell:
-    """A combination whose events, and whose other cases, are enough or not told."""
-    if cell.rows is None or cell.events is None:
-        return cell
-    few = _few(cell.events, cell.rows, smallest)
-    rows = float(_raised(round(cell.rows), smallest)) if cell.rows < smallest else cell.rows
-    return replace(cell, rows=rows, events=None if few else cell.events)
+def _cells(cells: tuple[JointCell, ...], smallest: int) -> tuple[JointCell, ...]:
+    """Combinations whose events, and whose other cases, are enough or not told."""
+    counts = [
+        (math.nan if each.events is None else each.events, each.rows)
+        for each in cells
+        if each.rows is not None
+    ]
+    if len(counts) < len(cells):
+        return cells
+    return tuple(
+        replace(
+            cell,
+            rows=_raised_cases(rows, smallest),
+            events=None if is_hidden else cell.events,
+        )
+        for cell, (_, rows), is_hidden in zip(
+            cells, counts, withheld(counts, smallest), strict=True
+        )
+    )
 
 
 @_without_small.register

@@ -13,6 +13,8 @@ from plainodds.answers.checks.finding import Evidence, Finding
 from plainodds.answers.checks.influence import InfluenceEvidence
 from plainodds.answers.checks.separation import SeparationEvidence
 from plainodds.answers.checks.shape import Bin, ShapeEvidence
+from plainodds.answers.withheld import withheld
+from plainodds.values import Scalar
 
 __all__ = ["guarded_finding"]
 
@@ -34,13 +36,22 @@ def _without_small(evidence: Evidence, smallest: int) -> Evidence:
 
 @_without_small.register
 def _(evidence: LevelsEvidence, smallest: int) -> Evidence:
-    counts = []
-    for each in evidence.counts:
-        others = each.cases - each.events
-        few = any(0 < number < smallest for number in (each.events, others))
-        cases = float(smallest) if 0 < each.cases < smallest else each.cases
-        counts.append(replace(each, cases=cases, events=math.nan if few else each.events))
-    return replace(evidence, counts=tuple(counts))
+    hidden: dict[tuple[str, Scalar], bool] = {}
+    for name in {each.predictor for each in evidence.counts}:
+        own = [each for each in evidence.counts if each.predictor == name]
+        found = withheld([(each.events, each.cases) for each in own], smallest)
+        hidden |= dict(zip([(name, each.level) for each in own], found, strict=True))
+    return replace(
+        evidence,
+        counts=tuple(
+            replace(
+                each,
+                cases=_raised_float(each.cases, smallest),
+                events=math.nan if hidden[each.predictor, each.level] else each.events,
+            )
+            for each in evidence.counts
+        ),
+    )
 
 
 @_without_small.register

@@ -34,7 +34,8 @@ def notes_of(answer: OddsAnswer, extent: Extent, columns: Columns) -> list[str]:
     if any(each is not None and math.isnan(each) for each in events):
         few = count(subject.smallest_cell)
         notes.append(
-            f"A dash among the events: fewer than {few} with or without them, so not told."
+            f"A dash among the events: fewer than {few} with or without them, or a number that "
+            "would give such a one away."
         )
     if any(text == DASH for each in columns.figures for text in each):
         notes.append("A dash among the figures: not in this model.")

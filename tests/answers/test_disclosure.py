@@ -9,9 +9,11 @@ from hypothesis import strategies as st
 
 import plainodds as po
 from plainodds.answers.bounded import as_ratio
+from plainodds.answers.checks.amount import LevelCount, LevelsEvidence
 from plainodds.answers.disclosure import guarded
 from plainodds.answers.estimate import Estimate
-from tests.phrases import made, made_changes
+from tests.phrases import made, made_changes, made_findings
+from tests.phrases.made_pairs import pair_answer
 
 
 def curve_with(counts, edges=True):
@@ -86,9 +88,11 @@ def test_events_leave_only_where_they_and_the_others_are_enough(levels, smallest
         levels, facts.level_events, facts.level_cases, strict=True
     ):
         few = 0 < events < smallest or 0 < others < smallest
-        assert math.isnan(told) if few else told == events
+        assert math.isnan(told) or (told == events and not few)
         assert cases == 0 or cases >= smallest
         assert few or cases == events + others
+    hidden = sum(map(math.isnan, facts.level_events))
+    assert hidden != 1 or len(levels) == 1, "one alone would follow from the total"
     assert str(again) == str(facts), "what is guarded stays as it is"
 
 
@@ -121,3 +125,25 @@ def test_with_a_smallest_cell_of_one_nothing_changes():
 def test_an_impossible_smallest_cell_is_refused(smallest):
     with pytest.raises(po.QuestionRefused, match="whole number of at least 1"):
         guarded(made.curve_answer(), smallest)
+
+
+def test_a_combination_of_few_events_is_not_withheld_alone():
+    answer = pair_answer()
+    counts = [(400.0, 40.0), (300.0, 3.0), (200.0, 20.0), (100.0, 60.0)]
+    cells = tuple(
+        replace(cell, rows=rows, events=events)
+        for cell, (rows, events) in zip(answer.joint.cells, counts, strict=True)
+    )
+    found = guarded(replace(answer, joint=replace(answer.joint, cells=cells)))
+    assert [each.events for each in found.joint.cells] == [40.0, None, None, 60.0]
+    assert [each.rows for each in found.joint.cells] == [400.0, 300.0, 200.0, 100.0]
+
+
+def test_a_finding_withholds_the_levels_that_the_predictors_do():
+    counts = [("PVC", 300.0, 3.0), ("CI", 200.0, 20.0), ("DI", 100.0, 40.0)]
+    levels = tuple(LevelCount("material", level, cases, events) for level, cases, events in counts)
+    evidence = LevelsEvidence((*levels, LevelCount("lined", True, 500.0, 50.0)), 1)
+    answer = made_findings.answer_of(made_findings.finding("levels", "keep in mind", evidence))
+    (finding,) = guarded(answer).findings
+    told = [each.events for each in finding.evidence.counts]
+    assert [math.isnan(each) for each in told] == [True, True, False, False]

@@ -67,7 +67,10 @@ def _whose(answer: OddsAnswer, shape: _Shape) -> list[str]:
     events = [line.counts.events for line in odds_lines(answer) if line.counts is not None]
     if any(each is not None and math.isnan(each) for each in events):
         few = count(shape.smallest)
-        told.append(f"{_WITHHELD} among the events: fewer than {few} with or without them")
+        told.append(
+            f"{_WITHHELD} among the events: fewer than {few} with or without them, or a number "
+            "that would give such a one away"
+        )
     if shape.cases and answer.question.models:
         first = tidy(answer.question.models[0])
         told.append(f"Counts are of the model “{first}”, or of the first that has the predictor")
