@@ -107,6 +107,15 @@ def measure(rows: int) -> None:
         setting_up = time.perf_counter() - start
         taken = seconds(lambda both=both, sketch=sketch: answer_by_sketch(fit.model, both, sketch))
         print(f"  a pair {name}, by sketch   {taken:8.3f} s   set up in {setting_up:.3f} s")
+    for shape in ("lines", "map"):
+        # a third number modifies both, so that there is no sketch
+        asked = replace(fit.pair("z", "u", shape=shape).question, others="observed")
+        assert sketch_for(fit.model, asked) is None
+        start = time.perf_counter()
+        fit.ask(asked)
+        first = time.perf_counter() - start
+        later = seconds(lambda asked=asked: fit.ask(replace(asked, level=0.9)))
+        print(f"  a pair ({shape}), every row   {later:8.3f} s   the first time {first:.3f} s")
 
 
 def main() -> None:
