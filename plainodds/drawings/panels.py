@@ -14,7 +14,7 @@ from plainodds.drawings.geometry import Room, corner, slot_size
 from plainodds.drawings.kinds import drawing_of
 from plainodds.drawings.lettering import letter, line_height
 from plainodds.drawings.parts import Place, part_axes, set_place
-from plainodds.drawings.sharing import share_scale
+from plainodds.drawings.sharing import line_up, share_scale
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import bare
 from plainodds.phrases.labels import listed
@@ -99,6 +99,11 @@ class PanelsDrawing:
             drawing.update(each)
             self.letters[number].set_text(panel_letter(number))
             self.letters[number].set_position((place.left, -(place.top - strip)))
+        if answer.question.shared:
+            columns = _columns(answer, self._theme, slot_size(self.axes)[0])
+            for start in range(0, len(places), columns):
+                row = slice(start, start + columns)
+                line_up(self.panels[row], answer.answers[row])
 
     def _places(self) -> list[Place]:
         answer, theme = self._answer, self._theme

@@ -1,4 +1,4 @@
-"""One scale for panels that show the same quantity."""
+"""One scale for panels that show the same quantity, and one line for those in one row."""
 
 from __future__ import annotations
 
@@ -9,9 +9,13 @@ from plainodds.answers.curve import CurveAnswer
 from plainodds.answers.odds import OddsAnswer
 from plainodds.answers.questions import Answer
 from plainodds.drawings.drawing import Drawing
+from plainodds.drawings.geometry import Margins, slot_size
 from plainodds.phrases.labels import scale_title
 
-__all__ = ["share_scale"]
+__all__ = ["line_up", "share_scale"]
+
+_LEAST_PLOT = 0.6
+"""Of its height that a plot keeps at least where it is brought into line."""
 
 
 def share_scale(drawings: Sequence[Drawing[Any]], answers: Sequence[Answer]) -> None:
@@ -32,6 +36,42 @@ def share_scale(drawings: Sequence[Drawing[Any]], answers: Sequence[Answer]) -> 
             drawing.beside = tuple(  # type: ignore[attr-defined]
                 each.rows for each in alike if isinstance(each, OddsAnswer)
             )
+
+
+def line_up(drawings: Sequence[Drawing[Any]], answers: Sequence[Answer]) -> None:
+    """Bring the plots of curves into line that stand in one row and share their scale.
+
+    All get the room above and beneath that one of them needs, so that a gridline goes on from
+    panel to panel. A plot that would lose much of its height by that keeps it.
+
+    Parameters
+    ----------
+    drawings : sequence of Drawing
+        Of one row, of the same height, each showing its answer.
+    answers : sequence of Answer
+    """
+    quantities = [_quantity(each) if isinstance(each, CurveAnswer) else None for each in answers]
+    for quantity in dict.fromkeys(quantities):
+        alike = [
+            (drawing, answer)
+            for drawing, answer, own in zip(drawings, answers, quantities, strict=True)
+            if quantity is not None and own == quantity
+        ]
+        if len(alike) < 2:
+            continue
+        frames = [drawing.frame for drawing, _ in alike]  # type: ignore[attr-defined]
+        margins = [frame.room.margins for frame in frames]
+        least = Margins(
+            0.0, 0.0, max(each.bottom for each in margins), max(each.top for each in margins)
+        )
+        height = slot_size(frames[0].axes)[1]
+        lowest = min(height - each.bottom - each.top for each in margins)
+        if height - least.bottom - least.top < _LEAST_PLOT * lowest:
+            continue
+        for frame, (drawing, answer) in zip(frames, alike, strict=True):
+            frame.least = least
+            drawing.update(answer)
+            frame.least = Margins(0.0, 0.0, 0.0, 0.0)
 
 
 def _quantity(answer: Answer) -> Hashable | None:

@@ -5,6 +5,7 @@ import pytest
 from matplotlib.figure import Figure
 
 import plainodds as po
+from plainodds.drawings import sharing
 from plainodds.drawings.draw import draw, figure_for, height_for
 from plainodds.drawings.kinds import drawing_of
 from plainodds.drawings.panels import PanelsDrawing
@@ -64,6 +65,44 @@ def test_a_shared_scale_holds_what_either_panel_needs():
     _, one = drawn(po.panels(low, high))
     top = max(max(line.estimate) for line in (*low.lines, *high.lines))
     assert all(limits(panel)[1] >= top for panel in one.panels)
+
+
+def plot_of(drawing):
+    """Lower and upper edge of a plot, in points from the figure's lower edge."""
+    box = drawing.axes.get_window_extent()
+    return box.y0, box.y1
+
+
+def test_plots_of_one_scale_stand_in_line_in_a_row():
+    figure, shared = drawn(two_curves())
+    figure.draw_without_rendering()
+    assert plot_of(shared.panels[0]) == pytest.approx(plot_of(shared.panels[1]), abs=0.5)
+    ticks = [list(each.axes.get_yticks()) for each in shared.panels]
+    assert ticks[0] == ticks[1]
+    figure, apart = drawn(two_curves(shared=False))
+    figure.draw_without_rendering()
+    assert plot_of(apart.panels[0]) != pytest.approx(plot_of(apart.panels[1]), abs=0.5)
+
+
+def margins_of(answer, width):
+    return [panel.frame.room.margins for panel in drawn(answer, width)[1].panels]
+
+
+def test_plots_beneath_each_other_keep_the_room_they_need():
+    a, b = margins_of(two_curves(), 300.0)
+    assert a.bottom > b.bottom
+
+
+def test_plots_of_other_quantities_keep_the_room_they_need():
+    answers = made.curve_by_material(), made.curve_of_levels("odds", by=False)
+    shared, apart = (margins_of(po.panels(*answers, shared=each), 504.0) for each in (True, False))
+    assert shared == apart
+
+
+def test_a_plot_that_would_lose_much_of_its_height_is_not_brought_into_line(monkeypatch):
+    monkeypatch.setattr(sharing, "_LEAST_PLOT", 1.1)
+    a, b = margins_of(two_curves(), 504.0)
+    assert a.bottom > b.bottom
 
 
 def test_other_quantities_keep_their_own_scale():
