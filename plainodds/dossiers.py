@@ -119,12 +119,8 @@ _USUAL = {
 
 
 def _unusual(**options: Any) -> dict[str, Any]:
-    """Arguments that are not the defaults; a theme of one's own is no text and not repeated."""
-    return {
-        name: held
-        for name, held in options.items()
-        if held != _USUAL[name] and not isinstance(held, Theme)
-    }
+    """Arguments that are not the defaults."""
+    return {name: held for name, held in options.items() if held != _USUAL[name]}
 
 
 def _given(answers: Mapping[str, Answer] | Iterable[Answer]) -> dict[str, Answer]:

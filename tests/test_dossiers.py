@@ -4,6 +4,7 @@ import hashlib
 import json
 import os
 import re
+from dataclasses import replace
 
 import pandas as pd
 import pytest
@@ -76,6 +77,33 @@ def test_the_script_makes_the_same_dossier_byte_by_byte(answers, result, tmp_pat
     exec((made / "make.py").read_text(encoding="utf-8"), scope)
     again = scope["make"](tmp_path / "two", result)
     assert contents(again) == contents(made)
+
+
+@pytest.mark.parametrize(
+    "theme", ["slide", replace(po.THEMES["page"], name="ours", font_size=10.0, dashes=((), (2, 1)))]
+)
+def test_the_script_knows_the_theme(answers, result, tmp_path, theme):
+    made = po.dossier(answers, tmp_path / "one", forms=["svg"], theme=theme)
+    scope = {}
+    exec((made / "make.py").read_text(encoding="utf-8"), scope)
+    assert contents(scope["make"](tmp_path / "two", result)) == contents(made)
+
+
+@pytest.mark.parametrize("writing", [{"language": "de"}, {"decimal": ","}, {"thousands": "\u2009"}])
+def test_the_script_writes_as_was_written(answers, result, tmp_path, writing):
+    with po.writing(**writing):
+        made = po.dossier(answers, tmp_path / "one", forms=["svg"])
+    scope = {}
+    exec((made / "make.py").read_text(encoding="utf-8"), scope)
+    assert contents(scope["make"](tmp_path / "two", result)) == contents(made)
+
+
+def test_the_script_takes_a_fit_in_once(answers, fit, tmp_path):
+    panels = po.panels(*answers.values())
+    made = po.dossier({**answers, "all": panels}, tmp_path / "one", forms=["svg"])
+    source = (made / "make.py").read_text(encoding="utf-8")
+    assert source.count("po.FittedLogit(") == 1
+    assert max(map(len, source.splitlines())) <= 100
 
 
 def test_an_existing_folder_is_never_replaced_unasked(answers, tmp_path):

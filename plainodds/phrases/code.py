@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import math
-from collections.abc import Iterable
+from collections.abc import Iterable, Mapping
 from dataclasses import MISSING, dataclass, fields, is_dataclass
 from functools import singledispatch
 from keyword import iskeyword
@@ -16,7 +16,7 @@ from plainodds.answers.where import Mask
 from plainodds.model.predictors import Predictor, Setting
 from plainodds.values import Pairs
 
-__all__ = ["code"]
+__all__ = ["call", "code", "literal"]
 
 _WIDTH = 88
 _INDENT = "    "
@@ -66,6 +66,30 @@ def code(answer: Answer) -> str:
         lines += _masks(question)
         lines.append(_statement("answer", f"fit.{question.method}", arguments))
     return "\n".join(lines) + "\n"
+
+
+def literal(held: object) -> str:
+    """A value as Python writes it, strings in double quotes where that needs no escape."""
+    return _flat(_piece(held))
+
+
+def call(function: str, names: Iterable[str], stated: Mapping[str, object], indent: str) -> str:
+    """A call as Python writes it, one argument a line where it is long.
+
+    Parameters
+    ----------
+    function : str
+    names : iterable of str
+        Names given by position.
+    stated : mapping of argument to value
+    indent : str
+        How far the line is indented that the call stands on.
+    """
+    given = (
+        *(_Text(name) for name in names),
+        *(_named(f"{name}=", _piece(held)) for name, held in stated.items()),
+    )
+    return _rendered(_Group(f"{function}(", given, ")"), indent, len("return "))
 
 
 @dataclass(frozen=True)

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import ast
 import textwrap
 from collections.abc import Iterable, Iterator, Mapping
 from keyword import iskeyword
@@ -10,10 +11,13 @@ from plainodds.answers.excerpts import ExcerptAnswer
 from plainodds.answers.panels import PanelsAnswer
 from plainodds.answers.questions import Answer
 from plainodds.answers.where import Mask
-from plainodds.phrases.code import code
+from plainodds.phrases.code import call, code, literal
+from plainodds.phrases.languages import language_now
+from plainodds.phrases.numbers import marks_now
 
 __all__ = ["script"]
 
+_INDENT = "    "
 _HEAD = '''"""Makes this dossier again.
 
 Hand over what it was made from: what fit() returned, and what else `make` asks for.
@@ -44,18 +48,45 @@ def script(answers: Mapping[str, Answer], options: Mapping[str, object]) -> str:
         code starts from: ``result``, ``results``, ``data``, ``mask`` and functions of the
         analyst's own.
     """
-    parts, before = [], ""
+    parts, fit = [], ""
     for name, answer in answers.items():
-        body = code(answer).removeprefix("import plainodds as po\n\n")
-        fit, _, asked = f"\n{body}".rpartition("\nanswer = ")
-        fit = fit.strip("\n") + "\n" if fit.strip("\n") else ""
-        # the fit is taken in once where several answers share it
-        told = f"{'' if fit == before else fit}answers[{name!r}] = {asked}"
-        before = fit
-        parts.append(textwrap.indent(told, "    "))
+        *before, asked = _statements(code(answer).removeprefix("import plainodds as po\n\n"))
+        for each in before:
+            # the fit is taken in once where several answers share it
+            if each != fit:
+                parts.append(each)
+            if each.startswith("fit = "):
+                fit = each
+        parts.append(f"answers[{literal(name)}] = {asked.removeprefix('answer = ')}")
     head = _HEAD.format(parameters=", ".join(["folder", *_needs(answers)]))
-    given = "".join(f", {name}={held!r}" for name, held in options.items())
-    return f"{head}{''.join(parts)}    return po.dossier(answers, folder{given})\n"
+    return f"{head}{textwrap.indent(''.join(parts), _INDENT)}{_written(options)}"
+
+
+def _statements(source: str) -> list[str]:
+    """Source statement by statement, each with the comments above it."""
+    lines, start, found = source.splitlines(keepends=True), 0, []
+    for each in ast.parse(source).body:
+        assert each.end_lineno is not None
+        found.append("".join(lines[start : each.end_lineno]))
+        start = each.end_lineno
+    return found
+
+
+def _written(options: Mapping[str, object]) -> str:
+    """The dossier being written, in the language and with the marks of now."""
+    language, marks = language_now(), marks_now()
+    stated = {
+        name: mark
+        for name, mark in (("decimal", marks.decimal), ("thousands", marks.thousands))
+        if mark != getattr(language.marks, name)
+    }
+    names = ("answers", "folder")
+    if language.code == "en" and not stated:
+        return f"{_INDENT}return {call('po.dossier', names, options, _INDENT)}\n"
+    writing = call("po.writing", [literal(language.code)], stated, _INDENT)
+    within = 2 * _INDENT
+    asked = call("po.dossier", names, options, within)
+    return f"{_INDENT}with {writing}:\n{within}return {asked}\n"
 
 
 def _each(answers: Iterable[Answer]) -> Iterator[Answer]:
