@@ -20,6 +20,8 @@ from plainodds.drawings.draw import drawing_of
 from plainodds.drawings.save import Size, save
 from plainodds.drawings.theme import Theme
 from plainodds.phrases import alternative, caption, methods_note, words
+from plainodds.phrases.languages import spoken_now
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.reports.report import report_of
 from plainodds.phrases.script import script
 from plainodds.phrases.versions import versions
@@ -32,6 +34,7 @@ _MANIFEST = "manifest.json"
 _TABLES = {"html": "html", "markdown": "md", "latex": "tex", "csv": "csv"}
 
 
+@spoken_now()
 def dossier(
     answers: Mapping[str, Answer] | Iterable[Answer],
     folder: str | os.PathLike[str],
@@ -234,7 +237,7 @@ def _account(answers: Mapping[str, Answer], forms: tuple[str, ...]) -> Iterator[
         yield ""
         yield from _told(told.sentences)
         if told.cautions:
-            yield "Read with care:"
+            yield message("Read with care:")
             yield ""
             yield from (f"- {_plain(each)}" for each in told.cautions)
             yield ""
@@ -243,10 +246,10 @@ def _account(answers: Mapping[str, Answer], forms: tuple[str, ...]) -> Iterator[
             described = _plain(alternative(answer)).replace("[", "(").replace("]", ")")
             yield f"![{described}](figures/{name}.{shown})"
             yield ""
-        yield f"*Figure {number}.* {_plain(caption(answer))}"
+        yield f"*{message('Figure {}.', number)}* {_plain(caption(answer))}"
         yield ""
         for _, each in _tabled(name, answer):
-            yield f"Table {number}."
+            yield message("Table {}.", number)
             yield ""
             yield report_of(each).markdown()
 
@@ -269,11 +272,11 @@ def _told(sentences: tuple[str, ...]) -> Iterator[str]:
 def _methods(answers: Mapping[str, Answer]) -> Iterator[str]:
     """What was computed and how, said once where several answers share it."""
     notes = [methods_note(answer) for answer in answers.values()]
-    yield "## Methods"
+    yield f"## {message('Methods')}"
     yield ""
     yield " ".join(map(_plain, dict.fromkeys(each for note in notes for each in note.sentences)))
     yield ""
-    yield "## References"
+    yield f"## {message('References')}"
     yield ""
     for each in sorted({each for note in notes for each in note.references}):
         yield f"- {_plain(each)}"

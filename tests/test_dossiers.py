@@ -215,3 +215,23 @@ def test_letters_that_no_font_has_are_refused_and_leave_nothing(result, tmp_path
     with pytest.raises(ValueError, match="has no letter for"):
         po.dossier([fit.odds()], tmp_path / "account")
     assert list(tmp_path.iterdir()) == []
+
+
+def test_a_german_dossier_is_german_throughout(answers, tmp_path):
+    with po.writing("de"):
+        made = po.dossier(answers, tmp_path / "account", forms=["svg"])
+    account = (made / "account.md").read_text(encoding="utf-8")
+    assert not re.search(r"Read with care|Figure|Table|Predictor|Estimate", account)
+    for number in (1, 2, 3):
+        assert f"*Abbildung {number}.* " in account
+        assert f"\nTabelle {number}.\n" in account
+    assert account.count("Mit Vorsicht zu lesen:") == 3
+    methods = (made / "methods.md").read_text(encoding="utf-8")
+    assert methods.startswith("## Methoden\n")
+    assert "\n## Literatur\n" in methods
+    table = (made / "tables/01-odds-ratios.csv").read_text(encoding="utf-8")
+    assert "Gruppe,Merkmal," in table
+    # names of files and the script are the same in every language
+    assert {each.name for each in made.iterdir()} == {
+        "account.md", "figures", "make.py", "manifest.json", "methods.md", "tables"
+    }  # fmt: skip

@@ -9,6 +9,7 @@ from plainodds.answers.where import Where
 from plainodds.model.predictors import Subject
 from plainodds.phrases.averaged import rows_chosen
 from plainodds.phrases.labels import listed
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import count
 from plainodds.phrases.parts import profile_words
 from plainodds.values import Pairs
@@ -28,12 +29,14 @@ def averaged_over(subject: Subject, counted: Sequence[int], where: Where) -> str
     """
     rows = rows_chosen(subject, where, counted[-1])
     before = [count(each) for each in counted[:-1]]
-    return f"Averaged over {listed([*before, rows])}, each with its own values otherwise."
+    return message("Averaged over {}, each with its own values otherwise.", listed([*before, rows]))
 
 
 def held_at(subject: Subject, held: Pairs, others: Others) -> str:
     """Say at which profile a chance is held; empty where nothing is left to hold."""
     if not held:
         return ""
-    opening = "At typical values" if others == "typical" else "Held"
-    return f"{opening}: {profile_words(subject, held)}."
+    profile = profile_words(subject, held)
+    if others == "typical":
+        return message("At typical values: {}.", profile)
+    return message("Held: {}.", profile)

@@ -16,8 +16,9 @@ from plainodds.drawings.geometry import Margins, Room, slot_size
 from plainodds.drawings.lettering import line_height
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import bare
-from plainodds.phrases.labels import chance_of, in_sentence, sentence_case
-from plainodds.phrases.numbers import confidence
+from plainodds.phrases.labels import average_chance_of, chance_of
+from plainodds.phrases.lexicon import message
+from plainodds.phrases.numbers import level_figures
 
 __all__ = ["ChangeDrawing", "change_notes"]
 
@@ -53,10 +54,8 @@ class ChangeDrawing:
     @staticmethod
     def title(answer: ChangeAnswer) -> str:
         """The chance that changes."""
-        title = chance_of(answer.subject.outcome)
-        if answer.question.others != "observed":
-            return title
-        return sentence_case(f"average {in_sentence(title)}")
+        averaged = answer.question.others == "observed"
+        return (average_chance_of if averaged else chance_of)(answer.subject.outcome)
 
     @staticmethod
     def structure(answer: ChangeAnswer) -> Hashable:
@@ -111,9 +110,9 @@ def change_notes(answer: ChangeAnswer) -> list[str]:
     """Say what the marks of uncertainty are, and over whom or where the chances hold."""
     question, subject = answer.question, answer.subject
     if answer.start.lower is None:
-        notes = [subject.no_interval or "No intervals can be given."]
+        notes = [subject.no_interval or message("No intervals can be given.")]
     else:
-        notes = [f"Lines, band and brackets: {confidence(question.level)} intervals."]
+        notes = [message("Lines, band and brackets: {}% intervals.", level_figures(question.level))]
     notes += bridge_notes(answer)
     if question.others != "observed":
         notes.append(held_at(subject, answer.held, question.others))

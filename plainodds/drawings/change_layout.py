@@ -19,6 +19,7 @@ from plainodds.phrases.labels import (
     sentence_case,
     value_label,
 )
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.moves import end_label, settled_moves, start_label
 from plainodds.phrases.numbers import (
     bare_points_span,
@@ -138,7 +139,7 @@ def _rows(answer: ChangeAnswer) -> tuple[BridgeRow, ...]:
             sentence_case(start_label(subject, moves)), figures[0], _between(answer.start, say)
         ),
         BridgeRow(
-            "Difference",
+            message("Difference"),
             percentage_points(difference.estimate, sign=True),
             _between(difference, bare_points_span),
         ),
@@ -213,8 +214,8 @@ def bridge_notes(answer: ChangeAnswer) -> list[str]:
     notes = []
     if any(beyond(answer)):
         names = [predictor_name(answer.subject.predictor(name)) for name in answer.beyond]
-        notes.append(f"Hollow point: beyond the data ({listed(names)}).")
+        notes.append(message("Hollow point: beyond the data ({}).", listed(names)))
     reach = reached(answer)
     if reach and (reach[0] < 0.0 or reach[1] > 1.0):
-        notes.append("Pointed band: the interval goes on to where there is no chance.")
+        notes.append(message("Pointed band: the interval goes on to where there is no chance."))
     return notes

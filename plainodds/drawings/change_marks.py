@@ -22,6 +22,7 @@ from plainodds.drawings.geometry import corner
 from plainodds.drawings.lettering import letter, line_height, text_width, wrapped
 from plainodds.drawings.theme import Theme
 from plainodds.phrases.labels import value_label
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.moves import settled_moves
 from plainodds.phrases.numbers import cases, count, denominator_of_change
 from plainodds.phrases.units import tidy
@@ -85,17 +86,26 @@ def legend_of(answer: ChangeAnswer) -> tuple[str, tuple[tuple[str, int, str], ..
     if counts.more or counts.fewer:
         kind = "more" if counts.more else "fewer"
         now, instead = (cases(each.estimate, counts.over) for each in (answer.end, answer.start))
-        words = f"{kind} {end}: {now} instead of {instead}"
+        words = (
+            message("more {}: {} instead of {}", end, now, instead)
+            if counts.more
+            else message("fewer {}: {} instead of {}", end, now, instead)
+        )
         change = (kind, counts.more or counts.fewer, words)
     else:
         over = count(counts.over)
-        change = ("more", 0, f"more or fewer: the difference is under 1 in {over}")
+        change = ("more", 0, message("more or fewer: the difference is under 1 in {}", over))
     return (
-        f"Of {count(counts.over)} {tidy(outcome.cases)}, {tidy(outcome.event)} (rounded):",
+        message(
+            "Of {} {}, {} (rounded):",
+            count(counts.over),
+            tidy(outcome.cases),
+            tidy(outcome.event),
+        ),
         (
-            ("both", counts.both, f"{start} and {after} alike"),
+            ("both", counts.both, message("{} and {} alike", start, after)),
             change,
-            ("neither", counts.neither, f"neither {start} nor {after}"),
+            ("neither", counts.neither, message("neither {} nor {}", start, after)),
         ),
     )
 
@@ -110,9 +120,12 @@ def _ends(answer: ChangeAnswer) -> tuple[str, str, str]:
         # a bare number or a yes says nothing without its predictor
         speaks = facts.kind == "category" or (facts.is_number and tidy(facts.unit) != "")
         if speaks and max(len(start), len(end)) <= _LONGEST_END:
-            joint = "at" if facts.is_number else "for"
-            return f"{joint} {start}", f"{joint} {end}", f"{joint} {end}"
-    return "before the change", "after the change", "after it"
+            if facts.is_number:
+                here, there = message("at {}", start), message("at {}", end)
+            else:
+                here, there = message("for {}", start), message("for {}", end)
+            return here, there, there
+    return message("before the change"), message("after the change"), message("after it")
 
 
 class Marks:

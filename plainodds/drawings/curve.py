@@ -21,6 +21,7 @@ from plainodds.drawings.lettering import line_height, tick_style
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import label_ticks, round_ticks
 from plainodds.phrases.labels import scale_title
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import guarded_count, quantity
 
 __all__ = ["CurveDrawing", "LineArtists", "curve_notes"]
@@ -240,8 +241,8 @@ def _rows(answer: CurveAnswer, theme: Theme) -> Rows:
 def curve_notes(answer: CurveAnswer) -> list[str]:
     """Say what bands, broken lines and the rows beneath mean."""
     cases = answer.subject.outcome.cases
-    notes = [CurveFrame.interval_note(answer, "Band")]
+    notes = [CurveFrame.interval_note(answer, message("Band"))]
     if not all(all(line.supported) for line in answer.lines):
-        notes.append(f"Broken line: few {cases} or none there.")
-    notes.append(f"Beneath: where the {cases} are.")
+        notes.append(message("Broken line: few {} or none there.", cases))
+    notes.append(message("Beneath: where the {} are.", cases))
     return notes

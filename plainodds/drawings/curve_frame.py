@@ -28,7 +28,8 @@ from plainodds.drawings.lettering import (
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import bare, label_ticks
 from plainodds.phrases.labels import axis_title, predictor_label, scale_title, value_label
-from plainodds.phrases.numbers import confidence
+from plainodds.phrases.lexicon import message
+from plainodds.phrases.numbers import level_figures
 
 __all__ = ["CurveFrame", "Rows"]
 
@@ -268,9 +269,11 @@ class CurveFrame:
     def interval_note(answer: CurveAnswer, name: str) -> str:
         """Say what the intervals are, or why there are none."""
         if all(line.lower is None for line in answer.lines):
-            return answer.subject.no_interval or "No intervals can be given."
-        cut = ", cut off where it leaves the axis" if is_cut(answer) else ""
-        return f"{name}: {confidence(answer.question.level)} interval{cut}."
+            return answer.subject.no_interval or message("No intervals can be given.")
+        level = level_figures(answer.question.level)
+        if is_cut(answer):
+            return message("{}: {}% interval, cut off where it leaves the axis.", name, level)
+        return message("{}: {}% interval.", name, level)
 
 
 def _label_texts(answer: CurveAnswer, theme: Theme, most: float) -> list[str]:

@@ -19,6 +19,7 @@ from plainodds.drawings.lettering import letter, line_height, text_width, tick_s
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import label_ticks
 from plainodds.phrases.labels import scale_title, value_label
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import chance, count_mark, percentage_points, ratio, signed
 
 __all__ = ["LevelPoints", "LevelsDrawing", "level_labels", "levels_notes"]
@@ -225,7 +226,7 @@ def _rows(answer: CurveAnswer, theme: Theme) -> Rows:
 def levels_notes(answer: CurveAnswer) -> list[str]:
     """Say what lines through points and hollow points mean."""
     cases = answer.subject.outcome.cases
-    notes = [CurveFrame.interval_note(answer, "Line through a point")]
+    notes = [CurveFrame.interval_note(answer, message("Line through a point"))]
     if not all(all(line.supported) for line in answer.lines):
-        notes.append(f"Hollow point: few {cases} or none there.")
+        notes.append(message("Hollow point: few {} or none there.", cases))
     return notes

@@ -18,6 +18,7 @@ from plainodds.drawings.kinds import drawing_of
 from plainodds.drawings.panels import PanelsDrawing
 from plainodds.drawings.stamps import root_figure
 from plainodds.drawings.theme import Theme, theme_of
+from plainodds.phrases.languages import spoken_now
 
 __all__ = ["BORDER", "draw", "drawing_of", "figure_for", "height_for", "theme_for"]
 
@@ -42,6 +43,7 @@ def _(answer: ExcerptAnswer) -> type[Drawing[Any]]:
     return drawings[answer.question.part]
 
 
+@spoken_now()
 def draw(answer: Answer, ax: Axes | None = None, theme: str | Theme = "page") -> Figure:
     """Draw an answer.
 
@@ -92,12 +94,14 @@ def draw(answer: Answer, ax: Axes | None = None, theme: str | Theme = "page") ->
     return figure
 
 
+@spoken_now()
 def height_for(drawing: type[Drawing[Any]], answer: Answer, theme: Theme, width: float) -> float:
     """Height in points of a figure in which the answer looks best, for a width in points."""
     border = BORDER * theme.font_size
     return drawing.natural_height(answer, theme, width - 2 * border) + 2 * border
 
 
+@spoken_now()
 def theme_for(
     drawing: type[Drawing[Any]], answer: Answer, theme: Theme, width: float, height: float
 ) -> Theme:
@@ -106,6 +110,7 @@ def theme_for(
     return fitting_theme(drawing, answer, theme, width - border, height - border)
 
 
+@spoken_now()
 def figure_for(
     drawing: type[Drawing[Any]],
     answer: Answer,

@@ -25,11 +25,10 @@ from plainodds.drawings.odds_rows import GAP
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import bare
 from plainodds.phrases.labels import effects_title, line_label
+from plainodds.phrases.lexicon import lexicon, message
 
 __all__ = ["EffectsDrawing"]
 
-_LOWER, _HIGHER = "← lower chance", "higher chance →"
-_AXIS_TITLE = "percentage points"
 _MOST_STRETCH = 1.5
 
 
@@ -193,9 +192,14 @@ class EffectsDrawing:
         rooms = (at_zero + gap, plot_width - at_zero + 0.2 * em)
         fits = all(
             room >= text_width(words, theme, theme.small) + 0.6 * em
-            for room, words in zip(rooms, (_LOWER, _HIGHER), strict=True)
+            for room, words in zip(rooms, _sides(), strict=True)
         )
-        for text, words, side in zip(self._sides, (_LOWER, _HIGHER), (-1, 1), strict=True):
+        for text, words, side in zip(
+            self._sides,
+            _sides(),
+            (-1, 1),
+            strict=True,
+        ):
             text.set_text(words if fits else "")
             text.set_position((at_zero + side * 0.6 * em, 0.2 * em))
 
@@ -208,11 +212,15 @@ class EffectsDrawing:
         y -= self._title.place(self.title(answer), -left, y, width)
         self._key.place(-left, y - 0.35 * em, width)
         plot_width, _ = self._room.plot_size()
-        room = text_width(_AXIS_TITLE, theme, theme.small)
-        self._axis_title.set_text(_AXIS_TITLE)
+        room = text_width(lexicon().points, theme, theme.small)
+        self._axis_title.set_text(lexicon().points)
         # centred on the plot, unless that would push it out of the slot
         self._axis_title.set_position((max(0.0, (room - plot_width) / 2 - left), -0.2 * em))
         self._notes.place(effects_notes(answer, _leaves(placed)), -left, -below, width)
+
+
+def _sides() -> tuple[str, str]:
+    return message("← lower chance"), message("higher chance →")
 
 
 def _series(answer: EffectsAnswer) -> tuple[object, ...]:

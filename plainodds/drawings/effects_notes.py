@@ -6,24 +6,26 @@ from plainodds.answers.effects import EffectsAnswer
 from plainodds.drawings.among import averaged_over, held_at
 from plainodds.drawings.effects_rows import panels_of
 from plainodds.phrases.labels import predictor_name
+from plainodds.phrases.lexicon import message
 
 __all__ = ["effects_notes"]
-
-_LEAVES = "Arrow: it goes on beyond the axis; its figures stand at the right."
-_OWN_AXES = "Each change per additional unit has an axis of its own: units cannot be compared."
 
 
 def effects_notes(answer: EffectsAnswer, leaves: bool) -> list[str]:
     """Notes in the order of their weight; `leaves` is whether anything ends in an arrow."""
     notes = []
     if all(row.effect.lower is None for row in answer.rows):
-        notes.append(answer.subject.no_interval or "No intervals can be given.")
+        notes.append(answer.subject.no_interval or message("No intervals can be given."))
     if leaves:
-        notes.append(_LEAVES)
+        notes.append(message("Arrow: it goes on beyond the axis; its figures stand at the right."))
     notes.append(_among(answer))
     panels = panels_of(answer)
     if any(panel.is_slope for panel in panels) and len(panels) > 1:
-        notes.append(_OWN_AXES)
+        notes.append(
+            message(
+                "Each change per additional unit has an axis of its own: units cannot be compared."
+            )
+        )
     return [note for note in notes if note]
 
 
@@ -34,5 +36,7 @@ def _among(answer: EffectsAnswer) -> str:
     held = held_at(subject, answer.held, question.others)
     if question.by is None:
         return held
-    marked = f"{predictor_name(subject.predictor(question.by))} as marked."
-    return f"{held.removesuffix('.')}; {marked}" if held else f"With {marked}"
+    by = predictor_name(subject.predictor(question.by))
+    if held:
+        return message("{}; {} as marked.", held.removesuffix("."), by)
+    return message("With {} as marked.", by)

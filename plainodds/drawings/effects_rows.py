@@ -16,7 +16,8 @@ from plainodds.drawings.odds_rows import Figures, Group, Slot, is_narrow
 from plainodds.drawings.theme import Theme
 from plainodds.model.predictors import PredictorFacts
 from plainodds.phrases.labels import effect_label, predictor_label
-from plainodds.phrases.numbers import NOT_KNOWN, confidence, marks_now, signed
+from plainodds.phrases.lexicon import message
+from plainodds.phrases.numbers import level_figures, marks_now, signed, wording
 
 __all__ = ["Panel", "effect_texts", "figures_of", "panels_of"]
 
@@ -77,9 +78,9 @@ def figures_of(
     share = _WIDEST_FIGURES_NARROW if is_narrow(theme, width) else _WIDEST_FIGURES
     if whole > share * width:
         columns = [[text.replace(" (", "\n(") for text in texts] for texts in columns]
-    heading = "change"
+    heading = message("change")
     if any(row.effect.lower is not None for row in answer.rows):
-        heading += f" ({confidence(answer.question.level)} interval)"
+        heading = message("change ({}% interval)", level_figures(answer.question.level))
     widest = max((text_width(text, theme, em) for texts in columns for text in texts), default=0.0)
     if text_width(heading, theme, small) > widest:
         heading = heading.replace(" (", "\n(")
@@ -96,7 +97,7 @@ def effect_texts(rows: Sequence[EffectRow]) -> list[str]:
     """
     places = _decimals(rows)
     middles = [_points(row.effect.estimate, places) for row in rows]
-    whole = max((_before_point(text) for text in middles if text != NOT_KNOWN), default=0)
+    whole = max((_before_point(text) for text in middles if text != wording().not_known), default=0)
     texts = []
     for row, middle, aligned in zip(rows, middles, align_decimals(middles), strict=True):
         lead = FIGURE_SPACE * (whole - _before_point(middle))
@@ -104,9 +105,10 @@ def effect_texts(rows: Sequence[EffectRow]) -> list[str]:
         if low is None or high is None:
             texts.append(lead + middle)
         elif math.isnan(low) or math.isnan(high):
-            texts.append(f"{lead}{aligned} (interval {NOT_KNOWN})")
+            texts.append(f"{lead}{aligned} {message('(interval not known)')}")
         else:
-            texts.append(f"{lead}{aligned} ({_points(low, places)} to {_points(high, places)})")
+            ends = wording().to.format(_points(low, places), _points(high, places))
+            texts.append(f"{lead}{aligned} ({ends})")
     return texts
 
 

@@ -16,6 +16,8 @@ from matplotlib.axes import Axes
 from matplotlib.transforms import Affine2D, Bbox, ScaledTranslation, Transform
 
 from plainodds.drawings.stamps import root_figure
+from plainodds.phrases.languages import spoken_now
+from plainodds.phrases.writing import kept_writing
 
 __all__ = [
     "LEAST_SHARE",
@@ -72,6 +74,8 @@ class Room:
 
     def __init__(self, axes: Axes, resized: Callable[[], None]) -> None:
         self._axes, self.resized = axes, resized
+        # whoever draws later need not write as the picture was written
+        self._writing = kept_writing()
         self._size = slot_size(axes)
         self.margins = Margins(0.0, 0.0, 0.0, 0.0)
         axes.set_axes_locator(self)  # type: ignore[arg-type]
@@ -83,7 +87,8 @@ class Room:
         width, height = slot_size(self._axes)
         if max(abs(width - self._size[0]), abs(height - self._size[1])) > _SAME:
             self._size = (width, height)
-            self.resized()
+            with self._writing(), spoken_now():
+                self.resized()
         left, right = _fitting(self.margins.left, self.margins.right, width)
         bottom, top = _fitting(self.margins.bottom, self.margins.top, height)
         return Bbox.from_extents(

@@ -16,11 +16,16 @@ from plainodds.drawings.geometry import corner
 from plainodds.drawings.lettering import Weight, letter, line_height, text_width, wrapped
 from plainodds.drawings.theme import Theme
 from plainodds.phrases.labels import listed, predictor_label, predictor_name, value_label
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import chance, ratio, signed, summing
 
 __all__ = ["Ledger", "LedgerLine", "ledger_lines"]
 
-_HEADINGS = ("log odds η", "odds", "chance")
+
+def _headings() -> tuple[str, str, str]:
+    return message("log odds η"), message("odds"), message("chance")
+
+
 _DECIMALS = 2
 
 
@@ -49,7 +54,11 @@ def ledger_lines(answer: ProfileAnswer) -> tuple[LedgerLine, ...]:
     first = start.linear_predictor.estimate
     parts = [first, *(row.adds.estimate for row in moved)]
     written = summing(parts, point.linear_predictor.estimate, _DECIMALS)
-    opening = "Typical profile" if answer.comparison is None else "Profile compared with"
+    opening = (
+        message("Typical profile")
+        if answer.comparison is None
+        else message("Profile compared with")
+    )
     lines = [
         LedgerLine(
             opening, "", signed(written[0], decimals=_DECIMALS), ratio(start.odds.estimate),
@@ -70,11 +79,19 @@ def ledger_lines(answer: ProfileAnswer) -> tuple[LedgerLine, ...]:
             for name in row.predictors
         ]  # fmt: skip
         lines.append(
-            LedgerLine(f"Unchanged: {listed(names)}", "", "0.00", "× 1", "", math.nan, False)
+            LedgerLine(
+                message("Unchanged: {}", listed(names)),
+                "",
+                signed(0.0, decimals=_DECIMALS),
+                "× 1",
+                "",
+                math.nan,
+                False,
+            )
         )
     lines.append(
         LedgerLine(
-            "This profile", "", signed(sum(written), decimals=_DECIMALS),
+            message("This profile"), "", signed(sum(written), decimals=_DECIMALS),
             ratio(point.odds.estimate), chance(point.probability.estimate), math.nan, True,
         )
     )  # fmt: skip
@@ -89,7 +106,7 @@ def _names(answer: ProfileAnswer, row: LedgerRow) -> tuple[str, str]:
         names.append(f"{predictor_label(facts)} = {value_label(facts, now[name])}")
         if now[name] != before[name]:
             was.append(value_label(facts, before[name]))
-    return ", ".join(names), f"instead of {listed(was)}" if was else ""
+    return ", ".join(names), message("instead of {}", listed(was)) if was else ""
 
 
 class Ledger:
@@ -133,7 +150,7 @@ class Ledger:
                 text_width(heading, theme, theme.small),
                 *(text_width(text, theme, em, "bold") for text in column),
             )
-            for heading, column in zip(_HEADINGS, columns, strict=True)
+            for heading, column in zip(_headings(), columns, strict=True)
         )
         return first, second, third
 
@@ -173,7 +190,7 @@ class Ledger:
             edge += gap + column
             ends.append(edge)
         self._used = 0
-        for heading, end in zip(_HEADINGS, ends, strict=True):
+        for heading, end in zip(_headings(), ends, strict=True):
             self._write(heading, end, y, small, theme.faint, across="right")
         top = y - line_height(small) - 0.5 * em
         rules, polygons = [[(x, top), (x + width, top)]], []

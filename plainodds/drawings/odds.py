@@ -27,14 +27,12 @@ from plainodds.drawings.odds_rows import (
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import bare, fraction_ticks, label_ticks
 from plainodds.phrases.labels import odds_of_event
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import simple_fraction
-from plainodds.phrases.unbounded import UNBOUNDED_NOTE, has_finite_estimate
+from plainodds.phrases.unbounded import has_finite_estimate, unbounded_note
 
 __all__ = ["OddsDrawing"]
 
-_LOWER, _HIGHER = "← lower odds", "higher odds →"
-_LEAVES = "Arrow: it goes on beyond the axis; its figures stand at the right."
-_AXIS_TITLE = "odds ratio, logarithmic axis"
 _MOST_STRETCH = 1.5
 
 
@@ -221,9 +219,9 @@ class OddsDrawing:
         rooms = (at_one + gap, plot_width - at_one + 0.2 * em)
         fits = all(
             room >= text_width(words, theme, theme.small) + 0.6 * em
-            for room, words in zip(rooms, (_LOWER, _HIGHER), strict=True)
+            for room, words in zip(rooms, _sides(), strict=True)
         )
-        for text, words, side in zip(self._sides, (_LOWER, _HIGHER), (-1, 1), strict=True):
+        for text, words, side in zip(self._sides, _sides(), (-1, 1), strict=True):
             text.set_text(words if fits else "")
             text.set_position((at_one + side * 0.6 * em, 0.2 * em))
         return lower, upper
@@ -234,14 +232,19 @@ class OddsDrawing:
         y -= self._title.place(self.title(answer), -left, y, width)
         self._key.place(-left, y - 0.35 * em, width)
         plot_width, _ = self._room.plot_size()
-        room = text_width(_AXIS_TITLE, theme, theme.small)
-        self._axis_title.set_text(_AXIS_TITLE)
+        title = message("odds ratio, logarithmic axis")
+        room = text_width(title, theme, theme.small)
+        self._axis_title.set_text(title)
         # centred on the plot, unless that would push it out of the slot
         self._axis_title.set_position(
             (max(0.0, (room - plot_width) / 2 - left), -0.6 * em - line_height(theme.small))
         )
         notes = _notes(answer)
         self._notes.place(notes, -left, -below, width)
+
+
+def _sides() -> tuple[str, str]:
+    return message("← lower odds"), message("higher odds →")
 
 
 def _models(answer: OddsAnswer) -> tuple[str, ...]:
@@ -252,11 +255,11 @@ def _notes(answer: OddsAnswer) -> list[str]:
     lower, upper = axis_range(answer.rows)
     notes = []
     if any(min(shown(row)) < lower or max(shown(row)) > upper for row in answer.rows):
-        notes.append(_LEAVES)
+        notes.append(message("Arrow: it goes on beyond the axis; its figures stand at the right."))
     if any(math.isinf(row.log_odds_ratio.estimate) for row in answer.rows):
-        notes.append(UNBOUNDED_NOTE)
+        notes.append(unbounded_note())
     if any(row.odds_ratio.lower is None and has_finite_estimate(row) for row in answer.rows):
-        notes.append(answer.subject.no_interval or "No intervals can be given.")
+        notes.append(answer.subject.no_interval or message("No intervals can be given."))
     return notes
 
 

@@ -12,7 +12,8 @@ from plainodds.drawings.odds_figures import estimate_texts
 from plainodds.drawings.theme import Theme
 from plainodds.phrases.concerns import counted_rows, sparse_row
 from plainodds.phrases.labels import change_label, given_clause, given_label, predictor_label
-from plainodds.phrases.numbers import confidence
+from plainodds.phrases.lexicon import message
+from plainodds.phrases.numbers import level_figures
 
 __all__ = [
     "GAP",
@@ -296,10 +297,11 @@ def figures_of(answer: OddsAnswer, theme: Theme, width: float) -> Figures:
     most = width * (_WIDEST_FIGURES_NARROW if is_narrow(theme, width) else _WIDEST_FIGURES)
     if whole > most:
         texts = [text.replace(" (", "\n(") for text in texts]
-    heading = "odds ratio"
+    heading = message("odds ratio")
     if any(row.odds_ratio.lower is not None for row in answer.rows):
-        between = "\n" if whole > most else " "
-        heading += f"{between}({confidence(answer.question.level)} interval)"
+        heading = message("odds ratio ({}% interval)", level_figures(answer.question.level))
+        if whole > most:
+            heading = heading.replace(" (", "\n(")
     widest = max((text_width(text, theme, theme.font_size) for text in texts), default=0.0)
     if text_width(heading, theme, theme.small) > widest:
         heading = heading.replace(" (", "\n(")

@@ -15,12 +15,11 @@ from plainodds.drawings.lettering import letter, line_height, text_width, tick_s
 from plainodds.drawings.odds_axis import axis_range, shown
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import fraction_ticks, label_ticks
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import simple_fraction
 
 __all__ = ["Extent", "TableAxis", "extent_of"]
 
-_LOWER, _HIGHER = "← lower odds", "higher odds →"
-_TITLE = "odds ratio, logarithmic axis"
 _TICK = 0.32  # letters
 _APART = (1.6, 1.9, 2.3, 2.8, 3.4)  # ticks, in small letters
 _BETWEEN_LABELS = 0.35  # letters
@@ -146,14 +145,19 @@ class TableAxis:
         at_one, beneath = along(1.0), -drop - 0.25 * em - 1.9 * line_height(theme.small)
         rooms = (at_one + left, plot_width - at_one + right)
         for text, words, side, room in zip(
-            self.sides, (_LOWER, _HIGHER), (-1, 1), rooms, strict=True
+            self.sides,
+            (message("← lower odds"), message("higher odds →")),
+            (-1, 1),
+            rooms,
+            strict=True,
         ):
             fits = room >= text_width(words, theme, theme.small) + 0.5 * em
             text.set_text(words if fits else "")
             text.set_position((at_one + side * 0.5 * em, beneath))
-        wide = text_width(_TITLE, theme, theme.small)
+        title = message("odds ratio, logarithmic axis")
+        wide = text_width(title, theme, theme.small)
         middle = min(max(plot_width / 2, wide / 2 - left), plot_width + right - wide / 2)
-        self.title.set_text(_TITLE)
+        self.title.set_text(title)
         self.title.set_position((middle, beneath - 1.1 * line_height(theme.small)))
 
     def _place_line(self, extent: Extent, plot_width: float) -> None:

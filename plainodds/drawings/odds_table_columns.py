@@ -12,7 +12,8 @@ from plainodds.drawings.lettering import FIGURE_SPACE, text_width, wrapped
 from plainodds.drawings.odds_figures import estimate_texts
 from plainodds.drawings.odds_rows import GAP
 from plainodds.drawings.theme import Theme
-from plainodds.phrases.numbers import confidence, count, count_mark, marks_now, p_mark
+from plainodds.phrases.lexicon import message
+from plainodds.phrases.numbers import count, count_mark, level_figures, marks_now, p_mark
 from plainodds.phrases.odds_lines import Counts, OddsLine
 from plainodds.phrases.units import tidy
 
@@ -172,12 +173,12 @@ def _columns(
         cases = wrapped(tidy(answer.subject.outcome.cases), 7.0 * em, theme, small, 1)
         known = any(line.counts and line.counts.events is not None for line in lines)
         between = "\n" if form.counts else " "
-        counts_heading = f"events /{between}{cases}" if known else cases
+        counts_heading = message("events /{}{}", between, cases) if known else cases
     if form.counts:
         counts_width = max(_widest(counts, theme, em), text_width(counts_heading, theme, small))
     tests_width = max(
         _widest([text for each in tests for text in each], theme, em),
-        text_width("p-value", theme, small),
+        text_width(message("p-value"), theme, small),
     )
     fixed = sum(widths) + gap * len(widths) + (counts_width + gap if counts_width else 0.0)
     fixed += len(widths) * (tests_width + gap) if form.tests else 0.0
@@ -197,8 +198,9 @@ def _columns(
         least_plot = max(_NARROWEST * em, LEAST_SHARE * width)
         labels = min(labels, max(_NARROWEST * em, width - fixed - gap - least_plot))
     return Columns(
-        form, counts, figures, tests, counts_heading, heading, "p-value" if form.tests else "",
-        names, tuple(filter(None, models)), labels, counts_width, tuple(widths),
+        form, counts, figures, tests, counts_heading, heading,
+        message("p-value") if form.tests else "", names, tuple(filter(None, models)), labels,
+        counts_width, tuple(widths),
         tests_width if form.tests else 0.0, width - fixed - gap - labels,
     )  # fmt: skip
 
@@ -223,8 +225,8 @@ def _label_width(line: OddsLine, theme: Theme) -> float:
 
 def _figures_heading(answer: OddsAnswer) -> str:
     if all(row.odds_ratio.lower is None for row in answer.rows):
-        return "odds ratio"
-    return f"odds ratio ({confidence(answer.question.level)} interval)"
+        return message("odds ratio")
+    return message("odds ratio ({}% interval)", level_figures(answer.question.level))
 
 
 def _figures(
@@ -269,10 +271,10 @@ def _reference(written: Sequence[str]) -> str:
     heads = [text.partition(" (")[0] for text in written if point in text.partition(" (")[0]]
     heads = [head for head in heads if head.strip(f"{FIGURE_SPACE}{_POINT_SPACE}")[:1].isdigit()]
     if not heads:
-        return "1 (reference)"
+        return f"1 {message('(reference)')}"
     before, _, after = heads[0].partition(point)
     padding = _POINT_SPACE + FIGURE_SPACE * len(after)
-    return f"{FIGURE_SPACE * (len(before) - 1)}1{padding} (reference)"
+    return f"{FIGURE_SPACE * (len(before) - 1)}1{padding} {message('(reference)')}"
 
 
 def _tests(lines: Sequence[OddsLine], models: Sequence[str]) -> tuple[tuple[str, ...], ...]:

@@ -9,6 +9,7 @@ from plainodds.drawings.lettering import FIGURE_SPACE, line_height, text_width, 
 from plainodds.drawings.odds_rows import GAP
 from plainodds.drawings.odds_table_columns import DASH, INDENT, Columns
 from plainodds.drawings.theme import Theme
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import p_value
 from plainodds.phrases.odds_lines import OddsLine
 
@@ -149,7 +150,7 @@ def _test(
     """A test is told across the whole table."""
     assert line.test is not None
     # never broken between the name and the figure
-    test = f"p-value {p_value(line.test.test.p_value)}".replace(" ", "\u00a0")
+    test = message("p-value {}", p_value(line.test.test.p_value)).replace(" ", "\u00a0")
     told = f"{line.name}: {test}"
     text = wrapped(told, width - indent - theme.font_size, theme, theme.small, _TEST_LINES)
     height = line_height(theme.small, text.count("\n") + 1) + 0.5 * air

@@ -19,12 +19,12 @@ from plainodds.drawings.geometry import Margins, Room, apart, corner, slot_size
 from plainodds.drawings.lettering import letter, line_height, text_width, tick_style, wrapped
 from plainodds.drawings.pair_axis import effect_axis
 from plainodds.drawings.pair_strip import Strip, StripPart
-from plainodds.drawings.pair_words import NO_EFFECT, effect_subtitle, stretch_names, turn_name
+from plainodds.drawings.pair_words import effect_subtitle, no_effect, stretch_names, turn_name
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import bare, label_ticks, round_ticks
 from plainodds.model.predictors import PredictorFacts
 from plainodds.phrases.labels import axis_title, value_label
-from plainodds.phrases.numbers import NOT_KNOWN, quantity
+from plainodds.phrases.numbers import quantity, wording
 from plainodds.phrases.pair_labels import followed_label
 
 __all__ = ["EffectPanel"]
@@ -156,7 +156,7 @@ class EffectPanel:
         title = self._title.place(followed_label(answer), -margins.left, top, width)
         self._subtitle.set_text(_subtitle(answer, theme, width))
         self._subtitle.set_position((-margins.left, top - title))
-        self.none_label.set_text(NO_EFFECT)
+        self.none_label.set_text(no_effect())
         self.none_label.set_position((0.6 * em, vertical.zero or 0.0))
         strip = Strip.height(theme) if answer.effect.stretches else 0.0
         labels, _ = self._labels(answer, theme, width)
@@ -202,7 +202,7 @@ class EffectPanel:
         scale: Scale = "odds" if self.logarithmic else "slope"
         self.effect.update(line, scale)
         known = np.isfinite(np.asarray(found.estimate, dtype=float)).any()
-        self._unknown.set_text("" if known else NOT_KNOWN)
+        self._unknown.set_text("" if known else wording().not_known)
         self._unknown.set_position((0.0, 0.8 * self._theme.font_size))
 
     def _place_turns(
@@ -242,7 +242,7 @@ def _subtitle(answer: PairAnswer, theme: Theme, width: float) -> str:
 
 
 def _right(theme: Theme) -> float:
-    return text_width(NO_EFFECT, theme, theme.small) + 0.7 * theme.font_size
+    return text_width(no_effect(), theme, theme.small) + 0.7 * theme.font_size
 
 
 def _parts(answer: PairAnswer) -> Sequence[StripPart]:

@@ -16,15 +16,14 @@ from plainodds.drawings.furniture import Title
 from plainodds.drawings.geometry import Margins, Room, corner, slot_size
 from plainodds.drawings.lettering import Weight, letter, line_height, text_width
 from plainodds.drawings.odds_rows import GAP, is_narrow
-from plainodds.drawings.pair_interaction_rows import UNIT, ScaleRows, scale_rows, ticks_height
+from plainodds.drawings.pair_interaction_rows import ScaleRows, scale_rows, ticks_height
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import bare, fraction_ticks
+from plainodds.phrases.lexicon import lexicon, message
 from plainodds.phrases.numbers import simple_fraction
 
 __all__ = ["InteractionPanel"]
 
-_TITLE = "The interaction itself, on both scales"
-_NONE = "none"
 _GUTTER = 1.0  # letters
 _MOST_ROWS = 2
 
@@ -120,13 +119,13 @@ class InteractionPanel:
                 each.triples, each.heights[: len(each.triples)], each.limits.lower,
                 each.limits.upper,
             )  # fmt: skip
-        self.none.set_text("" if narrow else _NONE)
-        self._unit.set_text(UNIT if placed[0].triples and not narrow else "")
+        self.none.set_text("" if narrow else message("none"))
+        self._unit.set_text(lexicon().points if placed[0].triples and not narrow else "")
         self._unit.set_position((-gap, placed[0].bottom + 0.15 * em))
         self.none.set_position((0.0, 0.1 * em))
         self._heading.set_text(figures.heading)
         self._heading.set_position((gap, 0.1 * em))
-        self._title.place(_TITLE, -left, top, width)
+        self._title.place(_title(), -left, top, width)
 
     def _place_names(
         self, placed: tuple[ScaleRows, ScaleRows], start: float, stretch: float
@@ -162,13 +161,17 @@ class InteractionPanel:
                 text.set_position((gap, y))
 
 
+def _title() -> str:
+    return message("The interaction itself, on both scales")
+
+
 def _weight(name: Text) -> Weight:
     return "bold" if name.get_fontweight() == "bold" else "normal"
 
 
 def _above(placed: tuple[ScaleRows, ScaleRows], theme: Theme, width: float) -> float:
     heading = line_height(theme.small, placed[0].figures.heading.count("\n") + 1)
-    return Title.height(_TITLE, theme, width) + 0.4 * theme.font_size + heading
+    return Title.height(_title(), theme, width) + 0.4 * theme.font_size + heading
 
 
 def _ticks(rows: ScaleRows, plot: float, left: float, theme: Theme) -> list[tuple[float, str]]:
@@ -181,9 +184,9 @@ def _with_none(
     ticks: list[tuple[float, str]], per_unit: float, theme: Theme
 ) -> list[tuple[float, str]]:
     """Name no interaction among the ticks, and leave out what has no room beside the name."""
-    half = text_width(_NONE, theme, theme.small) / 2 + 0.4 * theme.small
+    half = text_width(message("none"), theme, theme.small) / 2 + 0.4 * theme.small
     return [
-        (x, words if x else f"{words}\n{_NONE}")
+        (x, words if x else f"{words}\n{message('none')}")
         for x, words in ticks
         if not x or abs(x) * per_unit >= half + text_width(words, theme, theme.small) / 2
     ]

@@ -15,14 +15,12 @@ from plainodds.drawings.lettering import line_height, text_width
 from plainodds.drawings.odds_rows import Figures, Group, Layout, Slot, is_narrow, laid_out
 from plainodds.drawings.theme import Theme
 from plainodds.phrases.labels import in_sentence
-from plainodds.phrases.numbers import NOT_KNOWN, confidence, count, ratio, ratio_interval
+from plainodds.phrases.lexicon import lexicon, message
+from plainodds.phrases.numbers import count, level_figures, ratio, ratio_interval, wording
 from plainodds.phrases.pair_labels import has_others, interaction_label
 
-__all__ = ["UNIT", "ScaleRows", "interaction_leaves", "scale_rows", "ticks_height"]
+__all__ = ["ScaleRows", "interaction_leaves", "scale_rows", "ticks_height"]
 
-UNIT = "percentage points"
-_BY_THE_MODEL = "1 by the model"
-_NO_CHANCES = "the sample tells no chances"
 _LEAST_LOG, _MOST_LOG = math.log(1.25), math.log(100.0)
 _WIDEST_FIGURES, _WIDEST_FIGURES_NARROW = 0.34, 0.55
 
@@ -72,13 +70,14 @@ def scale_rows(answer: PairAnswer, theme: Theme, width: float) -> tuple[ScaleRow
     what = in_sentence(interaction_label(answer, "probability"))
     if told and is_narrow(theme, width):
         # beside the axis there is no room for its unit
-        what += f", in {UNIT}"
+        what = message("{}, in {}", what, lexicon().points)
     groups = (
-        Group("On the probability scale", what, tuple(
+        Group(message("On the probability scale"), what, tuple(
             Slot(label, (row,)) for label, row in told
-        ) or (Slot(_NO_CHANCES, (None,)),)),
-        Group("On the odds scale", "", (Slot(in_sentence(interaction_label(answer, "odds")),
-                                             (odds,)),)),
+        ) or (Slot(message("the sample tells no chances"), (None,)),)),
+        Group(message("On the odds scale"), "", (
+            Slot(in_sentence(interaction_label(answer, "odds")), (odds,)),
+        )),
     )  # fmt: skip
     limits = _limits(answer)
     rows = ([_triple(row.effect) for _, row in told], [_triple(odds.effect)])
@@ -128,10 +127,13 @@ def ticks_height(theme: Theme, width: float) -> float:
 def _probability_rows(answer: PairAnswer) -> list[tuple[str, EffectRow]]:
     found = answer.interaction
     others = answer.question.others
-    at = "at typical values" if others in ("typical", "observed") else "at the values held"
     if not has_others(answer):
-        at = "at any profile"
-    average = f"averaged over {count(answer.counted)} {answer.subject.outcome.cases}"
+        at = message("at any profile")
+    elif others in ("typical", "observed"):
+        at = message("at typical values")
+    else:
+        at = message("at the values held")
+    average = message("averaged over {} {}", count(answer.counted), answer.subject.outcome.cases)
     return [
         (label, EffectRow("", None, None, None, None, estimate, None))
         for label, estimate in ((at, found.at_profile), (average, found.averaged))
@@ -142,17 +144,17 @@ def _probability_rows(answer: PairAnswer) -> list[tuple[str, EffectRow]]:
 def _texts(rows: Sequence[EffectRow]) -> list[str]:
     known = [row for row in rows if not math.isnan(row.effect.estimate)]
     written = dict(zip(map(id, known), effect_texts(known), strict=True))
-    return [written.get(id(row), NOT_KNOWN) for row in rows] or [""]
+    return [written.get(id(row), wording().not_known) for row in rows] or [""]
 
 
 def _ratio_text(answer: PairAnswer) -> str:
     held = answer.interaction.ratio
     if not answer.interaction.joined:
-        return _BY_THE_MODEL
+        return message("1 by the model")
     if math.isnan(held.estimate) or held.lower is None or held.upper is None:
         return ratio(held.estimate)
     if math.isnan(held.lower) or math.isnan(held.upper):
-        return f"{ratio(held.estimate)} (interval {NOT_KNOWN})"
+        return f"{ratio(held.estimate)} {message('(interval not known)')}"
     return f"{ratio(held.estimate)} ({ratio_interval(held.lower, held.upper)})"
 
 
@@ -160,8 +162,8 @@ def _heading(answer: PairAnswer) -> str:
     found = answer.interaction
     both: Sequence[Estimate | None] = (found.at_profile, found.averaged, found.ratio)
     if all(each is None or each.lower is None for each in both):
-        return "estimate"
-    return f"estimate ({confidence(answer.question.level)} interval)"
+        return message("estimate")
+    return message("estimate ({}% interval)", level_figures(answer.question.level))
 
 
 def _triple(held: Estimate) -> tuple[float, float, float]:

@@ -34,10 +34,11 @@ from plainodds.drawings.pair_contours import (
     levels_of,
     sign_lines,
 )
-from plainodds.drawings.pair_words import SIGN_TURNS, surface_title
+from plainodds.drawings.pair_words import sign_turns, surface_title
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import bare, label_ticks, round_ticks
 from plainodds.phrases.labels import axis_title
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import quantity, simple_fraction
 
 __all__ = ["MapPanel", "compared_values", "tints"]
@@ -189,7 +190,7 @@ class MapPanel:
         sign = [(line - origin) * unit for line in sign_lines(surface)]
         lines = [[(line - origin) * unit for line in own] for own in found.lines]
         # the longest name first: it is the hardest to place
-        named: list[tuple[tuple[str, ...], list[Floats]]] = [(SIGN_TURNS, sign)] if sign else []
+        named: list[tuple[tuple[str, ...], list[Floats]]] = [(sign_turns(), sign)] if sign else []
         named += [((name,), own) for name, own in zip(told, lines, strict=True)]
         for text in self.labels.values():
             text.set_visible(False)
@@ -217,7 +218,7 @@ class MapPanel:
         if name not in self.labels:
             self.labels[name] = letter(
                 self.axes, theme, self._points, size=theme.small, across="center",
-                colour=theme.colours[4] if name in SIGN_TURNS else theme.ink,
+                colour=theme.colours[4] if name in sign_turns() else theme.ink,
                 weight=_weight(name),
             )  # fmt: skip
         text = self.labels[name]
@@ -243,7 +244,7 @@ class MapPanel:
         starts = np.arange(-height, width, step)
         share = np.linspace(0.0, 1.0, 60)[:, None] * [height, height]
         diagonals = [share + np.array([start, 0.0]) for start in starts]
-        words = wrapped(f"no {answer.subject.outcome.cases} here", 0.5 * width, theme,
+        words = wrapped(message("no {} here", answer.subject.outcome.cases), 0.5 * width, theme,
                         theme.small, 1)  # fmt: skip
         size = text_width(words, theme, theme.small) + 0.6 * em, 1.5 * theme.small
         box = _free_corner(held, size, width, height, 0.4 * em)
@@ -254,7 +255,7 @@ class MapPanel:
 
 
 def _weight(name: str) -> Weight:
-    return "bold" if name in SIGN_TURNS else "normal"
+    return "bold" if name in sign_turns() else "normal"
 
 
 def _frame_boxes(corners: Sequence[Floats], em: float) -> list[Box]:

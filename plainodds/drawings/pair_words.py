@@ -6,39 +6,52 @@ from plainodds.answers.pair import PairAnswer
 from plainodds.answers.stretches import Stretch
 from plainodds.drawings.among import averaged_over, held_at
 from plainodds.phrases.labels import chance_of, odds_of_event, scale_title, value_label
-from plainodds.phrases.numbers import confidence
-from plainodds.phrases.pair_labels import left_out, pair_noun, share_label
+from plainodds.phrases.lexicon import message
+from plainodds.phrases.numbers import level_figures
+from plainodds.phrases.pair_labels import is_averaged, left_out, share_label
 from plainodds.phrases.units import per_unit
 
 __all__ = [
-    "NO_EFFECT",
-    "SIGN_TURNS",
     "effect_subtitle",
+    "no_effect",
     "pair_notes",
+    "sign_turns",
     "stretch_names",
     "surface_title",
     "turn_name",
 ]
 
-NO_EFFECT = "no\neffect"
-SIGN_TURNS = ("interaction\nchanges sign", "sign changes")
-"""Beside the line on which the interaction changes its sign, the longest first."""
+_SIGNS = {"above": "+", "below": "−", "open": "±"}
 
-_TOLD = {"above": ("higher", "+"), "below": ("lower", "−"), "open": ("left open", "±")}
+
+def no_effect() -> str:
+    """Beside the line of no effect."""
+    return message("no\neffect")
+
+
+def sign_turns() -> tuple[str, str]:
+    """Beside the line on which the interaction changes its sign, the longest first."""
+    return message("interaction\nchanges sign"), message("sign changes")
 
 
 def stretch_names(answer: PairAnswer, stretch: Stretch) -> tuple[str, ...]:
     """What a stretch is called, the longest name first, the last one a sign."""
-    told, sign = _TOLD[stretch.sign]
+    told, sign = _told(stretch), _SIGNS[stretch.sign]
     share = share_label(answer, stretch.share)
     return (f"{told}: {share}", told, sign) if share else (told, sign)
+
+
+def _told(stretch: Stretch) -> str:
+    if stretch.sign == "open":
+        return message("left open")
+    return message("higher") if stretch.sign == "above" else message("lower")
 
 
 def turn_name(answer: PairAnswer, at: float) -> str:
     """Where an effect turns from growing to shrinking or back: "turns at 47 m"."""
     facts = answer.subject.predictor(answer.question.b)
     rounded = float(f"{at:.3g}")
-    return f"turns at {value_label(facts, rounded)}"
+    return message("turns at {}", value_label(facts, rounded))
 
 
 def surface_title(answer: PairAnswer) -> str:
@@ -65,44 +78,59 @@ def pair_notes(answer: PairAnswer, cut: bool, leaves: bool) -> list[str]:
     loose = not all(answer.effect.supported)
     is_line = answer.subject.predictor(answer.question.b).is_number
     if answer.surface is not None:
-        notes.append(f"Hatched: no {cases} near.")
+        notes.append(message("Hatched: no {} near.", cases))
         if not answer.sloped:
-            notes.append("Frame: the combinations compared.")
+            notes.append(message("Frame: the combinations compared."))
     elif answer.lines is not None:
         along = answer.lines.question.predictor
         loose = loose or not all(all(line.supported) for line in answer.lines.lines)
         if answer.subject.predictor(along).is_number:
             is_line = True
-            notes.append(f"Beneath the lines: where the {cases} are.")
+            notes.append(message("Beneath the lines: where the {} are.", cases))
     notes += left_out(answer)
     if loose:
-        what = "Broken line" if is_line else "Hollow point"
-        # a map has a broken line of its own, which is named
-        of = " of the effect" if answer.surface is not None else ""
-        notes.append(f"{what}{of}: few {cases} or none there.")
+        notes.append(_loose_note(cases, is_line, answer.surface is not None))
     if leaves:
-        notes.append("Arrow: it goes on beyond the axis.")
+        notes.append(message("Arrow: it goes on beyond the axis."))
     notes.append(_profile_note(answer))
     return [note for note in notes if note]
+
+
+def _loose_note(cases: str, is_line: bool, of_map: bool) -> str:
+    """Say what is broken or hollow; a map has a broken line of its own, which is named."""
+    if is_line:
+        if of_map:
+            return message("Broken line of the effect: few {} or none there.", cases)
+        return message("Broken line: few {} or none there.", cases)
+    if of_map:
+        return message("Hollow point of the effect: few {} or none there.", cases)
+    return message("Hollow point: few {} or none there.", cases)
 
 
 def effect_subtitle(answer: PairAnswer) -> str:
     """What the axis of an effect is in; the event stands in the picture's heading."""
     question = answer.question
     if question.scale == "odds":
-        return "Odds ratio"
-    per = ""
+        return message("Odds ratio")
+    averaged = is_averaged(answer)
     if question.a in answer.sloped:
-        per = f" per {per_unit(answer.subject.predictor(question.a).unit)} more"
-    return f"Change of the {pair_noun(answer)} (percentage points{per})"
+        unit = per_unit(answer.subject.predictor(question.a).unit)
+        if averaged:
+            return message("Change of the average chance (percentage points per {} more)", unit)
+        return message("Change of the chance (percentage points per {} more)", unit)
+    if averaged:
+        return message("Change of the average chance (percentage points)")
+    return message("Change of the chance (percentage points)")
 
 
 def _interval_note(answer: PairAnswer, cut: bool) -> str:
     """Say what the intervals are, or why there are none."""
     if answer.effect.lower is None:
-        return answer.subject.no_interval or "No intervals can be given."
-    beyond = ", cut off where they leave the axis" if cut else ""
-    return f"Bands and lines: {confidence(answer.question.level)} intervals{beyond}."
+        return answer.subject.no_interval or message("No intervals can be given.")
+    level = level_figures(answer.question.level)
+    if cut:
+        return message("Bands and lines: {}% intervals, cut off where they leave the axis.", level)
+    return message("Bands and lines: {}% intervals.", level)
 
 
 def _profile_note(answer: PairAnswer) -> str:

@@ -18,6 +18,7 @@ from plainodds.drawings.png import png_of
 from plainodds.drawings.ruler import RulerDrawing
 from plainodds.drawings.stamps import ScreenFigure
 from plainodds.drawings.theme import Theme, theme_of
+from plainodds.phrases.languages import spoken_now
 
 __all__ = ["Picture"]
 
@@ -76,6 +77,7 @@ class Picture:
             raise ValueError("The picture is empty: show an answer first.")
         return self._figure
 
+    @spoken_now()
     def show(self, answer: Answer) -> None:
         """Show an answer: move the artists where the structure is the same, else build anew.
 

@@ -23,7 +23,7 @@ from plainodds.drawings.ruler_figures import (
     notes,
     points_of,
 )
-from plainodds.drawings.ruler_parts import LANES, Lane, Move, Pointer, inside
+from plainodds.drawings.ruler_parts import Lane, Move, Pointer, inside, lane_names
 from plainodds.drawings.ruler_scales import (
     ScaleTicks,
     chance_scale,
@@ -33,11 +33,11 @@ from plainodds.drawings.ruler_scales import (
 )
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import bare
+from plainodds.phrases.lexicon import message
 
 __all__ = ["RulerDrawing"]
 
 _SCALES: tuple[Callable[..., ScaleTicks], ...] = (chance_scale, odds_scale, linear_predictor_scale)
-_NAMES = ("this profile", "compared with")
 _LANE = 2.75  # height of a lane, in letters
 _HEADLINE = 1.2  # size of the headline, in letters
 _NARROW = 40.0  # letters
@@ -76,7 +76,7 @@ class RulerDrawing:
         self.lanes = [Lane(axes, theme, place) for place in range(3)]
         self._left = 0.9 * theme.font_size + max(
             text_width(name, theme, lane.size, "bold")
-            for name, lane in zip(LANES, self.lanes, strict=True)
+            for name, lane in zip(lane_names(), self.lanes, strict=True)
         )
         self._add_body()
         above = blended_transform_factory(axes.transData, corner(axes, 0, 1))
@@ -160,9 +160,10 @@ class RulerDrawing:
         theme, em = self._theme, self._theme.font_size
         length, _ = self.room.plot_size()
         margins = self.room.margins
-        sizes = [text_width(name, theme, theme.small) + em for name in _NAMES]
+        names = message("this profile"), message("compared with")
+        sizes = [text_width(name, theme, theme.small) + em for name in names]
         middles = apart(wanted, sizes, -margins.left, length + margins.right)
-        for pointer, name, middle in zip(self.pointers, _NAMES, middles, strict=True):
+        for pointer, name, middle in zip(self.pointers, names, middles, strict=True):
             pointer.name.set_text(name)
             pointer.name.set_position((lower + middle / per_unit, 1.5 * em))
 

@@ -15,10 +15,11 @@ from plainodds.drawings.geometry import corner
 from plainodds.drawings.lettering import letter, line_height, text_width
 from plainodds.drawings.theme import Theme
 from plainodds.phrases.labels import chance_of, in_sentence
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import (
     chance,
-    confidence,
     frequency,
+    level_figures,
     ratio,
     ratio_interval,
     signed,
@@ -40,21 +41,22 @@ def headline(answer: ProfileAnswer) -> str:
     """The chance of the profile itself, the figures first: an event may take many words."""
     held = answer.point.probability.estimate
     event = in_sentence(chance_of(answer.subject.outcome))
-    return f"{chance(held)}, or {frequency(held)}: {event}"
+    return message("{}, or {}: {}", chance(held), frequency(held), event)
 
 
 def notes(answer: ProfileAnswer) -> list[str]:
     """What the bands are, or why there are none, and what a broken pointer means."""
     cases = answer.subject.outcome.cases
     if answer.point.linear_predictor.lower is None:
-        told = [answer.subject.no_interval or "No intervals can be given."]
+        told = [answer.subject.no_interval or message("No intervals can be given.")]
     else:
-        told = [f"Band and figures in brackets: {confidence(answer.question.level)} interval."]
+        level = level_figures(answer.question.level)
+        told = [message("Band and figures in brackets: {}% interval.", level)]
     verdicts = {point.familiarity.verdict for point in points_of(answer)}
     if "beyond" in verdicts:
-        told.append("Broken pointer: beyond the data.")
+        told.append(message("Broken pointer: beyond the data."))
     elif "rare" in verdicts:
-        told.append(f"Broken pointer: few {cases} or none are like it.")
+        told.append(message("Broken pointer: few {} or none are like it.", cases))
     return told
 
 
@@ -169,7 +171,8 @@ class FiguresBeneath:
         x, y = -self._left, -0.7 * em - 0.5 * step
         for own, point in enumerate(points):
             told = _figures(point)
-            for lane, text in enumerate((told[0], f"odds {told[1]}", f"log odds {told[2]}")):
+            named = told[0], message("odds {}", told[1]), message("log odds {}", told[2])
+            for lane, text in enumerate(named):
                 self.texts[own][lane].set_text(text)
                 self.texts[own][lane].set_position((x + (1.1 * em if self.marks else 0.0), y))
                 if self.marks and lane == 0:

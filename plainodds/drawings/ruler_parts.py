@@ -19,12 +19,15 @@ from plainodds.drawings.geometry import corner
 from plainodds.drawings.lettering import letter, text_width
 from plainodds.drawings.ruler_scales import ScaleTicks
 from plainodds.drawings.theme import Theme
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import ratio
 
-__all__ = ["LANES", "Lane", "Move", "Pointer", "inside"]
+__all__ = ["Lane", "Move", "Pointer", "inside", "lane_names"]
 
-LANES = ("Chance", "Odds", "Log odds η")
-"""The scales from top to bottom: what everybody understands comes first."""
+
+def lane_names() -> tuple[str, str, str]:
+    """The scales from top to bottom: what everybody understands comes first."""
+    return message("Chance"), message("Odds"), message("Log odds η")
 
 
 def inside(number: float, lower: float, upper: float) -> float:
@@ -45,7 +48,7 @@ class Lane:
             axes, theme, blended_transform_factory(corner(axes, 0, 0), axes.transData),
             size=self.size, weight="bold" if first else "normal",
         )  # fmt: skip
-        self.name.set_text(LANES[place])
+        self.name.set_text(lane_names()[place])
         style: dict[str, Any] = {"linewidths": 1.2 * theme.hairline, "zorder": 2}
         self.ticks = LineCollection([], colors=theme.rule, **style)
         self.edge = LineCollection([], colors=theme.rule, **style)
@@ -169,5 +172,5 @@ class Move:
         self.line.set_data([start, tip] if far else [], [y, y] if far else [])
         self.head.set_data([tip] if far else [], [y] if far else [])
         self.head.set_marker(">" if distance > 0 else "<")
-        self.words.set_text(f"odds × {ratio(odds_ratio.estimate)}")
+        self.words.set_text(message("odds × {}", ratio(odds_ratio.estimate)))
         self.words.set_position(((start + end) / 2, y + 0.85 * em))

@@ -19,6 +19,7 @@ from plainodds.drawings.drawing import smaller_themes
 from plainodds.drawings.geometry import POINTS_PER_INCH
 from plainodds.drawings.letters import refuse_missing_letters
 from plainodds.drawings.theme import Theme, theme_of
+from plainodds.phrases.languages import spoken_now
 
 __all__ = ["Size", "save"]
 
@@ -37,6 +38,7 @@ _LEAST, _MOST = 20.0, 2000.0
 _MOST_PIXELS = 6000
 
 
+@spoken_now()
 def save(
     answer: Answer,
     path: str | os.PathLike[str],

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from plainodds.answers.curve import CurveAnswer, Others
 from plainodds.model.predictors import Subject
+from plainodds.phrases.languages import in_language
 from plainodds.phrases.parts import case_words, profile_words, rows_words
 from plainodds.phrases.units import tidy
 from plainodds.values import Pairs
@@ -11,6 +12,7 @@ from plainodds.values import Pairs
 __all__ = ["held_case", "held_words", "kept_words", "others_words", "stated_and_typical"]
 
 
+@in_language
 def others_words(answer: CurveAnswer, *, at_most: int = 8) -> list[str]:
     """Say what the other predictors do; empty where the model has no others."""
     subject, question = answer.subject, answer.question

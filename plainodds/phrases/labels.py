@@ -7,16 +7,17 @@ shows a label does that.
 
 from __future__ import annotations
 
-from plainodds.answers.curve import CurveAnswer, Scale
+from plainodds.answers.curve import CurveAnswer
 from plainodds.answers.effects import EffectRow, EffectsAnswer
 from plainodds.answers.odds import OddsRow
 from plainodds.model.predictors import OutcomeFacts, PredictorFacts, Subject
-from plainodds.phrases.lexicon import lexicon
+from plainodds.phrases.lexicon import lexicon, message
 from plainodds.phrases.numbers import quantity, wording
 from plainodds.phrases.units import one_line, per_unit, step, tidy, with_unit
 from plainodds.values import Pairs, Scalar
 
 __all__ = [
+    "average_chance_of",
     "axis_title",
     "chance_of",
     "change_label",
@@ -43,12 +44,6 @@ __all__ = [
 
 # what a yes/no is called whose levels have no labels of their own
 _YES_NO = ("no", "yes")
-_STARTS: dict[Scale, str] = {
-    "probability": "Chance of",
-    "odds": "Odds of",
-    "linear_predictor": "Log odds of",
-    "slope": "Chance of",
-}
 
 
 def sentence_case(text: str) -> str:
@@ -229,12 +224,17 @@ def listed(items: list[str]) -> str:
 
 def chance_of(outcome: OutcomeFacts) -> str:
     """What the chance is a chance of: "Chance of burst this winter"."""
-    return f"Chance of {tidy(outcome.event)}"
+    return message("Chance of {}", tidy(outcome.event))
+
+
+def average_chance_of(outcome: OutcomeFacts) -> str:
+    """What an average chance is one of: "Average chance of burst this winter"."""
+    return message("Average chance of {}", tidy(outcome.event))
 
 
 def odds_of_event(outcome: OutcomeFacts) -> str:
     """What the odds are odds of: "Odds of burst this winter"."""
-    return f"Odds of {tidy(outcome.event)}"
+    return message("Odds of {}", tidy(outcome.event))
 
 
 def scale_title(answer: CurveAnswer) -> str:
@@ -247,16 +247,22 @@ def scale_title(answer: CurveAnswer) -> str:
         answer's.
     """
     scale, outcome = answer.question.scale, answer.subject.outcome
-    title = f"{_STARTS[scale]} {tidy(outcome.event)}"
-    if answer.question.others == "observed":
-        average = f"average chance of {tidy(outcome.event)}"
-        # what is averaged are chances; their odds and log odds are read off the average
-        matching = {"odds": "Odds matching the", "linear_predictor": "Log odds matching the"}
-        title = f"{matching[scale]} {average}" if scale in matching else sentence_case(average)
+    averaged, event = answer.question.others == "observed", tidy(outcome.event)
+    # what is averaged are chances; their odds and log odds are read off the average
+    if scale == "odds":
+        title = odds_of_event(outcome)
+        if averaged:
+            title = message("Odds matching the average chance of {}", event)
+    elif scale == "linear_predictor":
+        title = message("Log odds of {}", event)
+        if averaged:
+            title = message("Log odds matching the average chance of {}", event)
+    else:
+        title = average_chance_of(outcome) if averaged else chance_of(outcome)
     if scale != "slope":
         return title
     facts = answer.subject.predictor(answer.question.predictor)
-    return f"{title}: percentage points per {per_unit(facts.unit)} more"
+    return message("{}: percentage points per {} more", title, per_unit(facts.unit))
 
 
 def effects_title(answer: EffectsAnswer) -> str:
@@ -267,6 +273,7 @@ def effects_title(answer: EffectsAnswer) -> str:
     str
         As in "Change of the average chance of burst this winter (percentage points)".
     """
-    average = "average " if answer.question.others == "observed" else ""
     event = tidy(answer.subject.outcome.event)
-    return f"Change of the {average}chance of {event} (percentage points)"
+    if answer.question.others == "observed":
+        return message("Change of the average chance of {} (percentage points)", event)
+    return message("Change of the chance of {} (percentage points)", event)

@@ -7,11 +7,11 @@ from contextlib import contextmanager
 from contextvars import ContextVar
 from dataclasses import dataclass, field
 from functools import singledispatch, wraps
-from typing import Any, Protocol, TypeVar, cast
+from typing import Any, ParamSpec, Protocol, TypeVar, cast
 
 from plainodds.answers.questions import Answer
 from plainodds.errors import QuestionRefused
-from plainodds.phrases.lexicon import ENGLISH_LEXICON, Lexicon, speaking
+from plainodds.phrases.lexicon import ENGLISH_LEXICON, Lexicon, lexicon, speaking
 from plainodds.phrases.numbers import ENGLISH_WORDING, Marks, Wording, worded
 
 __all__ = [
@@ -20,11 +20,14 @@ __all__ = [
     "Ways",
     "add_language",
     "by_language",
+    "in_language",
     "language_now",
     "language_of",
+    "spoken_now",
     "telling_in",
 ]
 
+P = ParamSpec("P")
 F = TypeVar("F", bound=Callable[..., Any])
 T = TypeVar("T")
 T_co = TypeVar("T_co", covariant=True)
@@ -82,6 +85,10 @@ class Language:
         Small phrases.
     words, caption, methods_note, alternative : Ways
         What is registered for each kind of answer.
+    finding_words : Ways
+        What is registered for a finding, which pictures and tables tell by itself.
+    fitted_words, rest_words, others_words, model_cautions, needed_technical : Ways
+        What printed tables need in another structure; registered for the kind of thing told of.
     """
 
     code: str
@@ -93,6 +100,12 @@ class Language:
     caption: Ways = field(default_factory=Ways)
     methods_note: Ways = field(default_factory=Ways)
     alternative: Ways = field(default_factory=Ways)
+    finding_words: Ways = field(default_factory=Ways)
+    fitted_words: Ways = field(default_factory=Ways)
+    rest_words: Ways = field(default_factory=Ways)
+    others_words: Ways = field(default_factory=Ways)
+    model_cautions: Ways = field(default_factory=Ways)
+    needed_technical: Ways = field(default_factory=Ways)
 
 
 _ENGLISH = Language("en", "English", Marks(".", ","), ENGLISH_WORDING, ENGLISH_LEXICON)
@@ -122,6 +135,14 @@ def language_of(code: str) -> Language:
 def language_now() -> Language:
     """The language in which answers are told now."""
     return _CURRENT.get()
+
+
+@contextmanager
+def spoken_now() -> Iterator[None]:
+    """Speak the language of now in labels and fixed texts too; serves as decorator as well."""
+    language = _CURRENT.get()
+    with worded(language.wording), speaking(language.lexicon):
+        yield
 
 
 @contextmanager
@@ -162,3 +183,22 @@ def by_language(english: Callable[..., T]) -> Telling[T]:
 
     vars(tell).update(register=register, register_for_all=register_for_all)
     return cast("Telling[T]", tell)
+
+
+def in_language(english: Callable[P, T]) -> Callable[P, T]:
+    """Let a part of other texts be told in the language spoken now, where that has its own way.
+
+    What a language can say by the same sentence with other words is a `message` instead.
+    """
+    name = english.__name__
+
+    @wraps(english)
+    def tell(*args: P.args, **kwargs: P.kwargs) -> T:
+        language = _CURRENT.get()
+        way = getattr(language, name).of(args[0])
+        # where a language is asked for but not spoken, all around is English
+        if way is None or lexicon() is not language.lexicon:
+            return english(*args, **kwargs)
+        return cast(T, way(*args, **kwargs))
+
+    return tell

@@ -2,12 +2,12 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator
+from collections.abc import Iterator, Mapping
 from contextlib import contextmanager
 from contextvars import ContextVar
-from dataclasses import dataclass
+from dataclasses import dataclass, field
 
-__all__ = ["ENGLISH_LEXICON", "Lexicon", "lexicon", "speaking"]
+__all__ = ["ENGLISH_LEXICON", "Lexicon", "lexicon", "message", "speaking"]
 
 
 @dataclass(frozen=True)
@@ -50,6 +50,9 @@ class Lexicon:
         Before a shift.
     unseen, once_shifted : str
         Why a change leaves the data.
+    messages : mapping of str to str
+        The fixed texts of pictures, printed tables and dossiers, by their English; empty in
+        English. What is missing stays English, so that a language can begin without them.
     """
 
     nouns_keep_capitals: bool
@@ -99,6 +102,7 @@ class Lexicon:
     as_it_is: str
     unseen: str
     once_shifted: str
+    messages: Mapping[str, str] = field(default_factory=dict)
 
 
 ENGLISH_LEXICON = Lexicon(
@@ -156,6 +160,26 @@ _CURRENT: ContextVar[Lexicon] = ContextVar("plainodds_lexicon", default=ENGLISH_
 def lexicon() -> Lexicon:
     """The small phrases of the language that is spoken now."""
     return _CURRENT.get()
+
+
+def message(text: str, /, *parts: object, **named: object) -> str:
+    """A fixed text of pictures, printed tables and dossiers, in the language spoken now.
+
+    The English text stands where it is used, and is what another language finds its own by.
+
+    Parameters
+    ----------
+    text : str
+        In English, with the places of its parts as for `str.format`.
+    *parts, **named
+        Put in where the text has their places.
+
+    Examples
+    --------
+    >>> message("Band: {} intervals.", "95%")
+    'Band: 95% intervals.'
+    """
+    return _CURRENT.get().messages.get(text, text).format(*parts, **named)
 
 
 @contextmanager

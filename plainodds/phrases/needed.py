@@ -6,6 +6,7 @@ import math
 
 from plainodds.answers.comparing import NumberNeeded
 from plainodds.model.predictors import Subject
+from plainodds.phrases.languages import in_language
 from plainodds.phrases.numbers import confidence, needed, wording
 from plainodds.phrases.units import tidy
 
@@ -44,6 +45,7 @@ def needed_words(subject: Subject, number: NumberNeeded, level: float) -> list[s
     ]
 
 
+@in_language
 def needed_technical(number: NumberNeeded, level: float) -> list[str]:
     """The number needed with its interval's pieces; empty where it is not known."""
     if math.isnan(number.estimate):

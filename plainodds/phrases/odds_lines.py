@@ -21,11 +21,10 @@ from plainodds.phrases.labels import (
     predictor_name,
     value_label,
 )
+from plainodds.phrases.lexicon import message
 from plainodds.values import Pairs, Scalar
 
 __all__ = ["Counts", "OddsLine", "odds_lines"]
-
-_ANYWHERE = "at every value"
 
 
 @dataclass(frozen=True)
@@ -180,14 +179,14 @@ def _by(slots: Sequence[tuple[OddsRow, ...]], shared: Pairs) -> str:
 
 def _rest(subject: Subject, change: str, shared: Pairs, by: str) -> str:
     """What all lines of a predictor share, as in "per 10 years more, by material"."""
-    told = f"by {predictor_name(subject.predictor(by))}" if by else ""
+    told = message("by {}", predictor_name(subject.predictor(by))) if by else ""
     return ", ".join(filter(None, (change, given_clause(subject, shared), told)))
 
 
 def _own_given(subject: Subject, row: OddsRow, shared: Pairs, by: str) -> str:
     own = tuple(pair for pair in row.given if pair not in shared)
     if not own:
-        return _ANYWHERE
+        return message("at every value")
     return value_label(subject.predictor(by), own[0][1]) if by else given_label(subject, own)
 
 

@@ -14,13 +14,17 @@ from plainodds.answers.pair import PairAnswer
 from plainodds.answers.stretches import Stretch
 from plainodds.model.predictors import PredictorFacts, Subject
 from plainodds.phrases.labels import (
+    average_chance_of,
+    chance_of,
     from_to,
+    odds_of_event,
     predictor_name,
     sentence_case,
     step_label,
     value_label,
     values_range,
 )
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.moves import moves_label, moves_words
 from plainodds.phrases.numbers import chance, count, quantity
 from plainodds.phrases.units import per_unit, tidy
@@ -68,8 +72,11 @@ def is_averaged(answer: PairAnswer) -> bool:
 def left_out(answer: PairAnswer) -> list[str]:
     """How many levels of a category with very many are told; empty where all are."""
     return [
-        f"Of {count(known)} values of {predictor_name(facts)}, those compared and the most "
-        "frequent."
+        message(
+            "Of {} values of {}, those compared and the most frequent.",
+            count(known),
+            predictor_name(facts),
+        )
         for facts, known in levels_left_out(answer)
     ]
 
@@ -106,9 +113,12 @@ def pair_title(answer: PairAnswer) -> str:
         As in "Chance of burst this winter: pipe age and material together".
     """
     subject, question = answer.subject, answer.question
-    of = "odds" if question.scale == "odds" else pair_noun(answer)
+    if question.scale == "odds":
+        of = odds_of_event(subject.outcome)
+    else:
+        of = (average_chance_of if is_averaged(answer) else chance_of)(subject.outcome)
     a, b = (predictor_name(subject.predictor(name)) for name in (question.a, question.b))
-    return f"{sentence_case(of)} of {tidy(subject.outcome.event)}: {a} and {b} together"
+    return message("{}: {} and {} together", of, a, b)
 
 
 def at_value(subject: Subject, name: str, value: Scalar) -> str:
@@ -119,7 +129,7 @@ def at_value(subject: Subject, name: str, value: Scalar) -> str:
 
 def per_additional(facts: PredictorFacts) -> str:
     """What a slope is stated for: "per additional year of pipe age"."""
-    return f"per additional {per_unit(facts.unit)} of {predictor_name(facts)}"
+    return message("per additional {} of {}", per_unit(facts.unit), predictor_name(facts))
 
 
 def change_words(answer: PairAnswer) -> str:
@@ -159,7 +169,8 @@ def odds_opening(answer: PairAnswer) -> str:
     start, end = answer.a_change
     if not facts.linear:
         return f"with {predictor_name(facts)} {from_to(facts, start, end)}"
-    return f"{step_label(facts, float(end) - float(start))} of {predictor_name(facts)}"
+    step = step_label(facts, float(end) - float(start))
+    return message("{} of {}", step, predictor_name(facts))
 
 
 def effect_axis_title(answer: PairAnswer) -> str:
@@ -173,7 +184,9 @@ def effect_axis_title(answer: PairAnswer) -> str:
     """
     event, question = tidy(answer.subject.outcome.event), answer.question
     if question.scale == "odds":
-        return f"Odds ratio of {event}{', of averages' if is_averaged(answer) else ''}"
+        if is_averaged(answer):
+            return message("Odds ratio of {}, of averages", event)
+        return message("Odds ratio of {}", event)
     per = ""
     if question.a in answer.sloped:
         unit = answer.subject.predictor(question.a).unit
@@ -192,13 +205,15 @@ def interaction_label(answer: PairAnswer, scale: Literal["probability", "odds"])
         additional year of pipe age" and "Change of the slope per additional metre".
     """
     if scale == "odds":
-        return "Ratio of odds ratios"
+        return message("Ratio of odds ratios")
     question = answer.question
     a_sloped, b_sloped = question.a in answer.sloped, question.b in answer.sloped
     if not b_sloped:
-        return "Difference of slopes" if a_sloped else "Difference of differences"
-    what = "slope" if a_sloped else "difference"
-    return f"Change of the {what} {per_additional(answer.subject.predictor(question.b))}"
+        return message("Difference of slopes") if a_sloped else message("Difference of differences")
+    per = per_additional(answer.subject.predictor(question.b))
+    if a_sloped:
+        return message("Change of the slope {}", per)
+    return message("Change of the difference {}", per)
 
 
 def stretch_span(answer: PairAnswer, stretch: Stretch) -> str:
@@ -237,8 +252,10 @@ def share_label(answer: PairAnswer, share: float) -> str:
     if math.isnan(share):
         return ""
     if share <= 0:
-        return f"no {cases}"
-    return f"all {cases}" if share >= 1 else f"{chance(share)} of the {cases}"
+        return message("no {}", cases)
+    if share >= 1:
+        return message("all {}", cases)
+    return message("{} of the {}", chance(share), cases)
 
 
 def stretch_label(answer: PairAnswer, stretch: Stretch) -> str:

@@ -8,6 +8,7 @@ from collections.abc import Callable, Iterable
 from plainodds.answers.estimate import Estimate
 from plainodds.model.predictors import OutcomeFacts, Subject
 from plainodds.phrases.labels import listed, named_value
+from plainodds.phrases.languages import in_language
 from plainodds.phrases.lexicon import lexicon
 from plainodds.phrases.numbers import (
     cases,
@@ -223,6 +224,7 @@ def odds_ratio_cautions(chances: Iterable[float]) -> tuple[str, ...]:
     )
 
 
+@in_language
 def model_cautions(subject: Subject, *, offset_held: bool = True) -> tuple[str, ...]:
     """What holds for every answer of this fitted model.
 

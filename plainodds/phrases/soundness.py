@@ -8,7 +8,7 @@ from plainodds.phrases.alternative import alternative
 from plainodds.phrases.checks import FindingWords, finding_words
 from plainodds.phrases.checks.discrimination import C_LIMITS
 from plainodds.phrases.checks.headings import concern_label
-from plainodds.phrases.checks.overall import OVERALL_LIMITS
+from plainodds.phrases.checks.overall import overall_limits
 from plainodds.phrases.checks.pictures import picture_words
 from plainodds.phrases.checks.plainly import plain_sentences
 from plainodds.phrases.choices.checks import findings_told, how_many
@@ -78,7 +78,7 @@ def _technical(answer: SoundnessAnswer) -> Words:
         if each.weight:
             told += [said.why, said.next_step]
     reported = {each.topic for each in answer.findings if each.evidence is not None}
-    limits: tuple[str, ...] = OVERALL_LIMITS if "overall" in reported else ()
+    limits: tuple[str, ...] = overall_limits() if "overall" in reported else ()
     limits += (C_LIMITS,) if "discrimination" in reported else ()
     return Words(tuple(told), (*limits, _LOOKED_AT, *_notices(answer)))
 

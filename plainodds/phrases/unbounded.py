@@ -9,13 +9,13 @@ from plainodds.answers.odds import OddsAnswer, OddsRow
 from plainodds.answers.profile import ProfileAnswer
 from plainodds.model.predictors import Subject
 from plainodds.phrases.labels import listed, predictor_name, value_label
+from plainodds.phrases.lexicon import lexicon, message
 from plainodds.phrases.numbers import confidence, count, ratio
 from plainodds.phrases.parts import ratio_with_interval
 from plainodds.phrases.units import tidy
 from plainodds.values import Scalar
 
 __all__ = [
-    "UNBOUNDED_NOTE",
     "has_finite_estimate",
     "odds_ratio_figures",
     "one_outcome",
@@ -23,14 +23,10 @@ __all__ = [
     "profile_unbounded_cautions",
     "ratio_or_none",
     "unbounded_cautions",
+    "unbounded_note",
     "unbounded_told",
     "why_unbounded",
 ]
-
-UNBOUNDED_NOTE = (
-    "No finite value: in these data the outcome of some cases is told without exception, so the "
-    "best odds ratio lies farther off than any number."
-)
 
 
 def has_finite_estimate(row: OddsRow) -> bool:
@@ -49,10 +45,20 @@ def odds_ratio_figures(row: OddsRow) -> tuple[str, str]:
     """
     side, odds = row.log_odds_ratio.estimate, row.odds_ratio
     if side == math.inf:
-        return "no finite value", "" if odds.lower is None else f"{ratio(odds.lower)} or more"
+        told = "" if odds.lower is None else lexicon().or_more.format(ratio(odds.lower))
+        return message("no finite value"), told
     if side == -math.inf:
-        return "no value above 0", "" if odds.upper is None else f"{ratio(odds.upper)} or less"
+        told = "" if odds.upper is None else lexicon().or_less.format(ratio(odds.upper))
+        return message("no value above 0"), told
     return ratio(odds.estimate), ""
+
+
+def unbounded_note() -> str:
+    """What such a figure means, beneath a picture."""
+    return message(
+        "No finite value: in these data the outcome of some cases is told without exception, so "
+        "the best odds ratio lies farther off than any number."
+    )
 
 
 def ratio_or_none(odds: Estimate, level: float) -> str:

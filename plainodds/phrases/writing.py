@@ -17,10 +17,12 @@ def writing(
 ) -> AbstractContextManager[None]:
     """Write in another language, or with other marks in numbers, for as long as a block lasts.
 
-    `words`, `caption`, `methods_note` and `alternative` follow both. Report tables and the
-    texts of drawings follow the marks, their words stay English. What `table` and `code`
-    give never changes. Labels, units and levels are the analyst's own and are not translated;
-    notices about the fit are handed on in English, and are introduced as such.
+    `words`, `caption`, `methods_note`, `alternative`, pictures, report tables and dossiers
+    follow both; a report table keeps the language in which it was made, whenever it is written.
+    Views follow both in what they tell and draw; their controls and their tables keep their
+    English words. What `table` and `code` give never changes. Labels, units and levels are the
+    analyst's own and are not translated; notices about the fit are handed on in English, and
+    are introduced as such.
 
     Nothing global changes: other threads and other tasks write as before. A view that is made
     within the block keeps its language and its marks for as long as it lives.

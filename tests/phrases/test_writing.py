@@ -245,7 +245,7 @@ def test_code_and_tables_never_change(answer):
 
 def test_report_tables_follow_the_marks_and_keep_their_words(answer):
     plain = po.report_table(answer).markdown()
-    with po.writing("de"):
+    with po.writing(decimal=","):
         told = po.report_table(answer).markdown()
     assert told != plain
     assert back(told) == plain

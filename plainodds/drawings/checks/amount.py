@@ -9,10 +9,11 @@ from plainodds.drawings.checks.plate import Found, Plate
 from plainodds.drawings.geometry import Margins
 from plainodds.drawings.lettering import line_height, text_width, wrapped
 from plainodds.drawings.theme import Theme
-from plainodds.phrases.checks.parts import cases, coefficients
+from plainodds.phrases.checks.headings import by_event
+from plainodds.phrases.checks.parts import cases, cases_called, coefficients
 from plainodds.phrases.labels import sentence_case
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import count, quantity, ratio
-from plainodds.phrases.units import tidy
 
 __all__ = ["AMOUNT"]
 
@@ -33,17 +34,16 @@ def _gauge(found: Found, narrow: bool) -> Gauge:
     if narrow or len(kept) > 9:
         kept = [tick for tick in kept if tick >= 5 or tick == lower]
         kept = [tick for tick in kept if str(tick)[0] == "1" or tick == 5]
-    outcome = found.subject.outcome
-    kind = (
-        f"{tidy(outcome.cases)} with {tidy(outcome.event)}"
-        if evidence.events <= evidence.others
-        else f"{tidy(outcome.cases)} without {tidy(outcome.event)}"
-    )
+    side = by_event(found.subject)[evidence.events > evidence.others]
+    title = message(
+        "{cases} {side} for each of {coefficients}", cases=cases_called(found.subject), side=side,
+        coefficients=coefficients(evidence.parameters),
+    )  # fmt: skip
     return Gauge(
         value=each, figure=ratio(each), lower=lower, upper=upper, marks=_MARKS,
-        zones=("too few", "few", "no longer few"),
+        zones=(message("too few"), message("few"), message("no longer few")),
         ticks=tuple((float(tick), _tick(tick)) for tick in kept),
-        title=f"{sentence_case(kind)} for each of {coefficients(evidence.parameters)}",
+        title=sentence_case(title),
     )  # fmt: skip
 
 
@@ -52,10 +52,11 @@ def _narrow(theme: Theme, width: float) -> bool:
 
 
 def _sides(found: Found) -> list[tuple[str, float]]:
-    evidence, event = found.evidence(AmountEvidence), tidy(found.subject.outcome.event)
+    evidence = found.evidence(AmountEvidence)
+    numbers = evidence.events, evidence.others
     return [
-        (f"{cases(found.subject, evidence.events)} with {event}", evidence.events),
-        (f"{cases(found.subject, evidence.others)} without {event}", evidence.others),
+        (f"{cases(found.subject, number)} {side}", number)
+        for number, side in zip(numbers, by_event(found.subject), strict=True)
     ]
 
 
@@ -114,7 +115,11 @@ def _draw_bar(board: Board, found: Found, width: float, top: float) -> None:
 
 
 def _notes(found: Found) -> list[str]:
-    return ["The marks at 5 and 10 are what simulations have found; what they weigh is a custom."]
+    return [
+        message(
+            "The marks at 5 and 10 are what simulations have found; what they weigh is a custom."
+        )
+    ]
 
 
 AMOUNT = Plate("amount", _height, _height, _notes, _paint, across="log")

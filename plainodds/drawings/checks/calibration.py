@@ -19,7 +19,7 @@ from plainodds.drawings.checks.along import (
 )
 from plainodds.drawings.checks.board import Board
 from plainodds.drawings.checks.ends import EndLabel, above_height, draw_above, draw_ends, ends_width
-from plainodds.drawings.checks.observed import cases_each, draw_observed
+from plainodds.drawings.checks.observed import band_note, cases_each, draw_observed
 from plainodds.drawings.checks.plate import Found, Plate
 from plainodds.drawings.checks.tables import draw_table, table_height
 from plainodds.drawings.geometry import Margins
@@ -27,19 +27,21 @@ from plainodds.drawings.lettering import line_height, wrapped
 from plainodds.drawings.odds_rows import is_narrow
 from plainodds.drawings.theme import Theme
 from plainodds.phrases.checks.headings import picture_axes, picture_legend
-from plainodds.phrases.numbers import NOT_KNOWN, confidence, count, quantity, signed
-from plainodds.phrases.units import tidy
+from plainodds.phrases.checks.parts import cases_called
+from plainodds.phrases.lexicon import message
+from plainodds.phrases.numbers import count, quantity, signed, wording
 
 __all__ = ["CALIBRATION"]
 
 _STRIP = 1.6
 _SIDE = 25.0
-_WAYS = {"bootstrap": "bootstrap samples", "cross-validation": "repeats of cross-validation"}
 
 
-def _below(found: Found, theme: Theme, width: float) -> float:
+def _below(found: Found, theme: Theme, width: float, side: float = math.inf) -> float:
     em, (title, _) = theme.font_size, picture_axes(found.finding, found.subject)
-    axis = (1.25 * _STRIP + 0.1) * em + x_axis_height(title, theme, plot_room(width))
+    # the plot is square, so that its title has no more room than its side
+    room = min(plot_room(width), _SIDE * em, side)
+    axis = (1.25 * _STRIP + 0.1) * em + x_axis_height(title, theme, room)
     table = table_height(_optimism(found), theme, width)
     return axis + (table + 0.8 * em if table else 0.0)
 
@@ -75,9 +77,9 @@ def _least(found: Found, theme: Theme, width: float) -> float:
 def _notes(found: Found) -> list[str]:
     evidence = found.evidence(CalibrationEvidence)
     return [
-        f"Band and bars: {confidence(found.level)} intervals.",
+        band_note(found),
         cases_each(evidence.bins, found),
-        f"Beneath: how many {tidy(found.subject.outcome.cases)} have each chance.",
+        message("Beneath: how many {cases} have each chance.", cases=cases_called(found.subject)),
     ]
 
 
@@ -88,17 +90,22 @@ def _optimism(found: Found) -> list[tuple[str, ...]]:
     if held is None:
         return []
     c = math.nan if ranks is None else ranks.c.estimate
+    repeats = count(held.repeats)
+    ways = {
+        "bootstrap": message("{} bootstrap samples", repeats),
+        "cross-validation": message("{} repeats of cross-validation", repeats),
+    }
     return [
-        (f"{count(held.repeats)} {_WAYS[held.way]}", "on its own data", "corrected"),
-        ("Slope (1 is right)", _figure(evidence.slope.estimate), _figure(held.slope)),
-        ("Brier score (0 is best)", _figure(evidence.brier, 3), _figure(held.brier, 3)),
-        ("c (1 is best)", _figure(c), _figure(held.c)),
+        (ways[held.way], message("on its own data"), message("corrected")),
+        (message("Slope (1 is right)"), _figure(evidence.slope.estimate), _figure(held.slope)),
+        (message("Brier score (0 is best)"), _figure(evidence.brier, 3), _figure(held.brier, 3)),
+        (message("c (1 is best)"), _figure(c), _figure(held.c)),
     ]
 
 
 def _figure(number: float, decimals: int = 2) -> str:
     return (
-        NOT_KNOWN
+        wording().not_known
         if math.isnan(number)
         else quantity(round(number, 9))
         if number == round(number)
@@ -110,7 +117,8 @@ def _paint(board: Board, found: Found, width: float, height: float) -> Margins:
     theme, em = board.theme, board.theme.font_size
     evidence = found.evidence(CalibrationEvidence)
     names = _names(found)
-    bottom, top = _below(found, theme, width), _above(found, theme, width)
+    top = _above(found, theme, width)
+    bottom = _below(found, theme, width, height - _below(found, theme, width) - top)
     plot_height = height - bottom - top
     bins = evidence.bins
     axis = chances_axis(

@@ -14,6 +14,7 @@ from plainodds.drawings.theme import Theme
 from plainodds.phrases.checks.headings import picture_axes
 from plainodds.phrases.checks.parts import columns_named
 from plainodds.phrases.labels import predictor_label
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import count, ratio
 
 __all__ = ["COLLINEARITY"]
@@ -32,7 +33,7 @@ def _ordered(found: Found) -> list[tuple[str, float]]:
 def _lanes(found: Found) -> list[Lane]:
     return [
         Lane("", predictor_label(found.subject.predictor(name)),
-             "without an end" if math.isinf(size) else f"× {ratio(size)}", ((size, 0),))
+             message("without an end") if math.isinf(size) else f"× {ratio(size)}", ((size, 0),))
         for name, size in _ordered(found)[:_MOST]
     ]  # fmt: skip
 
@@ -40,14 +41,15 @@ def _lanes(found: Found) -> list[Lane]:
 def _ties(found: Found) -> list[str]:
     """What is tied to what, in words."""
     tied = found.evidence(CollinearityEvidence).tied
-    told = [
-        f"Tied: {columns_named(each.columns)}"
-        + (", exactly." if math.isinf(each.condition_index)
-           else f" (condition index {ratio(each.condition_index)}).")
-        for each in tied[:_MOST_TIES]
-    ]  # fmt: skip
+    told = []
+    for each in tied[:_MOST_TIES]:
+        columns, index = columns_named(each.columns), each.condition_index
+        if math.isinf(index):
+            told.append(message("Tied: {}, exactly.", columns))
+        else:
+            told.append(message("Tied: {} (condition index {}).", columns, ratio(index)))
     left = len(tied) - _MOST_TIES
-    return told + ([f"And {count(left)} more ties."] if left > 0 else [])
+    return told + ([message("And {} more ties.", count(left))] if left > 0 else [])
 
 
 def _ties_height(found: Found, theme: Theme, width: float) -> float:
@@ -67,14 +69,15 @@ def _height(found: Found, theme: Theme, width: float) -> float:
 
 def _notes(found: Found) -> list[str]:
     notes = [
-        "1: as if the predictor were unrelated to the others; 2: as if only 1 row in 4 were "
-        "there to tell it apart; 5: as if only 1 in 25."
+        message(
+            "1: as if the predictor were unrelated to the others; 2: as if only 1 row in 4 were "
+            "there to tell it apart; 5: as if only 1 in 25."
+        )
     ]
     left = len(found.evidence(CollinearityEvidence).inflation) - _MOST
-    return [
-        *notes,
-        *([f"Not shown: {count(left)} more predictors, with less."] if left > 0 else []),
-    ]
+    if left > 0:
+        notes.append(message("Not shown: {} more predictors, with less.", count(left)))
+    return notes
 
 
 def _paint(board: Board, found: Found, width: float, height: float) -> Margins:

@@ -11,7 +11,8 @@ from plainodds.drawings.checks.plate import Found, Plate
 from plainodds.drawings.checks.tables import draw_paragraph, paragraph_height
 from plainodds.drawings.geometry import Margins
 from plainodds.drawings.theme import Theme
-from plainodds.phrases.checks.finding_words import finding_words
+from plainodds.phrases.checks.telling import told_finding
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import quantity, ratio
 
 __all__ = ["CONVERGENCE"]
@@ -23,15 +24,16 @@ _GAP = 1.0
 def _gauge(found: Found) -> Gauge:
     step = found.evidence(ConvergenceEvidence).remaining_step
     return Gauge(
-        value=step, figure="without an end" if math.isinf(step) else ratio(step), lower=1e-4,
-        upper=100.0, marks=_MARKS, zones=("cannot be seen", "can be seen", "changes figures"),
+        value=step, figure=message("without an end") if math.isinf(step) else ratio(step),
+        lower=1e-4, upper=100.0, marks=_MARKS,
+        zones=(message("cannot be seen"), message("can be seen"), message("changes figures")),
         ticks=tuple((tick, quantity(tick)) for tick in (0.001, 0.01, 0.2, 1.0, 10.0)),
-        title="Largest remaining step of a coefficient, in its standard errors",
+        title=message("Largest remaining step of a coefficient, in its standard errors"),
     )  # fmt: skip
 
 
 def _words(found: Found) -> str:
-    return finding_words(found.finding, found.subject, found.level).what
+    return told_finding(found.finding, found.subject, found.level).what
 
 
 def _has_picture(found: Found) -> bool:

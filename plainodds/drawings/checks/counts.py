@@ -13,8 +13,9 @@ from plainodds.drawings.furniture import Key
 from plainodds.drawings.lettering import line_height, wrapped
 from plainodds.drawings.theme import Theme
 from plainodds.model.predictors import Subject
-from plainodds.phrases.checks.parts import amount
+from plainodds.phrases.checks.parts import amount, part_of
 from plainodds.phrases.labels import predictor_label, value_label
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import count
 
 __all__ = ["MOST_LEVELS", "count_rows", "draw_counts", "head_height", "laid_counts"]
@@ -39,10 +40,12 @@ def count_rows(counts: Sequence[LevelCount], subject: Subject) -> list[Row]:
 def _told(held: LevelCount) -> str:
     whole = amount(held.cases)
     if held.events <= _NONE:
-        return f"none of {whole}"
+        return message("none of {cases}", cases=whole)
     if held.events >= held.cases - _NONE:
-        return f"all of {whole}" if held.cases > 1 + _NONE else "the only one"
-    return f"{amount(held.events)} of {whole}"
+        if held.cases > 1 + _NONE:
+            return message("all of {cases}", cases=whole)
+        return message("the only one")
+    return part_of(amount(held.events), whole)
 
 
 def laid_counts(

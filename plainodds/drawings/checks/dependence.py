@@ -11,13 +11,13 @@ from plainodds.drawings.checks.plate import Found, Plate
 from plainodds.drawings.geometry import Margins
 from plainodds.drawings.theme import Theme
 from plainodds.phrases.checks.headings import picture_axes, picture_legend
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import count, ratio
 from plainodds.phrases.units import tidy
 
 __all__ = ["DEPENDENCE"]
 
 _MOST = 12
-_HEADING = "times as large by groups"
 
 
 def _usable(found: Found) -> list[StandardErrorPair]:
@@ -53,7 +53,7 @@ def _frame(found: Found) -> tuple[tuple[str, str], str, str]:
     legend, (title, _) = (
         picture_legend(found.finding, found.subject), picture_axes(found.finding, found.subject)
     )  # fmt: skip
-    return legend, _HEADING, title
+    return legend, message("times as large by groups"), title
 
 
 def _height(found: Found, theme: Theme, width: float) -> float:
@@ -64,16 +64,19 @@ def _notes(found: Found) -> list[str]:
     evidence, notes = found.evidence(DependenceEvidence), []
     if evidence.groups:
         by = tidy(evidence.name)
-        notes.append(
-            f"{count(evidence.rows)} rows in {count(evidence.groups)} groups"
-            f"{f' by {by}' if by and by != 'groups' else ''}, at most {count(evidence.largest)} "
-            "to a group."
-        )
+        rows, groups, largest = map(count, (evidence.rows, evidence.groups, evidence.largest))
+        if by and by != "groups":
+            note = message(
+                "{} rows in {} groups by {}, at most {} to a group.", rows, groups, by, largest
+            )
+        else:
+            note = message("{} rows in {} groups, at most {} to a group.", rows, groups, largest)
+        notes.append(note)
     if evidence.already:
-        notes.append("The fit's own intervals count groups together already.")
+        notes.append(message("The fit's own intervals count groups together already."))
     left = len(_usable(found)) - _MOST
     if left > 0:
-        notes.append(f"Not shown: {count(left)} more coefficients, which differ less.")
+        notes.append(message("Not shown: {} more coefficients, which differ less.", count(left)))
     return notes
 
 

@@ -19,10 +19,11 @@ from plainodds.drawings.geometry import Margins
 from plainodds.drawings.lettering import line_height, text_width, wrapped
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import round_ticks
-from plainodds.phrases.checks.finding_words import finding_words
 from plainodds.phrases.checks.headings import picture_axes, picture_legend
 from plainodds.phrases.checks.parts import amount, cases
+from plainodds.phrases.checks.telling import told_finding
 from plainodds.phrases.labels import sentence_case
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import count
 
 __all__ = ["DISCRIMINATION"]
@@ -32,7 +33,7 @@ _UNLIKE = 3.0
 
 
 def _words(found: Found) -> str:
-    return finding_words(found.finding, found.subject, found.level).what
+    return told_finding(found.finding, found.subject, found.level).what
 
 
 def _above(found: Found, theme: Theme, width: float) -> float:
@@ -57,7 +58,7 @@ def _least(found: Found, theme: Theme, width: float) -> float:
 def _notes(found: Found) -> list[str]:
     if _factor(found.evidence(DiscriminationEvidence)) == 1.0:
         return []
-    return ["Each side has a scale of its own: there are many more of one kind."]
+    return [message("Each side has a scale of its own: there are many more of one kind.")]
 
 
 def _factor(evidence: DiscriminationEvidence) -> float:

@@ -23,8 +23,9 @@ from plainodds.drawings.geometry import Margins
 from plainodds.drawings.lettering import line_height, wrapped
 from plainodds.drawings.theme import Theme
 from plainodds.phrases.checks.headings import picture_axes
+from plainodds.phrases.checks.parts import cases_called
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import count
-from plainodds.phrases.units import tidy
 
 __all__ = ["INFLUENCE"]
 
@@ -54,14 +55,17 @@ def _least(found: Found, theme: Theme, width: float) -> float:
 
 def _notes(found: Found) -> list[str]:
     evidence = found.evidence(InfluenceEvidence)
-    cases = tidy(found.subject.outcome.cases)
     notes = [
-        f"A mark is a kind of row: all {cases} of the same values. The larger it is, the farther "
-        "the fit moves without it (Δβ)."
+        message(
+            "A mark is a kind of row: all {cases} of the same values. The larger it is, the "
+            "farther the fit moves without it (Δβ).",
+            cases=cases_called(found.subject),
+        )
     ]
     if evidence.thinned:
         shown = count(len(evidence.probability))
-        notes.append(f"{shown} of {count(evidence.patterns)} are shown, these among them.")
+        every = count(evidence.patterns)
+        notes.append(message("{} of {} are shown, these among them.", shown, every))
     return notes
 
 

@@ -15,6 +15,7 @@ from plainodds.drawings.checks.plate import Found, Plate
 from plainodds.drawings.geometry import Margins
 from plainodds.drawings.theme import Theme
 from plainodds.phrases.checks.headings import picture_axes, picture_legend
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import count
 
 __all__ = ["LEVELS"]
@@ -56,7 +57,9 @@ def _notes(found: Found) -> list[str]:
     left = len(found.evidence(LevelsEvidence).counts) - MOST_LEVELS
     if left <= 0:
         return []
-    return [f"Not shown: {count(left)} more {'level' if left == 1 else 'levels'}."]
+    if left == 1:
+        return [message("Not shown: 1 more level.")]
+    return [message("Not shown: {} more levels.", count(left))]
 
 
 def _paint(board: Board, found: Found, width: float, height: float) -> Margins:

@@ -13,11 +13,11 @@ from plainodds.drawings.checks.tables import draw_paragraph, paragraph_height
 from plainodds.drawings.geometry import Margins
 from plainodds.drawings.theme import Theme
 from plainodds.model.predictors import Subject
-from plainodds.phrases.checks.headings import picture_axes, picture_legend
-from plainodds.phrases.checks.parts import short_list
+from plainodds.phrases.checks.headings import picture_axes
+from plainodds.phrases.checks.parts import quoted, short_list
 from plainodds.phrases.labels import predictor_name, sentence_case
-from plainodds.phrases.numbers import chance, confidence, count
-from plainodds.phrases.units import tidy
+from plainodds.phrases.lexicon import message
+from plainodds.phrases.numbers import chance, count, level_figures
 
 __all__ = ["MISSING"]
 
@@ -31,13 +31,13 @@ def _has_picture(found: Found) -> bool:
 
 def _laid(found: Found, theme: Theme, width: float) -> LaidRows:
     evidence = found.evidence(MissingEvidence)
-    left_out, used = picture_legend(found.finding, found.subject)
-    known = f"{count(evidence.known)} {left_out}"
+    used = message("{} rows used", count(evidence.used))
+    known = message("{} rows left out", count(evidence.known))
     if evidence.known < evidence.dropped:
-        known += ", outcome known"
+        known = message("{} rows left out, outcome known", count(evidence.known))
     return laid_rows(
         [
-            Row("", f"{count(evidence.used)} {used}", chance(evidence.share_used)),
+            Row("", used, chance(evidence.share_used)),
             Row("", known, chance(evidence.share_dropped)),
         ],
         theme, width,
@@ -48,14 +48,14 @@ def _columns(found: Found) -> str:
     """In which columns values are missing, the most first."""
     told = [f"{_name(str(name), found.subject)} ({count(int(number))})"
             for name, number in found.evidence(MissingEvidence).columns]  # fmt: skip
-    return f"Missing in the rows left out: {short_list(told, 6)}." if told else ""
+    return message("Missing in the rows left out: {}.", short_list(told, 6)) if told else ""
 
 
 def _name(column: str, subject: Subject) -> str:
     if column == subject.outcome.name:
-        return "the outcome"
+        return message("the outcome")
     known = {facts.name: facts for facts in subject.predictors}
-    return predictor_name(known[column]) if column in known else f"“{tidy(column)}”"
+    return predictor_name(known[column]) if column in known else quoted(column)
 
 
 def _foot(found: Found, theme: Theme, width: float) -> float:
@@ -71,9 +71,11 @@ def _height(found: Found, theme: Theme, width: float) -> float:
 
 
 def _notes(found: Found) -> list[str]:
-    confident = confidence(found.level)
     return [
-        f"Line: {confident} interval of the difference, drawn from the share among the rows used."
+        message(
+            "Line: {}% interval of the difference, drawn from the share among the rows used.",
+            level_figures(found.level),
+        )
     ]
 
 

@@ -10,9 +10,11 @@ from plainodds.drawings.checks.along import Axis
 from plainodds.drawings.checks.board import Board
 from plainodds.drawings.checks.plate import Found
 from plainodds.drawings.theme import Theme
-from plainodds.phrases.checks.parts import cases
+from plainodds.phrases.checks.parts import amount, cases
+from plainodds.phrases.lexicon import message
+from plainodds.phrases.numbers import level_figures
 
-__all__ = ["band", "cases_each", "dot_areas", "draw_observed"]
+__all__ = ["band", "band_note", "cases_each", "dot_areas", "draw_observed"]
 
 
 def cases_each(bins: Sequence[Bin], found: Found) -> str:
@@ -20,10 +22,17 @@ def cases_each(bins: Sequence[Bin], found: Found) -> str:
     low, high = min(each.cases for each in bins), max(each.cases for each in bins)
     told = cases(found.subject, high)
     if low > 0.995 * high:
-        return f"Dots: {told} each."
-    least = cases(found.subject, low).split(" ")[0]
-    larger = ", the more the larger" if high > 1.5 * low else ""
-    return f"Dots: {least} to {told} each{larger}."
+        return message("Dots: {cases} each.", cases=told)
+    if high > 1.5 * low:
+        return message(
+            "Dots: {least} to {cases} each, the more the larger.", least=amount(low), cases=told
+        )
+    return message("Dots: {least} to {cases} each.", least=amount(low), cases=told)
+
+
+def band_note(found: Found) -> str:
+    """Which intervals the band and the bars are."""
+    return message("Band and bars: {}% intervals.", level_figures(found.level))
 
 
 def band(

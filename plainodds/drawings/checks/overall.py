@@ -13,20 +13,20 @@ from plainodds.drawings.checks.tables import (
 from plainodds.drawings.geometry import Margins
 from plainodds.drawings.theme import Theme
 from plainodds.phrases.checks.finding_words import finding_figures
-from plainodds.phrases.checks.overall import OVERALL_LIMITS
+from plainodds.phrases.checks.overall import overall_limits
+from plainodds.phrases.lexicon import message
 
 __all__ = ["OVERALL"]
 
-_HEADING = ("Test or measure", "figure")
-
 
 def _table(found: Found) -> list[tuple[str, ...]]:
-    return [_HEADING, *finding_figures(found.finding, found.subject, found.level)]
+    heading = message("Test or measure"), message("figure")
+    return [heading, *finding_figures(found.finding, found.subject, found.level)]
 
 
 def _limits(theme: Theme, width: float) -> float:
     gap = 0.4 * theme.font_size
-    return sum(paragraph_height(each, theme, width, 0.88) + gap for each in OVERALL_LIMITS)
+    return sum(paragraph_height(each, theme, width, 0.88) + gap for each in overall_limits())
 
 
 def _height(found: Found, theme: Theme, width: float) -> float:
@@ -38,7 +38,7 @@ def _paint(board: Board, found: Found, width: float, height: float) -> Margins:
     rows = _table(found)
     draw_table(board, rows, 0.0, 0.0, width, (0, 1))
     y = -table_height(rows, theme, width) - 0.9 * em
-    for words in OVERALL_LIMITS:
+    for words in overall_limits():
         y -= draw_paragraph(board, words, 0.0, y, width, (0, 1), 0.88, faint=True) + 0.4 * em
     return Margins(0.0, 0.0, 0.0, 0.0)
 

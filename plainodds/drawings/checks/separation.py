@@ -25,8 +25,9 @@ from plainodds.drawings.checks.tables import draw_paragraph, paragraph_height
 from plainodds.drawings.geometry import Margins
 from plainodds.drawings.lettering import line_height, wrapped
 from plainodds.drawings.theme import Theme
-from plainodds.phrases.checks.finding_words import finding_words
 from plainodds.phrases.checks.headings import picture_axes, picture_legend
+from plainodds.phrases.checks.telling import told_finding
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import count
 from plainodds.phrases.units import tidy
 
@@ -34,7 +35,6 @@ __all__ = ["SEPARATION"]
 
 _MOST = 8
 _GAP = 0.9
-_OPEN = "Coefficients without a finite estimate"
 _LEVELS = Finding("levels", "nothing found")
 
 
@@ -44,7 +44,7 @@ def _has_picture(found: Found) -> bool:
 
 
 def _words(found: Found) -> str:
-    return finding_words(found.finding, found.subject, found.level).what
+    return told_finding(found.finding, found.subject, found.level).what
 
 
 def _counts(found: Found) -> tuple[LevelCount, ...]:
@@ -84,8 +84,8 @@ def _laid_out(found: Found, theme: Theme, width: float) -> tuple[LaidRows | None
 
 def _side(limit: float) -> str:
     if math.isnan(limit):
-        return "open either way"
-    return "no upper end" if limit > 0 else "no lower end"
+        return message("open either way")
+    return message("no upper end") if limit > 0 else message("no lower end")
 
 
 def _legend(found: Found) -> tuple[str, str]:
@@ -115,8 +115,9 @@ def _height(found: Found, theme: Theme, width: float) -> float:
 
 def _notes(found: Found) -> list[str]:
     left = len(found.evidence(SeparationEvidence).unbounded) - _MOST
-    notes = [f"Not shown: {count(left)} more coefficients."] if left > 0 else []
-    return [*notes, "An arrow has no end: any value farther off fits the data better still."]
+    notes = [message("Not shown: {} more coefficients.", count(left))] if left > 0 else []
+    arrow = message("An arrow has no end: any value farther off fits the data better still.")
+    return [*notes, arrow]
 
 
 def _paint(board: Board, found: Found, width: float, height: float) -> Margins:
@@ -140,8 +141,9 @@ def _draw_open(board: Board, found: Found, laid: LaidRows, down: float, width: f
     """Draw coefficients as lines from 0 that end in an arrow, so many points down the plot."""
     theme, em = board.theme, board.theme.font_size
     across = blended_transform_factory(board.axes.transAxes, board.at(0, 1))
+    heading = message("Coefficients without a finite estimate")
     board.write(
-        wrapped(_OPEN, width, theme, theme.small, 1), -laid.left, -down + 0.25 * em,
+        wrapped(heading, width, theme, theme.small, 1), -laid.left, -down + 0.25 * em,
         board.at(0, 1), down="bottom", colour=theme.faint,
     )  # fmt: skip
     draw_rows(board, laid, down)

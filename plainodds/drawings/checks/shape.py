@@ -18,14 +18,14 @@ from plainodds.drawings.checks.along import (
 )
 from plainodds.drawings.checks.board import Board
 from plainodds.drawings.checks.ends import EndLabel, draw_ends, ends_width
-from plainodds.drawings.checks.observed import cases_each, draw_observed
+from plainodds.drawings.checks.observed import band_note, cases_each, draw_observed
 from plainodds.drawings.checks.plate import Found, Plate
 from plainodds.drawings.geometry import Margins
 from plainodds.drawings.lettering import line_height, wrapped
 from plainodds.drawings.theme import Theme
-from plainodds.phrases.checks.headings import picture_axes, picture_legend
-from plainodds.phrases.numbers import confidence
-from plainodds.phrases.units import tidy
+from plainodds.phrases.checks.headings import picture_axes
+from plainodds.phrases.checks.parts import cases_called
+from plainodds.phrases.lexicon import message
 
 __all__ = ["SHAPE"]
 
@@ -52,19 +52,18 @@ def _least(found: Found, theme: Theme, width: float) -> float:
 
 
 def _notes(found: Found) -> list[str]:
-    evidence, confident = found.evidence(ShapeEvidence), confidence(found.level)
+    beneath = message("Beneath: where the {cases} are.", cases=cases_called(found.subject))
     return [
-        "Both lines are smoothed in the same way.",
-        f"Band and bars: {confident} intervals.",
-        f"{cases_each(evidence.bins, found)} Beneath: where the "
-        f"{tidy(found.subject.outcome.cases)} are.",
+        message("Both lines are smoothed in the same way."),
+        band_note(found),
+        f"{cases_each(found.evidence(ShapeEvidence).bins, found)} {beneath}",
     ]
 
 
 def _paint(board: Board, found: Found, width: float, height: float) -> Margins:
     theme, em = board.theme, board.theme.font_size
     evidence = found.evidence(ShapeEvidence)
-    names = [each.split(",")[0] for each in picture_legend(found.finding, found.subject)]
+    names = [message("data"), message("model")]
     bottom, top = _below(found, theme, width), _above(theme)
     right = ends_width(names, theme, width)
     plot_height = height - bottom - top

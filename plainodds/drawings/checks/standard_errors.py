@@ -12,6 +12,7 @@ from plainodds.drawings.checks.plate import Found, Plate
 from plainodds.drawings.geometry import Margins
 from plainodds.drawings.theme import Theme
 from plainodds.phrases.checks.headings import picture_axes
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import count, quantity, ratio
 from plainodds.phrases.units import tidy
 
@@ -19,23 +20,22 @@ __all__ = ["STANDARD_ERRORS"]
 
 _MARKS = (4.0, 10.0)
 _MOST = 12
-_HEADING = "standard error"
 _TIMES = 3_000
 
 
 def _note() -> str:
-    times = count(_TIMES)
-    return (
-        f"At 4, an interval goes from a {times}th to {times} times the odds for one standard "
-        "deviation more; at 10 there are no words for it. Both marks are custom."
+    return message(
+        "At 4, an interval goes from a {times}th to {times} times the odds for one standard "
+        "deviation more; at 10 there are no words for it. Both marks are custom.",
+        times=count(_TIMES),
     )
 
 
 def _gauge(found: Found) -> Gauge:
     largest = found.evidence(StandardErrorsEvidence).largest_per_spread
     return Gauge(
-        value=largest, figure=f"the widest: {ratio(largest)}", lower=0.1, upper=60.0,
-        marks=_MARKS, zones=("as usual", "wide", "absurd"),
+        value=largest, figure=message("the widest: {}", ratio(largest)), lower=0.1, upper=60.0,
+        marks=_MARKS, zones=(message("as usual"), message("wide"), message("absurd")),
         ticks=tuple((tick, quantity(tick)) for tick in (0.1, 1.0, 4.0, 10.0)),
         title=picture_axes(found.finding, found.subject)[0],
     )  # fmt: skip
@@ -63,13 +63,14 @@ def _has_picture(found: Found) -> bool:
 def _height(found: Found, theme: Theme, width: float) -> float:
     lanes, (title, _) = _lanes(found), picture_axes(found.finding, found.subject)
     if lanes:
-        return lanes_height(lanes, (), _HEADING, title, theme, width)
+        return lanes_height(lanes, (), message("standard error"), title, theme, width)
     return gauge_height(_gauge(found), theme, width)
 
 
 def _notes(found: Found) -> list[str]:
     left = len(found.evidence(StandardErrorsEvidence).wide) - _MOST
-    return [_note(), *([f"Not shown: {count(left)} more coefficients."] if left > 0 else [])]
+    more = [message("Not shown: {} more coefficients.", count(left))] if left > 0 else []
+    return [_note(), *more]
 
 
 def _paint(board: Board, found: Found, width: float, height: float) -> Margins:
@@ -77,7 +78,9 @@ def _paint(board: Board, found: Found, width: float, height: float) -> Margins:
     if not lanes:
         return draw_gauge(board, _gauge(found), width, height)
     low, high = _ends(found)
-    return draw_lanes(board, lanes, (), _HEADING, title, (low, high), _MARKS, low, width, height)
+    return draw_lanes(
+        board, lanes, (), message("standard error"), title, (low, high), _MARKS, low, width, height
+    )
 
 
 STANDARD_ERRORS = Plate(

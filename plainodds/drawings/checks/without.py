@@ -21,15 +21,16 @@ from plainodds.phrases.labels import (
     predictor_label,
     value_label,
 )
+from plainodds.phrases.lexicon import lexicon, message
 from plainodds.phrases.numbers import ratio, simple_fraction
 from plainodds.phrases.units import tidy
 
 __all__ = ["draw_without", "label_of", "moves_shown", "without_height"]
 
-_HEADING = "Odds ratio, with these rows and without"
 _MOST = 4
 _LABELS = 3
 _FARTHEST = math.log(1e4)
+# of artists, in every language
 _NAMES = ("with all rows", "without: one step", "without: fitted anew")
 _LOOKS = ((0, False), (1, True), (1, False))  # series, and whether hollow
 
@@ -73,12 +74,13 @@ def _rows(found: Found) -> list[Row]:
 
 
 def _heading(pattern: InfluentialPattern) -> str:
-    return f"{'Row' if len(pattern.labels) == 1 else 'Rows'} {label_of(pattern)}"
+    label = label_of(pattern)
+    return message("Row {}", label) if len(pattern.labels) == 1 else message("Rows {}", label)
 
 
 def _after(moved: Moved) -> str:
     if math.isnan(moved.refitted):
-        return f"about {ratio(moved.one_step)}"
+        return message("about {}", ratio(moved.one_step))
     return ratio(moved.refitted)
 
 
@@ -88,7 +90,7 @@ def _change(moved: Moved, subject: Subject) -> str:
         change = f"{predictor_label(facts)} {from_to(facts, moved.start, moved.end)}"
     else:
         start, end = (value_label(facts, each) for each in (moved.start, moved.end))
-        change = f"{predictor_label(facts)}: {end} against {start}"
+        change = f"{predictor_label(facts)}: {lexicon().against.format(end, start)}"
     return f"{change}, {given_clause(subject, moved.given)}" if moved.given else change
 
 
@@ -96,11 +98,18 @@ def _laid(found: Found, theme: Theme, width: float) -> LaidRows:
     return laid_rows(_rows(found), theme, width)
 
 
+def _told() -> tuple[str, str, str]:
+    """What the key calls each series."""
+    return (
+        message("with all rows"), message("without: one step"), message("without: fitted anew")
+    )  # fmt: skip
+
+
 def _key_places(theme: Theme, width: float) -> list[tuple[int, float]]:
     """Line and place along it of each name of the key."""
     em, line, x = theme.font_size, 0, 0.0
     places = []
-    for name in _NAMES:
+    for name in _told():
         needed = 1.2 * em + text_width(name, theme, theme.small)
         if x > 0 and x + needed > width:
             line, x = line + 1, 0.0
@@ -144,7 +153,8 @@ def draw_without(board: Board, found: Found, margins: Margins, width: float, dow
     laid = _laid(found, theme, width)
     points = board.at(0, 0)
     y = down - 0.9 * em
-    board.write(_HEADING, -margins.left, y - line_height(theme.small) / 2, points, weight="bold")
+    heading = message("Odds ratio, with these rows and without")
+    board.write(heading, -margins.left, y - line_height(theme.small) / 2, points, weight="bold")
     _draw_key(board, -margins.left, y - line_height(theme.small), width)
     top = down - _head(theme, width)
     # the rows have a plot of their own: from its left edge, in points
@@ -192,15 +202,15 @@ def _axis(values: Iterable[float]) -> _Axis:
 def _draw_key(board: Board, x: float, y: float, width: float) -> None:
     theme, em, points = board.theme, board.theme.font_size, board.at(0, 0)
     step = line_height(theme.small)
-    for place, (name, (line, along)) in enumerate(
-        zip(_NAMES, _key_places(theme, width), strict=True)
+    for place, (name, told, (line, along)) in enumerate(
+        zip(_NAMES, _told(), _key_places(theme, width), strict=True)
     ):
         middle = y - (line + 0.5) * step
         series, hollow = _LOOKS[place]
         board.marks(
             f"key {name}", [(x + along + 0.4 * em, middle)], series, transform=points, hollow=hollow
         )
-        board.write(name, x + along + 1.2 * em, middle, points)
+        board.write(told, x + along + 1.2 * em, middle, points)
 
 
 def _draw_moves(

@@ -7,6 +7,7 @@ from plainodds.answers.where import Where
 from plainodds.model.predictors import Subject
 from plainodds.phrases.averaged import rows_chosen
 from plainodds.phrases.held import held_words, kept_words
+from plainodds.phrases.languages import in_language
 from plainodds.phrases.numbers import chance, confidence, count
 from plainodds.phrases.sentences import sentence
 from plainodds.phrases.units import tidy
@@ -24,6 +25,7 @@ def interval_words(subject: Subject, level: float, marks: str) -> str:
     return f"{marks} {confidence(level)} confidence intervals"
 
 
+@in_language
 def rest_words(
     subject: Subject, others: Others, held: Pairs, averaged: str, counted: int, where: Where = None
 ) -> str:
@@ -45,6 +47,7 @@ def rest_words(
     return " ".join(map(sentence, held_words(subject, held, others, at_most=_EVERYTHING)))
 
 
+@in_language
 def fitted_words(subject: Subject) -> str:
     """Which model, and how many rows and events it was fitted to."""
     outcome = subject.outcome

@@ -13,6 +13,7 @@ from plainodds.phrases.checks.finding_words import (
     made,
 )
 from plainodds.phrases.checks.parts import amount, cases, coefficients
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import ratio
 from plainodds.phrases.units import tidy
 
@@ -51,8 +52,8 @@ def _each(evidence: AmountEvidence) -> str:
 @evidence_figures.register
 def _(evidence: AmountEvidence, finding: Finding, subject: Subject, level: float) -> list[Figure]:
     return [
-        ("With the event", amount(evidence.events)),
-        ("Without the event", amount(evidence.others)),
-        ("Coefficients beside the intercept", amount(evidence.parameters)),
-        ("Of the rarer outcome for each coefficient", _each(evidence)),
+        (message("With the event"), amount(evidence.events)),
+        (message("Without the event"), amount(evidence.others)),
+        (message("Coefficients beside the intercept"), amount(evidence.parameters)),
+        (message("Of the rarer outcome for each coefficient"), _each(evidence)),
     ]

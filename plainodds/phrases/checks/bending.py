@@ -8,9 +8,10 @@ from plainodds.answers.checks.finding import Finding
 from plainodds.model.predictors import Subject
 from plainodds.phrases.checks.parts import because, gap
 from plainodds.phrases.choices.checks import verdict_of
-from plainodds.phrases.numbers import p_value
+from plainodds.phrases.lexicon import message
+from plainodds.phrases.numbers import p_value, quantity
 
-__all__ = ["IN_SAMPLE", "apart", "judged"]
+__all__ = ["IN_SAMPLE", "apart", "judged", "middle_gap"]
 
 IN_SAMPLE = "shares here are those of the sample, whose rows were chosen by their outcome"
 
@@ -18,6 +19,11 @@ IN_SAMPLE = "shares here are those of the sample, whose rows were chosen by thei
 def apart(size: float) -> str:
     """Up to how far model and data are apart: "by up to 3.4 percentage points …"."""
     return f"by up to {gap(size)} in the middle 90% of rows"
+
+
+def middle_gap() -> str:
+    """What the largest gap is called among figures."""
+    return message("Largest gap in the middle {} of rows", quantity(90, "%"))
 
 
 def judged(size: float, p: float, finding: Finding, subject: Subject, bends: bool) -> str:

@@ -9,7 +9,7 @@ from plainodds.answers.checks.calibration import CalibrationEvidence, Optimism
 from plainodds.answers.checks.finding import Finding
 from plainodds.answers.estimate import Estimate
 from plainodds.model.predictors import Subject
-from plainodds.phrases.checks.bending import IN_SAMPLE, apart, judged
+from plainodds.phrases.checks.bending import IN_SAMPLE, apart, judged, middle_gap
 from plainodds.phrases.checks.finding_words import (
     Figure,
     FindingWords,
@@ -18,6 +18,7 @@ from plainodds.phrases.checks.finding_words import (
     made,
 )
 from plainodds.phrases.checks.parts import amount, gap
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import ratio, signed
 from plainodds.phrases.parts import signed_with_interval
 
@@ -79,21 +80,25 @@ def _(
     evidence: CalibrationEvidence, finding: Finding, subject: Subject, level: float
 ) -> list[Figure]:
     found: list[Figure] = [
-        ("Largest gap in the middle 90% of rows", gap(evidence.largest_gap)),
-        ("Intercept (0 is right)", signed_with_interval(_bare(evidence.intercept), level)),
-        ("Slope (1 is right)", signed_with_interval(evidence.slope, level)),
-        ("Brier score", ratio(evidence.brier)),
-        ("Brier score of one chance for all", ratio(evidence.brier_of_share)),
-        ("Groups shown", amount(len(evidence.bins))),
+        (middle_gap(), gap(evidence.largest_gap)),
+        (message("Intercept (0 is right)"), signed_with_interval(_bare(evidence.intercept), level)),
+        (message("Slope (1 is right)"), signed_with_interval(evidence.slope, level)),
+        (message("Brier score"), ratio(evidence.brier)),
+        (message("Brier score of one chance for all"), ratio(evidence.brier_of_share)),
+        (message("Groups shown"), amount(len(evidence.bins))),
     ]
     optimism = evidence.optimism
     if optimism is None:
-        return [*found, ("Corrected for optimism", "not asked for")]
+        return [*found, (message("Corrected for optimism"), message("not asked for"))]
+    ways = {
+        "bootstrap": message("Repeats (bootstrap)"),
+        "cross-validation": message("Repeats (cross-validation)"),
+    }
     return [
         *found,
-        (f"Repeats ({optimism.way})", amount(optimism.repeats)),
-        ("Repeats that could not be fitted", amount(optimism.failed)),
-        ("Slope, corrected for optimism", signed(optimism.slope)),
-        ("Brier score, corrected for optimism", ratio(optimism.brier)),
-        ("c, corrected for optimism", ratio(optimism.c)),
+        (ways[optimism.way], amount(optimism.repeats)),
+        (message("Repeats that could not be fitted"), amount(optimism.failed)),
+        (message("Slope, corrected for optimism"), signed(optimism.slope)),
+        (message("Brier score, corrected for optimism"), ratio(optimism.brier)),
+        (message("c, corrected for optimism"), ratio(optimism.c)),
     ]

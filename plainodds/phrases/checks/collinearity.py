@@ -16,6 +16,7 @@ from plainodds.phrases.checks.finding_words import (
 )
 from plainodds.phrases.checks.parts import amount, columns_named, named
 from plainodds.phrases.labels import predictor_label, predictor_name
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import ratio
 
 __all__: list[str] = []
@@ -72,17 +73,21 @@ def _exact(evidence: CollinearityEvidence) -> str:
 def _(
     evidence: CollinearityEvidence, finding: Finding, subject: Subject, level: float
 ) -> list[Figure]:
-    number = evidence.condition_number
+    number, no_end = evidence.condition_number, message("no end")
     found: list[Figure] = [
-        ("Columns", amount(evidence.columns)),
-        ("Independent columns", amount(evidence.rank)),
-        ("Condition number", "no end" if math.isinf(number) else ratio(number)),
+        (message("Columns"), amount(evidence.columns)),
+        (message("Independent columns"), amount(evidence.rank)),
+        (message("Condition number"), no_end if math.isinf(number) else ratio(number)),
     ]
     for tie in evidence.tied:
         index = tie.condition_index
-        told = "exactly" if math.isinf(index) else f"condition index {ratio(index)}"
-        found.append((f"Tied: {columns_named(tie.columns)}", told))
+        told = message("condition index {}", ratio(index))
+        if math.isinf(index):
+            told = message("exactly")
+        found.append((message("Tied: {}", columns_named(tie.columns)), told))
     for name, stretch in evidence.inflation:
-        label = f"Standard errors of {predictor_label(subject.predictor(name))} stretched by"
-        found.append((label, "no end" if math.isinf(stretch) else f"{ratio(stretch)} times"))
+        whose = predictor_label(subject.predictor(name))
+        label = message("Standard errors of {} stretched by", whose)
+        times = message("{} times", ratio(stretch))
+        found.append((label, no_end if math.isinf(stretch) else times))
     return found

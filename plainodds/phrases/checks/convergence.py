@@ -15,7 +15,8 @@ from plainodds.phrases.checks.finding_words import (
     made,
 )
 from plainodds.phrases.checks.parts import because, columns_named, counted
-from plainodds.phrases.numbers import NOT_KNOWN, count, quantity, ratio
+from plainodds.phrases.lexicon import lexicon, message
+from plainodds.phrases.numbers import count, quantity, ratio, wording
 
 __all__: list[str] = []
 
@@ -77,12 +78,13 @@ def _next(evidence: ConvergenceEvidence, finding: Finding) -> str:
 def _(
     evidence: ConvergenceEvidence, finding: Finding, subject: Subject, level: float
 ) -> list[Figure]:
-    said = {True: "yes", False: "no", None: NOT_KNOWN}[evidence.converged]
-    iterations = NOT_KNOWN if evidence.iterations is None else count(evidence.iterations)
+    not_known = wording().not_known
+    said = {True: lexicon().yes, False: lexicon().no, None: not_known}[evidence.converged]
+    iterations = not_known if evidence.iterations is None else count(evidence.iterations)
     step = evidence.remaining_step
-    told = "no end" if math.isinf(step) else ratio(step)
+    told = message("no end") if math.isinf(step) else ratio(step)
     return [
-        ("Converged, as the fit says", said),
-        ("Iterations", iterations),
-        ("Largest remaining step (in standard errors)", told),
+        (message("Converged, as the fit says"), said),
+        (message("Iterations"), iterations),
+        (message("Largest remaining step (in standard errors)"), told),
     ]

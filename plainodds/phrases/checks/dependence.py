@@ -12,8 +12,9 @@ from plainodds.phrases.checks.finding_words import (
     evidence_words,
     made,
 )
-from plainodds.phrases.checks.parts import amount, because, counted, rows
+from plainodds.phrases.checks.parts import amount, because, counted, quoted, rows
 from plainodds.phrases.choices.checks import farthest_pair
+from plainodds.phrases.lexicon import lexicon, message
 from plainodds.phrases.numbers import ratio
 from plainodds.phrases.units import tidy
 
@@ -82,15 +83,18 @@ def _(
     found: list[Figure] = []
     if evidence.name:
         found += [
-            ("Groups named by", f"“{tidy(evidence.name)}”"),
-            ("Groups", amount(evidence.groups)),
-            ("Rows of the largest group", amount(evidence.largest)),
+            (message("Groups named by"), quoted(evidence.name)),
+            (message("Groups"), amount(evidence.groups)),
+            (message("Rows of the largest group"), amount(evidence.largest)),
         ]
-    found.append(("Groups counted by the fit itself", "yes" if evidence.already else "no"))
+    already = lexicon().yes if evidence.already else lexicon().no
+    found.append((message("Groups counted by the fit itself"), already))
     return found + [
         (
-            f"Standard error of “{tidy(pair.column)}”",
-            f"{ratio(pair.model_based)} as strangers, {ratio(pair.by_groups)} by groups",
+            message("Standard error of “{}”", tidy(pair.column)),
+            message(
+                "{} as strangers, {} by groups", ratio(pair.model_based), ratio(pair.by_groups)
+            ),
         )
         for pair in evidence.standard_errors
     ]

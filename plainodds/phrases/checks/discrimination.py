@@ -14,10 +14,10 @@ from plainodds.phrases.checks.finding_words import (
     evidence_words,
     made,
 )
-from plainodds.phrases.checks.parts import because
-from plainodds.phrases.numbers import NOT_KNOWN, chance, span
+from plainodds.phrases.checks.parts import because, cases_called
+from plainodds.phrases.lexicon import message
+from plainodds.phrases.numbers import chance, count, span, wording
 from plainodds.phrases.parts import article, chance_with_interval, interval
-from plainodds.phrases.units import tidy
 
 __all__ = ["C_LIMITS"]
 
@@ -61,7 +61,9 @@ def _(
     evidence: DiscriminationEvidence, finding: Finding, subject: Subject, level: float
 ) -> list[Figure]:
     c = evidence.c
-    told = NOT_KNOWN if math.isnan(c.estimate) else chance_with_interval(c, level)
-    if c.estimate >= 1:
-        told = "100 in 100"
-    return [(f"c (pairs of {tidy(subject.outcome.cases)} ranked rightly)", told)]
+    told = chance_with_interval(c, level)
+    if math.isnan(c.estimate):
+        told = wording().not_known
+    elif c.estimate >= 1:
+        told = wording().out_of.format(count(100), count(100))
+    return [(message("c (pairs of {cases} ranked rightly)", cases=cases_called(subject)), told)]

@@ -14,7 +14,7 @@ from plainodds.phrases.checks.finding_words import (
     evidence_words,
     made,
 )
-from plainodds.phrases.checks.parts import amount, cases, counted, short_list
+from plainodds.phrases.checks.parts import amount, cases, counted, quoted, short_list
 from plainodds.phrases.choices.checks import example_of, ratio_without
 from plainodds.phrases.labels import (
     from_to,
@@ -23,8 +23,8 @@ from plainodds.phrases.labels import (
     sentence_case,
     value_label,
 )
+from plainodds.phrases.lexicon import lexicon, message
 from plainodds.phrases.numbers import chance, ratio
-from plainodds.phrases.units import tidy
 
 __all__ = ["moved_by_few", "moved_words", "pattern_words"]
 
@@ -80,16 +80,18 @@ def pattern_words(pattern: InfluentialPattern, subject: Subject) -> str:
     who = cases(subject, pattern.cases)
     share = pattern.events / pattern.cases if pattern.cases else math.nan
     if share >= 1 - 1e-9:
-        told = f"{who}, with the event"
+        told = message("{cases}, with the event", cases=who)
     elif share <= 1e-9:
-        told = f"{who}, without the event"
+        told = message("{cases}, without the event", cases=who)
     else:
-        told = f"{who}, {amount(pattern.events)} with the event"
-    labels = [f"“{tidy(label)}”" for label in pattern.labels]
-    if not labels:
-        return f"one kind of row ({told})"
-    rows = "row" if len(labels) == 1 else "rows"
-    return f"{rows} {short_list(labels, _LABELS_AT_MOST)} ({told})"
+        number = amount(pattern.events)
+        told = message("{cases}, {number} with the event", cases=who, number=number)
+    if not pattern.labels:
+        return message("one kind of row ({})", told)
+    labels = short_list([quoted(label) for label in pattern.labels], _LABELS_AT_MOST)
+    if len(pattern.labels) == 1:
+        return message("row {} ({})", labels, told)
+    return message("rows {} ({})", labels, told)
 
 
 def moved_words(moved: Moved, subject: Subject) -> str:
@@ -99,25 +101,28 @@ def moved_words(moved: Moved, subject: Subject) -> str:
         change = f"{predictor_name(facts)} {from_to(facts, moved.start, moved.end)}"
     else:
         end, start = value_label(facts, moved.end), value_label(facts, moved.start)
-        change = f"{predictor_name(facts)} {end} against {start}"
+        change = f"{predictor_name(facts)} {lexicon().against.format(end, start)}"
     given = f", {given_clause(subject, moved.given)}," if moved.given else ""
     before, after = ratio(moved.odds_ratio), ratio(ratio_without(moved))
-    how = "about " if math.isnan(moved.refitted) else ""
-    sizes = f"{after} either way" if before == after else f"{after} rather than {before}"
-    return f"the odds ratio for {change}{given} is {how}{sizes}"
+    sizes = message("{} either way", after)
+    if before != after:
+        sizes = message("{} rather than {}", after, before)
+    if math.isnan(moved.refitted):
+        sizes = message("about {}", sizes)
+    return message("the odds ratio for {change} is {sizes}", change=f"{change}{given}", sizes=sizes)
 
 
 @evidence_figures.register
 def _(
     evidence: InfluenceEvidence, finding: Finding, subject: Subject, level: float
 ) -> list[Figure]:
-    found: list[Figure] = [("Different rows", amount(evidence.patterns))]
+    found: list[Figure] = [(message("Different rows"), amount(evidence.patterns))]
     for pattern in evidence.standing_out:
-        measures = (
-            f"chance {chance(pattern.probability)}, leverage {ratio(pattern.leverage)}, "
-            f"ΔX² {ratio(pattern.delta_chi2)}, ΔD {ratio(pattern.delta_deviance)}, "
-            f"Δβ {ratio(pattern.delta_beta)}"
-        )
+        measures = message(
+            "chance {}, leverage {}, ΔX² {}, ΔD {}, Δβ {}",
+            chance(pattern.probability), ratio(pattern.leverage), ratio(pattern.delta_chi2),
+            ratio(pattern.delta_deviance), ratio(pattern.delta_beta),
+        )  # fmt: skip
         moves = [moved_words(moved, subject) for moved in pattern.moved]
         label = sentence_case(pattern_words(pattern, subject))
         found.append((label, "; ".join([measures, *moves])))

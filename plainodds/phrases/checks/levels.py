@@ -16,6 +16,7 @@ from plainodds.phrases.checks.finding_words import (
 )
 from plainodds.phrases.checks.parts import amount, because, cases, counted, level_name, short_list
 from plainodds.phrases.labels import sentence_case
+from plainodds.phrases.lexicon import message
 
 __all__: list[str] = []
 
@@ -69,7 +70,10 @@ def _name(subject: Subject, each: LevelCount) -> str:
 
 
 def _events(subject: Subject, each: LevelCount) -> str:
-    return f"{counted(each.events, 'event', 'events')} in {cases(subject, each.cases)}"
+    number, whole = amount(each.events), cases(subject, each.cases)
+    if number == "1":
+        return message("{number} event in {cases}", number=number, cases=whole)
+    return message("{number} events in {cases}", number=number, cases=whole)
 
 
 @evidence_figures.register

@@ -14,11 +14,11 @@ from plainodds.phrases.checks.finding_words import (
     evidence_words,
     made,
 )
-from plainodds.phrases.checks.parts import because
+from plainodds.phrases.checks.parts import because, quoted
 from plainodds.phrases.labels import predictor_label, predictor_name, sentence_case
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import chance, count
 from plainodds.phrases.parts import difference_with_interval
-from plainodds.phrases.units import tidy
 
 __all__: list[str] = []
 
@@ -77,31 +77,31 @@ def _outcome(evidence: MissingEvidence, finding: Finding, level: float) -> str:
 
 def _column(name: str, subject: Subject) -> str:
     if name == subject.outcome.name:
-        return "the outcome"
+        return message("the outcome")
     for facts in subject.predictors:
         if facts.name == name:
             return predictor_name(facts)
-    return f"“{tidy(name)}”"
+    return quoted(name)
 
 
 @evidence_figures.register
 def _(evidence: MissingEvidence, finding: Finding, subject: Subject, level: float) -> list[Figure]:
     found: list[Figure] = [
-        ("Rows used", count(evidence.used)),
-        ("Rows left out", count(evidence.dropped)),
+        (message("Rows used"), count(evidence.used)),
+        (message("Rows left out"), count(evidence.dropped)),
     ]
     labels = {facts.name: predictor_label(facts) for facts in subject.predictors}
     for name, number in evidence.columns:
         label = labels.get(name) or sentence_case(_column(name, subject))
-        found.append((f"Missing: {label}", count(number)))
+        found.append((message("Missing: {}", label), count(number)))
     if not evidence.dropped:
         return found
-    found.append(("Left out, outcome known", count(evidence.known)))
+    found.append((message("Left out, outcome known"), count(evidence.known)))
     if not math.isnan(evidence.share_used):
-        found.append(("Share of events, rows used", chance(evidence.share_used)))
+        found.append((message("Share of events, rows used"), chance(evidence.share_used)))
     if evidence.difference is not None:
         found += [
-            ("Share of events, rows left out", chance(evidence.share_dropped)),
-            ("Difference", difference_with_interval(evidence.difference, level)),
+            (message("Share of events, rows left out"), chance(evidence.share_dropped)),
+            (message("Difference"), difference_with_interval(evidence.difference, level)),
         ]
     return found

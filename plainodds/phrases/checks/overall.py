@@ -15,18 +15,27 @@ from plainodds.phrases.checks.finding_words import (
     evidence_words,
     made,
 )
-from plainodds.phrases.checks.parts import because, counted
-from plainodds.phrases.numbers import NOT_KNOWN, p_value, ratio, signed
+from plainodds.phrases.checks.parts import amount, because, counted
+from plainodds.phrases.lexicon import message
+from plainodds.phrases.numbers import p_value, ratio, signed, wording
 
-__all__ = ["OVERALL_LIMITS"]
+__all__ = ["overall_limits"]
 
-OVERALL_LIMITS = (
-    "Hosmer & Lemeshow's test hangs on how cases are grouped, which is arbitrary, finds little in "
-    "small samples and something in any large one, and does not say where a model is wrong.",
-    "Tjur's and McFadden's R² are not shares of variance explained, and a right model of a rare or "
-    "chancy event has low ones.",
-    "The link test sees one kind of bend only, along the model's own chances.",
-)
+
+def overall_limits() -> tuple[str, ...]:
+    """What each of these figures cannot say."""
+    return (
+        message(
+            "Hosmer & Lemeshow's test hangs on how cases are grouped, which is arbitrary, finds "
+            "little in small samples and something in any large one, and does not say where a "
+            "model is wrong."
+        ),
+        message(
+            "Tjur's and McFadden's R² are not shares of variance explained, and a right model of a "
+            "rare or chancy event has low ones."
+        ),
+        message("The link test sees one kind of bend only, along the model's own chances."),
+    )
 
 
 @evidence_words.register
@@ -60,19 +69,21 @@ def _link(evidence: OverallEvidence, finding: Finding) -> str:
 
 
 def _share(number: float) -> str:
-    return NOT_KNOWN if math.isnan(number) else signed(number).removeprefix("+")
+    return wording().not_known if math.isnan(number) else signed(number).removeprefix("+")
 
 
 @evidence_figures.register
 def _(evidence: OverallEvidence, finding: Finding, subject: Subject, level: float) -> list[Figure]:
     freedom = evidence.degrees_of_freedom
-    name = f"Hosmer & Lemeshow ({counted(evidence.groups, 'group', 'groups')})"
+    name = message("Hosmer & Lemeshow ({} groups)", amount(evidence.groups))
+    if evidence.groups == 1:
+        name = message("Hosmer & Lemeshow (1 group)")
     told = ratio(evidence.statistic)
     if freedom:
-        told += f", {freedom} df, p-value {p_value(evidence.p_value)}"
+        told = message("{}, {} df, p-value {}", told, freedom, p_value(evidence.p_value))
     return [
         (name, told),
-        ("Tjur's R²", _share(evidence.tjur)),
-        ("McFadden's R²", _share(evidence.mcfadden)),
-        ("Link test, p-value", p_value(evidence.link_p_value)),
+        (message("Tjur's R²"), _share(evidence.tjur)),
+        (message("McFadden's R²"), _share(evidence.mcfadden)),
+        (message("Link test, p-value"), p_value(evidence.link_p_value)),
     ]

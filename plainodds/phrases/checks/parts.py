@@ -6,8 +6,9 @@ import math
 
 from plainodds.answers.checks.finding import Unknown
 from plainodds.model.predictors import Subject
-from plainodds.phrases.labels import listed, predictor_name, value_label
-from plainodds.phrases.numbers import NOT_KNOWN, count, percentage_points, quantity
+from plainodds.phrases.labels import listed, named_value, predictor_name
+from plainodds.phrases.lexicon import lexicon, message
+from plainodds.phrases.numbers import count, percentage_points, quantity, wording
 from plainodds.phrases.units import tidy
 from plainodds.values import Scalar
 
@@ -17,12 +18,15 @@ __all__ = [
     "amount",
     "because",
     "cases",
+    "cases_called",
     "coefficients",
     "columns_named",
     "counted",
     "gap",
     "level_name",
     "named",
+    "part_of",
+    "quoted",
     "rows",
     "short_list",
 ]
@@ -53,7 +57,7 @@ def because(unknown: Unknown) -> str:
 def amount(number: float) -> str:
     """Write a number of cases, which weights can make a broken one."""
     if math.isnan(number):
-        return NOT_KNOWN
+        return wording().not_known
     whole = round(number)
     return count(whole) if math.isclose(whole, number, abs_tol=1e-6) else quantity(number)
 
@@ -66,7 +70,18 @@ def counted(number: float, one: str, many: str) -> str:
 
 def cases(subject: Subject, number: float) -> str:
     """As in "1 pipe", "14 pipes"."""
-    return counted(number, tidy(subject.outcome.case), tidy(subject.outcome.cases))
+    return counted(number, _case_called(subject), cases_called(subject))
+
+
+def cases_called(subject: Subject) -> str:
+    """What many rows are called: "pipes"; another language may put a noun of its own before."""
+    called = tidy(subject.outcome.cases)
+    return message("cases") if called == "cases" else message("{cases}", cases=called)
+
+
+def _case_called(subject: Subject) -> str:
+    called = tidy(subject.outcome.case)
+    return message("case") if called == "case" else message("{case}", case=called)
 
 
 def rows(number: float) -> str:
@@ -76,13 +91,23 @@ def rows(number: float) -> str:
 
 def coefficients(number: int) -> str:
     """As in "1 coefficient", "6 coefficients"."""
-    return counted(number, "coefficient", "coefficients")
+    return counted(number, message("coefficient"), message("coefficients"))
+
+
+def part_of(part: str, whole: str) -> str:
+    """As in "3 of 14"."""
+    return message("{part} of {whole}", part=part, whole=whole)
+
+
+def quoted(name: str) -> str:
+    """A name that is not the analyst's label, in quotation marks."""
+    return message("“{}”", tidy(name))
 
 
 def short_list(items: list[str], at_most: int = LISTED_AT_MOST) -> str:
     """Join as in speech; of many only the first, and how many more there are."""
     left = len(items) - at_most
-    return listed([*items[:at_most], f"{left} more"]) if left > 1 else listed(items)
+    return listed([*items[:at_most], lexicon().further.format(left)]) if left > 1 else listed(items)
 
 
 def named(subject: Subject, names: tuple[str, ...], at_most: int = LISTED_AT_MOST) -> str:
@@ -92,13 +117,12 @@ def named(subject: Subject, names: tuple[str, ...], at_most: int = LISTED_AT_MOS
 
 def columns_named(names: tuple[str, ...], at_most: int = LISTED_AT_MOST) -> str:
     """Columns of the design, as the fit's own table of coefficients calls them."""
-    return short_list([f"“{tidy(name)}”" for name in names], at_most)
+    return short_list([quoted(name) for name in names], at_most)
 
 
 def level_name(subject: Subject, predictor: str, level: Scalar) -> str:
     """As in "material PVC"."""
-    facts = subject.predictor(predictor)
-    return f"{predictor_name(facts)} {value_label(facts, level)}"
+    return named_value(subject.predictor(predictor), level)
 
 
 def gap(size: float) -> str:

@@ -14,7 +14,16 @@ from plainodds.phrases.checks.finding_words import (
     evidence_words,
     made,
 )
-from plainodds.phrases.checks.parts import amount, coefficients, level_name, named, rows, short_list
+from plainodds.phrases.checks.parts import (
+    amount,
+    coefficients,
+    level_name,
+    named,
+    part_of,
+    rows,
+    short_list,
+)
+from plainodds.phrases.lexicon import lexicon, message
 from plainodds.phrases.units import tidy
 
 __all__ = ["told_without_exception"]
@@ -90,19 +99,25 @@ def _levels(evidence: SeparationEvidence, subject: Subject) -> str:
 def _(
     evidence: SeparationEvidence, finding: Finding, subject: Subject, level: float
 ) -> list[Figure]:
-    kinds = {"none": "no", "quasi-complete": "some rows", "complete": "all rows"}
+    kinds = {
+        "none": lexicon().no,
+        "quasi-complete": message("some rows"),
+        "complete": message("all rows"),
+    }
+    told, every_row = amount(evidence.rows), amount(evidence.all_rows)
+    patterns, every_pattern = amount(evidence.patterns), amount(evidence.all_patterns)
     return [
-        ("Outcome told without exception", kinds[evidence.kind]),
-        ("Rows so told", f"{amount(evidence.rows)} of {amount(evidence.all_rows)}"),
-        (
-            "Different rows so told",
-            f"{amount(evidence.patterns)} of {amount(evidence.all_patterns)}",
+        (message("Outcome told without exception"), kinds[evidence.kind]),
+        (message("Rows so told"), part_of(told, every_row)),
+        (message("Different rows so told"), part_of(patterns, every_pattern)),
+        *(
+            (message("Coefficient “{}”", tidy(name)), _side(float(side)))
+            for name, side in evidence.unbounded
         ),
-        *((f"Coefficient “{tidy(name)}”", _side(float(side))) for name, side in evidence.unbounded),
     ]
 
 
 def _side(limit: float) -> str:
     if math.isnan(limit):
-        return "left open by the data"
-    return "no upper end" if limit > 0 else "no lower end"
+        return message("left open by the data")
+    return message("no upper end") if limit > 0 else message("no lower end")

@@ -5,7 +5,7 @@ from __future__ import annotations
 from plainodds.answers.checks.finding import Finding
 from plainodds.answers.checks.shape import ShapeEvidence
 from plainodds.model.predictors import Subject
-from plainodds.phrases.checks.bending import IN_SAMPLE, apart, judged
+from plainodds.phrases.checks.bending import IN_SAMPLE, apart, judged, middle_gap
 from plainodds.phrases.checks.finding_words import (
     Figure,
     FindingWords,
@@ -15,7 +15,8 @@ from plainodds.phrases.checks.finding_words import (
 )
 from plainodds.phrases.checks.parts import amount, gap
 from plainodds.phrases.labels import predictor_name
-from plainodds.phrases.numbers import NOT_KNOWN, p_value, ratio
+from plainodds.phrases.lexicon import message
+from plainodds.phrases.numbers import p_value, ratio, wording
 
 __all__: list[str] = []
 
@@ -47,10 +48,12 @@ def _(evidence: ShapeEvidence, finding: Finding, subject: Subject, level: float)
 @evidence_figures.register
 def _(evidence: ShapeEvidence, finding: Finding, subject: Subject, level: float) -> list[Figure]:
     freedom = evidence.degrees_of_freedom
-    statistic = f"{ratio(evidence.statistic)}, {freedom} df" if freedom else NOT_KNOWN
+    statistic = wording().not_known
+    if freedom:
+        statistic = message("{}, {} df", ratio(evidence.statistic), freedom)
     return [
-        ("Largest gap in the middle 90% of rows", gap(evidence.largest_gap)),
-        ("Test for another bend (χ²)", statistic),
-        ("p-value", p_value(evidence.p_value)),
-        ("Groups shown", amount(len(evidence.bins))),
+        (middle_gap(), gap(evidence.largest_gap)),
+        (message("Test for another bend (χ²)"), statistic),
+        (message("p-value"), p_value(evidence.p_value)),
+        (message("Groups shown"), amount(len(evidence.bins))),
     ]

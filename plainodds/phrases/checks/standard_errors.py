@@ -15,12 +15,15 @@ from plainodds.phrases.checks.finding_words import (
     made,
 )
 from plainodds.phrases.checks.parts import amount, coefficients, columns_named
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import ratio
 from plainodds.phrases.units import tidy
 
 __all__: list[str] = []
 
-_UNIT = "log odds for one standard deviation of the column"
+
+def _unit() -> str:
+    return message("log odds for one standard deviation of the column")
 
 
 @evidence_words.register
@@ -42,7 +45,7 @@ def _(
         more = f"; {amount(len(wide) - 1)} more {_are(len(wide) - 1)} hardly known either"
         what = (
             f"the coefficient {columns_named(columns[:1])} is hardly known, with a standard error "
-            f"of {ratio(wide[0].se_per_spread)} in {_UNIT}{more if len(wide) > 1 else ''}"
+            f"of {ratio(wide[0].se_per_spread)} in {_unit()}{more if len(wide) > 1 else ''}"
         )
         step = (
             "See whether outcomes are told without exception, predictors follow from each other "
@@ -51,7 +54,7 @@ def _(
         return made(finding, subject, what, step)
     what = (
         "every coefficient has a standard error; the largest is "
-        f"{ratio(evidence.largest_per_spread)} in {_UNIT}"
+        f"{ratio(evidence.largest_per_spread)} in {_unit()}"
     )
     return made(finding, subject, what, "Nothing needs doing about this")
 
@@ -64,11 +67,12 @@ def _are(number: int) -> str:
 def _(
     evidence: StandardErrorsEvidence, finding: Finding, subject: Subject, level: float
 ) -> list[Figure]:
-    largest = ratio(evidence.largest_per_spread)
-    found: list[Figure] = [(f"Largest standard error ({_UNIT})", largest)]
+    largest, unit = ratio(evidence.largest_per_spread), _unit()
+    found: list[Figure] = [(message("Largest standard error ({})", unit), largest)]
     for each in evidence.wide:
-        told = "missing"
+        told = message("missing")
         if not math.isnan(each.se):
-            told = f"{ratio(each.se)}, that is {ratio(each.se_per_spread)} in {_UNIT}"
-        found.append((f"Standard error of “{tidy(each.column)}”", told))
+            sizes = ratio(each.se), ratio(each.se_per_spread)
+            told = message("{}, that is {} in {}", *sizes, unit)
+        found.append((message("Standard error of “{}”", tidy(each.column)), told))
     return found

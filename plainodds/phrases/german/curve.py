@@ -90,6 +90,7 @@ def is_averaged(answer: CurveAnswer) -> bool:
     return answer.question.others == "observed"
 
 
+@GERMAN.others_words.register
 def _others(answer: CurveAnswer, at_most: int = 8) -> list[str]:
     subject, question = answer.subject, answer.question
     shown = {question.predictor, question.by}

@@ -6,6 +6,7 @@ asks them to be inflected: a value stands after an equals sign, an event in quot
 
 from __future__ import annotations
 
+from plainodds.phrases.german.messages import MESSAGES
 from plainodds.phrases.languages import Language
 from plainodds.phrases.lexicon import Lexicon
 from plainodds.phrases.numbers import Marks, Wording
@@ -86,6 +87,7 @@ _LEXICON = Lexicon(
     as_it_is="wie jetzt",
     unseen="{} (in keiner Zeile)",
     once_shifted="{name} mancher Zeilen nach der Verschiebung {known}",
+    messages=MESSAGES,
 )
 
 GERMAN = Language("de", "German", Marks(",", "."), _WORDING, _LEXICON)

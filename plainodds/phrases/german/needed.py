@@ -6,6 +6,7 @@ import math
 
 from plainodds.answers.comparing import NumberNeeded
 from plainodds.model.predictors import Subject
+from plainodds.phrases.german.language import GERMAN
 from plainodds.phrases.german.parts import case, cases, level_intervals
 from plainodds.phrases.lexicon import lexicon
 from plainodds.phrases.needed import needed_range, pieces
@@ -46,6 +47,7 @@ def needed_sentences(subject: Subject, number: NumberNeeded, level: float) -> li
     ]
 
 
+@GERMAN.needed_technical.register
 def needed_technical(number: NumberNeeded, level: float) -> list[str]:
     """The number needed with its interval's pieces; empty where it is not known."""
     if math.isnan(number.estimate):

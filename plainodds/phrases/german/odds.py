@@ -17,7 +17,6 @@ from plainodds.phrases.choices.odds import (
     typical_chance,
 )
 from plainodds.phrases.german.concerns import sparse_cautions, unseen_cautions
-from plainodds.phrases.german.joined_tests import joined_test
 from plainodds.phrases.german.language import GERMAN
 from plainodds.phrases.german.likelihood import (
     interval_method,
@@ -36,6 +35,7 @@ from plainodds.phrases.german.parts import (
 )
 from plainodds.phrases.german.parts import chance as chance_for
 from plainodds.phrases.german.unbounded import unbounded_cautions, unbounded_told
+from plainodds.phrases.joined_tests import joined_test
 from plainodds.phrases.labels import (
     change_label,
     given_clause,

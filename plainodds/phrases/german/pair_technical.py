@@ -3,9 +3,9 @@
 from __future__ import annotations
 
 from plainodds.answers.pair import PairAnswer
-from plainodds.phrases.german.joined_tests import joined_test
 from plainodds.phrases.german.pair_labels import at_b, interaction, noun, per_additional
 from plainodds.phrases.german.parts import covariance, drawn_method, event, level_intervals
+from plainodds.phrases.joined_tests import joined_test
 from plainodds.phrases.labels import listed, named_value
 from plainodds.phrases.lexicon import lexicon
 from plainodds.phrases.numbers import p_value, percentage_points

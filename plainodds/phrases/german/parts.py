@@ -10,6 +10,7 @@ from plainodds.answers.estimate import Estimate
 from plainodds.answers.where import Mask, Where
 from plainodds.model.predictors import OutcomeFacts, Stakes, Subject
 from plainodds.phrases.averaged import values_chosen
+from plainodds.phrases.german.language import GERMAN
 from plainodds.phrases.held import stated_and_typical
 from plainodds.phrases.numbers import count, guarded_count, level_figures, quantity
 from plainodds.phrases.parts import BEYOND_SAYING, RARE, counted_rows, profile_words
@@ -241,6 +242,7 @@ def handed_on(text: str) -> str:
     return f"Hinweis (englisch): {sentence(text)}"
 
 
+@GERMAN.model_cautions.register
 def model_cautions(subject: Subject, *, offset_held: bool = True) -> tuple[str, ...]:
     """What holds for every answer of this fitted model.
 

@@ -3,9 +3,10 @@
 from __future__ import annotations
 
 from plainodds.answers.soundness import SoundnessAnswer, shown_finding
+from plainodds.phrases.checks.headings import concern_label, finding_heading
+from plainodds.phrases.checks.overall import overall_limits
 from plainodds.phrases.choices.checks import findings_told, how_many
 from plainodds.phrases.german.checks.finding_words import finding_words
-from plainodds.phrases.german.checks.headings import concern_label, finding_heading
 from plainodds.phrases.german.checks.pictures import picture_words
 from plainodds.phrases.german.checks.plainly import plain_sentences
 from plainodds.phrases.german.language import GERMAN
@@ -21,15 +22,6 @@ __all__: list[str] = []
 _LOOKED_AT = (
     "Eine Prüfung, die nichts findet, sagt nur, dass diese Daten es nicht zeigen; ob die Merkmale "
     "die richtigen sind und wie Fälle in die Daten kamen, kann keine Prüfung sagen."
-)
-_OVERALL_LIMITS = (
-    "Der Test von Hosmer und Lemeshow hängt daran, wie Fälle gruppiert werden, was willkürlich "
-    "ist; er findet in kleinen Stichproben wenig und in jeder großen etwas und sagt nicht, wo ein "
-    "Modell falsch ist.",
-    "Tjurs und McFaddens R² sind keine Anteile erklärter Varianz, und ein richtiges Modell eines "
-    "seltenen oder zufälligen Ereignisses hat niedrige.",
-    "Der Link-Test sieht nur eine Art von Biegung, entlang der Wahrscheinlichkeiten des Modells "
-    "selbst.",
 )
 _C_LIMITS = (
     "Das Maß c sagt, wie oft ein Fall mit dem Ereignis höher eingestuft wird als einer ohne es; es "
@@ -89,7 +81,7 @@ def _technical(answer: SoundnessAnswer) -> Words:
         if each.weight:
             told += [said.why, said.next_step]
     reported = {each.topic for each in answer.findings if each.evidence is not None}
-    limits = _OVERALL_LIMITS if "overall" in reported else ()
+    limits = overall_limits() if "overall" in reported else ()
     c_limits = (_C_LIMITS,) if "discrimination" in reported else ()
     return Words(tuple(told), (*limits, *c_limits, _LOOKED_AT, *_notices(answer)))
 

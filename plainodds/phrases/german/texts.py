@@ -8,6 +8,7 @@ from plainodds.answers.curve import Others
 from plainodds.answers.where import Where
 from plainodds.model.predictors import Subject
 from plainodds.phrases.averaged import rows_chosen
+from plainodds.phrases.german.language import GERMAN
 from plainodds.phrases.german.parts import (
     EVERYTHING,
     cases,
@@ -34,6 +35,9 @@ __all__ = [
     "others_made",
     "rest",
 ]
+
+
+_AVERAGED = {"chances": "die Wahrscheinlichkeiten", "changes": "die Änderungen"}
 
 
 def intervals_shown(subject: Subject, level: float, marks: str) -> str:
@@ -65,6 +69,15 @@ def rest(
     return " ".join(map(sentence, held_sentences(subject, held, others, at_most=EVERYTHING)))
 
 
+@GERMAN.rest_words.register
+def _(
+    subject: Subject, others: Others, held: Pairs, averaged: str, counted: int, where: Where = None
+) -> str:
+    """The same, with what is averaged as English tables call it."""
+    return rest(subject, others, held, _AVERAGED[averaged], counted, where)
+
+
+@GERMAN.fitted_words.register
 def fitted(subject: Subject) -> str:
     """Which model, and how many rows and events it was fitted to."""
     outcome = subject.outcome

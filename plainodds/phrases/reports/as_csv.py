@@ -15,14 +15,18 @@ _FORMULA = ("=", "+", "-", "@", "\t", "\r", "\n", "\uff1d", "\uff0b", "\uff0d", 
 
 
 def csv_of(
-    title: str, columns: Sequence[str], rows: Sequence[ReportRow], notes: Sequence[str]
+    title: str,
+    columns: Sequence[str],
+    rows: Sequence[ReportRow],
+    notes: Sequence[str],
+    above: str = "Group",
 ) -> str:
     """A title line, headings, rows and footnotes; rows beneath a heading repeat it."""
     buffer = io.StringIO()
     writer = csv.writer(buffer, lineterminator="\r\n")
     writer.writerow([_disarmed(title)])
     first, *others = columns
-    writer.writerow([_disarmed(each) for each in ("Group", first, *others)])
+    writer.writerow([_disarmed(each) for each in (above, first, *others)])
     group = ""
     for row in rows:
         if row.kind == "heading":

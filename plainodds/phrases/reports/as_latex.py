@@ -39,6 +39,7 @@ _SPECIAL = {
     "\u03b2": r"\ensuremath{\beta}",
     "\u2026": r"\ldots{}",
     "\u201c": "``",
+    "\u201e": ",,",
     "\u201d": "''",
 }
 

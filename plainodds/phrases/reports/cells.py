@@ -6,17 +6,18 @@ from collections.abc import Callable
 
 from plainodds.answers.estimate import Estimate
 from plainodds.model.predictors import Subject
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import (
-    NOT_KNOWN,
     bare_points,
     bare_points_span,
     chance,
-    confidence,
+    level_figures,
     p_value,
     ratio,
     ratio_interval,
     signed,
     span,
+    wording,
 )
 
 __all__ = [
@@ -31,7 +32,9 @@ __all__ = [
 
 def interval_title(subject: Subject, name: str, level: float) -> str:
     """As in "Odds ratio (95% interval)"; without the interval where there is none."""
-    return name if subject.no_interval else f"{name} ({confidence(level)} interval)"
+    if subject.no_interval:
+        return name
+    return message("{} ({}% interval)", name, level_figures(level))
 
 
 def ratio_cell(estimate: Estimate) -> str:
@@ -51,12 +54,12 @@ def points_cell(estimate: Estimate) -> str:
 
 def signed_cell(estimate: Estimate) -> str:
     """As in "+0.42 (+0.10 to +0.74)"."""
-    return _cell(estimate, signed, lambda low, high: f"{signed(low)} to {signed(high)}")
+    return _cell(estimate, signed, lambda low, high: wording().to.format(signed(low), signed(high)))
 
 
 def p_cell(p: float | None) -> str:
     """The p-value, or that there is none."""
-    return NOT_KNOWN if p is None else p_value(p)
+    return wording().not_known if p is None else p_value(p)
 
 
 def _cell(

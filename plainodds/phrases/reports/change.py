@@ -7,6 +7,7 @@ import math
 from plainodds.answers.change import ChangeAnswer
 from plainodds.phrases.captions.parts import fitted_words, rest_words
 from plainodds.phrases.labels import chance_of, sentence_case
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.moves import end_label, settled_moves, start_label
 from plainodds.phrases.needed import needed_technical
 from plainodds.phrases.parts import model_cautions
@@ -31,19 +32,21 @@ def _(answer: ChangeAnswer) -> ReportTable:
     told = needed_technical(answer.number_needed, question.level) if known else []
     return ReportTable(
         chance_of(subject.outcome),
-        ("Figure", interval_title(subject, "Estimate", question.level)),
+        (message("Figure"), interval_title(subject, message("Estimate"), question.level)),
         (
-            heading("Chance"),
+            heading(message("Chance")),
             entry(
                 sentence_case(start_label(subject, moves)), chance_cell(answer.start), within=True
             ),
             entry(sentence_case(end_label(subject, moves)), chance_cell(answer.end), within=True),
-            heading("Compared"),
+            heading(message("Compared")),
             entry(
-                "Difference, percentage points", points_cell(compared.risk_difference), within=True
+                message("Difference, percentage points"),
+                points_cell(compared.risk_difference),
+                within=True,
             ),
-            entry("Ratio of chances", ratio_cell(compared.risk_ratio), within=True),
-            entry("Odds ratio", ratio_cell(compared.odds_ratio), within=True),
+            entry(message("Ratio of chances"), ratio_cell(compared.risk_ratio), within=True),
+            entry(message("Odds ratio"), ratio_cell(compared.odds_ratio), within=True),
         ),
         (
             *map(sentence, told),

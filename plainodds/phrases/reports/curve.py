@@ -6,11 +6,13 @@ from collections.abc import Callable
 
 from plainodds.answers.curve import CurveAnswer, CurveLine, Scale
 from plainodds.answers.estimate import Estimate
+from plainodds.model.predictors import OutcomeFacts
 from plainodds.phrases.captions.parts import fitted_words
 from plainodds.phrases.choices.curve import tabled_places
 from plainodds.phrases.held import others_words
 from plainodds.phrases.labels import axis_title, line_label, scale_title, value_label
-from plainodds.phrases.numbers import confidence, quantity
+from plainodds.phrases.lexicon import message
+from plainodds.phrases.numbers import level_figures, quantity
 from plainodds.phrases.parts import model_cautions
 from plainodds.phrases.reports.cells import chance_cell, points_cell, ratio_cell, signed_cell
 from plainodds.phrases.reports.report import ReportTable, report_of
@@ -44,24 +46,31 @@ def _(answer: CurveAnswer) -> ReportTable:
         for place in places
     )
     open_somewhere = any(not line.supported[place] for line in answer.lines for place in places)
-    cases = tidy(subject.outcome.cases)
+    level = level_figures(question.level)
     return ReportTable(
         scale_title(answer),
         (axis_title(facts), *(_title(answer, line) for line in answer.lines)),
         rows,
         (
-            *([] if subject.no_interval else [f"In brackets {confidence(question.level)} "
-                                              "intervals."]),
-            *([f"* The data have few {cases} there, or none."] if open_somewhere else []),
+            *([] if subject.no_interval else [message("In brackets {}% intervals.", level)]),
+            *([_few(subject.outcome)] if open_somewhere else []),
             joined(*others_words(answer, at_most=_ALL), fitted_words(subject)),
             *model_cautions(subject, offset_held=question.others != "observed"),
         ),
-    )  # fmt: skip
+    )
+
+
+def _few(outcome: OutcomeFacts) -> str:
+    """What a star stands for."""
+    cases = tidy(outcome.cases)
+    if cases == "cases":
+        return message("* The data have few cases there, or none.")
+    return message("* The data have few {} there, or none.", cases)
 
 
 def _title(answer: CurveAnswer, line: CurveLine) -> str:
     if answer.question.by is None or line.by is None:
-        return "Estimate"
+        return message("Estimate")
     return line_label(answer.subject.predictor(answer.question.by), line.by)
 
 

@@ -5,6 +5,7 @@ from __future__ import annotations
 from plainodds.answers.effects import EffectsAnswer
 from plainodds.phrases.captions.parts import fitted_words, rest_words
 from plainodds.phrases.labels import effect_label, effects_title, predictor_label, value_label
+from plainodds.phrases.lexicon import lexicon, message
 from plainodds.phrases.parts import model_cautions
 from plainodds.phrases.reports.cells import interval_title, p_cell, points_cell
 from plainodds.phrases.reports.report import ReportTable, report_of
@@ -18,7 +19,7 @@ __all__: list[str] = []
 def _(answer: EffectsAnswer) -> ReportTable:
     subject, question = answer.subject, answer.question
     with_p = not subject.no_interval
-    columns = [interval_title(subject, "Percentage points", question.level)]
+    columns = [interval_title(subject, message("Percentage points"), question.level)]
     rows: list[ReportRow] = []
     opened = None
     for row in answer.rows:
@@ -26,7 +27,8 @@ def _(answer: EffectsAnswer) -> ReportTable:
         head = predictor_label(facts)
         if question.by is not None and row.by is not None:
             by = subject.predictor(question.by)
-            head = f"{predictor_label(by)} {value_label(by, row.by)}: {head}"
+            within = lexicon().value.format(predictor_label(by), value_label(by, row.by))
+            head = f"{within}: {head}"
         if head != opened:
             rows.append(heading(head))
             opened = head
@@ -34,7 +36,7 @@ def _(answer: EffectsAnswer) -> ReportTable:
         rows.append(entry(effect_label(facts, row), *cells, within=True))
     return ReportTable(
         effects_title(answer),
-        ("Predictor", *columns, *(["p-value"] if with_p else [])),
+        (message("Predictor"), *columns, *([message("p-value")] if with_p else [])),
         tuple(rows),
         (
             joined(

@@ -7,9 +7,11 @@ from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
 
 from plainodds.answers.odds import OddsAnswer
+from plainodds.model.predictors import OutcomeFacts
 from plainodds.phrases.captions.parts import fitted_words
 from plainodds.phrases.labels import listed, odds_of_event, predictor_name, sentence_case
-from plainodds.phrases.numbers import NOT_KNOWN, count, guarded_count
+from plainodds.phrases.lexicon import message
+from plainodds.phrases.numbers import count, guarded_count, wording
 from plainodds.phrases.odds_lines import Counts, OddsLine, odds_lines
 from plainodds.phrases.parts import model_cautions
 from plainodds.phrases.reports.cells import interval_title, p_cell, ratio_cell
@@ -27,21 +29,27 @@ _WITHHELD = "\u2013"
 def _(answer: OddsAnswer) -> ReportTable:
     subject, lines = answer.subject, odds_lines(answer)
     models = answer.question.models or ("",)
-    one = interval_title(subject, "Odds ratio", answer.question.level)
+    one = interval_title(subject, message("Odds ratio"), answer.question.level)
     names = [tidy(name) for name in models if name]
     columns = [f"{name}: {one}" for name in names] or [one]
     tested = not names and not subject.no_interval
     if tested:
-        columns.append("p-value")
+        columns.append(message("p-value"))
     shape = _Shape(models, tested, *_counted(lines), subject.smallest_cell)
-    counts = ["Events"] * shape.events + [sentence_case(subject.outcome.cases)] * shape.cases
+    counts = [message("Events")] * shape.events + [_cases(subject.outcome)] * shape.cases
     told = joined(_kind(answer), *_given(answer), *_whose(answer, shape), fitted_words(subject))
     return ReportTable(
         odds_of_event(subject.outcome),
-        ("Predictor", *counts, *columns),
+        (message("Predictor"), *counts, *columns),
         tuple(row for line in lines for row in _rows(line, shape)),
         (told, *model_cautions(subject)),
     )
+
+
+def _cases(outcome: OutcomeFacts) -> str:
+    """What the rows are, as a heading; in the language of now where the analyst did not say."""
+    cases = tidy(outcome.cases)
+    return message("Cases") if cases == "cases" else sentence_case(cases)
 
 
 @dataclass(frozen=True)
@@ -68,20 +76,26 @@ def _whose(answer: OddsAnswer, shape: _Shape) -> list[str]:
     if any(each is not None and math.isnan(each) for each in events):
         few = count(shape.smallest)
         told.append(
-            f"{_WITHHELD} among the events: fewer than {few} with or without them, or a number "
-            "that would give such a one away"
+            message(
+                "– among the events: fewer than {} with or without them, or a number that would "
+                "give such a one away",
+                few,
+            )
         )
     if shape.cases and answer.question.models:
         first = tidy(answer.question.models[0])
-        told.append(f"Counts are of the model “{first}”, or of the first that has the predictor")
+        told.append(
+            message("Counts are of the model “{}”, or of the first that has the predictor.", first)
+        )
     return told
 
 
 def _kind(answer: OddsAnswer) -> str:
     if answer.subject.no_interval:
         return ""
-    likelihood = answer.question.interval == "likelihood"
-    return f"Intervals {'by profile likelihood' if likelihood else 'are Wald intervals'}"
+    if answer.question.interval == "likelihood":
+        return message("Intervals by profile likelihood")
+    return message("Intervals are Wald intervals")
 
 
 def _given(answer: OddsAnswer) -> list[str]:
@@ -91,7 +105,7 @@ def _given(answer: OddsAnswer) -> list[str]:
         if row.given:
             name = predictor_name(answer.subject.predictor(row.predictor))
             others = [predictor_name(answer.subject.predictor(each)) for each, _ in row.given]
-            told[name] = f"The odds ratios of {name} depend on {listed(others)}"
+            told[name] = message("The odds ratios of {} depend on {}", name, listed(others))
     return list(told.values())
 
 
@@ -104,12 +118,14 @@ def _rows(line: OddsLine, shape: _Shape) -> Iterator[ReportRow]:
     elif line.kind == "level":
         yield entry(line.name, *counts, *[""] * len(shape.models), *last, within=True)
     elif line.kind == "reference":
-        ones = ["1 (reference)" if name in line.models else NOT_KNOWN for name in shape.models]
+        one, none = f"1 {message('(reference)')}", wording().not_known
+        ones = [one if name in line.models else none for name in shape.models]
         yield reference(line.name, *counts, *ones, *last)
     elif line.kind == "test":
         assert line.test is not None
         told = p_cell(line.test.test.p_value)
-        cells = [f"p-value {told}" if name == line.test.model else "" for name in shape.models]
+        of_model = message("p-value {}", told)
+        cells = [of_model if name == line.test.model else "" for name in shape.models]
         figures = ["", told] if shape.tested else cells
         yield entry(line.name, *counts, *figures, within=True)
     else:
@@ -119,7 +135,7 @@ def _rows(line: OddsLine, shape: _Shape) -> Iterator[ReportRow]:
         label = "; ".join(filter(None, (line.level, label)))
         by_model = {row.model: row for row in line.rows}
         cells = [
-            ratio_cell(by_model[name].odds_ratio) if name in by_model else NOT_KNOWN
+            ratio_cell(by_model[name].odds_ratio) if name in by_model else wording().not_known
             for name in shape.models
         ]
         if shape.tested:

@@ -9,9 +9,11 @@ from plainodds.answers.joint import AdditiveInteraction, JointTable
 from plainodds.answers.moves import Move
 from plainodds.answers.pair import PairAnswer
 from plainodds.phrases.captions.parts import fitted_words, rest_words
+from plainodds.phrases.labels import named_value
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.moves import moves_label
 from plainodds.phrases.numbers import guarded_count
-from plainodds.phrases.pair_labels import at_value, has_others, interaction_label, pair_title
+from plainodds.phrases.pair_labels import has_others, interaction_label, pair_title
 from plainodds.phrases.parts import model_cautions
 from plainodds.phrases.reports.cells import (
     chance_cell,
@@ -37,7 +39,11 @@ def _(answer: PairAnswer) -> ReportTable:
         rest = rest_words(subject, question.others, answer.held, "chances", answer.counted)
     return ReportTable(
         pair_title(answer),
-        ("Figure", interval_title(subject, "Estimate", question.level), "p-value"),
+        (
+            message("Figure"),
+            interval_title(subject, message("Estimate"), question.level),
+            message("p-value"),
+        ),
         (*rows, *_interaction(answer)),
         (
             joined(rest, fitted_words(subject)),
@@ -48,19 +54,20 @@ def _(answer: PairAnswer) -> ReportTable:
 
 def _interaction(answer: PairAnswer) -> Iterator[ReportRow]:
     found = answer.interaction
-    yield heading("The interaction")
+    yield heading(message("The interaction"))
     label = interaction_label(answer, "probability")
-    for where, estimate, p in (
-        ("at the profile held", found.at_profile, found.at_profile_p_value),
-        ("averaged", found.averaged, found.averaged_p_value),
+    for told, estimate, p in (
+        (
+            message("{}, percentage points, at the profile held", label),
+            found.at_profile,
+            found.at_profile_p_value,
+        ),
+        (message("{}, percentage points, averaged", label), found.averaged, found.averaged_p_value),
     ):
         if estimate is not None:
-            yield entry(
-                f"{label}, percentage points, {where}", points_cell(estimate), p_cell(p),
-                within=True,
-            )  # fmt: skip
+            yield entry(told, points_cell(estimate), p_cell(p), within=True)
     test = found.test
-    ratio = ratio_cell(found.ratio) if found.joined else "1 (no shared term)"
+    ratio = ratio_cell(found.ratio) if found.joined else message("1 (no shared term)")
     tested = p_cell(test.p_value) if test is not None else ""
     yield entry(interaction_label(answer, "odds"), ratio, tested, within=True)
 
@@ -68,42 +75,50 @@ def _interaction(answer: PairAnswer) -> Iterator[ReportRow]:
 def _joint(answer: PairAnswer, joint: JointTable) -> Iterator[ReportRow]:
     """Each combination, the effects within strata, the measures of adding up."""
     subject, question = answer.subject, answer.question
-    yield heading("Each combination: cases with and without the event, chance, odds ratio")
+    yield heading(message("Each combination: cases with and without the event, chance, odds ratio"))
     for cell in joint.cells:
-        told = f"{at_value(subject, question.a, cell.a)}, {at_value(subject, question.b, cell.b)}"
+        a = named_value(subject.predictor(question.a), cell.a)
+        b = named_value(subject.predictor(question.b), cell.b)
         counts = _counts(cell.rows, cell.events, subject.smallest_cell)
         chance = "" if cell.chance is None else f"{chance_cell(cell.chance)}; "
-        odds = "1 (reference)" if cell.is_reference else ratio_cell(cell.odds_ratio)
-        yield entry(f"{told}{counts}", f"{chance}{odds}", "", within=True)
-    yield heading("Odds ratios within strata")
+        one = f"1 {message('(reference)')}"
+        odds = one if cell.is_reference else ratio_cell(cell.odds_ratio)
+        yield entry(f"{a}, {b}{counts}", f"{chance}{odds}", "", within=True)
+    yield heading(message("Odds ratios within strata"))
     for stratum in joint.strata:
         move = ((stratum.predictor, Move(stratum.start, stratum.end)),)
         other = question.b if stratum.predictor == question.a else question.a
-        within = at_value(subject, other, stratum.within)
-        label = f"{moves_label(subject, move)}, with {within}"
+        within = named_value(subject.predictor(other), stratum.within)
+        label = message("{}, with {}", moves_label(subject, move), within)
         yield entry(label, ratio_cell(stratum.odds_ratio), "", within=True)
-    yield from _additive(joint.additive_by_odds, "odds")
+    yield heading(message("Adding up, from odds"))
+    yield from _additive(joint.additive_by_odds)
     if joint.additive_by_chances is not None:
-        yield from _additive(joint.additive_by_chances, "chances")
+        yield heading(message("Adding up, from chances"))
+        yield from _additive(joint.additive_by_chances)
 
 
 def _counts(rows: float | None, events: float | None, smallest: int) -> str:
     if rows is None:
         return ""
     if rows == 0:
-        return " (no rows)"
+        return f" {message('(no rows)')}"
     total = guarded_count(round(rows), smallest)
     if events is None or math.isnan(events):
-        return f" ({total} in all)"
-    return f" ({guarded_count(round(events), smallest)} with, of {total})"
+        return f" {message('({} in all)', total)}"
+    told = message("({} with, of {})", guarded_count(round(events), smallest), total)
+    return f" {told}"
 
 
-def _additive(found: AdditiveInteraction, by: str) -> Iterator[ReportRow]:
-    yield heading(f"Adding up, from {by}")
-    yield entry("Relative excess risk due to interaction",
-                signed_cell(found.relative_excess_risk), "", within=True)  # fmt: skip
-    yield entry("Attributable proportion",
-                signed_cell(found.attributable_proportion), "", within=True)  # fmt: skip
+def _additive(found: AdditiveInteraction) -> Iterator[ReportRow]:
     synergy = found.synergy_index
-    told = "has no meaning here" if synergy is None else ratio_cell(synergy)
-    yield entry("Synergy index", told, "", within=True)
+    told = message("has no meaning here") if synergy is None else ratio_cell(synergy)
+    for name, figure in (
+        (
+            message("Relative excess risk due to interaction"),
+            signed_cell(found.relative_excess_risk),
+        ),
+        (message("Attributable proportion"), signed_cell(found.attributable_proportion)),
+        (message("Synergy index"), told),
+    ):
+        yield entry(name, figure, "", within=True)

@@ -2,12 +2,14 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
+from dataclasses import dataclass, field
 from functools import singledispatch
 from typing import Literal
 
 from plainodds.answers.disclosure import SMALLEST_CELL, guarded
 from plainodds.answers.questions import Answer
+from plainodds.phrases.languages import spoken_now
+from plainodds.phrases.lexicon import message
 from plainodds.phrases.reports.as_csv import csv_of
 from plainodds.phrases.reports.as_html import html_of
 from plainodds.phrases.reports.as_latex import latex_of
@@ -29,6 +31,8 @@ class ReportTable:
     rows : tuple of ReportRow
     notes : tuple of str
         Footnotes, in whole sentences.
+    above : str
+        What CSV calls the column that repeats the headings above rows.
 
     Examples
     --------
@@ -45,6 +49,8 @@ class ReportTable:
     columns: tuple[str, ...]
     rows: tuple[ReportRow, ...]
     notes: tuple[str, ...]
+    # said when the table is made, since it may be written where another language is spoken
+    above: str = field(default_factory=lambda: message("Group"))
 
     def html(self) -> str:
         """As HTML that pastes into a word processor: its looks are in the elements."""
@@ -60,7 +66,7 @@ class ReportTable:
 
     def csv(self) -> str:
         """As CSV (RFC 4180); text that a spreadsheet would take for a formula is disarmed."""
-        return csv_of(self.title, self.columns, self.rows, self.notes)
+        return csv_of(self.title, self.columns, self.rows, self.notes, self.above)
 
     def written(self, form: Literal["html", "markdown", "latex", "csv"]) -> str:
         """In one of the four, by name.
@@ -87,6 +93,7 @@ def report_of(answer: Answer) -> ReportTable:
     raise TypeError(f"There is no report table of {type(answer).__name__}.")
 
 
+@spoken_now()
 def report_table(answer: Answer, smallest_cell: int = SMALLEST_CELL) -> ReportTable:
     """Format an answer's figures for a report: estimate (interval), references, footnotes.
 

@@ -6,7 +6,7 @@ import pytest
 
 from plainodds.answers.checks.finding import TOPICS
 from plainodds.phrases.checks.finding_words import finding_figures, finding_words
-from plainodds.phrases.checks.overall import OVERALL_LIMITS
+from plainodds.phrases.checks.overall import overall_limits
 from tests.drawings import made_findings as made
 from tests.drawings.checks.sheet import board_of, drawn, points_of, text_of
 from tests.drawings.seen import words_on
@@ -41,7 +41,7 @@ def test_overall_figures_stand_in_a_table_with_their_limits():
     for label, figure in finding_figures(answer.findings[0], answer.subject, 0.95):
         assert label in words
         assert figure in words
-    for limit in OVERALL_LIMITS:
+    for limit in overall_limits():
         assert limit in text_of(answer)
 
 

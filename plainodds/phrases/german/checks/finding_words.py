@@ -7,8 +7,9 @@ from functools import singledispatch
 from plainodds.answers.checks.finding import Evidence, Finding, Topic, Unknown
 from plainodds.model.predictors import Subject
 from plainodds.phrases.checks.finding_words import FindingWords
-from plainodds.phrases.german.checks.headings import finding_heading
+from plainodds.phrases.checks.headings import finding_heading
 from plainodds.phrases.german.checks.parts import WHY_NOT_KNOWN
+from plainodds.phrases.german.language import GERMAN
 from plainodds.phrases.numbers import quantity
 from plainodds.phrases.sentences import sentence
 
@@ -69,6 +70,7 @@ def _why(topic: Topic) -> str:
     return _WHY[topic]
 
 
+@GERMAN.finding_words.register
 def finding_words(finding: Finding, subject: Subject, level: float) -> FindingWords:
     """Say a finding in words."""
     if finding.evidence is not None:

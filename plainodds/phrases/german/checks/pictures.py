@@ -13,8 +13,8 @@ from plainodds.answers.checks.finding import Finding
 from plainodds.answers.checks.influence import InfluenceEvidence
 from plainodds.answers.checks.shape import ShapeEvidence
 from plainodds.model.predictors import Subject
+from plainodds.phrases.checks.headings import concern_label
 from plainodds.phrases.german.checks.finding_words import finding_words
-from plainodds.phrases.german.checks.headings import concern_label
 from plainodds.phrases.german.checks.parts import coefficients, counted
 from plainodds.phrases.german.parts import cases, event
 from plainodds.phrases.labels import predictor_name
