@@ -85,10 +85,23 @@ def _(evidence: CalibrationEvidence, smallest: int) -> Evidence:
 
 @_without_small.register
 def _(evidence: DiscriminationEvidence, smallest: int) -> Evidence:
+    edges, counts = list(evidence.edges), list(zip(evidence.events, evidence.others, strict=True))
+    place = 0
+    while place < len(counts) and len(counts) > 1:
+        if not any(0 < each < smallest for each in counts[place]):
+            place += 1
+            continue
+        # with the neighbour above, or with the one below where it is the last
+        first = min(place, len(counts) - 2)
+        (a, b), (c, d) = counts[first : first + 2]
+        counts[first : first + 2] = [(a + c, b + d)]
+        del edges[first + 1]
+        place = first
     return replace(
         evidence,
-        events=tuple(_raised_float(each, smallest) for each in evidence.events),
-        others=tuple(_raised_float(each, smallest) for each in evidence.others),
+        edges=tuple(edges),
+        events=tuple(_raised_float(events, smallest) for events, _ in counts),
+        others=tuple(_raised_float(others, smallest) for _, others in counts),
     )
 
 

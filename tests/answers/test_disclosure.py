@@ -10,6 +10,7 @@ from hypothesis import strategies as st
 import plainodds as po
 from plainodds.answers.bounded import as_ratio
 from plainodds.answers.checks.amount import LevelCount, LevelsEvidence
+from plainodds.answers.checks.discrimination import DiscriminationEvidence
 from plainodds.answers.disclosure import guarded
 from plainodds.answers.estimate import Estimate
 from tests.phrases import made, made_changes, made_findings
@@ -125,6 +126,26 @@ def test_with_a_smallest_cell_of_one_nothing_changes():
 def test_an_impossible_smallest_cell_is_refused(smallest):
     with pytest.raises(po.QuestionRefused, match="whole number of at least 1"):
         guarded(made.curve_answer(), smallest)
+
+
+@given(
+    st.lists(st.tuples(st.integers(0, 40), st.integers(0, 40)), min_size=1, max_size=20),
+    st.integers(2, 15),
+)
+def test_bars_of_few_events_are_merged_and_no_case_is_lost(bins, smallest):
+    edges = tuple(map(float, range(len(bins) + 1)))
+    events, others = (tuple(map(float, each)) for each in zip(*bins, strict=True))
+    evidence = DiscriminationEvidence(Estimate(0.7, 0.01, 0.6, 0.8), edges, events, others)
+    answer = made_findings.answer_of(
+        made_findings.finding("discrimination", "nothing found", evidence)
+    )
+    found = guarded(answer, smallest).findings[0].evidence
+    assert (found.edges[0], found.edges[-1]) == (edges[0], edges[-1])
+    for told, counts in ((found.events, events), (found.others, others)):
+        assert len(told) == len(found.edges) - 1
+        assert all(each == 0 or each >= smallest for each in told)
+        total = sum(counts)
+        assert sum(told) == (total if total == 0 or total >= smallest else smallest)
 
 
 def test_a_combination_of_few_events_is_not_withheld_alone():

@@ -168,12 +168,8 @@ def _chances(found: Found) -> list[tuple[float, float, float]]:
     fine = found.also(DiscriminationEvidence)
     if fine is not None:
         totals = [sum(pair) for pair in zip(fine.events, fine.others, strict=True)]
-        highest = max(totals) or 1.0
         edges = fine.edges
-        return [
-            (a, b, total / highest)
-            for a, b, total in zip(edges[:-1], edges[1:], totals, strict=True)
-        ]
+        return density(edges[:-1], edges[1:], totals, 0.0)
     bins = found.evidence(CalibrationEvidence).bins
     lows, highs = [each.low for each in bins], [each.high for each in bins]
     return density(lows, highs, [each.cases for each in bins], highs[-1] - lows[0])

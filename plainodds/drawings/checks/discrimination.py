@@ -2,6 +2,9 @@
 
 from __future__ import annotations
 
+from collections.abc import Sequence
+from itertools import pairwise
+
 from plainodds.answers.checks.discrimination import DiscriminationEvidence
 from plainodds.drawings.checks.along import (
     Axis,
@@ -20,7 +23,7 @@ from plainodds.drawings.lettering import line_height, text_width, wrapped
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import round_ticks
 from plainodds.phrases.checks.headings import picture_axes, picture_legend
-from plainodds.phrases.checks.parts import amount, cases
+from plainodds.phrases.checks.parts import amount, cases, cases_called
 from plainodds.phrases.checks.telling import told_finding
 from plainodds.phrases.labels import sentence_case
 from plainodds.phrases.lexicon import message
@@ -56,21 +59,41 @@ def _least(found: Found, theme: Theme, width: float) -> float:
 
 
 def _notes(found: Found) -> list[str]:
-    if _factor(found.evidence(DiscriminationEvidence)) == 1.0:
-        return []
-    return [message("Each side has a scale of its own: there are many more of one kind.")]
+    evidence = found.evidence(DiscriminationEvidence)
+    notes = []
+    if _factor(evidence) != 1.0:
+        notes.append(message("Each side has a scale of its own: there are many more of one kind."))
+    if min(_narrowness(evidence)) < 1.0:
+        notes.append(
+            message("A wider bar is of several with few {} each, at their mean height.",
+                    cases_called(found.subject))
+        )  # fmt: skip
+    return notes
+
+
+def _narrowness(evidence: DiscriminationEvidence) -> list[float]:
+    """Each bar's narrowness: 1 for the narrowest, less for bars of several bins."""
+    widths = [b - a for a, b in pairwise(evidence.edges)]
+    # all widths are the same to rounding unless bins were merged
+    return [round(min(widths) / each, 9) for each in widths]
+
+
+def _heights(evidence: DiscriminationEvidence, counts: Sequence[float]) -> list[float]:
+    """Heights of bars, whose areas are cases."""
+    return [number * narrow for number, narrow in zip(counts, _narrowness(evidence), strict=True)]
 
 
 def _factor(evidence: DiscriminationEvidence) -> float:
     """How many times as high a bar below is drawn as one above of the same number."""
-    up, down = max(evidence.events), max(evidence.others)
+    up, down = (max(_heights(evidence, each)) for each in (evidence.events, evidence.others))
     if not (up > 0 and down > 0) or 1 / _UNLIKE <= up / down <= _UNLIKE:
         return 1.0
     return up / down
 
 
 def _upright(evidence: DiscriminationEvidence, factor: float, most: int) -> Axis:
-    up, down = max(evidence.events), factor * max(evidence.others)
+    up, down = (max(_heights(evidence, each)) for each in (evidence.events, evidence.others))
+    down *= factor
     span = up + down
     above = round_ticks(0.0, up, max(2, round(most * up / span)))
     below = round_ticks(0.0, down / factor, max(2, round(most * down / span)))
@@ -134,9 +157,13 @@ def _draw_bars(board: Board, evidence: DiscriminationEvidence, factor: float) ->
     sides = (("events", evidence.events, 1.0), ("others", evidence.others, -factor))
     for place, (name, counts, scale) in enumerate(sides):
         outlines = []
-        for first, last, number in zip(edges[:-1], edges[1:], counts, strict=True):
-            if number > 0:
-                tip, gap = scale * number, 0.06 * (last - first)
+        bars = zip(
+            edges[:-1], edges[1:], _heights(evidence, counts), _narrowness(evidence), strict=True
+        )
+        for first, last, tall, narrow in bars:
+            if tall > 0:
+                # the same gap beside every bar
+                tip, gap = scale * tall, 0.06 * (last - first) * narrow
                 low, high = first + gap, last - gap
                 outlines.append([(low, 0.0), (high, 0.0), (high, tip), (low, tip)])
         board.area(

@@ -1,5 +1,7 @@
 """Events above, others below."""
 
+from dataclasses import replace
+
 import numpy as np
 import pytest
 
@@ -18,6 +20,23 @@ def test_events_stand_above_and_others_below_the_axis():
     assert tips(board, "events") == [each for each in held.events if each]
     assert tips(board, "others") == [-each for each in held.others if each]
     assert "scale of its own" not in text_of(made.answer(finding))
+
+
+def test_merged_bars_have_areas_in_proportion_to_cases():
+    finding = made.discrimination()
+    evidence = finding.evidence
+    counts = [(evidence.events[0] + evidence.events[1], *evidence.events[2:])]
+    counts += [(evidence.others[0] + evidence.others[1], *evidence.others[2:])]
+    merged = replace(
+        evidence, edges=(evidence.edges[0], *evidence.edges[2:]),
+        events=counts[0], others=counts[1],
+    )  # fmt: skip
+    answer = made.answer(replace(finding, evidence=merged))
+    board = board_of(answer)
+    assert tips(board, "events")[:2] == [counts[0][0] / 2, counts[0][1]]
+    assert tips(board, "others")[:2] == [-counts[1][0] / 2, -counts[1][1]]
+    assert "wider bar" in text_of(answer)
+    assert "wider bar" not in text_of(made.answer(finding))
 
 
 def test_bars_stand_within_their_bins():

@@ -75,6 +75,9 @@ CHECKS: dict[str, str] = {
     "Each side has a scale of its own: there are many more of one kind.": (
         "Jede Seite hat ihre eigene Skala: von der einen Art gibt es viel mehr."
     ),
+    "A wider bar is of several with few {} each, at their mean height.": (
+        "Ein breiterer Balken fasst mehrere zusammen (je wenige {}), in ihrer mittleren Höhe."
+    ),
     # how much data there is
     "{cases} {side} for each of {coefficients}": "{cases} {side} je Koeffizient ({coefficients})",
     "too few": "zu wenige",
