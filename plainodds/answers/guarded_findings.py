@@ -56,8 +56,12 @@ def _(evidence: LevelsEvidence, smallest: int) -> Evidence:
 
 @_without_small.register
 def _(evidence: MissingEvidence, smallest: int) -> Evidence:
+    # a share of few tells how many of them had the event
+    few = 0 < evidence.known < smallest
     return replace(
         evidence,
+        share_dropped=math.nan if few else evidence.share_dropped,
+        difference=None if few else evidence.difference,
         dropped=_raised(evidence.dropped, smallest),
         known=_raised(evidence.known, smallest),
         columns=tuple((name, _raised(number, smallest)) for name, number in evidence.columns),

@@ -1,9 +1,14 @@
 """What of a fit's checks leaves the notebook: captions, methods, tables, and no single row."""
 
 import math
+import re
+from dataclasses import replace
 
+import numpy as np
 import pytest
+import statsmodels.api as sm
 import statsmodels.formula.api as smf
+from matplotlib.text import Text
 
 import plainodds as po
 from plainodds.answers.disclosure import guarded
@@ -62,3 +67,43 @@ def test_a_caption_names_the_finding_that_is_shown(answer):
     shown = po.caption(answer)
     assert "1,200" in shown
     assert shown.count("  ") == 0
+
+
+@pytest.fixture(scope="module")
+def scarce():
+    """A level of four, all of whose events are known, and six rows left out."""
+    mains = po.demo.tessel_bay(rows=1_500)
+    mains["soil"] = mains.soil.astype(str)
+    mains.loc[mains.index[:4], "soil"] = "peat"
+    mains.loc[mains.index[:4], "burst"] = 1
+    mains.loc[mains.index[50:56], "age_years"] = np.nan
+    result = smf.glm("burst ~ age_years + soil", mains, family=sm.families.Binomial()).fit()
+    outcome = po.Outcome(event="a burst", case="main", cases="mains")
+    return po.FittedLogit(result, outcome=outcome).soundness()
+
+
+@pytest.mark.parametrize("language", ["en", "de"])
+def test_what_was_raised_is_told_as_up_to_and_never_as_the_number(scarce, language):
+    whole, safe = scarce, guarded(scarce)
+    few = {"en": "up to 10", "de": "höchstens 10"}[language]
+    with po.writing(language):
+        told = "\n".join(
+            (
+                str(po.words(safe)), str(po.words(safe, "technical")),
+                po.report_table(whole).markdown(),
+                *texts_of(replace(safe, question=replace(safe.question, show="levels"))),
+                *texts_of(replace(safe, question=replace(safe.question, show="missing"))),
+                *texts_of(replace(safe, question=replace(safe.question, show="separation"))),
+            )
+        )  # fmt: skip
+    told = " ".join(told.split())
+    assert told.count(few) >= 6
+    rest = told.replace(few, "")
+    # nothing else is ten, and neither four mains nor six rows are told
+    assert not re.search(r"(?<![\d.,×/])(?:4|6|10) (?:mains|rows|of|Fälle|Zeilen|von)", rest)
+    for unknown in ("not known events", "nicht bekannt Ereignis"):
+        assert unknown not in told
+
+
+def texts_of(answer):
+    return [each.get_text() for each in po.draw(answer).findobj(Text) if each.get_text()]

@@ -17,7 +17,7 @@ from plainodds.phrases.checks.headings import picture_axes
 from plainodds.phrases.checks.parts import quoted, short_list
 from plainodds.phrases.labels import predictor_name, sentence_case
 from plainodds.phrases.lexicon import message
-from plainodds.phrases.numbers import chance, count, level_figures
+from plainodds.phrases.numbers import chance, count, guarded_count, level_figures
 
 __all__ = ["MISSING"]
 
@@ -46,8 +46,11 @@ def _laid(found: Found, theme: Theme, width: float) -> LaidRows:
 
 def _columns(found: Found) -> str:
     """In which columns values are missing, the most first."""
-    told = [f"{_name(str(name), found.subject)} ({count(int(number))})"
-            for name, number in found.evidence(MissingEvidence).columns]  # fmt: skip
+    subject = found.subject
+    told = [
+        f"{_name(str(name), subject)} ({guarded_count(int(number), subject.smallest_cell)})"
+        for name, number in found.evidence(MissingEvidence).columns
+    ]
     return message("Missing in the rows left out: {}.", short_list(told, 6)) if told else ""
 
 

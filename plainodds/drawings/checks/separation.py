@@ -60,6 +60,9 @@ def _counts(found: Found) -> tuple[LevelCount, ...]:
         )
         if cases > 0
     ]
+    if any(math.isnan(each.events) for each in held):
+        # withheld before the answer leaves: there is nothing to draw
+        return ()
     wanted = sorted(held, key=lambda each: (each.predictor, each.level) not in blamed)
     kept = wanted[:MOST_LEVELS]
     return tuple(each for each in held if each in kept)

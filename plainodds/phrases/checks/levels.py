@@ -14,7 +14,17 @@ from plainodds.phrases.checks.finding_words import (
     evidence_words,
     made,
 )
-from plainodds.phrases.checks.parts import amount, because, cases, counted, level_name, short_list
+from plainodds.phrases.checks.parts import (
+    amount,
+    because,
+    cases,
+    cases_called,
+    counted,
+    level_name,
+    short_list,
+    told_count,
+)
+from plainodds.phrases.choices.checks import fewest_of_one
 from plainodds.phrases.labels import sentence_case
 from plainodds.phrases.lexicon import message
 
@@ -38,12 +48,13 @@ def _(evidence: LevelsEvidence, finding: Finding, subject: Subject, level: float
         )
         return made(finding, subject, what, "Count events for each level in the data themselves")
     if not evidence.sparse:
-        rarest = min(counts, key=lambda each: min(each.events, each.cases - each.events))
+        fewest_known = fewest_of_one(evidence)
         what = (
-            "every level has at least "
-            f"{amount(min(rarest.events, rarest.cases - rarest.events))} cases with the event and "
-            "as many without it"
+            f"every level has at least {amount(fewest_known)} cases with the event and as many "
+            "without it"
         )
+        if math.isnan(fewest_known):
+            what = "every level has enough cases with the event and without it"
         return made(finding, subject, what, "Nothing needs doing about this")
     sparse = counts[: evidence.sparse]
     told = [f"{_name(subject, each)} ({_events(subject, each)})" for each in sparse]
@@ -70,10 +81,20 @@ def _name(subject: Subject, each: LevelCount) -> str:
 
 
 def _events(subject: Subject, each: LevelCount) -> str:
-    number, whole = amount(each.events), cases(subject, each.cases)
+    number, whole = amount(each.events), _whole(subject, each)
+    if math.isnan(each.events):
+        # withheld before the answer leaves, or never known
+        withheld = message("{cases}, events not told", cases=whole)
+        return withheld if subject.smallest_cell else whole
     if number == "1":
         return message("{number} event in {cases}", number=number, cases=whole)
     return message("{number} events in {cases}", number=number, cases=whole)
+
+
+def _whole(subject: Subject, each: LevelCount) -> str:
+    if each.cases <= subject.smallest_cell:
+        return f"{told_count(subject, each.cases)} {cases_called(subject)}"
+    return cases(subject, each.cases)
 
 
 @evidence_figures.register
@@ -81,7 +102,7 @@ def _(evidence: LevelsEvidence, finding: Finding, subject: Subject, level: float
     return [
         (
             sentence_case(_name(subject, each)),
-            cases(subject, each.cases) if math.isnan(each.events) else _events(subject, each),
+            _events(subject, each),
         )
         for each in evidence.counts
     ]

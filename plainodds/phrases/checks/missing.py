@@ -17,7 +17,7 @@ from plainodds.phrases.checks.finding_words import (
 from plainodds.phrases.checks.parts import because, quoted
 from plainodds.phrases.labels import predictor_label, predictor_name, sentence_case
 from plainodds.phrases.lexicon import message
-from plainodds.phrases.numbers import chance, count
+from plainodds.phrases.numbers import chance, count, guarded_count
 from plainodds.phrases.parts import difference_with_interval
 
 __all__: list[str] = []
@@ -48,7 +48,11 @@ def _left_out(evidence: MissingEvidence, subject: Subject) -> str:
         name, number = evidence.columns[0]
         most = "most often in" if len(evidence.columns) > 1 else "in"
         often = f", {most} {_column(name, subject)}"
-        often += f" ({count(number)})" if number < evidence.dropped else ""
+        told = guarded_count(int(number), subject.smallest_cell)
+        often += f" ({told})" if number < evidence.dropped else ""
+    if evidence.dropped <= subject.smallest_cell:
+        few = guarded_count(evidence.dropped, subject.smallest_cell)
+        return f"in {few} rows something was missing{often}, and they were left out"
     return (
         f"in {chance(evidence.dropped / every)} of rows ({count(evidence.dropped)} of "
         f"{count(every)}) something was missing{often}, and they were left out"
@@ -88,15 +92,18 @@ def _column(name: str, subject: Subject) -> str:
 def _(evidence: MissingEvidence, finding: Finding, subject: Subject, level: float) -> list[Figure]:
     found: list[Figure] = [
         (message("Rows used"), count(evidence.used)),
-        (message("Rows left out"), count(evidence.dropped)),
+        (message("Rows left out"), guarded_count(evidence.dropped, subject.smallest_cell)),
     ]
     labels = {facts.name: predictor_label(facts) for facts in subject.predictors}
     for name, number in evidence.columns:
         label = labels.get(name) or sentence_case(_column(name, subject))
-        found.append((message("Missing: {}", label), count(number)))
+        found.append(
+            (message("Missing: {}", label), guarded_count(int(number), subject.smallest_cell))
+        )
     if not evidence.dropped:
         return found
-    found.append((message("Left out, outcome known"), count(evidence.known)))
+    known = guarded_count(evidence.known, subject.smallest_cell)
+    found.append((message("Left out, outcome known"), known))
     if not math.isnan(evidence.share_used):
         found.append((message("Share of events, rows used"), chance(evidence.share_used)))
     if evidence.difference is not None:

@@ -8,7 +8,7 @@ from plainodds.answers.checks.finding import Unknown
 from plainodds.model.predictors import Subject
 from plainodds.phrases.labels import listed, named_value, predictor_name
 from plainodds.phrases.lexicon import lexicon, message
-from plainodds.phrases.numbers import count, percentage_points, quantity, wording
+from plainodds.phrases.numbers import count, guarded_count, percentage_points, quantity, wording
 from plainodds.phrases.units import tidy
 from plainodds.values import Scalar
 
@@ -29,6 +29,7 @@ __all__ = [
     "quoted",
     "rows",
     "short_list",
+    "told_count",
 ]
 
 LISTED_AT_MOST = 4
@@ -82,6 +83,13 @@ def cases_called(subject: Subject) -> str:
 def _case_called(subject: Subject) -> str:
     called = tidy(subject.outcome.case)
     return message("case") if called == "case" else message("{case}", case=called)
+
+
+def told_count(subject: Subject, number: float) -> str:
+    """A number of rows; "up to 10" in a guarded answer where it may be fewer."""
+    if 0 < number <= subject.smallest_cell:
+        return guarded_count(round(number), subject.smallest_cell)
+    return amount(number)
 
 
 def rows(number: float) -> str:

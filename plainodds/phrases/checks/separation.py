@@ -22,6 +22,7 @@ from plainodds.phrases.checks.parts import (
     part_of,
     rows,
     short_list,
+    told_count,
 )
 from plainodds.phrases.lexicon import lexicon, message
 from plainodds.phrases.units import tidy
@@ -66,7 +67,7 @@ def _(
 def told_without_exception(evidence: SeparationEvidence, subject: Subject) -> str:
     """Who tells the outcome of how many rows, and which levels have one outcome only."""
     return (
-        f"{_who(evidence, subject)} the outcome of {_whose(evidence)} without exception"
+        f"{_who(evidence, subject)} the outcome of {_whose(evidence, subject)} without exception"
         f"{_levels(evidence, subject)}"
     )
 
@@ -78,10 +79,10 @@ def _who(evidence: SeparationEvidence, subject: Subject) -> str:
     return f"{who} {'together tell' if len(evidence.predictors) > 1 else 'tells'}"
 
 
-def _whose(evidence: SeparationEvidence) -> str:
+def _whose(evidence: SeparationEvidence, subject: Subject) -> str:
     if evidence.rows == evidence.all_rows:
         return "the only row" if evidence.rows == 1 else f"all {rows(evidence.rows)}"
-    return f"{amount(evidence.rows)} of {rows(evidence.all_rows)}"
+    return f"{told_count(subject, evidence.rows)} of {rows(evidence.all_rows)}"
 
 
 def _levels(evidence: SeparationEvidence, subject: Subject) -> str:
@@ -104,8 +105,8 @@ def _(
         "quasi-complete": message("some rows"),
         "complete": message("all rows"),
     }
-    told, every_row = amount(evidence.rows), amount(evidence.all_rows)
-    patterns, every_pattern = amount(evidence.patterns), amount(evidence.all_patterns)
+    told, every_row = told_count(subject, evidence.rows), amount(evidence.all_rows)
+    patterns, every_pattern = told_count(subject, evidence.patterns), amount(evidence.all_patterns)
     return [
         (message("Outcome told without exception"), kinds[evidence.kind]),
         (message("Rows so told"), part_of(told, every_row)),

@@ -5,6 +5,7 @@ from __future__ import annotations
 import math
 from typing import Literal, TypeAlias
 
+from plainodds.answers.checks.amount import LevelsEvidence
 from plainodds.answers.checks.calibration import CalibrationEvidence, Optimism
 from plainodds.answers.checks.dependence import DependenceEvidence, StandardErrorPair
 from plainodds.answers.checks.finding import Concern, Finding, Topic
@@ -18,6 +19,7 @@ __all__ = [
     "Verdict",
     "example_of",
     "farthest_pair",
+    "fewest_of_one",
     "findings_told",
     "how_many",
     "optimism_of",
@@ -104,6 +106,12 @@ def farthest_pair(evidence: DependenceEvidence) -> StandardErrorPair | None:
     return max(
         known, key=lambda pair: abs(math.log(pair.by_groups / pair.model_based)), default=None
     )
+
+
+def fewest_of_one(evidence: LevelsEvidence) -> float:
+    """The fewest cases that a level has of either outcome; nan where some are withheld."""
+    counts = [min(each.events, each.cases - each.events) for each in evidence.counts]
+    return math.nan if any(map(math.isnan, counts)) else min(counts)
 
 
 def how_many(answer: SoundnessAnswer, concern: Concern) -> int:

@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+import math
+
 from plainodds.answers.checks.amount import (
     AmountEvidence,
     LevelCount,
@@ -12,10 +14,12 @@ from plainodds.answers.checks.finding import Finding
 from plainodds.model.predictors import Subject
 from plainodds.phrases.checks.finding_words import FindingWords
 from plainodds.phrases.checks.parts import amount
+from plainodds.phrases.choices.checks import fewest_of_one
 from plainodds.phrases.german.checks.finding_words import NOTHING, evidence_words, made
 from plainodds.phrases.german.checks.parts import because, cases, coefficients, counted, short_list
+from plainodds.phrases.german.parts import cases as many
 from plainodds.phrases.labels import named_value, predictor_name
-from plainodds.phrases.numbers import chance, count, ratio
+from plainodds.phrases.numbers import chance, count, guarded_count, ratio
 from plainodds.phrases.parts import difference_with_interval
 from plainodds.phrases.units import tidy
 
@@ -62,18 +66,16 @@ def _(evidence: LevelsEvidence, finding: Finding, subject: Subject, level: float
         )
         return made(finding, subject, what, "Ereignisse je Stufe in den Daten selbst zählen")
     if not evidence.sparse:
-        fewest_of_one = min(min(each.events, each.cases - each.events) for each in counts)
+        known = fewest_of_one(evidence)
         what = (
-            f"jede Stufe hat mindestens {amount(fewest_of_one)} Fälle mit dem Ereignis und ebenso "
-            "viele ohne es"
+            f"jede Stufe hat mindestens {amount(known)} Fälle mit dem Ereignis und ebenso viele "
+            "ohne es"
         )
+        if math.isnan(known):
+            what = "jede Stufe hat genug Fälle mit dem Ereignis und ohne es"
         return made(finding, subject, what, NOTHING)
     sparse = counts[: evidence.sparse]
-    told = [
-        f"{_name(subject, each)} ({counted(each.events, 'Ereignis', 'Ereignisse')} bei "
-        f"{cases(subject, each.cases, 'Fällen')})"
-        for each in sparse
-    ]
+    told = [f"{_name(subject, each)} ({_events(subject, each)})" for each in sparse]
     few = "wenige Fälle eines der beiden Ergebnisse"
     if finding.reasons == ("one outcome only",):
         few = "nur eines der beiden Ergebnisse"
@@ -94,6 +96,15 @@ def _(evidence: LevelsEvidence, finding: Finding, subject: Subject, level: float
             "oder ihre Fälle weglassen"
         )
     return made(finding, subject, what, step)
+
+
+def _events(subject: Subject, each: LevelCount) -> str:
+    if math.isnan(each.events):
+        # withheld before the answer leaves
+        most = guarded_count(round(each.cases), subject.smallest_cell)
+        return f"{most} {many(subject.outcome, 'Fälle')}, Ereignisse nicht genannt"
+    whole = cases(subject, each.cases, "Fällen")
+    return f"{counted(each.events, 'Ereignis', 'Ereignisse')} bei {whole}"
 
 
 def _name(subject: Subject, each: LevelCount) -> str:
@@ -126,7 +137,11 @@ def _left_out(evidence: MissingEvidence, subject: Subject) -> str:
         name, number = evidence.columns[0]
         most = "am häufigsten bei" if len(evidence.columns) > 1 else "bei"
         often = f", {most} {_column(name, subject)}"
-        often += f" ({count(number)})" if number < evidence.dropped else ""
+        told = guarded_count(int(number), subject.smallest_cell)
+        often += f" ({told})" if number < evidence.dropped else ""
+    if evidence.dropped <= subject.smallest_cell:
+        few = guarded_count(evidence.dropped, subject.smallest_cell)
+        return f"in {few} Zeilen fehlte etwas{often}, und sie wurden ausgelassen"
     return (
         f"in {chance(evidence.dropped / every)} der Zeilen ({count(evidence.dropped)} von "
         f"{count(every)}) fehlte etwas{often}, und sie wurden ausgelassen"

@@ -11,7 +11,7 @@ from plainodds.answers.checks.separation import SeparationEvidence
 from plainodds.answers.checks.standard_errors import StandardErrorsEvidence
 from plainodds.model.predictors import Subject
 from plainodds.phrases.checks.finding_words import FindingWords
-from plainodds.phrases.checks.parts import amount
+from plainodds.phrases.checks.parts import amount, told_count
 from plainodds.phrases.german.checks.finding_words import NOTHING, evidence_words, made
 from plainodds.phrases.german.checks.parts import (
     because,
@@ -130,7 +130,7 @@ def _(
 def told_without_exception(evidence: SeparationEvidence, subject: Subject) -> str:
     """Who tells the outcome of how many rows, and which levels have one outcome only."""
     return (
-        f"{_who(evidence, subject)} das Ergebnis {_whose(evidence)} ausnahmslos fest"
+        f"{_who(evidence, subject)} das Ergebnis {_whose(evidence, subject)} ausnahmslos fest"
         f"{_levels(evidence, subject)}"
     )
 
@@ -142,10 +142,10 @@ def _who(evidence: SeparationEvidence, subject: Subject) -> str:
     return f"{who} {'legen zusammen' if len(evidence.predictors) > 1 else 'legt'}"
 
 
-def _whose(evidence: SeparationEvidence) -> str:
+def _whose(evidence: SeparationEvidence, subject: Subject) -> str:
     if evidence.rows == evidence.all_rows:
         return "der einzigen Zeile" if evidence.rows == 1 else f"aller {rows(evidence.rows)}"
-    return f"von {amount(evidence.rows)} der {rows(evidence.all_rows)}"
+    return f"von {told_count(subject, evidence.rows)} der {rows(evidence.all_rows)}"
 
 
 def _levels(evidence: SeparationEvidence, subject: Subject) -> str:

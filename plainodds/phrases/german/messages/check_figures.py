@@ -6,6 +6,7 @@ __all__ = ["CHECK_FIGURES"]
 
 CHECK_FIGURES: dict[str, str] = {
     # levels
+    "{cases}, events not told": "{cases}, Ereignisse nicht genannt",
     "{number} event in {cases}": "{number} Ereignis auf {cases}",
     "{number} events in {cases}": "{number} Ereignisse auf {cases}",
     # how much data there is
