@@ -36,6 +36,8 @@ _ACROSS = 5  # hundreds in a line
 _COLUMNS = _SIDE * _ACROSS + _GAP * (_ACROSS - 1)  # of a thousand
 _LINES = 2 * _SIDE + _GAP
 _BEST, _LEAST = 0.58, 0.36  # room of one mark in a thousand, in letters
+_MORE_ROOM = 1.1
+"""From so many times the height that marks take at best, they grow."""
 _LEGEND = 17.0  # letters, at least
 _APART = 2.0  # letters between marks and legend
 _LONGEST_END = 18  # characters
@@ -158,6 +160,8 @@ class Marks:
         theme, em = self._theme, self._theme.font_size
         counts = counts_of(answer)
         beside, up = _arranged(theme, width)
+        if height > _MORE_ROOM * self.height(answer, theme, width):
+            beside, up = _grown(answer, theme, width, height)
         beneath = _Legend(answer, theme, width)
         up = min(up, height if beside else height - beneath.height - 0.6 * em)
         if beside:
@@ -258,6 +262,17 @@ def _arranged(theme: Theme, width: float) -> tuple[bool, float]:
     if beside >= 0.7 * _BEST * em:
         return True, _LINES * min(_BEST * em, beside)
     return False, _LINES * min(_BEST * em, width / _COLUMNS)
+
+
+def _grown(answer: ChangeAnswer, theme: Theme, width: float, height: float) -> tuple[bool, float]:
+    """The same where there is room to spare, as on a slide: whichever makes the marks larger."""
+    em = theme.font_size
+    # width of marks in their height
+    wide = 1.0 if counts_of(answer).over == _SIDE * _SIDE else _COLUMNS / _LINES
+    beside = min(height, (width - (_LEGEND + _APART) * em) / wide)
+    legend = _Legend(answer, theme, width).height + 0.6 * em
+    beneath = min(height - legend, width / wide)
+    return beside >= beneath, max(beside, beneath)
 
 
 def _extent(over: int, up: float) -> tuple[float, float]:

@@ -1,10 +1,12 @@
 """The ruler, the ledger and the marks, each as a figure of its own."""
 
+import numpy as np
 import pytest
 import statsmodels.formula.api as smf
 
 import plainodds as po
-from plainodds.drawings.draw import draw
+from plainodds.drawings.draw import draw, drawing_of, figure_for, height_for
+from plainodds.drawings.theme import theme_of
 from tests.drawings import made, made_effects
 from tests.drawings.seen import assert_readable, words_on
 
@@ -20,6 +22,37 @@ EACH = pytest.mark.parametrize("make", EXCERPTS.values(), ids=EXCERPTS)
 @EACH
 def test_nothing_meets_or_leaves_the_picture(make):
     assert_readable(draw(make()))
+
+
+THEME = theme_of("slide")
+CHANGES = {
+    "a hundred": lambda: made_effects.change_answer(0.2, 0.35),
+    "a thousand": lambda: made_effects.change_answer(0.004, 0.009, difference=0.003),
+}
+
+
+def marks_on(change, width, height):
+    """The figure with marks alone, and their room: left, right, lower and upper end in points."""
+    answer = po.excerpt(change, "marks")
+    figure, drawing = figure_for(drawing_of(answer), answer, THEME, width, height)
+    xy = np.concatenate([line.get_xydata() for line in drawing.marks.lines.values()])
+    return figure, xy[:, 0].min(), xy[:, 0].max(), xy[:, 1].min(), xy[:, 1].max()
+
+
+@pytest.mark.parametrize("make", CHANGES.values(), ids=CHANGES)
+@pytest.mark.parametrize("share", [1.3, 1.7, 2.5])
+def test_marks_grow_where_there_is_room_to_spare(make, share):
+    change, width = make(), 960.0
+    answer = po.excerpt(change, "marks")
+    usual = height_for(drawing_of(answer), answer, THEME, width)
+    _, left, right, low, high = marks_on(change, width, usual)
+    figure, wide_left, wide_right, wide_low, wide_high = marks_on(change, width, share * usual)
+    assert wide_right - wide_left > right - left
+    assert wide_high - wide_low > high - low
+    # beyond the picture's border nothing is drawn
+    assert wide_right < width
+    assert wide_low > 0
+    assert_readable(figure)
 
 
 def test_each_part_is_there_and_the_others_are_not():
