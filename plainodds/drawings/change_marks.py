@@ -21,7 +21,7 @@ from plainodds.answers.moves import Move
 from plainodds.drawings.geometry import corner
 from plainodds.drawings.lettering import letter, line_height, text_width, wrapped
 from plainodds.drawings.theme import Theme
-from plainodds.phrases.labels import value_label
+from plainodds.phrases.labels import cases_label, value_label
 from plainodds.phrases.lexicon import message
 from plainodds.phrases.moves import settled_moves
 from plainodds.phrases.numbers import cases, count, denominator_of_change
@@ -101,7 +101,7 @@ def legend_of(answer: ChangeAnswer) -> tuple[str, tuple[tuple[str, int, str], ..
         message(
             "Of {} {}, {} (rounded):",
             count(counts.over),
-            tidy(outcome.cases),
+            cases_label(outcome),
             tidy(outcome.event),
         ),
         (

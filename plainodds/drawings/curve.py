@@ -20,7 +20,7 @@ from plainodds.drawings.geometry import corner
 from plainodds.drawings.lettering import line_height, tick_style
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import label_ticks, round_ticks
-from plainodds.phrases.labels import scale_title
+from plainodds.phrases.labels import cases_label, scale_title
 from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import guarded_count, quantity
 
@@ -231,7 +231,7 @@ def _end(line: CurveLine, scale: Scale) -> float:
 
 def _rows(answer: CurveAnswer, theme: Theme) -> Rows:
     step = (1.45 if len(answer.lines) <= 3 else 1.05) * theme.font_size
-    cases = answer.subject.outcome.cases
+    cases = cases_label(answer.subject.outcome)
     smallest = answer.subject.smallest_cell
     totals = [sum(each.counts) for each in answer.support]
     captions = tuple(f"{guarded_count(total, smallest)} {cases}" for total in totals)
@@ -240,7 +240,7 @@ def _rows(answer: CurveAnswer, theme: Theme) -> Rows:
 
 def curve_notes(answer: CurveAnswer) -> list[str]:
     """Say what bands, broken lines and the rows beneath mean."""
-    cases = answer.subject.outcome.cases
+    cases = cases_label(answer.subject.outcome)
     notes = [CurveFrame.interval_note(answer, message("Band"))]
     if not all(all(line.supported) for line in answer.lines):
         notes.append(message("Broken line: few {} or none there.", cases))

@@ -18,7 +18,7 @@ from plainodds.drawings.geometry import corner, shifted, slot_size
 from plainodds.drawings.lettering import letter, line_height, text_width, tick_style, wrapped
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import label_ticks
-from plainodds.phrases.labels import scale_title, value_label
+from plainodds.phrases.labels import cases_label, scale_title, value_label
 from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import chance, count_mark, percentage_points, ratio, signed
 
@@ -220,12 +220,12 @@ def level_labels(
 
 def _rows(answer: CurveAnswer, theme: Theme) -> Rows:
     step = (1.35 if len(answer.lines) <= 3 else 1.1) * theme.font_size
-    return Rows(tuple(answer.subject.outcome.cases for _ in answer.support), step, step)
+    return Rows(tuple(cases_label(answer.subject.outcome) for _ in answer.support), step, step)
 
 
 def levels_notes(answer: CurveAnswer) -> list[str]:
     """Say what lines through points and hollow points mean."""
-    cases = answer.subject.outcome.cases
+    cases = cases_label(answer.subject.outcome)
     notes = [CurveFrame.interval_note(answer, message("Line through a point"))]
     if not all(all(line.supported) for line in answer.lines):
         notes.append(message("Hollow point: few {} or none there.", cases))

@@ -12,6 +12,7 @@ from plainodds.drawings.lettering import FIGURE_SPACE, text_width, wrapped
 from plainodds.drawings.odds_figures import estimate_texts
 from plainodds.drawings.odds_rows import GAP
 from plainodds.drawings.theme import Theme
+from plainodds.phrases.labels import cases_label
 from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import count, count_mark, level_figures, marks_now, p_mark
 from plainodds.phrases.odds_lines import Counts, OddsLine
@@ -170,7 +171,7 @@ def _columns(
     counts = _count_texts(answer, lines)
     counts_heading, counts_width = "", 0.0
     if any(counts):
-        cases = wrapped(tidy(answer.subject.outcome.cases), 7.0 * em, theme, small, 1)
+        cases = wrapped(cases_label(answer.subject.outcome), 7.0 * em, theme, small, 1)
         known = any(line.counts and line.counts.events is not None for line in lines)
         between = "\n" if form.counts else " "
         counts_heading = message("events /{}{}", between, cases) if known else cases

@@ -14,7 +14,7 @@ from plainodds.drawings.effects_rows import effect_texts
 from plainodds.drawings.lettering import line_height, text_width
 from plainodds.drawings.odds_rows import Figures, Group, Layout, Slot, is_narrow, laid_out
 from plainodds.drawings.theme import Theme
-from plainodds.phrases.labels import in_sentence
+from plainodds.phrases.labels import cases_label, in_sentence
 from plainodds.phrases.lexicon import lexicon, message
 from plainodds.phrases.numbers import count, level_figures, ratio, ratio_interval, wording
 from plainodds.phrases.pair_labels import has_others, interaction_label
@@ -133,7 +133,9 @@ def _probability_rows(answer: PairAnswer) -> list[tuple[str, EffectRow]]:
         at = message("at typical values")
     else:
         at = message("at the values held")
-    average = message("averaged over {} {}", count(answer.counted), answer.subject.outcome.cases)
+    average = message(
+        "averaged over {} {}", count(answer.counted), cases_label(answer.subject.outcome)
+    )
     return [
         (label, EffectRow("", None, None, None, None, estimate, None))
         for label, estimate in ((at, found.at_profile), (average, found.averaged))

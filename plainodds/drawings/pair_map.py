@@ -37,7 +37,7 @@ from plainodds.drawings.pair_contours import (
 from plainodds.drawings.pair_words import sign_turns, surface_title
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import bare, label_ticks, round_ticks
-from plainodds.phrases.labels import axis_title
+from plainodds.phrases.labels import axis_title, cases_label
 from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import quantity, simple_fraction
 
@@ -244,8 +244,8 @@ class MapPanel:
         starts = np.arange(-height, width, step)
         share = np.linspace(0.0, 1.0, 60)[:, None] * [height, height]
         diagonals = [share + np.array([start, 0.0]) for start in starts]
-        words = wrapped(message("no {} here", answer.subject.outcome.cases), 0.5 * width, theme,
-                        theme.small, 1)  # fmt: skip
+        empty = message("no {} here", cases_label(answer.subject.outcome))
+        words = wrapped(empty, 0.5 * width, theme, theme.small, 1)
         size = text_width(words, theme, theme.small) + 0.6 * em, 1.5 * theme.small
         box = _free_corner(held, size, width, height, 0.4 * em)
         if box is not None:

@@ -5,7 +5,7 @@ from __future__ import annotations
 from plainodds.answers.pair import PairAnswer
 from plainodds.answers.stretches import Stretch
 from plainodds.drawings.among import averaged_over, held_at
-from plainodds.phrases.labels import chance_of, odds_of_event, scale_title, value_label
+from plainodds.phrases.labels import cases_label, chance_of, odds_of_event, scale_title, value_label
 from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import level_figures
 from plainodds.phrases.pair_labels import is_averaged, left_out, share_label
@@ -73,7 +73,7 @@ def pair_notes(answer: PairAnswer, cut: bool, leaves: bool) -> list[str]:
     leaves : bool
         Whether something ends in an arrow.
     """
-    cases = answer.subject.outcome.cases
+    cases = cases_label(answer.subject.outcome)
     notes = [_interval_note(answer, cut)]
     loose = not all(answer.effect.supported)
     is_line = answer.subject.predictor(answer.question.b).is_number

@@ -14,7 +14,7 @@ from plainodds.drawings.furniture import marker_line
 from plainodds.drawings.geometry import corner
 from plainodds.drawings.lettering import letter, line_height, text_width
 from plainodds.drawings.theme import Theme
-from plainodds.phrases.labels import chance_of, in_sentence
+from plainodds.phrases.labels import cases_label, chance_of, in_sentence
 from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import (
     chance,
@@ -46,7 +46,7 @@ def headline(answer: ProfileAnswer) -> str:
 
 def notes(answer: ProfileAnswer) -> list[str]:
     """What the bands are, or why there are none, and what a broken pointer means."""
-    cases = answer.subject.outcome.cases
+    cases = cases_label(answer.subject.outcome)
     if answer.point.linear_predictor.lower is None:
         told = [answer.subject.no_interval or message("No intervals can be given.")]
     else:

@@ -19,6 +19,7 @@ from plainodds.values import Pairs, Scalar
 __all__ = [
     "average_chance_of",
     "axis_title",
+    "cases_label",
     "chance_of",
     "change_label",
     "data_range",
@@ -220,6 +221,12 @@ def listed(items: list[str]) -> str:
     if len(items) < 2:
         return "".join(items)
     return wording().both.format(", ".join(items[:-1]), items[-1])
+
+
+def cases_label(outcome: OutcomeFacts) -> str:
+    """What many rows are called; a word of the language where the analyst has not said."""
+    called = tidy(outcome.cases)
+    return message("cases") if called == "cases" else called
 
 
 def chance_of(outcome: OutcomeFacts) -> str:

@@ -15,6 +15,7 @@ from plainodds.answers.stretches import Stretch
 from plainodds.model.predictors import PredictorFacts, Subject
 from plainodds.phrases.labels import (
     average_chance_of,
+    cases_label,
     chance_of,
     from_to,
     odds_of_event,
@@ -248,7 +249,7 @@ def _placed(facts: PredictorFacts, place: Scalar) -> Scalar:
 
 def share_label(answer: PairAnswer, share: float) -> str:
     """How many of the rows: "71% of the pipes"; empty where nobody knows."""
-    cases = tidy(answer.subject.outcome.cases)
+    cases = cases_label(answer.subject.outcome)
     if math.isnan(share):
         return ""
     if share <= 0:
@@ -273,7 +274,7 @@ def stretch_label(answer: PairAnswer, stretch: Stretch) -> str:
 
 def rows_label(answer: PairAnswer, cell: JointCell) -> str:
     """The data behind one combination: "31 of 300 pipes"; empty where the model has no rows."""
-    cases = tidy(answer.subject.outcome.cases)
+    cases = cases_label(answer.subject.outcome)
     if cell.rows is None:
         return ""
     if cell.rows == 0:

@@ -1,6 +1,7 @@
 """Pictures in German: no English is left but the analyst's own, and no text meets another."""
 
 import re
+from dataclasses import replace
 
 import pytest
 from matplotlib.figure import Figure
@@ -100,3 +101,13 @@ def test_marks_are_kept_as_the_language_is():
     told = words_on(figure)
     assert any(re.search(r"\d,\d", each) for each in told)
     assert not any(re.search(r"\d\.\d", each) for each in told)
+
+
+@pytest.mark.parametrize("kind", PLAIN)
+def test_cases_without_a_name_are_faelle(kind):
+    answer = EVERY[kind]()
+    outcome = replace(answer.subject.outcome, case="case", cases="cases")
+    answer = replace(answer, subject=replace(answer.subject, outcome=outcome))
+    with po.writing("de"):
+        told = " ".join(words_on(drawn(answer)))
+    assert not re.search(r"\bcases?\b", told)
