@@ -1,6 +1,7 @@
 """Whether standard errors are there, and not absurd."""
 
 import math
+from dataclasses import replace
 
 import numpy as np
 import pytest
@@ -69,7 +70,13 @@ def test_without_data_spreads_are_those_of_the_data_handed_over():
     result = made.glm("left ~ age + depth", FRAME).fit()
     whole = found(result)
     result.remove_data()
-    assert standard_errors_of(po.FittedLogit(result, data=FRAME).model) == whole
+    again = standard_errors_of(po.FittedLogit(result, data=FRAME).model)
+    assert replace(again, evidence=None) == replace(whole, evidence=None)
+    assert again.evidence.wide == whole.evidence.wide
+    # sums in another order differ in the last digit on some machines
+    assert again.evidence.largest_per_spread == pytest.approx(
+        whole.evidence.largest_per_spread, rel=1e-12
+    )
 
 
 def test_weights_count_in_the_spread():
