@@ -28,7 +28,7 @@ from plainodds.answers.profile import ProfileAnswer
 from plainodds.answers.questions import Answer
 from plainodds.answers.soundness import SoundnessAnswer
 from plainodds.answers.support import Support
-from plainodds.answers.withheld import withheld
+from plainodds.answers.withheld import merged, raised, withheld
 from plainodds.errors import QuestionRefused
 from plainodds.model.predictors import PredictorFacts, Subject
 
@@ -85,18 +85,10 @@ def _facts(facts: PredictorFacts, smallest: int) -> PredictorFacts:
         )
     return replace(
         facts,
-        level_counts=tuple(_raised(each, smallest) for each in facts.level_counts),
-        level_cases=tuple(_raised_cases(each, smallest) for each in facts.level_cases),
+        level_counts=tuple(raised(each, smallest) for each in facts.level_counts),
+        level_cases=tuple(raised(each, smallest) for each in facts.level_cases),
         level_events=events,
     )
-
-
-def _raised(count: int, smallest: int) -> int:
-    return smallest if 0 < count < smallest else count
-
-
-def _raised_cases(cases: float, smallest: int) -> float:
-    return float(smallest) if 0 < cases < smallest else cases
 
 
 @singledispatch
@@ -120,17 +112,17 @@ def _(answer: ProfileAnswer, smallest: int) -> Answer:
 
 
 def _familiar(found: Familiarity, smallest: int) -> Familiarity:
-    return replace(found, rows_alike=_raised(found.rows_alike, smallest))
+    return replace(found, rows_alike=raised(found.rows_alike, smallest))
 
 
 @_without_small.register
 def _(answer: EffectsAnswer, smallest: int) -> Answer:
-    return replace(answer, counted=tuple(_raised(each, smallest) for each in answer.counted))
+    return replace(answer, counted=tuple(raised(each, smallest) for each in answer.counted))
 
 
 @_without_small.register
 def _(answer: ChangeAnswer, smallest: int) -> Answer:
-    return replace(answer, counted=_raised(answer.counted, smallest))
+    return replace(answer, counted=raised(answer.counted, smallest))
 
 
 @_without_small.register
@@ -139,7 +131,7 @@ def _(answer: PairAnswer, smallest: int) -> Answer:
     joint = answer.joint
     if joint is not None:
         joint = replace(joint, cells=_cells(joint.cells, smallest))
-    return replace(answer, lines=lines, joint=joint, counted=_raised(answer.counted, smallest))
+    return replace(answer, lines=lines, joint=joint, counted=raised(answer.counted, smallest))
 
 
 def _cells(cells: tuple[JointCell, ...], smallest: int) -> tuple[JointCell, ...]:
@@ -154,7 +146,7 @@ def _cells(cells: tuple[JointCell, ...], smallest: int) -> tuple[JointCell, ...]
     return tuple(
         replace(
             cell,
-            rows=_raised_cases(rows, smallest),
+            rows=raised(rows, smallest),
             events=None if is_hidden else cell.events,
         )
         for cell, (_, rows), is_hidden in zip(
@@ -183,20 +175,6 @@ def _(answer: PanelsAnswer, smallest: int) -> Answer:
 def _merged(support: Support, smallest: int) -> Support:
     """Bins merged with their neighbours until each holds enough; levels by themselves."""
     if not support.edges:
-        return replace(support, counts=tuple(_raised(each, smallest) for each in support.counts))
-    edges, counts = list(support.edges), list(support.counts)
-    place = 0
-    while place < len(counts):
-        if not 0 < counts[place] < smallest:
-            place += 1
-        elif place + 1 < len(counts):
-            counts[place : place + 2] = [counts[place] + counts[place + 1]]
-            del edges[place + 1]
-        elif place > 0:
-            counts[place - 1 :] = [counts[place - 1] + counts[place]]
-            del edges[place]
-            place -= 1
-        else:
-            counts[place] = smallest
-            place += 1
-    return replace(support, edges=tuple(edges), counts=tuple(counts))
+        return replace(support, counts=tuple(raised(each, smallest) for each in support.counts))
+    edges, counts = merged(support.edges, [(each,) for each in support.counts], smallest)
+    return replace(support, edges=edges, counts=tuple(number for (number,) in counts))

@@ -13,7 +13,7 @@ from plainodds.answers.checks.finding import Evidence, Finding
 from plainodds.answers.checks.influence import InfluenceEvidence
 from plainodds.answers.checks.separation import SeparationEvidence
 from plainodds.answers.checks.shape import Bin, ShapeEvidence
-from plainodds.answers.withheld import withheld
+from plainodds.answers.withheld import merged, raised, withheld
 from plainodds.values import Scalar
 
 __all__ = ["guarded_finding"]
@@ -46,7 +46,7 @@ def _(evidence: LevelsEvidence, smallest: int) -> Evidence:
         counts=tuple(
             replace(
                 each,
-                cases=_raised_float(each.cases, smallest),
+                cases=raised(each.cases, smallest),
                 events=math.nan if hidden[each.predictor, each.level] else each.events,
             )
             for each in evidence.counts
@@ -62,9 +62,9 @@ def _(evidence: MissingEvidence, smallest: int) -> Evidence:
         evidence,
         share_dropped=math.nan if few else evidence.share_dropped,
         difference=None if few else evidence.difference,
-        dropped=_raised(evidence.dropped, smallest),
-        known=_raised(evidence.known, smallest),
-        columns=tuple((name, _raised(number, smallest)) for name, number in evidence.columns),
+        dropped=raised(evidence.dropped, smallest),
+        known=raised(evidence.known, smallest),
+        columns=tuple((name, raised(number, smallest)) for name, number in evidence.columns),
     )
 
 
@@ -72,8 +72,8 @@ def _(evidence: MissingEvidence, smallest: int) -> Evidence:
 def _(evidence: SeparationEvidence, smallest: int) -> Evidence:
     return replace(
         evidence,
-        rows=_raised(evidence.rows, smallest),
-        patterns=_raised(evidence.patterns, smallest),
+        rows=raised(evidence.rows, smallest),
+        patterns=raised(evidence.patterns, smallest),
     )
 
 
@@ -89,32 +89,14 @@ def _(evidence: CalibrationEvidence, smallest: int) -> Evidence:
 
 @_without_small.register
 def _(evidence: DiscriminationEvidence, smallest: int) -> Evidence:
-    edges, counts = list(evidence.edges), list(zip(evidence.events, evidence.others, strict=True))
-    place = 0
-    while place < len(counts) and len(counts) > 1:
-        if not any(0 < each < smallest for each in counts[place]):
-            place += 1
-            continue
-        # with the neighbour above, or with the one below where it is the last
-        first = min(place, len(counts) - 2)
-        (a, b), (c, d) = counts[first : first + 2]
-        counts[first : first + 2] = [(a + c, b + d)]
-        del edges[first + 1]
-        place = first
+    bins = list(zip(evidence.events, evidence.others, strict=True))
+    edges, counts = merged(evidence.edges, bins, smallest)
     return replace(
         evidence,
-        edges=tuple(edges),
-        events=tuple(_raised_float(events, smallest) for events, _ in counts),
-        others=tuple(_raised_float(others, smallest) for _, others in counts),
+        edges=edges,
+        events=tuple(events for events, _ in counts),
+        others=tuple(others for _, others in counts),
     )
-
-
-def _raised(number: int, smallest: int) -> int:
-    return smallest if 0 < number < smallest else number
-
-
-def _raised_float(number: float, smallest: int) -> float:
-    return float(smallest) if 0 < number < smallest else number
 
 
 def _large(bins: tuple[Bin, ...], smallest: int) -> tuple[Bin, ...]:
