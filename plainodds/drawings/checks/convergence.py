@@ -11,7 +11,7 @@ from plainodds.drawings.checks.plate import Found, Plate
 from plainodds.drawings.checks.tables import draw_paragraph, paragraph_height
 from plainodds.drawings.geometry import Margins
 from plainodds.drawings.theme import Theme
-from plainodds.phrases.checks.telling import told_finding
+from plainodds.phrases.checks.finding_words import finding_words
 from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import quantity, ratio
 
@@ -33,7 +33,7 @@ def _gauge(found: Found) -> Gauge:
 
 
 def _words(found: Found) -> str:
-    return told_finding(found.finding, found.subject, found.level).what
+    return finding_words(found.finding, found.subject, found.level).what
 
 
 def _has_picture(found: Found) -> bool:

@@ -22,9 +22,9 @@ from plainodds.drawings.geometry import Margins
 from plainodds.drawings.lettering import line_height, text_width, wrapped
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import round_ticks
+from plainodds.phrases.checks.finding_words import finding_words
 from plainodds.phrases.checks.headings import picture_axes, picture_legend
 from plainodds.phrases.checks.parts import amount, cases, cases_called
-from plainodds.phrases.checks.telling import told_finding
 from plainodds.phrases.labels import sentence_case
 from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import count
@@ -36,7 +36,7 @@ _UNLIKE = 3.0
 
 
 def _words(found: Found) -> str:
-    return told_finding(found.finding, found.subject, found.level).what
+    return finding_words(found.finding, found.subject, found.level).what
 
 
 def _above(found: Found, theme: Theme, width: float) -> float:

@@ -25,8 +25,8 @@ from plainodds.drawings.checks.tables import draw_paragraph, paragraph_height
 from plainodds.drawings.geometry import Margins
 from plainodds.drawings.lettering import line_height, wrapped
 from plainodds.drawings.theme import Theme
+from plainodds.phrases.checks.finding_words import finding_words
 from plainodds.phrases.checks.headings import picture_axes, picture_legend
-from plainodds.phrases.checks.telling import told_finding
 from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import count
 from plainodds.phrases.units import tidy
@@ -44,7 +44,7 @@ def _has_picture(found: Found) -> bool:
 
 
 def _words(found: Found) -> str:
-    return told_finding(found.finding, found.subject, found.level).what
+    return finding_words(found.finding, found.subject, found.level).what
 
 
 def _counts(found: Found) -> tuple[LevelCount, ...]:

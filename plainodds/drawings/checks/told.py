@@ -7,7 +7,7 @@ from plainodds.drawings.checks.plate import Found, Plate
 from plainodds.drawings.checks.tables import draw_paragraph, paragraph_height
 from plainodds.drawings.geometry import Margins
 from plainodds.drawings.theme import Theme
-from plainodds.phrases.checks.telling import told_finding
+from plainodds.phrases.checks.finding_words import finding_words
 
 __all__ = ["TOLD"]
 
@@ -15,7 +15,7 @@ _SMALL = 0.94
 
 
 def _parts(found: Found) -> tuple[tuple[str, float, bool], ...]:
-    words = told_finding(found.finding, found.subject, found.level)
+    words = finding_words(found.finding, found.subject, found.level)
     step = words.next_step.replace("`", "")
     return ((words.what, 1.0, False), (words.why, _SMALL, True), (step, _SMALL, False))
 

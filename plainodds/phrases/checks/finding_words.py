@@ -8,6 +8,7 @@ from plainodds.answers.checks.finding import Evidence, Finding, Topic, Unknown
 from plainodds.model.predictors import Subject
 from plainodds.phrases.checks.headings import finding_heading
 from plainodds.phrases.checks.parts import WHY_NOT_KNOWN
+from plainodds.phrases.languages import in_language
 from plainodds.phrases.sentences import sentence
 from plainodds.values import value
 
@@ -89,6 +90,7 @@ class FindingWords:
     next_step: str
 
 
+@in_language
 def finding_words(finding: Finding, subject: Subject, level: float) -> FindingWords:
     """Say a finding in words.
 

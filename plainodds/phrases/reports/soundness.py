@@ -6,9 +6,8 @@ from collections.abc import Iterator
 
 from plainodds.answers.soundness import SoundnessAnswer
 from plainodds.phrases.captions.parts import fitted_words
-from plainodds.phrases.checks.finding_words import finding_figures
+from plainodds.phrases.checks.finding_words import finding_figures, finding_words
 from plainodds.phrases.checks.headings import concern_label
-from plainodds.phrases.checks.telling import told_finding
 from plainodds.phrases.lexicon import message
 from plainodds.phrases.parts import model_cautions
 from plainodds.phrases.reports.report import ReportTable, report_of
@@ -31,7 +30,7 @@ def _(answer: SoundnessAnswer) -> ReportTable:
 def _rows(answer: SoundnessAnswer) -> Iterator[ReportRow]:
     subject, level = answer.subject, answer.question.level
     for finding in answer.findings:
-        said = told_finding(finding, subject, level)
+        said = finding_words(finding, subject, level)
         yield heading(f"{said.heading}: {concern_label(finding.concern)}")
         figures = finding_figures(finding, subject, level)
         if not figures:

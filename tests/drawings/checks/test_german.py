@@ -13,7 +13,6 @@ from plainodds.drawings.soundness import SoundnessDrawing
 from plainodds.drawings.theme import theme_of
 from plainodds.phrases.checks import finding_figures, finding_words
 from plainodds.phrases.checks.headings import concern_label, finding_heading, topic_label
-from plainodds.phrases.checks.telling import told_finding
 from plainodds.phrases.german.checks.finding_words import finding_words as german_words
 from plainodds.phrases.languages import spoken_now
 from tests.drawings import made_findings as made
@@ -114,12 +113,13 @@ def test_figures_have_german_names_and_the_same_order(found):
 @pytest.mark.parametrize("found", ALL)
 def test_a_finding_is_told_in_the_language_that_is_spoken(found):
     english = finding_words(found, SUBJECT, LEVEL)
-    assert told_finding(found, SUBJECT, LEVEL) == english
+    assert finding_words.__wrapped__(found, SUBJECT, LEVEL) == english
     with po.writing("de"):
         # marks of numbers are German already, but no words
-        assert told_finding(found, SUBJECT, LEVEL) == finding_words(found, SUBJECT, LEVEL)
+        plain = finding_words.__wrapped__(found, SUBJECT, LEVEL)
+        assert finding_words(found, SUBJECT, LEVEL) == plain
         with spoken_now():
-            told = told_finding(found, SUBJECT, LEVEL)
+            told = finding_words(found, SUBJECT, LEVEL)
             assert told == german_words(found, SUBJECT, LEVEL)
             assert told.heading == finding_heading(found, SUBJECT)
     assert english_in(f"{told.heading} {told.what} {told.why} {told.next_step}") == []
