@@ -16,7 +16,7 @@ from plainodds.drawings.geometry import Margins, Room, slot_size
 from plainodds.drawings.lettering import line_height
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import bare
-from plainodds.phrases.labels import average_chance_of, chance_of
+from plainodds.phrases.labels import average_chance_of, chance_of, why_no_interval
 from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import level_figures
 
@@ -110,7 +110,7 @@ def change_notes(answer: ChangeAnswer) -> list[str]:
     """Say what the marks of uncertainty are, and over whom or where the chances hold."""
     question, subject = answer.question, answer.subject
     if answer.start.lower is None:
-        notes = [subject.no_interval or message("No intervals can be given.")]
+        notes = [why_no_interval(subject)]
     else:
         notes = [message("Lines, band and brackets: {}% intervals.", level_figures(question.level))]
     notes += bridge_notes(answer)

@@ -27,7 +27,13 @@ from plainodds.drawings.lettering import (
 )
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import bare, label_ticks
-from plainodds.phrases.labels import axis_title, predictor_label, scale_title, value_label
+from plainodds.phrases.labels import (
+    axis_title,
+    predictor_label,
+    scale_title,
+    value_label,
+    why_no_interval,
+)
 from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import level_figures
 
@@ -269,7 +275,7 @@ class CurveFrame:
     def interval_note(answer: CurveAnswer, name: str) -> str:
         """Say what the intervals are, or why there are none."""
         if all(line.lower is None for line in answer.lines):
-            return answer.subject.no_interval or message("No intervals can be given.")
+            return why_no_interval(answer.subject)
         level = level_figures(answer.question.level)
         if is_cut(answer):
             return message("{}: {}% interval, cut off where it leaves the axis.", name, level)

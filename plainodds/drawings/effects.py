@@ -194,12 +194,7 @@ class EffectsDrawing:
             room >= text_width(words, theme, theme.small) + 0.6 * em
             for room, words in zip(rooms, _sides(), strict=True)
         )
-        for text, words, side in zip(
-            self._sides,
-            _sides(),
-            (-1, 1),
-            strict=True,
-        ):
+        for text, words, side in zip(self._sides, _sides(), (-1, 1), strict=True):
             text.set_text(words if fits else "")
             text.set_position((at_zero + side * 0.6 * em, 0.2 * em))
 

@@ -5,7 +5,7 @@ from __future__ import annotations
 from plainodds.answers.effects import EffectsAnswer
 from plainodds.drawings.among import averaged_over, held_at
 from plainodds.drawings.effects_rows import panels_of
-from plainodds.phrases.labels import predictor_name
+from plainodds.phrases.labels import predictor_name, why_no_interval
 from plainodds.phrases.lexicon import message
 
 __all__ = ["effects_notes"]
@@ -15,7 +15,7 @@ def effects_notes(answer: EffectsAnswer, leaves: bool) -> list[str]:
     """Notes in the order of their weight; `leaves` is whether anything ends in an arrow."""
     notes = []
     if all(row.effect.lower is None for row in answer.rows):
-        notes.append(answer.subject.no_interval or message("No intervals can be given."))
+        notes.append(why_no_interval(answer.subject))
     if leaves:
         notes.append(message("Arrow: it goes on beyond the axis; its figures stand at the right."))
     notes.append(_among(answer))

@@ -21,11 +21,6 @@ from plainodds.phrases.numbers import chance, ratio, signed, summing
 
 __all__ = ["Ledger", "LedgerLine", "ledger_lines"]
 
-
-def _headings() -> tuple[str, str, str]:
-    return message("log odds η"), message("odds"), message("chance")
-
-
 _DECIMALS = 2
 
 
@@ -96,6 +91,10 @@ def ledger_lines(answer: ProfileAnswer) -> tuple[LedgerLine, ...]:
         )
     )  # fmt: skip
     return tuple(lines)
+
+
+def _headings() -> tuple[str, str, str]:
+    return message("log odds η"), message("odds"), message("chance")
 
 
 def _names(answer: ProfileAnswer, row: LedgerRow) -> tuple[str, str]:

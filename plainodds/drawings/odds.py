@@ -14,7 +14,7 @@ from plainodds.drawings.dots import Dots
 from plainodds.drawings.furniture import Key, Notes, Title
 from plainodds.drawings.geometry import Margins, Room, corner, slot_size
 from plainodds.drawings.lettering import letter, line_height, text_width, tick_style
-from plainodds.drawings.odds_axis import axis_range, shown
+from plainodds.drawings.odds_axis import axis_range, axis_title, shown, sides
 from plainodds.drawings.odds_rows import (
     GAP,
     Group,
@@ -26,7 +26,7 @@ from plainodds.drawings.odds_rows import (
 )
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import bare, fraction_ticks, label_ticks
-from plainodds.phrases.labels import odds_of_event
+from plainodds.phrases.labels import odds_of_event, why_no_interval
 from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import simple_fraction
 from plainodds.phrases.unbounded import has_finite_estimate, unbounded_note
@@ -219,9 +219,9 @@ class OddsDrawing:
         rooms = (at_one + gap, plot_width - at_one + 0.2 * em)
         fits = all(
             room >= text_width(words, theme, theme.small) + 0.6 * em
-            for room, words in zip(rooms, _sides(), strict=True)
+            for room, words in zip(rooms, sides(), strict=True)
         )
-        for text, words, side in zip(self._sides, _sides(), (-1, 1), strict=True):
+        for text, words, side in zip(self._sides, sides(), (-1, 1), strict=True):
             text.set_text(words if fits else "")
             text.set_position((at_one + side * 0.6 * em, 0.2 * em))
         return lower, upper
@@ -232,7 +232,7 @@ class OddsDrawing:
         y -= self._title.place(self.title(answer), -left, y, width)
         self._key.place(-left, y - 0.35 * em, width)
         plot_width, _ = self._room.plot_size()
-        title = message("odds ratio, logarithmic axis")
+        title = axis_title()
         room = text_width(title, theme, theme.small)
         self._axis_title.set_text(title)
         # centred on the plot, unless that would push it out of the slot
@@ -241,10 +241,6 @@ class OddsDrawing:
         )
         notes = _notes(answer)
         self._notes.place(notes, -left, -below, width)
-
-
-def _sides() -> tuple[str, str]:
-    return message("← lower odds"), message("higher odds →")
 
 
 def _models(answer: OddsAnswer) -> tuple[str, ...]:
@@ -259,7 +255,7 @@ def _notes(answer: OddsAnswer) -> list[str]:
     if any(math.isinf(row.log_odds_ratio.estimate) for row in answer.rows):
         notes.append(unbounded_note())
     if any(row.odds_ratio.lower is None and has_finite_estimate(row) for row in answer.rows):
-        notes.append(answer.subject.no_interval or message("No intervals can be given."))
+        notes.append(why_no_interval(answer.subject))
     return notes
 
 

@@ -7,8 +7,19 @@ from collections.abc import Sequence
 
 from plainodds.answers.odds import OddsRow
 from plainodds.drawings.ticks import outer_fractions
+from plainodds.phrases.lexicon import message
 
-__all__ = ["axis_range", "shown"]
+__all__ = ["axis_range", "axis_title", "shown", "sides"]
+
+
+def axis_title() -> str:
+    """What the axis is."""
+    return message("odds ratio, logarithmic axis")
+
+
+def sides() -> tuple[str, str]:
+    """What lies on either side of 1."""
+    return message("← lower odds"), message("higher odds →")
 
 
 def shown(row: OddsRow) -> tuple[float, float, float]:

@@ -12,10 +12,9 @@ from matplotlib.collections import LineCollection
 from plainodds.answers.odds import OddsRow
 from plainodds.drawings.geometry import corner
 from plainodds.drawings.lettering import letter, line_height, text_width, tick_style
-from plainodds.drawings.odds_axis import axis_range, shown
+from plainodds.drawings.odds_axis import axis_range, axis_title, shown, sides
 from plainodds.drawings.theme import Theme
 from plainodds.drawings.ticks import fraction_ticks, label_ticks
-from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import simple_fraction
 
 __all__ = ["Extent", "TableAxis", "extent_of"]
@@ -144,17 +143,11 @@ class TableAxis:
         self._place_line(extent, plot_width)
         at_one, beneath = along(1.0), -drop - 0.25 * em - 1.9 * line_height(theme.small)
         rooms = (at_one + left, plot_width - at_one + right)
-        for text, words, side, room in zip(
-            self.sides,
-            (message("← lower odds"), message("higher odds →")),
-            (-1, 1),
-            rooms,
-            strict=True,
-        ):
+        for text, words, side, room in zip(self.sides, sides(), (-1, 1), rooms, strict=True):
             fits = room >= text_width(words, theme, theme.small) + 0.5 * em
             text.set_text(words if fits else "")
             text.set_position((at_one + side * 0.5 * em, beneath))
-        title = message("odds ratio, logarithmic axis")
+        title = axis_title()
         wide = text_width(title, theme, theme.small)
         middle = min(max(plot_width / 2, wide / 2 - left), plot_width + right - wide / 2)
         self.title.set_text(title)

@@ -8,6 +8,7 @@ from plainodds.answers.odds import OddsAnswer
 from plainodds.drawings.furniture import Notes
 from plainodds.drawings.odds_table_axis import Extent
 from plainodds.drawings.odds_table_columns import DASH, Columns
+from plainodds.phrases.labels import why_no_interval
 from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import count
 from plainodds.phrases.odds_lines import odds_lines
@@ -54,5 +55,5 @@ def notes_of(answer: OddsAnswer, extent: Extent, columns: Columns) -> list[str]:
     if any(math.isinf(row.log_odds_ratio.estimate) for row in answer.rows):
         notes.append(unbounded_note())
     if any(row.odds_ratio.lower is None and has_finite_estimate(row) for row in answer.rows):
-        notes.append(subject.no_interval or message("No intervals can be given."))
+        notes.append(why_no_interval(subject))
     return notes

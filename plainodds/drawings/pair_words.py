@@ -5,7 +5,14 @@ from __future__ import annotations
 from plainodds.answers.pair import PairAnswer
 from plainodds.answers.stretches import Stretch
 from plainodds.drawings.among import averaged_over, held_at
-from plainodds.phrases.labels import cases_label, chance_of, odds_of_event, scale_title, value_label
+from plainodds.phrases.labels import (
+    cases_label,
+    chance_of,
+    odds_of_event,
+    scale_title,
+    value_label,
+    why_no_interval,
+)
 from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import level_figures
 from plainodds.phrases.pair_labels import is_averaged, left_out, share_label
@@ -126,7 +133,7 @@ def effect_subtitle(answer: PairAnswer) -> str:
 def _interval_note(answer: PairAnswer, cut: bool) -> str:
     """Say what the intervals are, or why there are none."""
     if answer.effect.lower is None:
-        return answer.subject.no_interval or message("No intervals can be given.")
+        return why_no_interval(answer.subject)
     level = level_figures(answer.question.level)
     if cut:
         return message("Bands and lines: {}% intervals, cut off where they leave the axis.", level)

@@ -14,7 +14,7 @@ from plainodds.drawings.furniture import marker_line
 from plainodds.drawings.geometry import corner
 from plainodds.drawings.lettering import letter, line_height, text_width
 from plainodds.drawings.theme import Theme
-from plainodds.phrases.labels import cases_label, chance_of, in_sentence
+from plainodds.phrases.labels import cases_label, chance_of, in_sentence, why_no_interval
 from plainodds.phrases.lexicon import message
 from plainodds.phrases.numbers import (
     chance,
@@ -48,7 +48,7 @@ def notes(answer: ProfileAnswer) -> list[str]:
     """What the bands are, or why there are none, and what a broken pointer means."""
     cases = cases_label(answer.subject.outcome)
     if answer.point.linear_predictor.lower is None:
-        told = [answer.subject.no_interval or message("No intervals can be given.")]
+        told = [why_no_interval(answer.subject)]
     else:
         level = level_figures(answer.question.level)
         told = [message("Band and figures in brackets: {}% interval.", level)]

@@ -41,6 +41,7 @@ __all__ = [
     "step_label",
     "value_label",
     "values_range",
+    "why_no_interval",
 ]
 
 # what a yes/no is called whose levels have no labels of their own
@@ -221,6 +222,11 @@ def listed(items: list[str]) -> str:
     if len(items) < 2:
         return "".join(items)
     return wording().both.format(", ".join(items[:-1]), items[-1])
+
+
+def why_no_interval(subject: Subject) -> str:
+    """Why a picture has no intervals, in its small print."""
+    return subject.no_interval or message("No intervals can be given.")
 
 
 def cases_label(outcome: OutcomeFacts) -> str:
