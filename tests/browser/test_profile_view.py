@@ -182,6 +182,8 @@ def test_after_a_burst_of_keys_the_last_value_is_what_is_shown(notebook, view, r
 )
 def test_the_picture_can_be_saved_as_a_file(notebook, view, kind, begins):
     before = set(notebook.folder.iterdir())
+    # while an earlier change is on its way a choice waits for it, and a quick click overtakes it
+    notebook.wait_for_kernel()
     view.save.locator("select").select_option(label=kind)
     view.button("Save the picture").click()
     expect(view.saved).to_contain_text(f".{kind.lower()}")
